@@ -1,0 +1,1 @@
+"""A mechanism as drawn: names, sizes, cases; no solving."""

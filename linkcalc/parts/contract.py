@@ -1,0 +1,159 @@
+"""What a part must be able to say, documented once.
+
+A *part* is a frozen dataclass of what the file says (``Slot``, ``Force``, ``Turn``). Asked with a ``Sketch``, it
+gives its equations: one or more of the numeric classes below. The engine knows those, and no part by name.
+
+Signs, everywhere: SI units, radians; x right, y up; counter-clockwise plus. A joint's force is the force on its
+first member. An entry of a slope is (member, coordinate, value); entries of the ground (member 0) may be given,
+the engine leaves them out. A value that is a Python float never changes with the pose; an array does.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Protocol
+
+from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
+
+__all__ = [
+    "TURN", "Array", "Coordinate", "Drive", "Entry", "Joint", "Mark", "Poses", "Push", "Pusher", "Row", "Site",
+    "Size", "Sketch", "Travelled", "Value", "X", "Y",
+]  # fmt: skip
+
+Size = float | int | str
+"""A size as written: a bare number in the file's unit, a quantity ("3/8 in") or a formula ("3*link")."""
+
+Entry = tuple[int, int, Value]
+Row = Sequence[Entry]
+Push = tuple[int, Value, Value, Value]
+"""(member, force x [N], force y [N], moment about the member's origin [N m])"""
+
+
+@dataclass(frozen=True)
+class Mark:
+    """How a part is drawn, as plain data; the report layer knows how each shape looks.
+
+    shape   "pin", "slot", "slide", "weld", "force", "torque", "pair", "weight", ...
+    spots   places in ground axes [m], one pose: ((x, y), ...)
+    along   direction of the line or arrow (x, y), (0, 0) if it has none
+    name    what to write beside it
+    """
+
+    shape: str
+    spots: tuple[tuple[float, float], ...]
+    along: tuple[float, float] = (0.0, 0.0)
+    name: str = ""
+
+
+class Sketch(Protocol):
+    """What a part may ask of the mechanism as drawn. Everything in SI; batches are (1, variant, 1)."""
+
+    @property
+    def size(self) -> float:
+        """[m] the largest extent of the drawing: the length that others are compared with"""
+
+    def value(self, size: Size, kind: str) -> Value:
+        """a size as written -> SI; kind is "length", "angle", "force", "mass", "moment", ..."""
+
+    def point(self, name: str) -> tuple[Value, Value]:
+        """[m] the drawn place of a point"""
+
+    def site(self, point: str, member: str | None = None) -> Site:
+        """a point as a member carries it; without a member: the pin itself, by the member that stands for it"""
+
+    def member(self, name: str) -> int:
+        """index of a member, 0 for "ground" """
+
+    def carriers(self, point: str) -> tuple[str, ...]:
+        """members that name the point, in the order of the file"""
+
+    def first_point(self, member: str) -> str:
+        """the point at the origin of the member's frame"""
+
+    def own_axis(self, member: str) -> Value:
+        """[rad] direction of the member's own x axis (first to last point) in the drawing pose"""
+
+    def travelled(self, name: str) -> Travelled:
+        """the slot or slide of that name, for a stroke along it"""
+
+
+class Joint(Protocol):
+    """Something that holds members together: rows of constraint equations.
+
+    name, word   what the file calls it, and its kind
+    members      indices of the members it joins; the first is the one its force acts on
+    site         where its force is told, carried by the first member
+    on_pin       True if the first member's side acts on the pin itself, not on one of several members there
+    angular      one bool a row: True where the gap is an angle [rad], not a length [m]
+    """
+
+    name: str
+    members: tuple[int, ...]
+    site: Site
+    on_pin: bool
+    angular: tuple[bool, ...]
+
+    def gap(self, at: Poses) -> tuple[Value, ...]:
+        """One value a row, zero when the joint holds [m] or [rad]."""
+
+    def slope(self, at: Poses) -> tuple[Row, ...]:
+        """Derivative of each gap by the coordinates of the members, sparse. A row's multiplier times its slope
+        is the generalised force it puts on each member."""
+
+    def mark(self, at: Poses) -> Mark:
+        """How to draw it in a single pose."""
+
+
+class Travelled(Protocol):
+    """A joint along which a travel can be measured (slot, slide)."""
+
+    def travel(self, at: Poses) -> Value:
+        """[m] how far along the line"""
+
+    def travel_slope(self, at: Poses) -> Row: ...
+
+
+class Pusher(Protocol):
+    """Something that pushes: a force, torque, weight or pair, for a size of 1 (N, N m; a weight for its mass).
+
+    name, word   what the file calls it, and its kind
+    kind         kind of the size: "force" or "moment"
+    size         SI, float or (1, variant, 1); None while it is the unknown
+    on_pins      for each entry of its push: the name of the pin that takes it, "" if a member does
+    """
+
+    name: str
+    kind: str
+    size: Value | None
+    on_pins: tuple[str, ...]
+
+    def push(self, at: Poses) -> tuple[Push, ...]:
+        """What it does to each member, for a size of 1."""
+
+    def mark(self, at: Poses) -> Mark:
+        """How to draw it in a single pose."""
+
+
+class Drive(Protocol):
+    """A coordinate held at a target: one more constraint row."""
+
+    angular: bool
+
+    def gap(self, at: Poses) -> Value: ...
+    def slope(self, at: Poses) -> Row: ...
+
+
+class Coordinate(Protocol):
+    """What is stepped: a turn, a distance, a travel.
+
+    kind  "angle" or "length"
+    """
+
+    kind: str
+
+    def value(self, at: Poses) -> Value:
+        """its value [rad or m]; an angle comes within half a turn of zero, wound on by the caller"""
+
+    def hold(self, target: Value) -> Drive:
+        """the row that keeps it at a target (1, variant, pose)"""

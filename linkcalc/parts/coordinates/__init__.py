@@ -1,0 +1,1 @@
+"""Coordinates: what can be stepped through a stroke."""

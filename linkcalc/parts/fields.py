@@ -1,0 +1,63 @@
+"""Fields of a part: what the file may say there. Reader, writer, help and docs are made from these."""
+
+from __future__ import annotations
+
+from dataclasses import MISSING, Field, field, fields
+from typing import Any
+
+
+def _made(kind: str, text: str, default: Any, **more: Any) -> Any:
+    meta = {"kind": kind, "text": text, **more}
+    return field(metadata=meta) if default is MISSING else field(default=default, metadata=meta)
+
+
+def name(of: str, text: str, default: Any = MISSING) -> Any:
+    """The name of one item: of = "point", "member", "guide" (a slot or slide)."""
+    return _made("name", text, default, of=of)
+
+
+def names(of: str, text: str, default: Any = MISSING, least: int = 2, most: int | None = 2) -> Any:
+    """Several names, kept as a tuple."""
+    return _made("names", text, default, of=of, least=least, most=most)
+
+
+def size(unit: str, text: str, default: Any = MISSING, *, sign: str = "any", words: tuple[str, ...] = ()) -> Any:
+    """A size as written; unit = its kind ("length", "angle", ...); sign = "any", "plus" or "not minus".
+
+    words  words that may stand in its place ("drawn", "limit")
+    """
+    return _made("size", text, default, unit=unit, sign=sign, words=words)
+
+
+def line(text: str, default: Any = MISSING) -> Any:
+    """A line: two points, or an angle from the x axis as drawn."""
+    return _made("line", text, default)
+
+
+def choice(options: tuple[str, ...], text: str, default: Any = MISSING) -> Any:
+    """One word out of a few."""
+    return _made("choice", text, default, options=options)
+
+
+def count(text: str, default: Any = MISSING, *, least: int = 1, most: int = 1_000_000) -> Any:
+    """A whole number."""
+    return _made("count", text, default, least=least, most=most)
+
+
+def arcs(text: str, default: Any = MISSING) -> Any:
+    """Pairs of [point, radius], kept as a tuple of tuples."""
+    return _made("arcs", text, default)
+
+
+def pairs(of: str, text: str, default: Any = MISSING) -> Any:
+    """Pairs of names, kept as a tuple of tuples."""
+    return _made("pairs", text, default, of=of)
+
+
+def part_fields(part: Any) -> tuple[Field[Any], ...]:
+    """The fields of a part's class (or of a part) that the file may give."""
+    return tuple(f for f in fields(part) if "kind" in f.metadata)
+
+
+def required(entry: Field[Any]) -> bool:
+    return entry.default is MISSING and entry.default_factory is MISSING

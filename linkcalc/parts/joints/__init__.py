@@ -1,0 +1,1 @@
+"""Joints: what holds members together."""

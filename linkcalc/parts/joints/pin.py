@@ -1,0 +1,43 @@
+"""Pin: two members turn about a point that both carry; it takes force, no moment."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from linkcalc.parts.contract import TURN, Mark, Poses, Row, Site, Value, X, Y
+
+
+@dataclass(frozen=True, eq=False)
+class PinJoint:
+    """The equations of a pin between two members; gap = place on the first less place on the second [m]."""
+
+    name: str
+    a: Site
+    b: Site
+    on_pin: bool = False
+    angular = (False, False)
+    word = "pin"
+
+    @property
+    def members(self) -> tuple[int, int]:
+        return self.a.member, self.b.member
+
+    @property
+    def site(self) -> Site:
+        return self.a
+
+    def gap(self, at: Poses) -> tuple[Value, Value]:
+        (ax, ay), (bx, by) = at.spot(self.a), at.spot(self.b)
+        return ax - bx, ay - by
+
+    def slope(self, at: Poses) -> tuple[Row, Row]:
+        a, b = self.a.member, self.b.member
+        (ua, va), (ub, vb) = at.arm(self.a), at.arm(self.b)
+        return (
+            ((a, X, 1.0), (a, TURN, -va), (b, X, -1.0), (b, TURN, vb)),
+            ((a, Y, 1.0), (a, TURN, ua), (b, Y, -1.0), (b, TURN, -ub)),
+        )
+
+    def mark(self, at: Poses) -> Mark:
+        x, y = at.spot(self.a)
+        return Mark("pin", ((float(x), float(y)),), name=self.name)

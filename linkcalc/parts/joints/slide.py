@@ -1,0 +1,76 @@
+"""Slide: a member guided along a line of another without turning (ram, jaw, collar): force square to the line, and a moment."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+
+from linkcalc.parts import fields
+from linkcalc.parts.contract import TURN, Mark, Poses, Row, Site, Sketch, Value
+from linkcalc.parts.joints.slot import SlotJoint
+from linkcalc.parts.lines import Guide, Line, guide
+from linkcalc.words import word
+
+
+@word("joint", "slide")
+@dataclass(frozen=True)
+class Slide:
+    """A member guided along a line of another without turning: force square to the line, and a moment."""
+
+    member: str = fields.name("member", "the member that slides")
+    along: Line = fields.line("direction of the guide: two points, or an angle from the x axis as drawn")
+    on: str = fields.name("member", "the member that has the guide", "ground")
+    at: str | None = fields.name("point", "where force and moment are told; else the member's first point", None)
+
+    def joints(self, name: str, sketch: Sketch) -> Iterator[SlideJoint]:
+        site = sketch.site(self.at, self.member) if self.at else Site(sketch.member(self.member), 0.0, 0.0)
+        through = self.at or sketch.first_point(self.member)
+        # the guide may run beside the told point: only its direction counts, so it is laid through that point
+        line = guide(sketch, self.along, self.on, through)
+        start = sketch.site(through, self.on)
+        lead = line.start if isinstance(self.along, tuple) else start
+        yield SlideJoint(name, site, Guide(start, line.tx, line.ty), lead)
+
+
+@dataclass(frozen=True, eq=False)
+class SlideJoint:
+    """The equations of a slide: the told point stays on its line [m], the member does not turn on it [rad].
+
+    lead  where travel is counted from, on the member of the guide
+    """
+
+    name: str
+    site: Site
+    line: Guide
+    lead: Site
+    on_pin: bool = False
+    angular = (False, True)
+    word = "slide"
+
+    @property
+    def members(self) -> tuple[int, int]:
+        return self.site.member, self.line.member
+
+    @property
+    def _slot(self) -> SlotJoint:
+        return SlotJoint(self.name, self.site, self.line)
+
+    def gap(self, at: Poses) -> tuple[Value, Value]:
+        a, b = self.members
+        return (*self._slot.gap(at), at.s[a] * at.c[b] - at.c[a] * at.s[b])
+
+    def slope(self, at: Poses) -> tuple[Row, Row]:
+        a, b = self.members
+        # d sin(turn) = cos(turn), which is 1 where the joint holds
+        return (*self._slot.slope(at), ((a, TURN, 1.0), (b, TURN, -1.0)))
+
+    def travel(self, at: Poses) -> Value:
+        return SlotJoint(self.name, self.site, Guide(self.lead, self.line.tx, self.line.ty)).travel(at)
+
+    def travel_slope(self, at: Poses) -> Row:
+        return SlotJoint(self.name, self.site, Guide(self.lead, self.line.tx, self.line.ty)).travel_slope(at)
+
+    def mark(self, at: Poses) -> Mark:
+        x, y = at.spot(self.site)
+        tx, ty = at.turned(self.line.member, self.line.tx, self.line.ty)
+        return Mark("slide", ((float(x), float(y)),), (float(tx), float(ty)), self.name)

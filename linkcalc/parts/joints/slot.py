@@ -1,0 +1,85 @@
+"""Slot: a point of one member guided along a straight line of another, or of the ground.
+
+The force is square to the line and nothing else. A roller support is a slot on the ground.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+
+from linkcalc.parts import fields
+from linkcalc.parts.contract import TURN, Mark, Poses, Row, Site, Sketch, Value, X, Y
+from linkcalc.parts.lines import Guide, Line, guide
+from linkcalc.words import word
+
+
+@word("joint", "slot")
+@dataclass(frozen=True)
+class Slot:
+    """A point of one member guided along a line of another, free to turn: force square to the line only."""
+
+    point: str = fields.name("point", "the point that is guided")
+    along: Line = fields.line("line of the slot: two points, or an angle from the x axis as drawn")
+    on: str = fields.name("member", "the member that has the slot", "ground")
+    of: str | None = fields.name("member", "the member that the point belongs to, if several carry it", None)
+
+    def joints(self, name: str, sketch: Sketch) -> Iterator[SlotJoint]:
+        alone = self.of is not None or len(sketch.carriers(self.point)) < 2
+        yield SlotJoint(
+            name, sketch.site(self.point, self.of), guide(sketch, self.along, self.on, self.point), not alone
+        )
+
+
+@dataclass(frozen=True, eq=False)
+class SlotJoint:
+    """The equation of a slot; gap = how far the point stands to the left of the line [m]."""
+
+    name: str
+    site: Site
+    line: Guide
+    on_pin: bool = False
+    angular = (False,)
+    word = "slot"
+
+    @property
+    def members(self) -> tuple[int, int]:
+        return self.site.member, self.line.member
+
+    def _from_start(self, at: Poses) -> tuple[Value, Value, Value, Value]:
+        (px, py), (qx, qy) = at.spot(self.site), at.spot(self.line.start)
+        tx, ty = at.turned(self.line.member, self.line.tx, self.line.ty)
+        return px - qx, py - qy, tx, ty
+
+    def gap(self, at: Poses) -> tuple[Value]:
+        dx, dy, tx, ty = self._from_start(at)
+        return (tx * dy - ty * dx,)
+
+    def slope(self, at: Poses) -> tuple[Row]:
+        dx, dy, tx, ty = self._from_start(at)
+        return (_row(self, at, dx, dy, -ty, tx),)
+
+    def travel(self, at: Poses) -> Value:
+        dx, dy, tx, ty = self._from_start(at)
+        return tx * dx + ty * dy
+
+    def travel_slope(self, at: Poses) -> Row:
+        dx, dy, tx, ty = self._from_start(at)
+        return _row(self, at, dx, dy, tx, ty)
+
+    def mark(self, at: Poses) -> Mark:
+        x, y = at.spot(self.site)
+        tx, ty = at.turned(self.line.member, self.line.tx, self.line.ty)
+        return Mark("slot", ((float(x), float(y)),), (float(tx), float(ty)), self.name)
+
+
+def _row(joint: SlotJoint, at: Poses, dx: Value, dy: Value, nx: Value, ny: Value) -> Row:
+    """Derivative of n·(p - q), with n fixed in the member of the line."""
+    a, b = joint.site.member, joint.line.member
+    ua, va = at.arm(joint.site)
+    ub, vb = at.arm(joint.line.start)
+    # turning the line's member turns n as well as its start: together the moment arm of n at p about the origin
+    return (
+        (a, X, nx), (a, Y, ny), (a, TURN, ua * ny - va * nx),
+        (b, X, -nx), (b, Y, -ny), (b, TURN, (vb + dy) * nx - (ub + dx) * ny),
+    )  # fmt: skip

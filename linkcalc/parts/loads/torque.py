@@ -1,0 +1,45 @@
+"""Torque: a couple on a member, against the ground or another member."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from linkcalc.parts import fields
+from linkcalc.parts.contract import Mark, Poses, Push, Site, Size, Sketch, Value
+from linkcalc.words import word
+
+
+@word("load", "torque_on")
+@dataclass(frozen=True)
+class Torque:
+    """A torque on a member, counter-clockwise plus; with `against` the other member takes it the other way."""
+
+    torque_on: str = fields.name("member", "the member that is turned")
+    against: str = fields.name("member", "the member that takes it the other way", "ground")
+    size: Size | None = fields.size("moment", "how large; left out for the one unknown", None)
+
+    def pusher(self, name: str, sketch: Sketch) -> TorquePush:
+        size = None if self.size is None else sketch.value(self.size, "moment")
+        member = sketch.member(self.torque_on)
+        return TorquePush(name, member, sketch.member(self.against), size, Site(member, 0.0, 0.0))
+
+
+@dataclass(frozen=True, eq=False)
+class TorquePush:
+    """What a torque does, for 1 N m."""
+
+    name: str
+    member: int
+    against: int
+    size: Value | None
+    site: Site
+    on_pins: tuple[str, str] = ("", "")
+    kind = "moment"
+    word = "torque"
+
+    def push(self, at: Poses) -> tuple[Push, ...]:  # noqa: ARG002
+        return (self.member, 0.0, 0.0, 1.0), (self.against, 0.0, 0.0, -1.0)
+
+    def mark(self, at: Poses) -> Mark:
+        x, y = at.spot(self.site)
+        return Mark("torque", ((float(x), float(y)),), name=self.name)

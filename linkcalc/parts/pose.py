@@ -1,0 +1,87 @@
+"""Where the members are: position and turn of each, and the points they carry.
+
+A member's frame has its origin at the member's first point and is parallel to the ground axes in the drawing
+pose, so the turn is zero there. Numbers are Python floats where they never change (the ground, exact zeros)
+and arrays ``(case, variant, pose)`` where they do; that difference is what constant folding lives on.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+Array = NDArray[np.float64]
+Value = float | Array
+X, Y, TURN = 0, 1, 2
+
+
+@dataclass(frozen=True, eq=False)
+class Site:
+    """A point as one member carries it.
+
+    member  index of the member, 0 is the ground
+    u, v    [m] place in the member's own frame, float or (1, variant, 1)
+    """
+
+    member: int
+    u: Value
+    v: Value
+
+
+class Poses:
+    """All members in a batch of poses; index 0 is the ground.
+
+    x, y     [m]  place of each member's origin, float or (case, variant, pose)
+    c, s     [-]  cosine and sine of its turn
+    gravity  [m/s2]  field of gravity (gx, gy), float or (case, 1, 1)
+
+    >>> at = Poses(x=[0.0, 1.0], y=[0.0, 2.0], c=[1.0, 0.0], s=[0.0, 1.0])
+    >>> at.spot(Site(1, 0.5, 0.0))
+    (1.0, 2.5)
+    """
+
+    def __init__(
+        self,
+        x: Sequence[Value],
+        y: Sequence[Value],
+        c: Sequence[Value],
+        s: Sequence[Value],
+        gravity: tuple[Value, Value] = (0.0, -9.80665),
+    ):
+        self.x, self.y, self.c, self.s, self.gravity = x, y, c, s, gravity
+        self._arms: dict[int, tuple[Site, Value, Value]] = {}
+
+    def arm(self, site: Site) -> tuple[Value, Value]:
+        """From the member's origin to the site, ground axes [m]; worked out once a batch."""
+        known = self._arms.get(id(site))
+        if known is not None:
+            return known[1], known[2]
+        c, s, u, v = self.c[site.member], self.s[site.member], site.u, site.v
+        a: Value
+        b: Value
+        if _zero(v):
+            a, b = (0.0, 0.0) if _zero(u) else (c * u, s * u)
+        elif _zero(u):
+            a, b = -(s * v), c * v
+        else:
+            a, b = c * u - s * v, s * u + c * v
+        self._arms[id(site)] = (site, a, b)
+        return a, b
+
+    def spot(self, site: Site) -> tuple[Value, Value]:
+        """The site in ground axes [m]."""
+        a, b = self.arm(site)
+        return self.x[site.member] + a, self.y[site.member] + b
+
+    def turned(self, member: int, u: Value, v: Value) -> tuple[Value, Value]:
+        """A direction that is fixed in a member, in ground axes."""
+        c, s = self.c[member], self.s[member]
+        return c * u - s * v, s * u + c * v
+
+
+def _zero(value: Any) -> bool:
+    return isinstance(value, float) and value == 0.0
