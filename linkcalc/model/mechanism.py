@@ -13,7 +13,7 @@ from typing import Any
 from linkcalc.parts.contract import Size
 
 GROUND = "ground"
-DRAWN, LIMIT = "drawn", "limit"
+DRAWN, LOWER, UPPER = "drawn", "lower limit", "upper limit"
 
 
 @dataclass(frozen=True)
@@ -78,14 +78,14 @@ class Stroke:
     """The range of motion that is stepped through.
 
     along  a coordinate part: Turn, Distance, Travel
-    start  where it begins ("from" in a file): a size, "drawn" or "limit"
-    stop   where it ends ("to" in a file): a size or "limit"
+    start  where it begins ("from" in a file): a size, "drawn", "lower limit" or "upper limit"
+    stop   where it ends ("to" in a file): a size, "lower limit" or "upper limit": as far as it goes
     poses  how many poses, both ends counted
     """
 
     along: Any
     start: Size = DRAWN
-    stop: Size = LIMIT
+    stop: Size = UPPER
     poses: int = 61
 
 

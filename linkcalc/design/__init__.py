@@ -1,0 +1,1 @@
+"""The questions that a designer asks, one file each."""

@@ -1,0 +1,185 @@
+"""What a question returns: frozen dataclasses of named arrays in SI, with what they mean beside them.
+
+Arrays carry their components first, then always the batch (case, variant, pose), each of size 1 if idle.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass, field, fields
+from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+from linkcalc.model.mechanism import Mechanism
+from linkcalc.parts.contract import Mark
+
+Array = NDArray[np.float64]
+SCHEMA = 1
+
+
+def quantity(kind: str, *, axes: tuple[str, ...], text: str) -> Any:
+    """A field that is an array. kind = "force", "moment", "angle", "length", "number", or "drive", "effort",
+    "load" where the model decides; axes = names of its axes; text = the head of its column, its axis, its key."""
+    return field(metadata={"quantity": kind, "axes": axes, "text": text})
+
+
+def quantities(answer: Any) -> dict[str, Mapping[str, Any]]:
+    """The array fields of an answer: name -> metadata."""
+    return {f.name: f.metadata for f in fields(answer) if "quantity" in f.metadata}
+
+
+BATCH = ("case", "variant", "pose")
+
+
+@dataclass(frozen=True)
+class Bearing:
+    """One member's side of a joint: where that member feels its force.
+
+    joint   name of the joint (a pin is named by its point)
+    word    its kind: "pin", "slot", "slide", "weld"
+    member  the member that feels it, "ground" included
+    """
+
+    joint: str
+    word: str
+    member: str
+
+
+@dataclass(frozen=True)
+class Event:
+    """Something that happens at an exact pose.
+
+    kind      "largest", "smallest", "reversal", "dead point", "limit"
+    quantity  what it happens to, in the words of the requirements: "effort", "force ratio", "force at C", "strut"
+    case      name of the load case, "" if it is the same for all
+    drive     [rad or m] value of the stepped coordinate, found by root finding, not by sampling
+    value     SI; nan if the event has none
+    value_kind  kind of the value ("force", "moment", "number", ...)
+    """
+
+    kind: str
+    quantity: str
+    case: str
+    drive: float
+    value: float
+    value_kind: str
+
+
+@dataclass(frozen=True)
+class Verdict:
+    """A requirement judged at its worst pose.
+
+    worst  SI value there; limit  SI; kind  of both; drive  [rad or m]; nan where the model has no stroke
+    """
+
+    name: str
+    text: str
+    holds: bool
+    worst: float
+    limit: float
+    kind: str
+    case: str
+    drive: float
+
+
+@dataclass(frozen=True)
+class Caveat:
+    """A warning that belongs to the answer: what a designer must not miss.
+
+    item  what it is about: "stroke", "effort", a joint, a member
+    """
+
+    item: str
+    text: str
+
+
+@dataclass(frozen=True)
+class Checks:
+    """How well the answer satisfies its own equations, each the worst over the whole batch.
+
+    closure      largest gap of a joint over the size of the mechanism [-]
+    equilibrium  largest unbalanced force of a member over the largest force [-]
+    virtual_work difference of the effort from equilibrium and from velocities, over the effort's size [-]
+    """
+
+    closure: float
+    equilibrium: float
+    virtual_work: float
+
+
+@dataclass(frozen=True)
+class StrokeAnswer:
+    """The stroke of a mechanism: effort, load, ratios and every joint force at each pose.
+
+    Units are SI; ``kinds`` tells which kind of size effort, load and drive are. A frame or a mechanism without
+    stroke has one pose and a drive of nan. A failed entry is nan and has a status other than 0.
+    """
+
+    mechanism: Mechanism
+    cases: tuple[str, ...]
+    kinds: Mapping[str, str]  # "drive", "effort", "load" -> kind; a missing key: the model has none
+    drive_name: str  # "turn of handle", "travel of ram"; "" without a stroke
+    bearings: tuple[Bearing, ...]
+    two_force: tuple[str, ...]  # names of the two-force members, in the order of `axial`
+    drive: Array = quantity("drive", axes=("one", "variant", "pose"), text="stepped coordinate")
+    effort: Array = quantity("effort", axes=BATCH, text="effort")
+    load: Array = quantity("load", axes=BATCH, text="load")
+    tare_effort: Array = quantity("effort", axes=BATCH, text="tare effort")
+    force_ratio: Array = quantity("number", axes=BATCH, text="force ratio")
+    ideal_ratio: Array = quantity("number", axes=BATCH, text="ideal ratio")
+    force: Array = quantity("force", axes=("bearing", "xy", *BATCH), text="force of the joint on the member")
+    moment: Array = quantity("moment", axes=("bearing", *BATCH), text="moment of the joint on the member")
+    axial: Array = quantity("force", axes=("two-force member", *BATCH), text="axial force, tension plus")
+    x: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="x of the member's first point")
+    y: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="y of the member's first point")
+    turn: Array = quantity("angle", axes=("member", "one", "variant", "pose"), text="turn from the drawing pose")
+    status: NDArray[np.int8] = field()
+    checks: Checks = field()
+    events: tuple[Event, ...] = ()
+    verdicts: tuple[Verdict, ...] = ()
+    caveats: tuple[Caveat, ...] = ()
+    marks: tuple[Mark, ...] = ()  # joints and loads in the drawing pose
+
+    # -- reading one thing out of the arrays ------------------------------------------------------------
+
+    def bearing(self, joint: str, member: str) -> int:
+        """Index of a member's side of a joint; KeyError with the known ones if there is none."""
+        for i, b in enumerate(self.bearings):
+            if (b.joint, b.member) == (joint, member):
+                return i
+        known = ", ".join(f"{b.joint} on {b.member}" for b in self.bearings)
+        raise KeyError(f"no force of {joint} on {member}; known: {known}")
+
+    def force_on(self, joint: str, member: str) -> Array:
+        """(2, case, variant, pose) [N] force of a joint on a member, ground axes."""
+        return self.force[self.bearing(joint, member)]
+
+    def moment_on(self, joint: str, member: str) -> Array:
+        """(case, variant, pose) [N m] moment of a joint on a member, about the joint's place."""
+        return self.moment[self.bearing(joint, member)]
+
+    def joint_force(self, joint: str) -> Array:
+        """(case, variant, pose) [N] the largest resultant that any member feels at a joint."""
+        sides = [np.hypot(*self.force[i]) for i, b in enumerate(self.bearings) if b.joint == joint]
+        if not sides:
+            raise KeyError(f"no joint {joint}; known: {', '.join(self.joints)}")
+        largest: Array = np.max(sides, axis=0)
+        return largest
+
+    def axial_in(self, member: str) -> Array:
+        """(case, variant, pose) [N] axial force of a two-force member, tension plus."""
+        if member not in self.two_force:
+            raise KeyError(f"{member} is no two-force member; they are: {', '.join(self.two_force) or 'none'}")
+        return self.axial[self.two_force.index(member)]
+
+    @property
+    def joints(self) -> tuple[str, ...]:
+        """Names of the joints, each once, in order."""
+        return tuple(dict.fromkeys(b.joint for b in self.bearings))
+
+    @property
+    def holds(self) -> bool:
+        """True if no requirement fails."""
+        return all(v.holds for v in self.verdicts)
