@@ -1,0 +1,225 @@
+"""The mechanism as drawn, in SI: sizes reckoned, points drawn, members with their frames and sites.
+
+This is what parts ask (`parts.contract.Sketch`), and what the mechanics start from.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from contextlib import contextmanager
+from typing import Any
+
+import numpy as np
+
+from linkcalc.faults import Fault, Faults, fault
+from linkcalc.model.dimensions import Overrides, evaluate
+from linkcalc.model.formulas import to_si
+from linkcalc.model.gather import Gather
+from linkcalc.model.mechanism import GROUND, Mechanism, Member
+from linkcalc.model.order import ordered
+from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
+from linkcalc.parts.contract import Joint, Pusher, Site, Size, Travelled, Value
+from linkcalc.parts.points import NoPlace
+from linkcalc.words import nearest
+
+Place = tuple[Value, Value]
+
+
+class Drawing:
+    """A mechanism laid out in its drawing pose; everything in SI.
+
+    Values are Python floats, or (1, variant, 1) where they hang on an override given as an array.
+
+    mechanism  what is drawn
+    members    names of the members, "ground" first (index 0), the others as in the file
+    origins    [m] for each member the drawn place (x, y) of its first point, where its frame has its origin; the
+               frame is parallel to the ground axes in the drawing pose. (0.0, 0.0) for the ground
+    points     [m] name -> drawn place (x, y)
+    size       [m] the largest extent of the drawing with all dimensions at their own sizes
+    pins       point -> PinGroup, for every point where members are pinned together
+    joints     the numeric joints: pins first, then slots, slides, welds by name
+    """
+
+    def __init__(self, mechanism: Mechanism, overrides: Overrides | None = None):
+        """Lay out a mechanism; `overrides` puts other values [SI] in place of dimensions.
+
+        Raises Faults, each telling its item: sizes or constructions that give nothing, unknown names.
+        """
+        self.mechanism = mechanism
+        self._dimensions = evaluate(mechanism, overrides)
+        self.members: tuple[str, ...] = (GROUND, *(m for m in mechanism.members if m != GROUND))
+        self._index = {name: index for index, name in enumerate(self.members)}
+        self._carriers: dict[str, tuple[str, ...]] = {}
+        for name, member in mechanism.members.items():
+            for point in dict.fromkeys(member.points):
+                self._carriers[point] = (*self._carriers.get(point, ()), name)
+        self._sites: dict[tuple[str, int], Site] = {}
+        self._centres: dict[str, Site] = {}
+        self._joint_list: tuple[Joint, ...] | None = None
+        self.points: dict[str, Place] = {}
+        self._draw()
+        self.origins: list[Place] = [(0.0, 0.0)]
+        for name in self.members[1:]:
+            with _located("members", name):
+                self.origins.append(self.point(self.first_point(name)))
+        self.pins: dict[str, PinGroup] = pin_groups(mechanism, self._carriers)
+        self.size: float = Drawing(mechanism).size if overrides else self._extent()
+
+    # what parts ask
+
+    def value(self, size: Size, kind: str) -> Value:
+        """A size as written -> SI. Raises Faults."""
+        return to_si(size, kind, self.mechanism.units, self._dimensions)
+
+    def point(self, name: str) -> Place:
+        """[m] the drawn place of a point. Raises Faults."""
+        if name not in self.points:
+            raise fault((), f"unknown point {name!r}", nearest(name, self.mechanism.points))
+        return self.points[name]
+
+    def site(self, point: str, member: str | None = None) -> Site:
+        """A point as a member carries it, always the same object for the same two. Without a member: the pin
+        itself, by its hub; a point that nobody carries belongs to the ground. Raises Faults."""
+        index = self.member(self.hub(point) if member is None else member)
+        if (point, index) not in self._sites:
+            self._sites[point, index] = self._local(index, self.point(point), point)
+        return self._sites[point, index]
+
+    def member(self, name: str) -> int:
+        """Index of a member, 0 for "ground". Raises Faults."""
+        if name not in self._index:
+            raise fault((), f"unknown member {name!r}", nearest(name, self.members))
+        return self._index[name]
+
+    def carriers(self, point: str) -> tuple[str, ...]:
+        """Members that name the point, in the order of the file."""
+        return self._carriers.get(point, ())
+
+    def hub(self, point: str) -> str:
+        """The member that stands for a pin: the ground if it carries the point, else the first that names it."""
+        carriers = self.carriers(point)
+        return GROUND if GROUND in carriers or not carriers else carriers[0]
+
+    def first_point(self, member: str) -> str:
+        """The point at the origin of the member's frame. Raises Faults: the member has none."""
+        self.member(member)
+        entry = self.mechanism.members.get(member)
+        if entry is None or not entry.points:
+            raise fault((), f"member {member!r} has no points", "name the points it carries")
+        return entry.points[0]
+
+    def own_axis(self, member: str) -> Value:
+        """[rad] direction of the member's own x axis, first to last point as drawn; 0.0 for the ground."""
+        if member == GROUND:
+            return 0.0
+        (ax, ay), (bx, by) = (self.point(p) for p in (self.first_point(member), self._entry(member).points[-1]))
+        return _plain(np.arctan2(by - ay, bx - ax))
+
+    def travelled(self, name: str) -> Travelled:
+        """The slot or slide of that name. Raises Faults."""
+        able: dict[str, Any] = {j.name: j for j in self.joints if hasattr(j, "travel")}
+        if name not in able:
+            raise fault((), f"unknown slot or slide {name!r}", nearest(name, able))
+        found: Travelled = able[name]
+        return found
+
+    # what the engine asks
+
+    @property
+    def joints(self) -> tuple[Joint, ...]:
+        if self._joint_list is None:
+            self._joint_list = tuple(self._joints())
+        return self._joint_list
+
+    def pushers(self) -> dict[tuple[str, str], Pusher]:
+        """Everything that pushes, by (case, name); case "" is there in every case.
+
+        Names: "effort", "load", the names of [loads], "weight of handle". A case brings its own effort under
+        (case, "effort") and what it adds under (case, name). Raises Faults.
+        """
+        return self.assembly().pushers
+
+    def assembly(self) -> Assembly:
+        """Pushers, and what each load case makes of them. Raises Faults."""
+        return assemble(self)
+
+    def mass_site(self, member: str) -> Site:
+        """The centre of mass of a member: the point named for it, else the middle of its path. Raises Faults."""
+        entry = self._entry(member)
+        if entry.centre is not None:
+            return self.site(entry.centre, member)
+        if member not in self._centres:
+            place = _middle([self.point(p) for p in entry.path or entry.points])
+            self._centres[member] = self._local(self.member(member), place)
+        return self._centres[member]
+
+    def _entry(self, member: str) -> Member:
+        self.first_point(member)
+        return self.mechanism.members[member]
+
+    def _local(self, index: int, place: Place, point: str = "") -> Site:
+        """A place in a member's frame. Its first point is exactly at (0.0, 0.0), so that it folds away."""
+        if index == 0:
+            return Site(0, *place)
+        if point == self.first_point(self.members[index]):
+            return Site(index, 0.0, 0.0)
+        x, y = self.origins[index]
+        return Site(index, _plain(place[0] - x), _plain(place[1] - y))
+
+    def _joints(self) -> Iterator[Joint]:
+        for group in self.pins.values():
+            yield from group.joints(self)
+        for word, parts in self.mechanism.joints.items():
+            for name, part in parts.items():
+                with _located(f"{word}s", name):
+                    yield from part.joints(name, self)
+
+    def _draw(self) -> None:
+        """Draw every point after those it needs."""
+        gather, points = Gather(), self.mechanism.points
+        order, circles = ordered({name: construction.needs() for name, construction in points.items()})
+        for circle in circles:
+            gather.add(("points", circle[0]), f"hangs on itself: {' -> '.join(circle)}", "place one of them otherwise")
+        for name in order:
+            needs = points[name].needs()
+            if any(n in points and n not in self.points for n in needs):
+                continue  # what it hangs on is told already
+            with gather.at("points", name):
+                try:
+                    x, y = points[name].place(self)
+                except NoPlace as reason:
+                    raise fault((points[name].word,), str(reason)) from None
+                self.points[name] = _plain(x), _plain(y)
+        gather.raise_any()
+
+    def _extent(self) -> float:
+        places = np.array([place for place in self.points.values()], float).reshape(-1, 2)
+        extent = float(np.max(np.ptp(places, axis=0), initial=0.0))
+        return extent or 1.0
+
+
+@contextmanager
+def _located(*item: str) -> Iterator[None]:
+    """Tell faults raised inside from this item."""
+    try:
+        yield
+    except Faults as found:
+        raise Faults([Fault(item + f.item, f.what, f.wanted) for f in found.faults]) from None
+
+
+def _middle(places: list[Place]) -> Place:
+    """Centre of a line of even weight through the places; the first of them if it has no length."""
+    total: Value = 0.0
+    sum_x: Value = 0.0
+    sum_y: Value = 0.0
+    for (ax, ay), (bx, by) in zip(places, places[1:], strict=False):
+        length = np.hypot(bx - ax, by - ay)
+        total, sum_x, sum_y = total + length, sum_x + length * (ax + bx) / 2, sum_y + length * (ay + by) / 2
+    if np.ndim(total) == 0 and total == 0:
+        return places[0]
+    return sum_x / total, sum_y / total
+
+
+def _plain(value: Value) -> Value:
+    """A single number as a Python float: the sign that it does not change."""
+    return value if np.ndim(value) else float(value)
