@@ -2,13 +2,15 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from dataclasses import replace
+from typing import TypeVar
 
 from linkcalc.faults import Fault, Faults
 
 Item = tuple[str, ...]
+T = TypeVar("T")
 
 
 class Gather:
@@ -29,7 +31,18 @@ class Gather:
         try:
             yield
         except Faults as found:
-            self.faults += [replace(f, item=item + f.item) for f in found.faults]
+            self._keep(found, item)
+
+    def attempt(self, item: Item, read: Callable[[], T], otherwise: T) -> T:
+        """What `read` gives; `otherwise`, with its faults kept, if it raises any."""
+        try:
+            return read()
+        except Faults as found:
+            self._keep(found, item)
+            return otherwise
+
+    def _keep(self, found: Faults, item: Item) -> None:
+        self.faults += [replace(f, item=item + f.item) for f in found.faults]
 
     def touches(self, *item: str) -> bool:
         """True if something beneath this item was found wrong."""

@@ -7,28 +7,42 @@ again changes nothing. ``sketch.py`` turns them into SI numbers.
 from __future__ import annotations
 
 from collections.abc import Mapping
-from dataclasses import dataclass, field
+from dataclasses import MISSING, dataclass, field
 from typing import Any
 
+from linkcalc.parts import fields
 from linkcalc.parts.contract import Size
 
 GROUND = "ground"
+DISTRIBUTIONS = ("normal", "uniform", "triangular")
 DRAWN, LOWER, UPPER = "drawn", "lower limit", "upper limit"
+
+
+def _entry(shape: str, text: str, default: Any = None, **more: Any) -> Any:
+    """A field of the model whose shape is not one of the parts' fields; ``shapes.py`` reads and writes it."""
+    meta = {"kind": shape, "text": text, **more}
+    if default is dict:
+        return field(default_factory=dict, metadata=meta)
+    return field(metadata=meta) if default is MISSING else field(default=default, metadata=meta)
+
+
+def _unit(of: str, default: str) -> Any:
+    return _entry("unit", f"unit of a bare {of}, and of answers", default, unit=of)
 
 
 @dataclass(frozen=True)
 class Units:
     """What bare numbers mean, kind by kind, and the units that answers come in."""
 
-    length: str = "mm"
-    angle: str = "deg"
-    force: str = "N"
-    mass: str = "kg"
-    moment: str = "N*m"
-    stress: str = "MPa"
-    stiffness: str = "N/mm"
-    acceleration: str = "m/s^2"
-    number: str = ""
+    length: str = _unit("length", "mm")
+    angle: str = _unit("angle", "deg")
+    force: str = _unit("force", "N")
+    mass: str = _unit("mass", "kg")
+    moment: str = _unit("moment", "N*m")
+    stress: str = _unit("stress", "MPa")
+    stiffness: str = _unit("stiffness", "N/mm")
+    acceleration: str = _unit("acceleration", "m/s^2")
+    number = ""
 
     def of(self, kind: str) -> str:
         """The unit of a kind of size: "length" -> "mm"."""
@@ -44,9 +58,11 @@ class Dimension:
     distribution  how the copies scatter within the tolerance: "normal" (3 sigma), "uniform", "triangular"
     """
 
-    size: Size
-    tol: Size | tuple[Size, Size] | None = None
-    distribution: str = "normal"
+    size: Size = _entry("own size", "how large: a bare number is a length, anything else carries its unit", MISSING)
+    tol: Size | tuple[Size, Size] | None = _entry("tol", "plus and minus, or lower and upper departure")
+    distribution: str = fields.choice(DISTRIBUTIONS, "how copies scatter within the tolerance", "normal")
+
+    short = "size"
 
 
 @dataclass(frozen=True)
@@ -59,18 +75,20 @@ class Member:
     centre  point of its centre of mass; else the middle of the path (mass spread evenly along it)
     """
 
-    points: tuple[str, ...]
-    path: tuple[str, ...] = ()
-    mass: Size | None = None
-    centre: str | None = None
+    points: tuple[str, ...] = fields.names("point", "the points it carries, in order", least=0, most=None)
+    path: tuple[str, ...] = fields.names("point", "the line of its body", (), least=2, most=None)
+    mass: Size | None = fields.size("mass", "own mass", None, sign="not minus")
+    centre: str | None = fields.name("point", "point at its centre of mass; else the middle of the path", None)
+
+    short = "points"
 
 
 @dataclass(frozen=True)
 class Gravity:
     """Field of gravity; weights of members and hung masses follow it."""
 
-    size: Size = "9.80665 m/s^2"
-    direction: Size = "-90 deg"
+    size: Size = fields.size("acceleration", "how strong", "9.80665 m/s^2", sign="not minus")
+    direction: Size = fields.size("angle", "where it pulls, from the x axis", "-90 deg")
 
 
 @dataclass(frozen=True)
@@ -83,10 +101,20 @@ class Stroke:
     poses  how many poses, both ends counted
     """
 
-    along: Any
-    start: Size = DRAWN
-    stop: Size = UPPER
-    poses: int = 61
+    along: Any = _entry("coordinate", "what is stepped", MISSING)
+    start: Size = fields.size("", "where it begins", DRAWN, words=(DRAWN, LOWER, UPPER))
+    stop: Size = fields.size("", "where it ends", UPPER, words=(LOWER, UPPER))
+    poses: int = fields.count("how many poses, both ends counted", 61, least=2, most=100_000)
+
+    keys = {"start": "from", "stop": "to"}  # noqa: RUF012
+
+
+@dataclass(frozen=True)
+class GravityChange:
+    """How a load case changes the field of gravity: turned, counter-clockwise plus, and scaled."""
+
+    turn: Size = fields.size("angle", "turns it, counter-clockwise plus", 0)
+    scale: float = _entry("factor", "factor on its strength", 1.0)
 
 
 @dataclass(frozen=True)
@@ -97,16 +125,14 @@ class Case:
     drop          loads that are left out
     add           loads that only this case has, by name
     effort        an effort that stands in for the model's
-    gravity_turn  turns the field of gravity, counter-clockwise plus
-    gravity_scale factor on the field of gravity
+    gravity       how the field of gravity is turned and scaled
     """
 
-    scale: Mapping[str, float] = field(default_factory=dict)
-    drop: tuple[str, ...] = ()
-    add: Mapping[str, Any] = field(default_factory=dict)
-    effort: Any = None
-    gravity_turn: Size = 0
-    gravity_scale: float = 1.0
+    scale: Mapping[str, float] = _entry("factors", "factors on loads, by name", dict)
+    drop: tuple[str, ...] = fields.names("load", "loads left out", (), least=0, most=None)
+    add: Mapping[str, Any] = _entry("named parts", "loads that only this case has", dict, family="load")
+    effort: Any = _entry("part", "an effort in place of the model's", family="load", asks="size")
+    gravity: GravityChange = _entry("table", "the field of gravity turned or scaled", GravityChange(), of=GravityChange)
 
 
 @dataclass(frozen=True)
@@ -125,18 +151,18 @@ class Mechanism:
     source    file it was read from, "" if built in Python; not compared
     """
 
-    title: str = ""
-    units: Units = Units()
-    dimensions: Mapping[str, Dimension] = field(default_factory=dict)
-    points: Mapping[str, Any] = field(default_factory=dict)
-    members: Mapping[str, Member] = field(default_factory=dict)
-    joints: Mapping[str, Mapping[str, Any]] = field(default_factory=dict)
-    gravity: Gravity = Gravity()
-    effort: Any = None
-    load: Any = None
-    loads: Mapping[str, Any] = field(default_factory=dict)
-    stroke: Stroke | None = None
-    cases: Mapping[str, Case] = field(default_factory=dict)
-    requirements: Mapping[str, str] = field(default_factory=dict)
-    note: str = ""
+    title: str = _entry("text", "shown in answers", "")
+    note: str = _entry("text", "shown in answers", "")
+    units: Units = _entry("table", "what bare numbers mean, and what answers come in", Units(), of=Units)
+    dimensions: Mapping[str, Dimension] = _entry("named tables", "named sizes", dict, of=Dimension)
+    points: Mapping[str, Any] = _entry("named parts", "where things are drawn", dict, family="construction")
+    members: Mapping[str, Member] = _entry("named tables", "rigid parts", dict, of=Member)
+    joints: Mapping[str, Mapping[str, Any]] = _entry("joints", "joints other than pins", dict)
+    gravity: Gravity = _entry("table", "field of gravity", Gravity(), of=Gravity)
+    effort: Any = _entry("part", "what goes in", family="load", asks="size")
+    load: Any = _entry("part", "what comes out or is held", family="load")
+    loads: Mapping[str, Any] = _entry("named parts", "other loads", dict, family="load")
+    stroke: Stroke | None = _entry("table", "what is stepped", of=Stroke)
+    cases: Mapping[str, Case] = _entry("named tables", "load cases", dict, of=Case, blanks=True)
+    requirements: Mapping[str, str] = _entry("named texts", "what must hold", dict, blanks=True)
     source: str = field(default="", compare=False)

@@ -132,7 +132,7 @@ def _case(drawing: Drawing, name: str, case: Case, pushers: Mapping[Key, Pusher]
     }
     own: Key = (name, EFFORT) if (name, EFFORT) in pushers else ("", EFFORT)
     gravity = drawing.mechanism.gravity
-    angle = drawing.value(gravity.direction, "angle") + drawing.value(case.gravity_turn, "angle")
+    angle = drawing.value(gravity.direction, "angle") + drawing.value(case.gravity.turn, "angle")
     down = exact(np.cos(angle)), exact(np.sin(angle))
-    field = drawing.value(gravity.size, "acceleration") * case.gravity_scale
+    field = drawing.value(gravity.size, "acceleration") * case.gravity.scale
     return CaseLoads(name, down, field, own if own in pushers else None, factors)

@@ -7,6 +7,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from contextlib import contextmanager
+from itertools import pairwise
 from typing import Any
 
 import numpy as np
@@ -191,9 +192,10 @@ class Drawing:
                     raise fault((points[name].word,), str(reason)) from None
                 self.points[name] = _plain(x), _plain(y)
         gather.raise_any()
+        self.points = {name: self.points[name] for name in points}
 
     def _extent(self) -> float:
-        places = np.array([place for place in self.points.values()], float).reshape(-1, 2)
+        places = np.array(list(self.points.values()), float).reshape(-1, 2)
         extent = float(np.max(np.ptp(places, axis=0), initial=0.0))
         return extent or 1.0
 
@@ -212,7 +214,7 @@ def _middle(places: list[Place]) -> Place:
     total: Value = 0.0
     sum_x: Value = 0.0
     sum_y: Value = 0.0
-    for (ax, ay), (bx, by) in zip(places, places[1:], strict=False):
+    for (ax, ay), (bx, by) in pairwise(places):
         length = np.hypot(bx - ax, by - ay)
         total, sum_x, sum_y = total + length, sum_x + length * (ax + bx) / 2, sum_y + length * (ay + by) / 2
     if np.ndim(total) == 0 and total == 0:
