@@ -1,0 +1,1 @@
+"""What linkcalc is timed against, and the linkages that every competitor solves."""
