@@ -84,14 +84,14 @@ class Joint(Protocol):
     name, word   what the file calls it, and its kind
     members      indices of the members it joins; the first is the one its force acts on
     site         where its force is told, carried by the first member
-    on_pin       True if the first member's side acts on the pin itself, not on one of several members there
+    on_pin       name of the pin that the first member's side acts on itself, "" if it acts on that member
     angular      one bool a row: True where the gap is an angle [rad], not a length [m]
     """
 
     name: str
     members: tuple[int, ...]
     site: Site
-    on_pin: bool
+    on_pin: str
     angular: tuple[bool, ...]
 
     def gap(self, at: Poses) -> tuple[Value, ...]:
@@ -115,11 +115,11 @@ class Travelled(Protocol):
 
 
 class Pusher(Protocol):
-    """Something that pushes: a force, torque, weight or pair, for a size of 1 (N, N m; a weight for its mass).
+    """Something that pushes: a force, torque, weight or pair.
 
     name, word   what the file calls it, and its kind
-    kind         kind of the size: "force" or "moment"
-    size         SI, float or (1, variant, 1); None while it is the unknown
+    kind         kind of its strength: "force" or "moment"
+    size         as the file gives it, SI (a weight: its mass), float or (1, variant, 1); None for the one unknown
     on_pins      for each entry of its push: the name of the pin that takes it, "" if a member does
     """
 
@@ -128,8 +128,11 @@ class Pusher(Protocol):
     size: Value | None
     on_pins: tuple[str, ...]
 
+    def strength(self, at: Poses) -> Value:
+        """[N] or [N m] how strong it is; not asked of the unknown"""
+
     def push(self, at: Poses) -> tuple[Push, ...]:
-        """What it does to each member, for a size of 1."""
+        """What it does to each member, for a strength of 1."""
 
     def mark(self, at: Poses) -> Mark:
         """How to draw it in a single pose."""

@@ -37,7 +37,8 @@ class Poses:
 
     x, y     [m]  place of each member's origin, float or (case, variant, pose)
     c, s     [-]  cosine and sine of its turn
-    gravity  [m/s2]  field of gravity (gx, gy), float or (case, 1, 1)
+    down     [-]     direction of gravity (x, y), float or (case, 1, 1)
+    field    [m/s2]  strength of gravity, float or (case, 1, 1)
 
     >>> at = Poses(x=[0.0, 1.0], y=[0.0, 2.0], c=[1.0, 0.0], s=[0.0, 1.0])
     >>> at.spot(Site(1, 0.5, 0.0))
@@ -50,9 +51,11 @@ class Poses:
         y: Sequence[Value],
         c: Sequence[Value],
         s: Sequence[Value],
-        gravity: tuple[Value, Value] = (0.0, -9.80665),
+        down: tuple[Value, Value] = (0.0, -1.0),
+        field: Value = 9.80665,
     ):
-        self.x, self.y, self.c, self.s, self.gravity = x, y, c, s, gravity
+        self.x, self.y, self.c, self.s = x, y, c, s
+        self.down, self.field = down, field
         self._arms: dict[int, tuple[Site, Value, Value]] = {}
 
     def arm(self, site: Site) -> tuple[Value, Value]:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 
@@ -51,9 +52,14 @@ class TurnCoordinate:
         angle: Value = self.drawn + np.arctan2(s, c)
         return angle
 
+    @cached_property
+    def _compass(self) -> tuple[Value, Value]:
+        return np.cos(self.drawn), np.sin(self.drawn)
+
     def hold(self, target: Value) -> HeldTurn:
-        turn = target - self.drawn
-        return HeldTurn(self, np.cos(turn), np.sin(turn))
+        # cosine and sine of target - drawn; of many copies only `drawn` is an array, and it is the same at every pose
+        (cd, sd), ct, st = self._compass, np.cos(target), np.sin(target)
+        return HeldTurn(self, ct * cd + st * sd, st * cd - ct * sd)
 
 
 @dataclass(frozen=True, eq=False)

@@ -14,7 +14,7 @@ class PinJoint:
     name: str
     a: Site
     b: Site
-    on_pin: bool = False
+    on_pin: str = ""
     angular = (False, False)
     word = "pin"
 

@@ -1,4 +1,4 @@
-"""Slide: a member guided along a line of another without turning (ram, jaw, collar): force square to the line, and a moment."""
+"""Slide: a member guided along a line of another without turning (ram, jaw, collar)."""
 
 from __future__ import annotations
 
@@ -43,7 +43,7 @@ class SlideJoint:
     site: Site
     line: Guide
     lead: Site
-    on_pin: bool = False
+    on_pin: str = ""
     angular = (False, True)
     word = "slide"
 

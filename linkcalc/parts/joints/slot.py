@@ -26,9 +26,8 @@ class Slot:
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlotJoint]:
         alone = self.of is not None or len(sketch.carriers(self.point)) < 2
-        yield SlotJoint(
-            name, sketch.site(self.point, self.of), guide(sketch, self.along, self.on, self.point), not alone
-        )
+        line = guide(sketch, self.along, self.on, self.point)
+        yield SlotJoint(name, sketch.site(self.point, self.of), line, "" if alone else self.point)
 
 
 @dataclass(frozen=True, eq=False)
@@ -38,7 +37,7 @@ class SlotJoint:
     name: str
     site: Site
     line: Guide
-    on_pin: bool = False
+    on_pin: str = ""
     angular = (False,)
     word = "slot"
 

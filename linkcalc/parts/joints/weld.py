@@ -31,7 +31,7 @@ class WeldJoint:
     name: str
     site: Site
     other: Site
-    on_pin: bool = False
+    on_pin: str = ""
     angular = (False, False, True)
     word = "weld"
 

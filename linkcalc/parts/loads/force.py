@@ -87,6 +87,10 @@ class ForcePush:
     kind = "force"
     word = "force"
 
+    def strength(self, at: Poses) -> Value:  # noqa: ARG002
+        assert self.size is not None
+        return self.size
+
     def push(self, at: Poses) -> tuple[Push, ...]:
         fx, fy = self.aim.direction(at)
         a, b = at.arm(self.site)

@@ -39,6 +39,10 @@ class PairPush:
     kind = "force"
     word = "pair"
 
+    def strength(self, at: Poses) -> Value:  # noqa: ARG002
+        assert self.size is not None
+        return self.size
+
     def push(self, at: Poses) -> tuple[Push, ...]:
         fx, fy = LineAim(self.first, self.second, False).direction(at)
         (a0, b0), (a1, b1) = at.arm(self.first), at.arm(self.second)

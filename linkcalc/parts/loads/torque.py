@@ -37,6 +37,10 @@ class TorquePush:
     kind = "moment"
     word = "torque"
 
+    def strength(self, at: Poses) -> Value:  # noqa: ARG002
+        assert self.size is not None
+        return self.size
+
     def push(self, at: Poses) -> tuple[Push, ...]:  # noqa: ARG002
         return (self.member, 0.0, 0.0, 1.0), (self.against, 0.0, 0.0, -1.0)
 

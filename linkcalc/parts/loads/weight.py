@@ -26,21 +26,24 @@ class Weight:
 
 @dataclass(frozen=True, eq=False)
 class WeightPush:
-    """What a weight does, for 1 kg; its size is the mass [kg]."""
+    """What a weight does, for 1 N; its size is the mass [kg], its strength mass times the field of gravity."""
 
     name: str
     site: Site
-    size: Value | None
+    size: Value
     on_pins: tuple[str] = ("",)
-    kind = "mass"
+    kind = "force"
     word = "weight"
 
+    def strength(self, at: Poses) -> Value:
+        return self.size * at.field
+
     def push(self, at: Poses) -> tuple[Push, ...]:
-        gx, gy = at.gravity
+        dx, dy = at.down
         a, b = at.arm(self.site)
-        return ((self.site.member, gx, gy, a * gy - b * gx),)
+        return ((self.site.member, dx, dy, a * dy - b * dx),)
 
     def mark(self, at: Poses) -> Mark:
         x, y = at.spot(self.site)
-        gx, gy = (float(g) if isinstance(g, float) else float(g.flat[0]) for g in at.gravity)
-        return Mark("weight", ((float(x), float(y)),), (gx, gy), self.name)
+        dx, dy = at.down
+        return Mark("weight", ((float(x), float(y)),), (float(dx), float(dy)), self.name)

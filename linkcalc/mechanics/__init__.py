@@ -1,0 +1,1 @@
+"""Batched computation in SI: poses, joint forces, effort, events. Knows no files, no units, no printing."""

@@ -1,0 +1,167 @@
+"""Statics of closed poses: the effort (or the load) from virtual work, then every joint force from equilibrium.
+
+With the Jacobian J of joints and drive, and Q what pushes: Jᵀ λ + Q = 0. The multipliers λ of the joints are their
+forces; the last one, of the drive, is what the drive would have to hold, and must vanish when the unknown is right.
+The unknown itself follows from the speeds v = dq/d(drive): v·Q = 0. That the last multiplier then is nothing is the
+built-in check of equilibrium against virtual work.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+
+import numpy as np
+from numpy.typing import NDArray
+
+from linkcalc.mechanics.chain import Chain
+from linkcalc.mechanics.motion import Closed, fastest
+from linkcalc.mechanics.pushing import Column, Pushing, column, strength
+from linkcalc.mechanics.state import Status
+from linkcalc.parts.pose import Array, Value
+
+DEAD = 1e-9  # speed of the effort, over the fastest in the mechanism, below which no answer is given
+
+
+@dataclass(frozen=True, eq=False)
+class Balance:
+    """Statics of a batch; arrays (case, variant, pose) or floats, NaN where there is none.
+
+    effort, load  [N] or [N m]; tare is the effort with the load away
+    effort_speed, load_speed  speed of effort and load along their own direction, per unit of the drive
+    multipliers   one a row of the chain: joint forces, then the drive's, which must vanish
+    unbalance     largest generalised force left over, over the largest force that acts
+    disagreement  of equilibrium and virtual work, over the size of the effort
+    status        Status of each entry
+    """
+
+    effort: Value
+    load: Value
+    tare: Value
+    effort_speed: Value
+    load_speed: Value
+    multipliers: list[Value]
+    unbalance: Array
+    disagreement: Array
+    status: NDArray[np.int8]
+
+    @property
+    def force_ratio(self) -> Value:
+        with np.errstate(all="ignore"):
+            return np.divide(self.load, self.effort)
+
+    @property
+    def ideal_ratio(self) -> Value:
+        with np.errstate(all="ignore"):
+            return -np.divide(self.effort_speed, self.load_speed)
+
+
+def balance(chain: Chain, closed: Closed, pushing: Pushing) -> Balance:
+    """Solve the statics of a batch of closed poses."""
+    at, speed, n = closed.at, closed.speed, chain.columns
+    rest = column(pushing.rest, at, n, unit=False)
+    load_unit = column(pushing.load, at, n, unit=True)
+    effort_unit = column(pushing.effort, at, n, unit=True)
+    rest_power, load_speed, effort_speed = (_power(speed, q) for q in (rest, load_unit, effort_unit))
+    effort: Value = np.nan
+    load: Value = np.nan
+    tare: Value = np.nan
+    dead: NDArray[np.bool_] | None = None
+    with np.errstate(all="ignore"):
+        if pushing.load and not pushing.load_asked:
+            load = strength(pushing.load, at)
+        if pushing.load_asked:
+            effort = strength(pushing.effort, at) if pushing.effort else 0.0
+            load = -np.divide(rest_power + effort * effort_speed, load_speed)
+            dead = _dead(chain, speed, load_unit, load_speed)
+        elif pushing.effort:
+            tare = -np.divide(rest_power, effort_speed)
+            effort = tare - np.divide(load * load_speed, effort_speed) if pushing.load else tare
+            dead = _dead(chain, speed, effort_unit, effort_speed)
+        if dead is not None and dead.any():
+            effort, load, tare = (np.where(dead, np.nan, v) for v in (effort, load, tare))
+        total = _sum(
+            rest, (load, load_unit) if pushing.load else None, (effort, effort_unit) if pushing.effort else None
+        )
+        negative = closed.factored.solve(total, transposed=True)
+        unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
+    multipliers = [-v for v in negative]
+    status = _status(closed, multipliers, dead)
+    return Balance(effort, load, tare, effort_speed, load_speed, multipliers, unbalance, disagreement, status)
+
+
+def _power(speed: Sequence[Value], push: Column) -> Value:
+    """Speed times force, over all coordinates."""
+    total: Value = 0.0
+    if speed:
+        for v, q in zip(speed, push, strict=True):
+            if not (_zero(v) or _zero(q)):
+                total = total + v * q
+    return total
+
+
+def _dead(chain: Chain, speed: Sequence[Value], push: Column, power: Value) -> NDArray[np.bool_]:
+    """Where an effort does no work though the mechanism moves: nothing finite answers there."""
+    force: Value = 0.0
+    for q, size in zip(push, chain.column_size, strict=True):
+        if not _zero(q):
+            force = np.maximum(force, np.abs(q) / size)
+    return np.asarray(np.abs(power) <= DEAD * fastest(chain, speed) * force)
+
+
+def _sum(rest: Column, *more: tuple[Value, Column] | None) -> Column:
+    total = list(rest)
+    for item in more:
+        if item is None:
+            continue
+        size, unit = item
+        for k, q in enumerate(unit):
+            if not _zero(q):
+                total[k] = total[k] + size * q
+    return total
+
+
+def _checks(
+    chain: Chain,
+    entries: Sequence[Value],
+    negative: Sequence[Value],
+    total: Column,
+    effort_unit: Column,
+    effort_speed: Value,
+    effort: Value,
+) -> tuple[Array, Array]:
+    """What is left of the equations of equilibrium, and of the drive's multiplier."""
+    left: Column = [-q if not _zero(q) else 0.0 for q in total]
+    for (i, j), e in zip(chain.places, entries, strict=True):
+        if not _zero(negative[i]):
+            left[j] = left[j] + e * negative[i]
+    most: Value = 1e-300
+    for m, size in zip([*negative, *total], [*(1.0 / chain.row_size), *(1.0 / chain.column_size)], strict=True):
+        if not _zero(m):
+            most = np.maximum(most, np.abs(m) if size == 1.0 else np.abs(m) * size)
+    over: Value = 0.0
+    for m, size in zip(left, 1.0 / chain.column_size, strict=True):
+        if not _zero(m):
+            over = np.maximum(over, np.abs(m) if size == 1.0 else np.abs(m) * size)
+    unbalance = np.asarray(over / most, float)
+    if not any(not _zero(q) for q in effort_unit) or chain.rows == chain.joint_rows:
+        return unbalance, np.zeros_like(unbalance)
+    work = np.maximum(np.abs(effort * effort_speed), DEAD * most * (chain.size if chain.row_size[-1] != 1.0 else 1.0))
+    return unbalance, np.asarray(np.abs(negative[-1]) / work, float)
+
+
+def _status(closed: Closed, multipliers: Sequence[Value], dead: NDArray[np.bool_] | None) -> NDArray[np.int8]:
+    shape = np.broadcast_shapes(closed.fine.shape, *(np.shape(m) for m in multipliers))
+    status = np.zeros(shape, np.int8)
+    finite = np.ones(shape, bool)
+    for m in multipliers:
+        finite &= np.isfinite(m)
+    status[~finite] = Status.SINGULAR
+    if dead is not None:
+        status[np.broadcast_to(dead, shape)] = Status.DEAD_POINT
+    status[~np.broadcast_to(closed.fine, shape)] = Status.OUT_OF_REACH
+    return status
+
+
+def _zero(value: Value) -> bool:
+    return isinstance(value, float) and value == 0.0

@@ -1,0 +1,117 @@
+"""The kinematic chain: which row and column belongs to whom, and the stacked equations of all joints.
+
+Columns are x, y, turn of member 1, of member 2, ...; rows are those of the joints in order, then the one of the drive.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Protocol
+
+import numpy as np
+
+from linkcalc.mechanics.eliminate import Elimination, Factored
+from linkcalc.parts.contract import TURN, Drive, Joint, Row
+from linkcalc.parts.pose import Array, Poses, Value
+
+
+class Holder(Protocol):
+    """What can be stepped or held: a coordinate."""
+
+    kind: str
+
+    def value(self, at: Poses) -> Value: ...
+    def hold(self, target: Value) -> Drive: ...
+
+
+@dataclass(frozen=True, eq=False)
+class Equations:
+    """The chain's equations in a batch of poses.
+
+    gaps     one a row, zero when it holds [m] or [rad]
+    entries  of the Jacobian, at ``Chain.places``
+    worst    (case, variant, pose) largest gap over the size of the mechanism
+    """
+
+    gaps: list[Value]
+    entries: list[Value]
+    worst: Array
+
+
+class Chain:
+    """Joints between moving members, and at most one coordinate that is driven.
+
+    moving  number of moving members
+    size    [m] size of the mechanism: what lengths are compared with
+    """
+
+    def __init__(self, moving: int, joints: Sequence[Joint], coordinate: Holder | None, size: float):
+        self.moving, self.joints, self.coordinate, self.size = moving, tuple(joints), coordinate, size
+        self.columns = 3 * moving
+        self.first_row: list[int] = []
+        angular: list[bool] = []
+        for joint in self.joints:
+            self.first_row.append(len(angular))
+            angular.extend(joint.angular)
+        self.joint_rows = len(angular)
+        if coordinate is not None:
+            angular.append(coordinate.kind == "angle")
+        self.rows = len(angular)
+        self.row_size = np.where(angular, size, 1.0)
+        self.column_size = np.where(np.arange(self.columns) % 3 == TURN, size, 1.0)
+        self._gather: list[list[int]] | None = None
+        self._elimination: Elimination | None = None
+
+    def equations(self, at: Poses, drive: Drive | None) -> Equations:
+        """All gaps and slopes of a batch of poses."""
+        gaps: list[Value] = []
+        rows: list[Row] = []
+        for joint in self.joints:
+            gaps.extend(joint.gap(at))
+            rows.extend(joint.slope(at))
+        if drive is not None:
+            gaps.append(drive.gap(at))
+            rows.append(drive.slope(at))
+        return Equations(gaps, self._entries(rows), self._worst(gaps))
+
+    def _entries(self, rows: Sequence[Row]) -> list[Value]:
+        flat = [value for row in rows for member, _, value in row if member]
+        if self._gather is None:
+            self._lay_out(rows)
+            assert self._gather is not None
+        return [flat[g[0]] if len(g) == 1 else sum((flat[k] for k in g[1:]), flat[g[0]]) for g in self._gather]
+
+    def _lay_out(self, rows: Sequence[Row]) -> None:
+        """Which flat values make up which entry: two of one row at one column add up."""
+        at: dict[tuple[int, int], list[int]] = {}
+        k = 0
+        for i, row in enumerate(rows):
+            for member, which, _ in row:
+                if member:
+                    at.setdefault((i, 3 * (member - 1) + which), []).append(k)
+                    k += 1
+        self.places = list(at)
+        self._gather = list(at.values())
+
+    def _worst(self, gaps: Sequence[Value]) -> Array:
+        worst: Value = 0.0
+        for gap, size in zip(gaps, self.row_size / self.size, strict=True):
+            part = np.abs(gap) if size == 1.0 else np.abs(gap) * size
+            worst = np.maximum(worst, part)
+        out: Array = np.asarray(worst, dtype=float)
+        return out
+
+    def factor(self, entries: Sequence[Value]) -> Factored:
+        """Factors of the square Jacobian. Raises NoPlan where it is singular throughout."""
+        if self._elimination is None:
+            self._elimination = Elimination(self.columns, self.places, self.row_size, self.column_size)
+        return self._elimination.factor(entries)
+
+    def dense(self, entries: Sequence[Value]) -> Array:
+        """(rows, columns) Jacobian of the first pose of a batch, rows and columns scaled to pure numbers."""
+        out = np.zeros((self.rows, self.columns))
+        for (i, j), e in zip(self.places, entries, strict=True):
+            out[i, j] = float(np.asarray(e).flat[0])
+        scaled: Array = out * self.row_size[:, None] / self.column_size
+        return scaled

@@ -1,0 +1,145 @@
+"""Solve a batch of sparse systems and their transposes: replay the plan, and LAPACK where a pivot is small.
+
+A fixed order of pivots can meet a small one at some poses; those entries, and only those, are solved densely.
+If they become many, the order is planned anew from the batch at hand.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+
+import numpy as np
+from numpy.typing import NDArray
+
+from linkcalc.mechanics.plan import NoPlan, Plan, signature
+from linkcalc.parts.pose import Array, Value
+
+_MANY = 0.02  # part of a batch with weak pivots that calls for a new plan
+
+
+class Elimination:
+    """Solver for one pattern of entries; plans lie ready from one batch to the next.
+
+    size      rows and columns
+    places    (row, column) of each entry, no place twice
+    row_size, column_size  (size,) what rows are multiplied and columns divided by before sizes are compared
+    """
+
+    def __init__(self, size: int, places: Sequence[tuple[int, int]], row_size: Array, column_size: Array):
+        self.size, self.places = size, tuple(places)
+        self.row_size, self.column_size = row_size, column_size
+        self._plans: dict[tuple[float | None, ...], Plan] = {}
+
+    def factor(self, entries: Sequence[Value]) -> Factored:
+        """Factors of a batch of matrices. Raises NoPlan if they are singular throughout."""
+        key = signature(entries)
+        plan = self._plans.get(key)
+        fresh = plan is None
+        if plan is None:
+            plan = self._plan(entries, key)
+        factors, weak, sign = self._replay(plan, entries)
+        if weak is not None and not fresh and np.mean(weak) > _MANY:
+            try:
+                plan = self._plan(entries, key)
+                factors, weak, sign = self._replay(plan, entries)
+            except NoPlan:
+                pass
+        return Factored(self, plan, factors, entries, weak, sign)
+
+    def _plan(self, entries: Sequence[Value], key: tuple[float | None, ...]) -> Plan:
+        plan = self._plans[key] = Plan(self.size, self.places, entries, self.row_size, self.column_size)
+        return plan
+
+    def _replay(
+        self, plan: Plan, entries: Sequence[Value]
+    ) -> tuple[list[Value], NDArray[np.bool_] | None, NDArray[np.bool_]]:
+        with np.errstate(all="ignore"):
+            factors, pivots = plan.factor(entries)
+        negative: NDArray[np.bool_] = np.zeros((1, 1, 1), bool)
+        weak: NDArray[np.bool_] | None = None
+        for pivot, floor in pivots:
+            negative = negative ^ np.less(pivot, 0.0)
+            bad = ~(np.abs(pivot) >= floor)
+            if bad.any():
+                weak = bad if weak is None else weak | bad
+        return factors, weak, negative if plan.sign > 0 else ~negative
+
+    def dense(self, entries: Sequence[Value], where: tuple[NDArray[np.intp], ...], shape: tuple[int, ...]) -> Array:
+        """(picked, size, size) matrices of some entries of the batch."""
+        out = np.zeros((where[0].size, self.size, self.size))
+        for (i, j), e in zip(self.places, entries, strict=True):
+            out[:, i, j] = e if isinstance(e, float) else np.broadcast_to(e, shape)[where]
+        return out
+
+
+class Factored:
+    """Factors of a batch.
+
+    negative  (1, variant, pose) True where the determinant is below zero: it changes on another branch
+    """
+
+    def __init__(
+        self,
+        owner: Elimination,
+        plan: Plan,
+        factors: list[Value],
+        entries: Sequence[Value],
+        weak: NDArray[np.bool_] | None,
+        negative: NDArray[np.bool_],
+    ):
+        self._owner, self._plan, self._factors, self._entries = owner, plan, factors, entries
+        self.negative = negative
+        self._where: tuple[NDArray[np.intp], ...] = ()
+        if weak is not None:
+            self._shape = weak.shape
+            self._where = np.nonzero(weak)
+            self._matrices = owner.dense(entries, self._where, self._shape)
+            self.negative = np.array(np.broadcast_to(negative, self._shape))
+            self.negative[self._where] = _negative_determinant(self._matrices)
+
+    def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]:
+        """x of A x = b, or of its transpose.
+
+        rhs  size entries, floats or arrays that broadcast with the batch; NaN comes out where A is singular
+        """
+        with np.errstate(all="ignore"):
+            x = self._plan.solve(self._factors, rhs, transposed=transposed)
+        return self._mended(x, rhs, transposed) if self._where else x
+
+    def _mended(self, x: list[Value], rhs: Sequence[Value], transposed: bool) -> list[Value]:
+        shape = np.broadcast_shapes(self._shape, *(np.shape(b) for b in rhs))
+        where = (slice(None), *self._where[1:])
+        picked = [np.broadcast_to(b, shape)[where] for b in rhs]  # each (case, picked)
+        b = np.moveaxis(np.stack(picked), 2, 0)  # (picked, size, case)
+        a = np.swapaxes(self._matrices, 1, 2) if transposed else self._matrices
+        row = self._owner.column_size if transposed else self._owner.row_size
+        column = self._owner.row_size if transposed else self._owner.column_size
+        if transposed:
+            row, column = 1.0 / row, 1.0 / column
+        solved = _solve_each(a * row[:, None] / column, b * row[:, None]) / column[:, None]
+        out: list[Value] = []
+        for k in range(len(x)):
+            full = np.array(np.broadcast_to(x[k], shape))
+            full[where] = solved[:, k, :].T
+            out.append(full)
+        return out
+
+
+def _solve_each(a: Array, b: Array) -> Array:
+    try:
+        return np.linalg.solve(a, b)
+    except np.linalg.LinAlgError:
+        out = np.full(b.shape, np.nan)
+        for k in range(len(a)):
+            try:
+                out[k] = np.linalg.solve(a[k], b[k])
+            except np.linalg.LinAlgError:
+                continue
+        return out
+
+
+def _negative_determinant(a: Array) -> NDArray[np.bool_]:
+    finite = np.isfinite(a).all(axis=(1, 2))
+    sign = np.zeros(len(a))
+    sign[finite] = np.linalg.slogdet(a[finite])[0]
+    return sign < 0

@@ -1,0 +1,132 @@
+"""The stroke of one mechanism: where it begins and ends, the way there, and its poses."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.faults import Fault, Faults
+from linkcalc.mechanics.mesh import Mesh
+from linkcalc.mechanics.prepare import Ready
+from linkcalc.mechanics.walk import Node, Walk, walk
+from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
+from linkcalc.parts.contract import Size
+from linkcalc.parts.pose import Array
+
+
+class OutOfReach(ArithmeticError):
+    """A value of the drive that the mechanism cannot come to. All drives in [rad or m].
+
+    end     "from" or "to": which end of the stroke
+    wanted  the value; last  how far it came
+    limit   the limit of motion; nan: the motion is not determined beyond `last`
+    why     which members stand in line at the limit, "" if none do
+    """
+
+    def __init__(self, end: str, wanted: float, last: float, limit: float, why: str):
+        super().__init__(f"{end}: {wanted} not reached, stopped at {last}")
+        self.end, self.wanted, self.last, self.limit, self.why = end, wanted, last, limit, why
+
+
+_SHORT = 1e-9  # of the stroke: how far short of a limit of motion its last pose stands
+_FAR = 10.0  # sizes of the mechanism that a length may run before it counts as without limit
+
+
+@dataclass(frozen=True, eq=False)
+class Path:
+    """The way of the nominal mechanism through its stroke.
+
+    drawn        [rad or m] drive in the drawing pose
+    start, stop  [rad or m] ends of the stroke
+    approach     nodes from the drawing pose to the start
+    nodes        nodes from start to stop
+    limits       limits of motion that were met, [rad or m]
+    passed       pairs of drives between which a change point was passed
+    """
+
+    drawn: float
+    start: float
+    stop: float
+    approach: tuple[Node, ...]
+    nodes: tuple[Node, ...]
+    limits: tuple[float, ...]
+    passed: tuple[tuple[float, float], ...]
+
+    @property
+    def mesh(self) -> Mesh:
+        return Mesh(np.array([n.drive for n in self.nodes]), [n.pose for n in self.nodes])
+
+    def poses(self, count: int) -> Array:
+        """(count) evenly spread values of the drive."""
+        return np.linspace(self.start, self.stop, count) if self.start != self.stop else np.full(1, self.start)
+
+
+def lay_path(ready: Ready) -> Path:
+    """Walk through the stroke. Raises OutOfReach, and Faults if it begins at the limit where it should end."""
+    stroke = ready.drawing.mechanism.stroke
+    coordinate = ready.chain.coordinate
+    assert stroke is not None and coordinate is not None
+    drawn = float(np.asarray(coordinate.value(ready.start.at)).flat[0])
+    angle = coordinate.kind == "angle"
+    fixed = [ready.drawing.value(s, coordinate.kind) for s in (stroke.start, stroke.stop) if s not in _WORDS]
+    if angle and stroke.start not in _WORDS:
+        drawn += 2 * np.pi * round((float(np.asarray(fixed[0]).flat[0]) - drawn) / (2 * np.pi))
+    here = Node(drawn, ready.start)
+    far = 2 * np.pi if angle else _FAR * ready.chain.size
+    first = _to(ready, here, stroke.start, far, "from")
+    begin = first.nodes[-1]
+    second = _to(ready, begin, stroke.stop, far, "to")
+    limits = tuple(w.limit for w in (first, second) if w.stopped == "limit")
+    stop = second.nodes[-1].drive
+    if abs(stop - begin.drive) < 1e-12 * (1.0 if angle else ready.chain.size) and stroke.stop in _WORDS:
+        raise Faults(
+            Fault(("stroke", "to"), "the stroke begins at the limit of motion where it ends", "give another end")
+        )
+    return Path(drawn, begin.drive, stop, first.nodes, second.nodes, limits, second.passed)
+
+
+_WORDS = (DRAWN, LOWER, UPPER)
+
+
+def _to(ready: Ready, start: Node, end: Size, far: float, key: str) -> Walk:
+    if end == DRAWN:
+        return Walk((start,), "", np.nan, ())
+    assert ready.chain.coordinate is not None
+    wordy = end in (LOWER, UPPER)
+    if wordy:
+        target = start.drive + (far if end == UPPER else -far)
+    else:
+        target = float(np.asarray(ready.drawing.value(end, ready.chain.coordinate.kind)).flat[0])
+    way = walk(ready.chain, start, target)
+    if way.stopped == "limit" and (wordy or abs(way.limit - target) <= _SHORT * abs(target - start.drive)):
+        short = way.limit - _SHORT * (way.limit - start.drive)
+        nodes = tuple(n for n in way.nodes if abs(n.drive - start.drive) < abs(short - start.drive))
+        last = walk(ready.chain, nodes[-1] if nodes else start, short)
+        return Walk((*nodes[:-1], *last.nodes) if nodes else last.nodes, "limit", way.limit, way.passed)
+    if way.stopped:
+        last = way.nodes[-1]
+        raise OutOfReach(key, target, last.drive, way.limit, _in_line(ready, last) if way.stopped == "limit" else "")
+    return way
+
+
+def _in_line(ready: Ready, node: Node) -> str:
+    """Which two members stand in line at a pin, as links of a chain do at its dead points."""
+    drawing = ready.drawing
+    best, text = 0.02, ""
+    for point, pin in drawing.pins.items():
+        ways: list[tuple[str, float, float]] = []
+        for member in pin.members:
+            ends = [p for p in drawing.mechanism.members[member].points if p in drawing.pins and p != point]
+            if member == drawing.members[0] or len(ends) != 1:
+                continue
+            (ax, ay) = node.pose.at.spot(drawing.site(point, member))
+            (bx, by) = node.pose.at.spot(drawing.site(ends[0], member))
+            dx, dy = (float(np.asarray(v).flat[0]) for v in (bx - ax, by - ay))
+            ways.append((member, dx, dy))
+        for i, (a, ux, uy) in enumerate(ways):
+            for b, vx, vy in ways[:i]:
+                sine = abs(ux * vy - uy * vx) / (np.hypot(ux, uy) * np.hypot(vx, vy))
+                if sine < best:
+                    best, text = sine, f"{b} and {a} stand in line at {point}"
+    return text

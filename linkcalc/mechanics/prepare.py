@@ -1,0 +1,134 @@
+"""From a drawing to a chain that can be solved: freedoms counted and judged, the coordinate to step chosen."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.faults import Fault, Faults
+from linkcalc.mechanics.chain import Chain
+from linkcalc.mechanics.freedom import Freedom, freedom, motion_of
+from linkcalc.mechanics.limit import Place
+from linkcalc.mechanics.motion import Closed, close
+from linkcalc.mechanics.plan import NoPlan
+from linkcalc.mechanics.pushing import Pushing, pushing
+from linkcalc.model.sketch import Drawing
+from linkcalc.parts.pose import Poses, Value
+
+
+@dataclass(frozen=True, eq=False)
+class Ready:
+    """A mechanism ready to be solved.
+
+    chain     joints, with the coordinate that is stepped, or one that is held where there is no stroke
+    start     the drawing pose, closed; (1, variant, 1)
+    pushing   loads of all cases
+    steps     True if there is a stroke
+    """
+
+    drawing: Drawing
+    chain: Chain
+    start: Closed
+    pushing: Pushing
+    steps: bool
+
+
+def prepare(drawing: Drawing) -> Ready:
+    """Raises Faults: too many or too few freedoms, effort missing or idle, drawn in a dead point of the drive."""
+    mechanism = drawing.mechanism
+    loads = pushing(drawing.assembly())
+    at = _drawn(drawing, loads)
+    moving = len(drawing.members) - 1
+    if moving == 0:
+        raise Faults(Fault(("members",), "only the ground is there", "name at least one member that moves"))
+    coordinate = mechanism.stroke.along.coordinate(drawing) if mechanism.stroke else None
+    chain = Chain(moving, drawing.joints, coordinate, drawing.size)
+    counted = chain.columns - chain.joint_rows
+    asked = loads.effort_asked or loads.load_asked
+    wanted = 1 if coordinate is not None or asked else 0
+    if counted != wanted:
+        raise Faults(_misfit(drawing, freedom(chain, at), wanted))
+    if coordinate is None and wanted:
+        way = motion_of(chain, at)
+        k = int(np.argmax(np.abs(way)))
+        coordinate = Place(k // 3 + 1, k % 3)
+        chain = Chain(moving, drawing.joints, coordinate, drawing.size)
+    try:
+        drive = None if coordinate is None else coordinate.hold(_shaped(coordinate.value(at)))
+        start = close(chain, at, drive)
+    except NoPlan:
+        found = freedom(chain, at)
+        if found.free == wanted and mechanism.stroke:
+            raise Faults(_dead_drive(drawing)) from None
+        raise Faults(_misfit(drawing, found, wanted)) from None
+    if not bool(np.any(start.fine)):
+        raise Faults(Fault(("points",), "the drawing pose does not close", "check the points that slots guide"))
+    if mechanism.stroke and not asked:
+        what = "no effort" if not loads.effort else "nothing is asked: effort and load both have a size"
+        raise Faults(Fault(("effort",), what, "leave out the size of the effort (or of the load)"))
+    return Ready(drawing, chain, start, loads, mechanism.stroke is not None)
+
+
+def _drawn(drawing: Drawing, loads: Pushing) -> Poses:
+    x: list[Value] = [0.0]
+    y: list[Value] = [0.0]
+    c: list[Value] = [1.0]
+    s: list[Value] = [0.0]
+    for ox, oy in drawing.origins[1:]:
+        x.append(_shaped(ox))
+        y.append(_shaped(oy))
+        c.append(_shaped(1.0))
+        s.append(_shaped(0.0))
+    return Poses(x, y, c, s, loads.down, loads.field)
+
+
+def _shaped(value: Value) -> Value:
+    return value if np.ndim(value) == 3 else np.full((1, 1, 1), float(value))
+
+
+def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
+    """What is wrong with the freedoms, and what to do about it."""
+    faults: list[Fault] = []
+    movers = [drawing.members[m] for m in found.movers]
+    joints = ", ".join(found.repeated)
+    driven = "the stroke" if drawing.mechanism.stroke else "the effort"
+    if found.special and found.counted == wanted:
+        return [
+            Fault(
+                ("points",),
+                f"the drawing pose is a special one: joints {joints} line up there and leave {_number(found.free)}",
+                "draw it a little off that pose",
+            )
+        ]
+    if found.free > wanted:
+        spare = found.free - wanted
+        takes = f", of which {driven} takes one" if wanted else ""
+        what = f"{_number(found.free)}{takes}: {', '.join(movers)} can move"
+        cure = "give the model an effort" if not wanted and spare == 1 else "hold them with a pin, slot, slide or weld"
+        faults.append(Fault(("members", movers[0] if movers else "ground"), what, cure))
+    if found.excess:
+        what = f"held {found.excess} time{'s' if found.excess > 1 else ''} more than needed, among joints {joints}"
+        faults.append(
+            Fault(("members",), what, "turn one of these pins into a slot along the line, or leave one joint out")
+        )
+    if found.free < wanted:
+        faults.append(
+            Fault(("members",), f"nothing can move, yet {driven} wants one degree of freedom",
+                  "leave out a joint, or leave out the effort for a frame")
+        )  # fmt: skip
+    return faults
+
+
+def _number(freedoms: int) -> str:
+    return f"{freedoms} degree{'s' if freedoms != 1 else ''} of freedom"
+
+
+def _dead_drive(drawing: Drawing) -> Fault:
+    stroke = drawing.mechanism.stroke
+    assert stroke is not None
+    return Fault(
+        ("stroke", stroke.along.word),
+        "cannot be driven from the drawing pose, which is a dead point of this coordinate",
+        "step another coordinate, or draw the mechanism off the dead point",
+    )

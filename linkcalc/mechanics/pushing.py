@@ -1,0 +1,127 @@
+"""What pushes, case by case, gathered for the whole batch: the effort, the load, and all the rest."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.model.parts_list import EFFORT, LOAD, Assembly
+from linkcalc.parts.contract import Pusher
+from linkcalc.parts.pose import Poses, Value
+
+Column = list[Value]
+
+
+@dataclass(frozen=True, eq=False)
+class Acting:
+    """A pusher with its factor in each case: float if the same in all, else (case, 1, 1)."""
+
+    pusher: Pusher
+    factor: Value
+
+
+@dataclass(frozen=True, eq=False)
+class Pushing:
+    """Everything that pushes in a model.
+
+    cases    names of the cases, ("",) if the model has none
+    effort   the effort; of several, one for each of some cases; empty for a frame
+    load     the load; empty if there is none
+    rest     all other loads and weights
+    down, field  direction [-] and strength [m/s2] of gravity, float or (case, 1, 1)
+    """
+
+    cases: tuple[str, ...]
+    effort: tuple[Acting, ...]
+    load: tuple[Acting, ...]
+    rest: tuple[Acting, ...]
+    down: tuple[Value, Value]
+    field: Value
+
+    @property
+    def effort_asked(self) -> bool:
+        """True if the effort is the unknown."""
+        return any(a.pusher.size is None for a in self.effort)
+
+    @property
+    def load_asked(self) -> bool:
+        """True if the load is the unknown."""
+        return any(a.pusher.size is None for a in self.load)
+
+    @property
+    def all(self) -> tuple[Acting, ...]:
+        return (*self.effort, *self.load, *self.rest)
+
+
+def pushing(assembly: Assembly) -> Pushing:
+    """Gather the pushers of all cases."""
+    cases = assembly.cases
+    efforts: list[Acting] = []
+    loads: list[Acting] = []
+    rest: list[Acting] = []
+    for key, pusher in assembly.pushers.items():
+        if key[1] == EFFORT:
+            factor = _by_case([1.0 if c.effort == key else 0.0 for c in cases])
+            efforts.append(Acting(pusher, factor))
+            continue
+        # a load that is asked for is what it is: a factor on it would only scale the answer
+        factors = [c.factors.get(key, 0.0) if pusher.size is not None else 1.0 for c in cases]
+        (loads if key == ("", LOAD) else rest).append(Acting(pusher, _by_case(factors)))
+    down = (_stacked([c.down[0] for c in cases]), _stacked([c.down[1] for c in cases]))
+    field = _stacked([c.field for c in cases])
+    used = [a for a in efforts if not (isinstance(a.factor, float) and a.factor == 0.0)]
+    return Pushing(tuple(c.name for c in cases), tuple(used), tuple(loads), tuple(rest), down, field)
+
+
+def strength(acting: Sequence[Acting], at: Poses) -> Value:
+    """[N] or [N m] how strong the effort or load is in each case."""
+    total: Value = 0.0
+    for a in acting:
+        total = total + a.factor * a.pusher.strength(at)
+    return total
+
+
+def column(acting: Sequence[Acting], at: Poses, columns: int, *, unit: bool) -> Column:
+    """What they do to the coordinates of the members: (columns) generalised forces [N] and [N m].
+
+    unit  for a strength of 1; else for their own strength and factor
+    """
+    out: Column = [0.0] * columns
+    for a in acting:
+        # of the factors of alternatives only "acts in this case or not" counts
+        acts = _plain(np.sign(np.abs(a.factor))) if len(acting) > 1 else 1.0
+        size = acts if unit else a.factor * a.pusher.strength(at)
+        for member, *parts in a.pusher.push(at):
+            if not member:
+                continue
+            for which, part in enumerate(parts):
+                if not _zero(part) and not _zero(size):
+                    k = 3 * (member - 1) + which
+                    out[k] = out[k] + _product(size, part)
+    return out
+
+
+def _product(a: Value, b: Value) -> Value:
+    return b if isinstance(a, float) and a == 1.0 else a * b
+
+
+def _zero(value: Value) -> bool:
+    return isinstance(value, float) and value == 0.0
+
+
+def _by_case(values: Sequence[float]) -> Value:
+    if len(set(values)) == 1:
+        return float(values[0])
+    return np.array(values, float).reshape(-1, 1, 1)
+
+
+def _stacked(values: Sequence[Value]) -> Value:
+    if all(isinstance(v, float) for v in values):
+        return _by_case([float(v) for v in values])
+    return np.concatenate(np.broadcast_arrays(*(np.reshape(v, (1, -1, 1)) for v in values)), axis=0)
+
+
+def _plain(value: Value) -> Value:
+    return value if np.ndim(value) else float(value)

@@ -1,0 +1,94 @@
+"""From multipliers to forces: what each joint does to each member, three members on a pin included.
+
+Every side of a joint is told as force and moment about the joint's place, on the member that feels it. For a pin of
+several members the hub's force follows from the balance of the pin itself, which may carry loads of its own.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+
+from linkcalc.mechanics.chain import Chain
+from linkcalc.mechanics.pushing import Acting, Pushing, strength
+from linkcalc.parts.contract import TURN, Joint, X, Y
+from linkcalc.parts.pose import Poses, Value
+
+
+@dataclass(frozen=True, eq=False)
+class Side:
+    """One member's side of a joint.
+
+    joint, word  name and kind of the joint
+    member       index of the member that feels it; -1 if the pin itself does
+    pin          name of that pin, "" otherwise
+    fx, fy       [N] force on it, ground axes
+    moment       [N m] moment on it, about the joint's place
+    x, y         [m] that place
+    """
+
+    joint: str
+    word: str
+    member: int
+    pin: str
+    fx: Value
+    fy: Value
+    moment: Value
+    x: Value
+    y: Value
+
+
+def reactions(
+    chain: Chain, at: Poses, multipliers: Sequence[Value], pushing: Pushing, effort: Value, load: Value
+) -> list[Side]:
+    """All sides of all joints, in the order of the joints."""
+    sides: list[Side] = []
+    on_pin: dict[str, list[tuple[Value, Value]]] = {}
+    hubs: dict[str, tuple[int, Joint]] = {}
+    for joint, first in zip(chain.joints, chain.first_row, strict=True):
+        x, y = at.spot(joint.site)
+        forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)])
+        hub = joint.word == "pin"
+        for member in dict.fromkeys(joint.members):
+            fx, fy, about_origin = forces.get(member, (0.0, 0.0, 0.0))
+            pin = joint.on_pin if member == joint.members[0] else ""
+            if pin:
+                on_pin.setdefault(pin, []).append((fx, fy))
+                sides.append(Side(joint.name, joint.word, -1, pin, fx, fy, 0.0, x, y))
+            elif hub and member == joint.members[1]:
+                hubs.setdefault(joint.name, (member, joint))
+                on_pin.setdefault(joint.name, []).append((fx, fy))
+            else:
+                moment = 0.0 if hub else about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
+                sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y))
+    for acting, size in _sized(pushing, at, effort, load):
+        pushes = acting.pusher.push(at)
+        for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, pushes, strict=False):
+            if name:
+                on_pin.setdefault(name, []).append((size * fx, size * fy))
+    for name, (member, joint) in hubs.items():
+        x, y = at.spot(joint.site)
+        fx = sum((f for f, _ in on_pin[name]), 0.0)
+        fy = sum((f for _, f in on_pin[name]), 0.0)
+        last = max(k for k, s in enumerate(sides) if s.joint == name)
+        sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, 0.0, x, y))
+    return sides
+
+
+def _on_members(joint: Joint, at: Poses, multipliers: Sequence[Value]) -> dict[int, tuple[Value, Value, Value]]:
+    out: dict[int, list[Value]] = {}
+    for row, m in zip(joint.slope(at), multipliers, strict=True):
+        for member, which, value in row:
+            total = out.setdefault(member, [0.0, 0.0, 0.0])
+            total[which] = total[which] + value * m
+    return {member: (v[X], v[Y], v[TURN]) for member, v in out.items()}
+
+
+def _sized(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
+    """Every pusher with the strength it has in each case."""
+    for acting in pushing.effort:
+        yield acting, (acting.factor * effort if len(pushing.effort) > 1 else effort)
+    for acting in pushing.load:
+        yield acting, load
+    for acting in pushing.rest:
+        yield acting, strength([acting], at)

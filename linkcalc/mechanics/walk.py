@@ -1,0 +1,115 @@
+"""Walk one mechanism through its stroke: steps as large as the motion is smooth, never onto another branch.
+
+A step is taken only if Newton arrives and the two ends agree with their speeds (trapezoid rule); so the curve that is
+followed is resolved, and a jump to another way of assembling is turned down. Where no step is small enough the
+drive has come to a limit of motion, which is then found exactly.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.mechanics.chain import Chain
+from linkcalc.mechanics.limit import limit_beyond
+from linkcalc.mechanics.motion import Closed, along, between, close, fastest
+from linkcalc.mechanics.plan import NoPlan
+from linkcalc.parts.pose import Poses
+
+_SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its length
+_STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
+_SMALLEST = 1e-7  # of the whole way
+_FIRST = 1 / 6
+_STEPS = 5000
+
+
+@dataclass(frozen=True, eq=False)
+class Node:
+    """One closed pose of the walk; drive [rad or m]."""
+
+    drive: float
+    pose: Closed
+
+
+@dataclass(frozen=True)
+class Walk:
+    """The nodes of a walk in the order walked.
+
+    stopped  "" if it came where it should; else why not: "limit" or "change point" or "stuck"
+    limit    drive at the limit of motion, nan if none was met
+    passed   drives between which the determinant changed sign: change points that were passed straight through
+    """
+
+    nodes: tuple[Node, ...]
+    stopped: str
+    limit: float
+    passed: tuple[tuple[float, float], ...]
+
+
+def walk(chain: Chain, start: Node, stop: float) -> Walk:
+    """From a closed pose to a value of the drive, or to the limit of motion if that comes first."""
+    nodes = [start]
+    passed: list[tuple[float, float]] = []
+    whole = stop - start.drive
+    if whole == 0.0:
+        return Walk((start,), "", np.nan, ())
+    step = whole * _FIRST
+    for _ in range(_STEPS):
+        here = nodes[-1]
+        left = stop - here.drive
+        if abs(left) <= abs(whole) * 1e-14:
+            return Walk(tuple(nodes), "", np.nan, tuple(passed))
+        last = abs(step) >= abs(left) * (1 - 1e-9)
+        there = _step(chain, nodes, stop if last else here.drive + step)
+        if there is not None:
+            if there.pose.factored.negative.flat[0] != here.pose.factored.negative.flat[0]:
+                passed.append((here.drive, there.drive))
+            nodes.append(there)
+            step = 1.6 * (there.drive - here.drive)
+            continue
+        step = (left if last else step) / 4
+        if abs(step) < _SMALLEST * abs(whole):
+            met = limit_beyond(chain, here.drive, here.pose, 1 if whole > 0 else -1)
+            return Walk(tuple(nodes), "stuck" if np.isnan(met) else "limit", met, tuple(passed))
+    return Walk(tuple(nodes), "stuck", np.nan, tuple(passed))
+
+
+def _step(chain: Chain, nodes: list[Node], drive: float) -> Node | None:
+    """The next node, or None if the step was too large."""
+    here = nodes[-1]
+    assert chain.coordinate is not None
+    step = drive - here.drive
+    if len(nodes) > 1:
+        before = nodes[-2]
+        span = here.drive - before.drive
+        guess = between(before.pose, here.pose, 1 + step / span, span)
+    else:
+        guess = along(here.pose, step)
+    try:
+        there = close(chain, guess, chain.coordinate.hold(np.full((1, 1, 1), drive)), steps=6)
+    except NoPlan:
+        return None
+    if not there.fine.all() or not all(np.isfinite(v).all() for v in there.speed):
+        return None
+    strict = there.factored.negative.flat[0] != here.pose.factored.negative.flat[0]
+    if _departure(chain, here.pose, there, step) > (_STRICT if strict else _SMOOTH):
+        return None
+    return Node(drive, there)
+
+
+def _departure(chain: Chain, a: Closed, b: Closed, step: float) -> float:
+    """How far the way from a to b is from the mean of their speeds times the step, over the longer of the two ways."""
+    way = _differences(chain, a.at, b.at)
+    mean = [step * (np.asarray(u) + v) / 2 for u, v in zip(a.speed, b.speed, strict=True)]
+    apart = fastest(chain, [w - m for w, m in zip(way, mean, strict=True)])
+    longest = abs(step) * max(float(np.max(fastest(chain, a.speed))), float(np.max(fastest(chain, b.speed))))
+    return float(np.max(apart)) / max(longest, 1e-12 * chain.size)
+
+
+def _differences(chain: Chain, a: Poses, b: Poses) -> list[np.ndarray]:
+    out = []
+    for k in range(1, chain.moving + 1):
+        turn = np.arctan2(b.s[k] * a.c[k] - b.c[k] * a.s[k], b.c[k] * a.c[k] + b.s[k] * a.s[k])
+        out += [np.asarray(b.x[k] - a.x[k]), np.asarray(b.y[k] - a.y[k]), np.asarray(turn)]
+    return out
