@@ -76,22 +76,24 @@ def reckon(
     return found
 
 
-def tolerances(mechanism: Mechanism, gather: Gather | None = None) -> dict[str, Tolerance]:
+def tolerances(mechanism: Mechanism) -> dict[str, Tolerance]:
     """The dimensions that carry a tolerance, for a tolerance study.
-
-    gather  where faults go; raised if left out
 
     Raises Faults: tolerances of another kind than the size, or with the limits crossed.
     """
-    own = gather or Gather()
-    sizes = reckon(mechanism, {}, own)
+    gather = Gather()
+    found = reckon_tolerances(mechanism, reckon(mechanism, {}, gather), gather)
+    gather.raise_any()
+    return found
+
+
+def reckon_tolerances(mechanism: Mechanism, sizes: Mapping[str, Quantity], gather: Gather) -> dict[str, Tolerance]:
+    """The tolerances that can be reckoned; what is wrong with the others goes into `gather`."""
     found: dict[str, Tolerance] = {}
     for name, dimension in mechanism.dimensions.items():
         if dimension.tol is not None and name in sizes:
-            with own.at("dimensions", name, "tol"):
+            with gather.at("dimensions", name, "tol"):
                 found[name] = _tolerance(dimension, sizes[name].dims, mechanism, sizes)
-    if gather is None:
-        own.raise_any()
     return found
 
 

@@ -166,3 +166,8 @@ class Mechanism:
     cases: Mapping[str, Case] = _entry("named tables", "load cases", dict, of=Case, blanks=True)
     requirements: Mapping[str, str] = _entry("named texts", "what must hold", dict, blanks=True)
     source: str = field(default="", compare=False)
+
+
+def strength_kind(load: Any) -> str:
+    """Kind of the strength of an effort or load: "force" or "moment"; a hung mass pulls with a force."""
+    return next((f.metadata["unit"] for f in fields.part_fields(load) if f.name == "size"), "force")

@@ -2,12 +2,13 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from pathlib import Path
 
+from linkcalc.model.check import checked
 from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.source import Source, open_source
-from linkcalc.model.tree import from_tree
 
 
 def read(path: str | Path) -> Mechanism:
@@ -15,7 +16,7 @@ def read(path: str | Path) -> Mechanism:
 
     Raises Faults: everything that is wrong with the file, in its order.
     """
-    return _mechanism(open_source(Path(path)))
+    return replace(_mechanism(open_source(Path(path))), source=str(path))
 
 
 def parse(text: str, name: str = "model") -> Mechanism:
@@ -28,7 +29,7 @@ def parse(text: str, name: str = "model") -> Mechanism:
 
 def _mechanism(source: Source) -> Mechanism:
     gather = Gather()
-    found = from_tree(source.tree, gather)
+    found = checked(source.tree, gather)
     if gather.faults:
         raise source.located(gather.faults)
     return found

@@ -1,0 +1,76 @@
+"""Requirements that ask of what the model has not."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+
+from linkcalc.faults import fault
+from linkcalc.model.check_names import Known
+from linkcalc.model.dimensions import reckon
+from linkcalc.model.gather import Gather
+from linkcalc.model.mechanism import GROUND, Mechanism
+from linkcalc.model.requirements import MEASURES, Requirement, requirement
+from linkcalc.model.sketch import Drawing
+from linkcalc.words import nearest
+
+
+def check_requirements(mechanism: Mechanism, known: Known, drawing: Drawing | None, gather: Gather) -> None:
+    """Each requirement by itself: its text, its names, its sizes. Without a drawing names are only looked up."""
+    sizes = reckon(mechanism, {}, Gather())
+    for name, text in mechanism.requirements.items():
+        with gather.at("requirements", name):
+            one = requirement(name, text)
+            _check_has(one, mechanism)
+            _check_names(one, known)
+            if drawing:
+                _check_told(one, drawing)
+            if not any(gather.touches(table) for table in ("units", "dimensions")):
+                one.limit(mechanism, sizes)
+                one.place(mechanism, sizes)
+
+
+def _check_has(one: Requirement, mechanism: Mechanism) -> None:
+    """The model must have the effort, load and stroke that are spoken of."""
+    needs = {"effort": ("effort",), "load": ("load",), "tare effort": ("effort",)}
+    ratios = {"force ratio": ("effort", "load"), "ideal ratio": ("effort", "load")}
+    for part in (needs | ratios).get(one.quantity, ()):
+        if getattr(mechanism, part) is None:
+            raise fault(
+                (), f"the model has no {part}", f"give it an [{part}]" if part == "effort" else "give it a [load]"
+            )
+    if one.at and mechanism.stroke is None:
+        raise fault((), f"the model has no stroke for 'at {one.at}'", "give it a [stroke], or leave that out")
+
+
+def _check_names(one: Requirement, known: Known) -> None:
+    pools = {"at": ("joint", known.joints + known.points), "in": ("member", known.members[1:])}
+    pools["of"] = ("point, slot or slide", known.joints + known.points)
+    word = MEASURES[one.quantity].word
+    if word:
+        what, pool = pools[word]
+        _known(one.of, what, pool)
+    if one.on:
+        _known(one.on, "member", known.members)
+
+
+def _check_told(one: Requirement, drawing: Drawing) -> None:
+    """The joint must have that force, moment or travel, and the member that side of it."""
+    word = MEASURES[one.quantity].word
+    joints = [joint for joint in drawing.joints if joint.name == one.of]
+    if word == "at":
+        if not joints:
+            raise fault((), f"no members are pinned at {one.of!r}", nearest(one.of, [j.name for j in drawing.joints]))
+        if MEASURES[one.quantity].kind == "moment" and not any(any(joint.angular) for joint in joints):
+            able = [j.name for j in drawing.joints if any(j.angular)]
+            raise fault((), f"{one.of!r} takes no moment", nearest(one.of, able))
+        sides = {drawing.members[m] for joint in joints for m in joint.members}
+        if one.on and one.on not in sides:
+            raise fault((), f"{one.of!r} does not join {one.on!r}", f"it joins {', '.join(sorted(sides))}")
+    if word == "of" and one.of not in drawing.points and not any(hasattr(joint, "travel") for joint in joints):
+        raise fault((), f"{one.of!r} has no travel", "a point, slot or slide is wanted")
+
+
+def _known(name: str, what: str, pool: Iterable[str]) -> None:
+    if name not in pool:
+        hint = "the ground is no member that is drawn or pressed" if name == GROUND else nearest(name, pool)
+        raise fault((), f"unknown {what} {name!r}", hint)

@@ -1,0 +1,64 @@
+"""Every field that a mechanism fills in, with its place in the file: what the checks go over."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import Field
+from typing import Any, NamedTuple
+
+from linkcalc.model.gather import Item
+from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.tree import key_of
+from linkcalc.parts.fields import part_fields
+
+
+class Part(NamedTuple):
+    """A dataclass of the model and its place in the file."""
+
+    item: Item
+    part: Any
+
+    def fields(self) -> Iterator[tuple[Item, Field[Any], Any]]:
+        """Its fields that are given: place, field, value."""
+        for entry in part_fields(self.part):
+            value = getattr(self.part, entry.name)
+            if value is not None:
+                yield (*self.item, key_of(type(self.part), entry)), entry, value
+
+
+def joints(mechanism: Mechanism) -> Iterator[Part]:
+    """Slots, slides, welds."""
+    for word, parts in mechanism.joints.items():
+        for name, part in parts.items():
+            yield Part((f"{word}s", name), part)
+
+
+def loads(mechanism: Mechanism) -> Iterator[Part]:
+    """Effort, load, loads, and what the cases add to them."""
+    for name, part in (("effort", mechanism.effort), ("load", mechanism.load)):
+        if part is not None:
+            yield Part((name,), part)
+    for name, part in mechanism.loads.items():
+        yield Part(("loads", name), part)
+    for case_name, case in mechanism.cases.items():
+        if case.effort is not None:
+            yield Part(("cases", case_name, "effort"), case.effort)
+        for name, part in case.add.items():
+            yield Part(("cases", case_name, "add", name), part)
+
+
+def everything(mechanism: Mechanism) -> Iterator[Part]:
+    """All parts of a mechanism, down to the cases."""
+    for name, part in mechanism.points.items():
+        yield Part(("points", name), part)
+    for name, member in mechanism.members.items():
+        yield Part(("members", name), member)
+    yield from joints(mechanism)
+    yield Part(("gravity",), mechanism.gravity)
+    yield from loads(mechanism)
+    if mechanism.stroke is not None:
+        yield Part(("stroke",), mechanism.stroke)
+        yield Part(("stroke",), mechanism.stroke.along)
+    for name, case in mechanism.cases.items():
+        yield Part(("cases", name), case)
+        yield Part(("cases", name, "gravity"), case.gravity)
