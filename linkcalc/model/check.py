@@ -49,7 +49,7 @@ def checked(tree: Mapping[str, Any], gather: Gather) -> Mechanism:
         check_clashes(mechanism, gather)
     if _clean(gather, *_SHAPE):
         check_joints(mechanism, gather)
-    if _clean(gather, *_LOADS):
+    if _clean(gather, "effort", "load", "loads"):
         check_unknown(mechanism, gather)
         check_cases(mechanism, gather)
     if _clean(gather, *_SHAPE, *_LOADS):

@@ -80,7 +80,7 @@ def _joints(drawing: Drawing, gather: Gather) -> None:
             if not angular and abs(float(gap)) > _CLOSED * drawing.size:
                 off = show(abs(float(gap)), "length", drawing.mechanism.units)
                 wanted = "draw its point on its line"
-                gather.add(items[joint.name], f"it does not close as drawn: {off} are left between", wanted)
+                gather.add(items[joint.name], f"it does not hold as drawn, by {off}", wanted)
 
 
 def _stroke(drawing: Drawing, stroke: Stroke) -> None:

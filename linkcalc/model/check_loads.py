@@ -51,6 +51,8 @@ def check_cases(mechanism: Mechanism, gather: Gather) -> None:
     asked = ("load",) if unsized(mechanism.load) else ()
     for name, case in mechanism.cases.items():
         item = ("cases", name)
+        if gather.touches(*item):
+            continue
         for key, names in (("drop", case.drop), ("scale", tuple(case.scale))):
             for load in names:
                 if load in asked:
@@ -70,7 +72,9 @@ def _check_effort(mechanism: Mechanism, effort: Any, item: Item, gather: Gather)
         wanted = "leave its size out, as the model does" if unsized(model) else "give it a size, as the model does"
         gather.add(item, "it has a size" if unsized(model) else "it has no size", wanted)
     elif strength_kind(effort) != strength_kind(model):
-        gather.add(item, f"it is a {strength_kind(effort)}", f"a {strength_kind(model)} is wanted, as in the model")
+        gather.add(
+            item, f"its size is a {strength_kind(effort)}", f"a {strength_kind(model)} is wanted, as in the model"
+        )
 
 
 def check_stroke(mechanism: Mechanism, gather: Gather) -> None:

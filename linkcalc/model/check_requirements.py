@@ -8,7 +8,7 @@ from linkcalc.faults import fault
 from linkcalc.model.check_names import Known
 from linkcalc.model.dimensions import reckon
 from linkcalc.model.gather import Gather
-from linkcalc.model.mechanism import GROUND, Mechanism
+from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.requirements import MEASURES, Requirement, requirement
 from linkcalc.model.sketch import Drawing
 from linkcalc.words import nearest
@@ -20,13 +20,14 @@ def check_requirements(mechanism: Mechanism, known: Known, drawing: Drawing | No
     for name, text in mechanism.requirements.items():
         with gather.at("requirements", name):
             one = requirement(name, text)
+            if any(gather.touches(table) for table in ("effort", "load", "stroke", "units", "dimensions")):
+                continue  # what it is judged by is not known
             _check_has(one, mechanism)
-            _check_names(one, known)
+            _check_names(one, known, drawing)
             if drawing:
                 _check_told(one, drawing)
-            if not any(gather.touches(table) for table in ("units", "dimensions")):
-                one.limit(mechanism, sizes)
-                one.place(mechanism, sizes)
+            one.limit(mechanism, sizes)
+            one.place(mechanism, sizes)
 
 
 def _check_has(one: Requirement, mechanism: Mechanism) -> None:
@@ -42,8 +43,9 @@ def _check_has(one: Requirement, mechanism: Mechanism) -> None:
         raise fault((), f"the model has no stroke for 'at {one.at}'", "give it a [stroke], or leave that out")
 
 
-def _check_names(one: Requirement, known: Known) -> None:
-    pools = {"at": ("joint", known.joints + known.points), "in": ("member", known.members[1:])}
+def _check_names(one: Requirement, known: Known, drawing: Drawing | None) -> None:
+    joints = tuple(joint.name for joint in drawing.joints) if drawing else known.joints + known.points
+    pools = {"at": ("joint", joints), "in": ("member", known.members[1:])}
     pools["of"] = ("point, slot or slide", known.joints + known.points)
     word = MEASURES[one.quantity].word
     if word:
@@ -58,8 +60,6 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
     word = MEASURES[one.quantity].word
     joints = [joint for joint in drawing.joints if joint.name == one.of]
     if word == "at":
-        if not joints:
-            raise fault((), f"no members are pinned at {one.of!r}", nearest(one.of, [j.name for j in drawing.joints]))
         if MEASURES[one.quantity].kind == "moment" and not any(any(joint.angular) for joint in joints):
             able = [j.name for j in drawing.joints if any(j.angular)]
             raise fault((), f"{one.of!r} takes no moment", nearest(one.of, able))
@@ -72,5 +72,4 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
 
 def _known(name: str, what: str, pool: Iterable[str]) -> None:
     if name not in pool:
-        hint = "the ground is no member that is drawn or pressed" if name == GROUND else nearest(name, pool)
-        raise fault((), f"unknown {what} {name!r}", hint)
+        raise fault((), f"unknown {what} {name!r}", nearest(name, pool))

@@ -12,10 +12,11 @@ from linkcalc.faults import fault
 from linkcalc.model import walk
 from linkcalc.model.check_names import Known
 from linkcalc.model.dimensions import reckon, reckon_tolerances
-from linkcalc.model.formulas import names_in, to_si
+from linkcalc.model.formulas import to_si
 from linkcalc.model.functions import Quantity
 from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.tokens import names_in
 from linkcalc.model.units import show
 from linkcalc.parts.contract import Size
 from linkcalc.words import nearest

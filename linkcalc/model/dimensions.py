@@ -10,11 +10,12 @@ import numpy as np
 from linkcalc.faults import fault
 from linkcalc.model import units as u
 from linkcalc.model.formulas import evaluate as formula
-from linkcalc.model.formulas import names_in, to_si
+from linkcalc.model.formulas import to_si
 from linkcalc.model.functions import FUNCTIONS, Quantity
 from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Dimension, Mechanism
 from linkcalc.model.order import ordered
+from linkcalc.model.tokens import names_in
 from linkcalc.parts.contract import Size, Value
 from linkcalc.words import nearest
 

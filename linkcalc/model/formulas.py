@@ -7,9 +7,8 @@ and nothing can run long. Every value carries its dimension. Floats and arrays o
 from __future__ import annotations
 
 import re
-from collections.abc import Iterable, Mapping
+from collections.abc import Mapping
 from fractions import Fraction
-from typing import NamedTuple
 
 import numpy as np
 
@@ -17,30 +16,14 @@ from linkcalc.faults import fault
 from linkcalc.model import units as u
 from linkcalc.model.functions import FUNCTIONS, Quantity, settled
 from linkcalc.model.mechanism import Units
+from linkcalc.model.tokens import END, Token, tokens_of
 from linkcalc.parts.contract import Size, Value
 from linkcalc.words import nearest
 
-_LONGEST, _DEEPEST, _LARGEST_POWER = 500, 40, 100
-_HUGE = 1e300
-_SPACE = re.compile(r"\s+")
-_FRACTION = re.compile(r"(?:(\d+)\s+)?(\d+)\s*/\s*(\d+)(?![\d.]|[eE][+-]?\d)(?=\s*[A-Za-z_])|(\d+)\s+(\d+)\s*/\s*(\d+)")
-_DECIMAL = re.compile(r"(\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?")
-_NAME = re.compile(r"[^\W\d]\w*")
-_SIGN = re.compile(r"[-+*/^(),]")
-_UNIT_WORD = re.compile(r"\s*([A-Za-z_]+)(?!\w*\s*\()(\s*\^\s*-?\d+(?![\d.])|\d+)?")
-_UNIT_MORE = re.compile(r"(?:(\s*[*/]\s*)|([.-])|(\s+))([A-Za-z_]+)(?!\w*\s*\()(\s*\^\s*-?\d+(?![\d.])|\d+)?")
+_DEEPEST, _LARGEST_POWER = 40, 100
+_REACH = 1e30  # [SI] beyond anything that is drawn; keeps squares and products finite
+_BARE = re.compile(r"\s*[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?\s*")
 _NOTHING: Mapping[str, Quantity] = {}
-
-
-class Token(NamedTuple):
-    """kind: "value", "name", "sign" or "end"; text as folded."""
-
-    kind: str
-    text: str
-    value: Quantity
-
-
-_END = Token("end", "", Quantity(0.0, u.NUMBER))
 
 
 def evaluate(text: str, names: Mapping[str, Quantity] = _NOTHING) -> Quantity:
@@ -57,15 +40,6 @@ def evaluate(text: str, names: Mapping[str, Quantity] = _NOTHING) -> Quantity:
     return _Reader(text, names).whole()
 
 
-def names_in(text: str, known: Iterable[str]) -> tuple[str, ...]:
-    """The names among the known ones that a formula uses; () if it is no formula.
-
-    Raises Faults.
-    """
-    names = {name: Quantity(1.0, u.NUMBER) for name in known}
-    return tuple(dict.fromkeys(t.text for t in _tokens(text, names) if t.kind == "name" and t.text in names))
-
-
 def to_si(size: Size, kind: str, units: Units, names: Mapping[str, Quantity] = _NOTHING) -> Value:
     """A size as written -> SI: a bare number is in the file's unit of that kind, a text carries its own.
 
@@ -78,80 +52,17 @@ def to_si(size: Size, kind: str, units: Units, names: Mapping[str, Quantity] = _
     if isinstance(size, str):
         found = evaluate(size, names)
         if found.dims != u.KINDS[kind]:
-            example += f", or {size.strip()} without quotes" if found.dims == u.NUMBER and _bare(size) else ""
+            example += f", or {size.strip()} without quotes" if found.dims == u.NUMBER and _BARE.fullmatch(size) else ""
             raise fault((), f"{size} is {u.a(found.dims)}", f"{u.a(u.KINDS[kind])} is wanted ({example})")
+        if np.ndim(found.value) == 0 and abs(float(found.value)) > _REACH:
+            raise fault((), f"{size} is beyond all measure", f"{u.a(u.KINDS[kind])} is wanted ({example})")
         return found.value
     if isinstance(size, bool) or not isinstance(size, (int, float)):
         raise fault((), f"{size!r} is no size", f"{u.a(u.KINDS[kind])} is wanted ({example})")
-    value = float(size) * u.unit(units.of(kind)).factor if -_HUGE < size < _HUGE else np.inf
-    if not np.isfinite(value):
-        raise fault((), "not a finite number", f"{u.a(u.KINDS[kind])} is wanted ({example})")
-    return value
-
-
-def _bare(text: str) -> bool:
-    return bool(_DECIMAL.fullmatch(text.strip().lstrip("+-")))
-
-
-def _tokens(text: str, names: Mapping[str, Quantity]) -> list[Token]:
-    if len(text) > _LONGEST:
-        raise fault((), f"a formula of {len(text)} characters", f"at most {_LONGEST} are read")
-    folded, place, tokens = u.fold(text), 0, list[Token]()
-    while place < len(folded):
-        if space := _SPACE.match(folded, place):
-            place = space.end()
-        elif number := _FRACTION.match(folded, place) or _DECIMAL.match(folded, place):
-            if number.re is _FRACTION and tokens and tokens[-1].text in ("/", "^"):
-                raise fault((), f"{text!r} can be read in two ways", f"write ({number[0].strip()} ...) in brackets")
-            unit_end = _unit_end(folded, number.end(), names)
-            unit = u.unit(folded[number.end() : unit_end])
-            tokens.append(Token("value", folded[place:unit_end], Quantity(_number(number) * unit.factor, unit.dims)))
-            place = unit_end
-        elif word := _NAME.match(folded, place):
-            tokens.append(Token("name", word[0], _END.value))
-            place = word.end()
-        elif sign := _SIGN.match(folded, place):
-            tokens.append(Token("sign", sign[0], _END.value))
-            place = sign.end()
-        else:
-            raise fault(
-                (), f"{folded[place]!r} cannot stand in {text!r}", "a number with a unit or a formula is wanted"
-            )
-    return [*tokens, _END]
-
-
-def _number(match: re.Match[str]) -> float:
-    if match.re is _DECIMAL:
-        return float(match[0])
-    whole, over, under = (int(match[i] or match[i + 3] or 0) for i in (1, 2, 3))
-    if under == 0:
-        raise fault((), "division by zero")
-    return float(whole + Fraction(over, under))
-
-
-def _unit_end(text: str, place: int, names: Mapping[str, Quantity]) -> int:
-    """Where the unit of a number ends that stands before `place`; the same place if it has none."""
-    first = _UNIT_WORD.match(text, place)
-    if not first:
-        return place
-    if u.known(first[1], names) is None:
-        if first[1] in names:
-            raise fault((), f"no sign between {text[:place].split()[-1]} and {first[1]}", f"write *{first[1]}")
-        raise fault((), f"unknown unit {first[1]!r}", u.hint(first[1]))
-    place = first.end()
-    while more := _UNIT_MORE.match(text, place):
-        product, tight, space, word = more[1], more[2], more[3], more[4]
-        if u.known(word, names) is None or (tight == "-" and word in names):
-            break
-        if word in names and not space:
-            raise fault(
-                (),
-                f"{word!r} is a unit as well as a dimension of this model in {text!r}",
-                f"for the unit leave out the sign {(product or tight).strip()!r} before it, "
-                "for the dimension put the quantity in brackets: (12 N)*m",
-            )
-        place = more.end()
-    return place
+    if not -_REACH < size < _REACH:
+        what = f"{size} is no number" if size != size or abs(size) == np.inf else "a number beyond all measure"
+        raise fault((), what, f"{u.a(u.KINDS[kind])} is wanted ({example})")
+    return float(size) * u.unit(units.of(kind)).factor
 
 
 class _Reader:
@@ -159,7 +70,7 @@ class _Reader:
 
     def __init__(self, text: str, names: Mapping[str, Quantity]):
         self.text, self.names = text, names
-        self.tokens = _tokens(text, names)
+        self.tokens = tokens_of(text, names)
         self.place = self.depth = 0
 
     def whole(self) -> Quantity:
@@ -187,7 +98,7 @@ class _Reader:
         token = self.next
         what = f"{token.text!r} cannot stand there" if token.kind != "end" else "the formula is not finished"
         wanted = "write a decimal point, not a comma" if re.search(r"\d,\d", self.text) else ""
-        before = self.tokens[self.place - 1] if self.place else _END
+        before = self.tokens[self.place - 1] if self.place else END
         if before.kind == "value" and token.kind in ("name", "value"):
             wanted = f"put a sign between {before.text.strip()!r} and {token.text.strip()!r}"
         raise fault((), f"{what} in {self.text!r}", wanted)

@@ -82,6 +82,9 @@ class Requirement:
         """[rad or m] the value of the stroke it is judged at; None unless one is given. Raises Faults."""
         if self.at in ("", START, END) or mechanism.stroke is None:
             return None
+        if self.at.isalpha() and self.at not in names:
+            wanted = nearest(self.at, (START, END, *names)) + ", or a value of the stroke"
+            raise fault((), f"{self.at!r} is no place in the stroke", wanted.replace("?,", "?"))
         return float(to_si(_size(self.at), mechanism.stroke.along.kind, mechanism.units, names))
 
 
@@ -125,8 +128,8 @@ def _told_of(words: list[str], text: str) -> tuple[str, str, str]:
                 return quantity, rest[1], ""
             if len(rest) == 4 and rest[2] == "on" and measure.word == "at":
                 return quantity, rest[1], rest[3]
-        form = f"{quantity} {measure.word} NAME" if measure.word else quantity
-        form += ", " + f"{form} on MEMBER" if measure.word == "at" else ""
+        form = f"'{quantity} {measure.word} NAME'" if measure.word else f"{quantity!r} alone"
+        form += f" or '{quantity} at NAME on MEMBER'" if measure.word == "at" else ""
         raise fault((), f"{' '.join(words)!r} is no quantity", f"{form} is wanted")
     guess = " ".join(words[:2]) if len(words) > 1 and words[1] not in ("at", "in", "of") else words[0]
     raise fault((), f"unknown quantity {guess!r} in {text!r}", nearest(guess, MEASURES))

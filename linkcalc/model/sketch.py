@@ -14,16 +14,12 @@ import numpy as np
 
 from linkcalc.faults import Fault, Faults, fault
 from linkcalc.model.dimensions import Overrides, evaluate
+from linkcalc.model.drafting import Place, draw, plain
 from linkcalc.model.formulas import to_si
-from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import GROUND, Mechanism, Member
-from linkcalc.model.order import ordered
 from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
 from linkcalc.parts.contract import Joint, Pusher, Site, Size, Travelled, Value
-from linkcalc.parts.points import NoPlace
 from linkcalc.words import nearest
-
-Place = tuple[Value, Value]
 
 
 class Drawing:
@@ -58,7 +54,8 @@ class Drawing:
         self._centres: dict[str, Site] = {}
         self._joint_list: tuple[Joint, ...] | None = None
         self.points: dict[str, Place] = {}
-        self._draw()
+        draw(mechanism.points, self, self.points)
+        self.points = {name: self.points[name] for name in mechanism.points}
         self.origins: list[Place] = [(0.0, 0.0)]
         for name in self.members[1:]:
             with _located("members", name):
@@ -114,7 +111,7 @@ class Drawing:
         if member == GROUND:
             return 0.0
         (ax, ay), (bx, by) = (self.point(p) for p in (self.first_point(member), self._entry(member).points[-1]))
-        return _plain(np.arctan2(by - ay, bx - ax))
+        return plain(np.arctan2(by - ay, bx - ax))
 
     def travelled(self, name: str) -> Travelled:
         """The slot or slide of that name. Raises Faults."""
@@ -165,34 +162,15 @@ class Drawing:
         if point == self.first_point(self.members[index]):
             return Site(index, 0.0, 0.0)
         x, y = self.origins[index]
-        return Site(index, _plain(place[0] - x), _plain(place[1] - y))
+        return Site(index, plain(place[0] - x), plain(place[1] - y))
 
     def _joints(self) -> Iterator[Joint]:
         for group in self.pins.values():
             yield from group.joints(self)
         for word, parts in self.mechanism.joints.items():
             for name, part in parts.items():
-                with _located(f"{word}s", name):
+                with _located(f"{word}s", name), np.errstate(all="ignore"):
                     yield from part.joints(name, self)
-
-    def _draw(self) -> None:
-        """Draw every point after those it needs."""
-        gather, points = Gather(), self.mechanism.points
-        order, circles = ordered({name: construction.needs() for name, construction in points.items()})
-        for circle in circles:
-            gather.add(("points", circle[0]), f"hangs on itself: {' -> '.join(circle)}", "place one of them otherwise")
-        for name in order:
-            needs = points[name].needs()
-            if any(n in points and n not in self.points for n in needs):
-                continue  # what it hangs on is told already
-            with gather.at("points", name):
-                try:
-                    x, y = points[name].place(self)
-                except NoPlace as reason:
-                    raise fault((points[name].word,), str(reason)) from None
-                self.points[name] = _plain(x), _plain(y)
-        gather.raise_any()
-        self.points = {name: self.points[name] for name in points}
 
     def _extent(self) -> float:
         places = np.array(list(self.points.values()), float).reshape(-1, 2)
@@ -220,8 +198,3 @@ def _middle(places: list[Place]) -> Place:
     if np.ndim(total) == 0 and total == 0:
         return places[0]
     return sum_x / total, sum_y / total
-
-
-def _plain(value: Value) -> Value:
-    """A single number as a Python float: the sign that it does not change."""
-    return value if np.ndim(value) else float(value)

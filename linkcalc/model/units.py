@@ -72,14 +72,14 @@ def unit(text: str, kind: str = "") -> Unit:
 
     Raises Faults: unknown word, not a unit, wrong kind.
     """
-    found = _parse(text)
+    found = _parse(text, kind or "length")
     if kind and found.dims != KINDS[kind]:
         raise fault((), f"{text!r} is a unit of {name(found.dims)}", f"a unit of {kind} is wanted, {_examples(kind)}")
     return found
 
 
 @cache
-def _parse(text: str) -> Unit:
+def _parse(text: str, kind: str) -> Unit:
     folded = fold(text).strip()
     factor, dims, place, divide = 1.0, NUMBER, 0, False
     if not folded:
@@ -90,7 +90,7 @@ def _parse(text: str) -> Unit:
             raise fault((), f"{text!r} is not a unit", "a unit is wanted, e.g. mm, N*m or m/s^2")
         base = known(match[1])
         if base is None:
-            raise fault((), f"unknown unit {match[1]!r}", hint(match[1]))
+            raise fault((), f"unknown unit {match[1]!r}", hint(match[1], kind))
         power = int(match[2] or match[3] or 1) * (-1 if divide else 1)
         if abs(power) > 9:
             raise fault((), f"{text!r} is not a unit", "powers go up to 9")
