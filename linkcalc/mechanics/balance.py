@@ -102,11 +102,16 @@ def _power(speed: Sequence[Value], push: Column) -> Value:
 
 def _dead(chain: Chain, speed: Sequence[Value], push: Column, power: Value) -> NDArray[np.bool_]:
     """Where an effort does no work though the mechanism moves: nothing finite answers there."""
+    return np.asarray(np.abs(power) <= DEAD * fastest(chain, speed) * _strongest(chain, push))
+
+
+def _strongest(chain: Chain, push: Column) -> Value:
+    """Largest generalised force, moments counted at the size of the mechanism."""
     force: Value = 0.0
     for q, size in zip(push, chain.column_size, strict=True):
         if not _zero(q):
             force = np.maximum(force, np.abs(q) / size)
-    return np.asarray(np.abs(power) <= DEAD * fastest(chain, speed) * force)
+    return force
 
 
 def _sum(rest: Column, *more: tuple[Value, Column] | None) -> Column:
@@ -165,3 +170,17 @@ def _status(closed: Closed, multipliers: Sequence[Value], dead: NDArray[np.bool_
 
 def _zero(value: Value) -> bool:
     return isinstance(value, float) and value == 0.0
+
+
+def part_of_motion(chain: Chain, closed: Closed, pushing: Pushing) -> tuple[Array, Array]:
+    """Speed of effort and load along their own direction over the fastest motion in the mechanism, 0 at a dead point.
+
+    Two arrays (case, variant, pose); 1 where there is no effort or load.
+    """
+    out = []
+    for acting in (pushing.effort, pushing.load):
+        push = column(acting, closed.at, chain.columns, unit=True)
+        power = np.abs(_power(closed.speed, push))
+        whole = fastest(chain, closed.speed) * _strongest(chain, push)
+        out.append(np.atleast_3d(np.divide(power, whole, out=np.ones(np.shape(whole)), where=np.asarray(whole) > 0)))
+    return out[0], out[1]

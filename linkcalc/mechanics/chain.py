@@ -6,12 +6,12 @@ Columns are x, y, turn of member 1, of member 2, ...; rows are those of the join
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
 from typing import Protocol
 
 import numpy as np
+from numpy.typing import NDArray
 
-from linkcalc.mechanics.eliminate import Elimination, Factored
+from linkcalc.mechanics.eliminate import Elimination, Factors
 from linkcalc.parts.contract import TURN, Drive, Joint, Row
 from linkcalc.parts.pose import Array, Poses, Value
 
@@ -23,20 +23,6 @@ class Holder(Protocol):
 
     def value(self, at: Poses) -> Value: ...
     def hold(self, target: Value) -> Drive: ...
-
-
-@dataclass(frozen=True, eq=False)
-class Equations:
-    """The chain's equations in a batch of poses.
-
-    gaps     one a row, zero when it holds [m] or [rad]
-    entries  of the Jacobian, at ``Chain.places``
-    worst    (case, variant, pose) largest gap over the size of the mechanism
-    """
-
-    gaps: list[Value]
-    entries: list[Value]
-    worst: Array
 
 
 class Chain:
@@ -60,11 +46,12 @@ class Chain:
         self.rows = len(angular)
         self.row_size = np.where(angular, size, 1.0)
         self.column_size = np.where(np.arange(self.columns) % 3 == TURN, size, 1.0)
+        self._gap_size = (self.row_size / size).tolist()
         self._gather: list[list[int]] | None = None
         self._elimination: Elimination | None = None
 
-    def equations(self, at: Poses, drive: Drive | None) -> Equations:
-        """All gaps and slopes of a batch of poses."""
+    def equations(self, at: Poses, drive: Drive | None) -> tuple[list[Value], list[Value]]:
+        """Gaps, one a row, zero when it holds [m] or [rad]; and the entries of the Jacobian, at ``places``."""
         gaps: list[Value] = []
         rows: list[Row] = []
         for joint in self.joints:
@@ -73,7 +60,7 @@ class Chain:
         if drive is not None:
             gaps.append(drive.gap(at))
             rows.append(drive.slope(at))
-        return Equations(gaps, self._entries(rows), self._worst(gaps))
+        return gaps, self._entries(rows)
 
     def _entries(self, rows: Sequence[Row]) -> list[Value]:
         flat = [value for row in rows for member, _, value in row if member]
@@ -94,19 +81,35 @@ class Chain:
         self.places = list(at)
         self._gather = list(at.values())
 
-    def _worst(self, gaps: Sequence[Value]) -> Array:
-        worst: Value = 0.0
-        for gap, size in zip(gaps, self.row_size / self.size, strict=True):
-            part = np.abs(gap) if size == 1.0 else np.abs(gap) * size
-            worst = np.maximum(worst, part)
-        out: Array = np.asarray(worst, dtype=float)
+    def worst(self, gaps: Sequence[Value], live: NDArray[np.bool_] | None = None) -> float:
+        """Largest gap of a batch over the size of the mechanism; inf if one is not a number."""
+        if live is not None:
+            each = self.worst_each(gaps)
+            return float(np.max(each[np.broadcast_to(live, each.shape)], initial=0.0))
+        top = 0.0
+        for gap, size in zip(gaps, self._gap_size, strict=True):
+            # two reductions without a temporary array are cheaper than the largest of absolute values
+            far = abs(gap) if isinstance(gap, float) else max(float(gap.max()), -float(gap.min()))
+            if not far * size <= top:
+                top = far * size if far == far else np.inf
+        return float(top)
+
+    def worst_each(self, gaps: Sequence[Value]) -> Array:
+        """(1, variant, pose) largest gap of each pose over the size of the mechanism; inf for NaN."""
+        worst: Value = np.zeros((1, 1, 1))
+        for gap, size in zip(gaps, self._gap_size, strict=True):
+            worst = np.maximum(worst, np.abs(gap) * size)
+        out: Array = np.where(np.isfinite(worst), worst, np.inf)
         return out
 
-    def factor(self, entries: Sequence[Value]) -> Factored:
-        """Factors of the square Jacobian. Raises NoPlan where it is singular throughout."""
+    def factor(self, entries: Sequence[Value], *, lone: bool) -> Factors:
+        """Factors of the square Jacobian. Raises NoPlan where it is singular throughout.
+
+        lone  the entries are those of one pose, in plain floats
+        """
         if self._elimination is None:
             self._elimination = Elimination(self.columns, self.places, self.row_size, self.column_size)
-        return self._elimination.factor(entries)
+        return self._elimination.factor(entries, lone=lone)
 
     def dense(self, entries: Sequence[Value]) -> Array:
         """(rows, columns) Jacobian of the first pose of a batch, rows and columns scaled to pure numbers."""

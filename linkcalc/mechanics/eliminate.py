@@ -7,6 +7,7 @@ If they become many, the order is planned anew from the batch at hand.
 from __future__ import annotations
 
 from collections.abc import Sequence
+from typing import Protocol
 
 import numpy as np
 from numpy.typing import NDArray
@@ -14,7 +15,8 @@ from numpy.typing import NDArray
 from linkcalc.mechanics.plan import NoPlan, Plan, signature
 from linkcalc.parts.pose import Array, Value
 
-_MANY = 0.02  # part of a batch with weak pivots that calls for a new plan
+SMALL = 48  # rows up to which a single matrix goes to LAPACK
+_MANY = 0.05  # part of a batch with weak pivots that calls for a new plan
 
 
 class Elimination:
@@ -30,8 +32,10 @@ class Elimination:
         self.row_size, self.column_size = row_size, column_size
         self._plans: dict[tuple[float | None, ...], Plan] = {}
 
-    def factor(self, entries: Sequence[Value]) -> Factored:
-        """Factors of a batch of matrices. Raises NoPlan if they are singular throughout."""
+    def factor(self, entries: Sequence[Value], *, lone: bool) -> Factors:
+        """Factors of a batch of matrices, or of a lone one. Raises NoPlan if they are singular throughout."""
+        if lone and self.size <= SMALL:
+            return Single(self, entries)
         key = signature(entries)
         plan = self._plans.get(key)
         fresh = plan is None
@@ -70,6 +74,41 @@ class Elimination:
         for (i, j), e in zip(self.places, entries, strict=True):
             out[:, i, j] = e if isinstance(e, float) else np.broadcast_to(e, shape)[where]
         return out
+
+
+class Factors(Protocol):
+    """What a factored batch can do.
+
+    negative  (1, variant, pose) True where the determinant is below zero: it changes on another branch
+    """
+
+    negative: NDArray[np.bool_]
+
+    def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]: ...
+
+
+class Single:
+    """One matrix of plain floats, solved densely: for a small one this is quicker than any plan."""
+
+    def __init__(self, owner: Elimination, entries: Sequence[Value]):
+        self._matrix = np.zeros((owner.size, owner.size))
+        for (i, j), e in zip(owner.places, entries, strict=True):
+            self._matrix[i, j] = e
+        self._row, self._column = owner.row_size, owner.column_size
+        self._scaled = self._matrix * self._row[:, None] / self._column
+        sign, log_size = np.linalg.slogdet(self._scaled)
+        if not np.isfinite(log_size):
+            raise NoPlan(list(range(owner.size)))
+        self.negative = np.full((1, 1, 1), sign < 0)
+
+    def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]:
+        b = np.array(rhs, float)
+        try:
+            if transposed:
+                return list((np.linalg.solve(self._scaled.T, b / self._column) * self._row).tolist())
+            return list((np.linalg.solve(self._scaled, b * self._row) / self._column).tolist())
+        except np.linalg.LinAlgError:
+            raise NoPlan(list(range(b.size))) from None
 
 
 class Factored:

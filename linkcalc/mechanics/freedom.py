@@ -13,7 +13,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.mechanics.chain import Chain
-from linkcalc.mechanics.motion import moved
+from linkcalc.mechanics.motion import moved, single
 from linkcalc.parts.pose import Array, Poses
 
 _RANK = 1e-9  # of the largest singular value
@@ -63,8 +63,7 @@ def motion_of(chain: Chain, at: Poses) -> Array:
 
 def _jacobian(chain: Chain, at: Poses) -> Array:
     bare = Chain(chain.moving, chain.joints, None, chain.size)
-    equations = bare.equations(at, None)
-    return bare.dense(equations.entries)
+    return bare.dense(bare.equations(at, None)[1])
 
 
 def _movers(null: Array) -> tuple[int, ...]:
@@ -92,7 +91,7 @@ def _freed(chain: Chain, at: Poses, null: Array, rank: int) -> bool:
     rng = np.random.default_rng(0)
     for _ in range(4):
         way = rng.normal(size=len(null)) @ null
-        nudge = [np.full((1, 1, 1), v * _NUDGE * chain.size) for v in way / chain.column_size]
+        nudge = (way * _NUDGE * chain.size / chain.column_size).tolist()
         there = _closed(chain, moved(at, nudge))
         if there is None:
             continue
@@ -106,10 +105,9 @@ def _closed(chain: Chain, at: Poses) -> Poses | None:
     """Gauss-Newton with the shortest steps: closes a chain that has freedoms left."""
     bare = Chain(chain.moving, chain.joints, None, chain.size)
     for _ in range(20):
-        equations = bare.equations(at, None)
-        if float(equations.worst.max()) < 1e-12:
+        gaps, entries = bare.equations(at, None)
+        if bare.worst(gaps) < 1e-12:
             return at
-        gaps = np.array([float(np.asarray(g).flat[0]) for g in equations.gaps]) * bare.row_size
-        step = np.linalg.lstsq(bare.dense(equations.entries), gaps, rcond=1e-8)[0] / bare.column_size
-        at = moved(at, [np.full((1, 1, 1), v) for v in step])
+        step = np.linalg.lstsq(bare.dense(entries), single(gaps) * bare.row_size, rcond=1e-8)[0] / bare.column_size
+        at = moved(at, step.tolist())
     return None

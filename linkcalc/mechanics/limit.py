@@ -11,7 +11,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.mechanics.chain import Chain
-from linkcalc.mechanics.motion import Closed, along, close
+from linkcalc.mechanics.motion import Closed, along, close, single
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.parts.contract import TURN, Drive, Row
 from linkcalc.parts.pose import Poses, Value
@@ -65,7 +65,7 @@ def limit_beyond(chain: Chain, drive: float, near: Closed, sense: int) -> float:
 
     sense  +1 or -1: which way the drive was going
     """
-    speed = np.array([float(np.asarray(v).flat[0]) for v in near.speed]) * chain.column_size
+    speed = single(near.speed) * chain.column_size
     fast = int(np.argmax(np.abs(speed)))
     place = Place(fast // 3 + 1, fast % 3)
     other = Chain(chain.moving, chain.joints, place, chain.size)
@@ -92,13 +92,13 @@ def limit_beyond(chain: Chain, drive: float, near: Closed, sense: int) -> float:
 
 
 def _held(place: Place, target: float) -> Drive:
-    return place.hold(np.full((1, 1, 1), target))
+    return place.hold(target)
 
 
 def _drive_rate(chain: Chain, drive: float, pose: Closed) -> float:
     """Speed of the drive's coordinate, for a speed of 1 of the coordinate that is stepped."""
     assert chain.coordinate is not None
-    held = chain.coordinate.hold(np.full((1, 1, 1), drive))
+    held = chain.coordinate.hold(drive)
     total: Value = 0.0
     for member, which, value in held.slope(pose.at):
         if member:

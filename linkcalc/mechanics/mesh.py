@@ -4,21 +4,11 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from typing import Protocol
 
 import numpy as np
 
-from linkcalc.mechanics.motion import between
+from linkcalc.mechanics.motion import Known, between
 from linkcalc.parts.pose import Array, Poses, Value
-
-
-class Known(Protocol):
-    """Closed poses with their speeds."""
-
-    @property
-    def at(self) -> Poses: ...
-    @property
-    def speed(self) -> list[Value]: ...
 
 
 @dataclass(frozen=True, eq=False)

@@ -7,7 +7,9 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.faults import Fault, Faults
+from linkcalc.mechanics.eliminate import SMALL
 from linkcalc.mechanics.mesh import Mesh
+from linkcalc.mechanics.motion import Closed, alone, close
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.walk import Node, Walk, walk
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
@@ -40,7 +42,7 @@ class Path:
     drawn        [rad or m] drive in the drawing pose
     start, stop  [rad or m] ends of the stroke
     approach     nodes from the drawing pose to the start
-    nodes        nodes from start to stop
+    nodes        nodes in the order of the stroke, from start or before it to stop or beyond
     limits       limits of motion that were met, [rad or m]
     passed       pairs of drives between which a change point was passed
     """
@@ -72,30 +74,54 @@ def lay_path(ready: Ready) -> Path:
     fixed = [ready.drawing.value(s, coordinate.kind) for s in (stroke.start, stroke.stop) if s not in _WORDS]
     if angle and stroke.start not in _WORDS:
         drawn += 2 * np.pi * round((float(np.asarray(fixed[0]).flat[0]) - drawn) / (2 * np.pi))
-    here = Node(drawn, ready.start)
+    here = Node(drawn, _lone(ready, drawn))
     far = 2 * np.pi if angle else _FAR * ready.chain.size
-    first = _to(ready, here, stroke.start, far, "from")
-    begin = first.nodes[-1]
-    second = _to(ready, begin, stroke.stop, far, "to")
-    limits = tuple(w.limit for w in (first, second) if w.stopped == "limit")
+    first = _to(ready, here, stroke.start, drawn, far, "from")
+    start = first.nodes[-1].drive
+    second = _to(ready, here, stroke.stop, start, far, "to")
     stop = second.nodes[-1].drive
-    if abs(stop - begin.drive) < 1e-12 * (1.0 if angle else ready.chain.size) and stroke.stop in _WORDS:
+    limits = tuple(w.limit for w in (first, second) if w.stopped == "limit")
+    if abs(stop - start) < 1e-12 * (1.0 if angle else ready.chain.size) and stroke.stop in _WORDS:
         raise Faults(
             Fault(("stroke", "to"), "the stroke begins at the limit of motion where it ends", "give another end")
         )
-    return Path(drawn, begin.drive, stop, first.nodes, second.nodes, limits, second.passed)
+    return Path(drawn, start, stop, first.nodes, _nodes(first, second), limits, _inside(first, second, start, stop))
+
+
+def _nodes(first: Walk, second: Walk) -> tuple[Node, ...]:
+    """One row of nodes that covers the stroke: both walks set out from the drawing pose, to one side or to two."""
+    start, stop, drawn = (w.drive for w in (first.nodes[-1], second.nodes[-1], first.nodes[0]))
+    if (start - drawn) * (stop - drawn) <= 0:
+        return (*first.nodes[::-1], *second.nodes[1:])
+    return second.nodes if abs(stop - drawn) >= abs(start - drawn) else first.nodes[::-1]
+
+
+def _inside(first: Walk, second: Walk, start: float, stop: float) -> tuple[tuple[float, float], ...]:
+    """Change points between start and stop."""
+    low, high = min(start, stop), max(start, stop)
+    pairs = {(min(p), max(p)) for p in (*first.passed, *second.passed)}
+    return tuple(sorted(p for p in pairs if p[1] > low and p[0] < high))
+
+
+def _lone(ready: Ready, drawn: float) -> Closed:
+    """The drawing pose for the walk; of a small chain in plain floats, which is quicker for one pose at a time."""
+    chain = ready.chain
+    assert chain.coordinate is not None
+    at = ready.start.at if chain.columns > SMALL else alone(ready.start.at)
+    return close(chain, at, chain.coordinate.hold(drawn))
 
 
 _WORDS = (DRAWN, LOWER, UPPER)
 
 
-def _to(ready: Ready, start: Node, end: Size, far: float, key: str) -> Walk:
+def _to(ready: Ready, start: Node, end: Size, begin: float, far: float, key: str) -> Walk:
+    """Walk from the drawing pose to one end of the stroke; `begin` is where a stroke without limit is counted from."""
     if end == DRAWN:
         return Walk((start,), "", np.nan, ())
     assert ready.chain.coordinate is not None
     wordy = end in (LOWER, UPPER)
     if wordy:
-        target = start.drive + (far if end == UPPER else -far)
+        target = begin + (far if end == UPPER else -far)
     else:
         target = float(np.asarray(ready.drawing.value(end, ready.chain.coordinate.kind)).flat[0])
     way = walk(ready.chain, start, target)

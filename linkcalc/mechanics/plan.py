@@ -17,7 +17,7 @@ from linkcalc.mechanics.tape import Operand, Tape, is_constant
 from linkcalc.parts.pose import Array, Value
 
 _THRESHOLD = 0.1  # a pivot is at least this part of the largest of its row, in every sample pose
-_WEAK = 1e-7  # a pivot below this part of its row's size in the plan is left to LAPACK
+_WEAK = 1e-4  # a pivot below this part of its row's size in the plan is left to LAPACK
 _SAMPLES = 8
 _LOOK = 4  # rows with the fewest entries that are looked at for each pivot
 

@@ -25,6 +25,7 @@ class Side:
     fx, fy       [N] force on it, ground axes
     moment       [N m] moment on it, about the joint's place
     x, y         [m] that place
+    own_point    True if the place is a fixed point of the member, and no moment can act there
     """
 
     joint: str
@@ -36,6 +37,7 @@ class Side:
     moment: Value
     x: Value
     y: Value
+    own_point: bool
 
 
 def reactions(
@@ -54,13 +56,14 @@ def reactions(
             pin = joint.on_pin if member == joint.members[0] else ""
             if pin:
                 on_pin.setdefault(pin, []).append((fx, fy))
-                sides.append(Side(joint.name, joint.word, -1, pin, fx, fy, 0.0, x, y))
+                sides.append(Side(joint.name, joint.word, -1, pin, fx, fy, 0.0, x, y, False))
             elif hub and member == joint.members[1]:
                 hubs.setdefault(joint.name, (member, joint))
                 on_pin.setdefault(joint.name, []).append((fx, fy))
             else:
                 moment = 0.0 if hub else about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
-                sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y))
+                own = not any(joint.angular) and (hub or member == joint.members[0])
+                sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
     for acting, size in _sized(pushing, at, effort, load):
         pushes = acting.pusher.push(at)
         for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, pushes, strict=False):
@@ -71,7 +74,7 @@ def reactions(
         fx = sum((f for f, _ in on_pin[name]), 0.0)
         fy = sum((f for _, f in on_pin[name]), 0.0)
         last = max(k for k, s in enumerate(sides) if s.joint == name)
-        sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, 0.0, x, y))
+        sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, 0.0, x, y, True))
     return sides
 
 

@@ -13,9 +13,9 @@ import numpy as np
 
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.limit import limit_beyond
-from linkcalc.mechanics.motion import Closed, along, between, close, fastest
+from linkcalc.mechanics.motion import Closed, along, between, close, single
 from linkcalc.mechanics.plan import NoPlan
-from linkcalc.parts.pose import Poses
+from linkcalc.parts.pose import Array, Poses
 
 _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its length
 _STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
@@ -87,10 +87,10 @@ def _step(chain: Chain, nodes: list[Node], drive: float) -> Node | None:
     else:
         guess = along(here.pose, step)
     try:
-        there = close(chain, guess, chain.coordinate.hold(np.full((1, 1, 1), drive)), steps=6)
+        there = close(chain, guess, chain.coordinate.hold(drive), steps=6)
     except NoPlan:
         return None
-    if not there.fine.all() or not all(np.isfinite(v).all() for v in there.speed):
+    if not there.fine.all() or not np.isfinite(single(there.speed)).all():
         return None
     strict = there.factored.negative.flat[0] != here.pose.factored.negative.flat[0]
     if _departure(chain, here.pose, there, step) > (_STRICT if strict else _SMOOTH):
@@ -100,16 +100,14 @@ def _step(chain: Chain, nodes: list[Node], drive: float) -> Node | None:
 
 def _departure(chain: Chain, a: Closed, b: Closed, step: float) -> float:
     """How far the way from a to b is from the mean of their speeds times the step, over the longer of the two ways."""
-    way = _differences(chain, a.at, b.at)
-    mean = [step * (np.asarray(u) + v) / 2 for u, v in zip(a.speed, b.speed, strict=True)]
-    apart = fastest(chain, [w - m for w, m in zip(way, mean, strict=True)])
-    longest = abs(step) * max(float(np.max(fastest(chain, a.speed))), float(np.max(fastest(chain, b.speed))))
-    return float(np.max(apart)) / max(longest, 1e-12 * chain.size)
+    ua, ub = single(a.speed) * chain.column_size, single(b.speed) * chain.column_size
+    apart = _way(a.at, b.at) * chain.column_size - step * (ua + ub) / 2
+    longest = abs(step) * max(float(np.abs(ua).max()), float(np.abs(ub).max()))
+    return float(np.abs(apart).max()) / max(longest, 1e-12 * chain.size)
 
 
-def _differences(chain: Chain, a: Poses, b: Poses) -> list[np.ndarray]:
-    out = []
-    for k in range(1, chain.moving + 1):
-        turn = np.arctan2(b.s[k] * a.c[k] - b.c[k] * a.s[k], b.c[k] * a.c[k] + b.s[k] * a.s[k])
-        out += [np.asarray(b.x[k] - a.x[k]), np.asarray(b.y[k] - a.y[k]), np.asarray(turn)]
-    return out
+def _way(a: Poses, b: Poses) -> Array:
+    """(columns) coordinates of b less those of a."""
+    (xa, ya, ca, sa), (xb, yb, cb, sb) = ([single(v[1:]) for v in (p.x, p.y, p.c, p.s)] for p in (a, b))
+    turn = np.arctan2(sb * ca - cb * sa, cb * ca + sb * sa)
+    return np.stack([xb - xa, yb - ya, turn], axis=1).ravel()

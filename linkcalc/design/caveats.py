@@ -1,0 +1,86 @@
+"""What a designer must not miss, found in the answer itself: dead points near by, change points, failed poses."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+
+import numpy as np
+
+from linkcalc.design.answer import Array, Caveat, Event
+from linkcalc.design.curves import Curves
+from linkcalc.mechanics.balance import part_of_motion
+from linkcalc.mechanics.path import Path
+from linkcalc.mechanics.state import Status
+from linkcalc.model.units import show
+
+_AT = 1e-8  # speed of load or effort over the fastest in the mechanism: a dead point
+_NEAR = 0.05  # the same: the rigid answer is doubtful if, besides, the speed is falling to nothing
+_REACH = 0.1  # of the stroke: a dead point no farther than this beyond an end counts as close
+
+
+def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple[Caveat, ...]:
+    """All warnings of a solved stroke."""
+    return (*_dead(curves, events), *_passed(curves, path), *_failed(curves))
+
+
+def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
+    ready = curves.survey.ready
+    if ready.chain.coordinate is None:
+        return
+    effort, load = part_of_motion(ready.chain, curves.shown.solved.closed, ready.pushing)
+    texts = {
+        "effort": "no effort however large holds the load there, and forces grow without bound near it",
+        "load": "the force ratio grows without bound; stretch, clearances and friction set the real force",
+    }
+    asked = {"effort": ready.pushing.effort_asked, "load": bool(ready.pushing.load)}
+    for name, part in (("effort", effort), ("load", load)):
+        if not asked[name]:
+            continue
+        inside = [e.drive for e in events if e.kind == "dead point" and e.quantity == name]
+        least = np.min(part, axis=(0, 1))
+        k = int(np.argmin(least))
+        if inside:
+            where = ", ".join(_drive(curves, d) for d in dict.fromkeys(inside))
+            yield Caveat(name, f"dead point of the {name} at {where}: {texts[name]}")
+        elif least[k] < _AT or (least[k] < _NEAR and _ahead(least, k)):
+            place = f" at {_drive(curves, float(curves.drive[k]))}" if ready.steps else ""
+            much = "at" if least[k] < _AT else "close to"
+            yield Caveat(name, f"the pose{place} is {much} a dead point of the {name}: {texts[name]}")
+
+
+def _ahead(part: Array, k: int) -> bool:
+    """True if the speed runs to zero a little beyond the end of the stroke where it is least."""
+    last = part.size - 1
+    if last < 1 or k not in (0, last):
+        return False
+    fall = part[1] - part[0] if k == 0 else part[last - 1] - part[last]
+    return bool(fall > 0 and part[k] / fall <= _REACH * last)
+
+
+def _passed(curves: Curves, path: Path | None) -> Iterator[Caveat]:
+    for a, b in path.passed if path else ():
+        where = f"{_drive(curves, a)} and {_drive(curves, b)}"
+        yield Caveat(
+            "stroke",
+            f"between {where} the stroke passes a change point: the mechanism could also go on another way from there",
+        )
+
+
+def _failed(curves: Curves) -> Iterator[Caveat]:
+    status = curves.shown.solved.balance.status
+    for code in np.unique(status):
+        if code == Status.FINE:
+            continue
+        poses = sorted({int(k) for k in np.nonzero(status == code)[2]})
+        where = ", ".join(_drive(curves, float(curves.drive[k])) for k in poses[:3]) + (
+            " ..." if len(poses) > 3 else ""
+        )
+        yield Caveat("stroke", f"{len(poses)} pose{'s' if len(poses) > 1 else ''} without an answer ({where}): "
+                     + Status(code).text)  # fmt: skip
+
+
+def _drive(curves: Curves, value: float) -> str:
+    ready = curves.survey.ready
+    if not ready.steps or ready.chain.coordinate is None:
+        return "the drawing pose"
+    return show(value, ready.chain.coordinate.kind, ready.drawing.mechanism.units)

@@ -1,0 +1,143 @@
+"""The main question: effort, force ratio and every joint force over the stroke, with the poses that matter."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping, Sequence
+
+import numpy as np
+
+from linkcalc.design.answer import Array, Bearing, Checks, StrokeAnswer
+from linkcalc.design.caveats import caveats
+from linkcalc.design.curves import Curves
+from linkcalc.design.events import events
+from linkcalc.design.reach import located
+from linkcalc.design.survey import Shown, Survey, bounded
+from linkcalc.design.verdicts import verdicts
+from linkcalc.mechanics.copies import solve_copies
+from linkcalc.mechanics.motion import alone
+from linkcalc.mechanics.path import Path
+from linkcalc.mechanics.pipeline import Solved, solve_at, solve_drawn, solve_stroke
+from linkcalc.mechanics.prepare import Ready, prepare
+from linkcalc.model.check import check
+from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.select import only_case
+from linkcalc.model.sketch import Drawing
+from linkcalc.parts.pose import Value
+
+
+def stroke(
+    mechanism: Mechanism,
+    *,
+    case: str | None = None,
+    poses: int | None = None,
+    at: Sequence[float] | None = None,
+    sizes: Mapping[str, Array] | None = None,
+) -> StrokeAnswer:
+    """Step a mechanism through its stroke (or solve it in its drawing pose) and answer for every pose.
+
+    case   only this load case
+    poses  number of poses, instead of the model's
+    at     [rad or m] poses at these values of the stroke instead of evenly spread ones
+    sizes  name of a dimension -> (variants) [SI] sizes, to solve many copies at once; events and verdicts are then
+           those of the mechanism as drawn
+
+    Raises Faults: everything wrong with the model, its freedoms or its stroke.
+    """
+    mechanism = only_case(mechanism, case)
+    check(mechanism)
+    ready = prepare(Drawing(mechanism))
+    with located(ready):
+        if not ready.steps:
+            solved, path = solve_drawn(ready), None
+        else:
+            assert mechanism.stroke is not None
+            solved, path = solve_stroke(ready, poses or mechanism.stroke.poses)
+    survey = Survey(ready, solved)
+    shown = survey.show(solved)
+    curves = Curves(survey, shown)
+    found = events(curves, path) if path is not None else ()
+    judged = verdicts(curves)
+    if path is not None and at is not None:
+        shown = survey.show(solve_at(ready, path.mesh, np.asarray(at, float)))
+    if sizes is not None:
+        copies, shown = _copies(mechanism, sizes, path, shown.solved.drive)
+        warned = caveats(curves, path, found)
+        return _answer(copies, survey, shown, checks=_checks(shown.solved), found=found, judged=judged, warned=warned)
+    warned = caveats(curves, path, found)
+    return _answer(ready, survey, shown, checks=_checks(shown.solved), found=found, judged=judged, warned=warned)
+
+
+def _copies(mechanism: Mechanism, sizes: Mapping[str, Array], path: Path | None, drive: Array) -> tuple[Ready, Shown]:
+    drawing = Drawing(mechanism, {k: np.reshape(v, (1, -1, 1)) for k, v in sizes.items()})
+    ready = prepare(drawing)
+    solved = solve_drawn(ready) if path is None else solve_copies(ready, path, drive[0, 0])
+    return ready, Survey(ready, solved).show(solved)
+
+
+def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged, warned) -> StrokeAnswer:  # type: ignore[no-untyped-def]
+    solved, b, p = shown.solved, shown.solved.balance, ready.pushing
+    shape = b.status.shape
+    still = (1, *shape[1:])
+    members = range(len(ready.drawing.members))
+    at = solved.closed.at
+    drawn = alone(ready.start.at)
+    kinds = {}
+    if ready.steps and ready.chain.coordinate is not None:
+        kinds["drive"] = ready.chain.coordinate.kind
+    if p.effort:
+        kinds["effort"] = p.effort[0].pusher.kind
+    if p.load:
+        kinds["load"] = p.load[0].pusher.kind
+    axial = [survey.quantities[f"axial force in {name}"].of(shown) for name in _two_force(survey)]
+    drive = solved.drive if ready.steps else np.full(still, np.nan)
+    stroke_part = ready.drawing.mechanism.stroke
+    return StrokeAnswer(
+        mechanism=ready.drawing.mechanism,
+        cases=p.cases,
+        kinds=kinds,
+        drive_name=drive_name(stroke_part.along) if stroke_part else "",
+        bearings=tuple(Bearing(s.joint, s.word, survey.side_name(s)) for s in shown.sides),
+        two_force=tuple(_two_force(survey)),
+        drive=_full(drive, (1, drive.shape[1], shape[2])),
+        effort=_full(b.effort, shape),
+        load=_full(b.load, shape),
+        tare_effort=_full(b.tare, shape),
+        force_ratio=_full(bounded(b.force_ratio), shape),
+        ideal_ratio=_full(bounded(b.ideal_ratio), shape),
+        force=np.array([[_full(s.fx, shape), _full(s.fy, shape)] for s in shown.sides]).reshape(-1, 2, *shape),
+        moment=np.array([_full(s.moment, shape) for s in shown.sides]).reshape(-1, *shape),
+        axial=np.array([_full(a, shape) for a in axial]).reshape(-1, *shape),
+        x=np.array([_full(at.x[m], still) for m in members]),
+        y=np.array([_full(at.y[m], still) for m in members]),
+        turn=np.array([_full(np.arctan2(at.s[m], at.c[m]), still) for m in members]),
+        status=b.status,
+        checks=checks,
+        events=found,
+        verdicts=judged,
+        caveats=warned,
+        marks=tuple(j.mark(drawn) for j in ready.chain.joints) + tuple(a.pusher.mark(drawn) for a in p.all),
+    )
+
+
+def drive_name(along: object) -> str:
+    """How a stroke's coordinate is called: "turn of handle", "distance of A and B"."""
+    word: str = along.word  # type: ignore[attr-defined]
+    of = getattr(along, word)
+    return f"{word} of {of if isinstance(of, str) else ' and '.join(of)}"
+
+
+def _two_force(survey: Survey) -> list[str]:
+    return [survey.ready.drawing.members[t.member] for t in survey.two_force]
+
+
+def _checks(solved: Solved) -> Checks:
+    def worst(values: Array) -> float:
+        finite = values[np.isfinite(values)]
+        return float(finite.max()) if finite.size else 0.0
+
+    b = solved.balance
+    return Checks(solved.closed.worst, worst(b.unbalance), worst(b.disagreement))
+
+
+def _full(value: Value, shape: tuple[int, ...]) -> Array:
+    return np.array(np.broadcast_to(value, shape), dtype=float)

@@ -1,0 +1,125 @@
+"""Everything that can be asked of a solved batch, by name: the words of the requirements, the heads of the columns."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
+from linkcalc.mechanics.pipeline import Solved, sides
+from linkcalc.mechanics.prepare import Ready
+from linkcalc.mechanics.reactions import Side
+from linkcalc.parts.pose import Array, Value
+
+EFFORT_SPEED, LOAD_SPEED = "speed of the effort", "speed of the load"
+UNBOUNDED = 1e9
+"""A ratio above this is at a dead point, where it has no bound."""
+
+
+@dataclass(frozen=True, eq=False)
+class Shown:
+    """A solved batch with what is drawn from it."""
+
+    solved: Solved
+    sides: list[Side]
+
+
+@dataclass(frozen=True, eq=False)
+class Quantity:
+    """Something with a value in every (case, variant, pose).
+
+    name  in trade words: "effort", "force at C", "force at C on arm", "axial force in strut"
+    kind  of its size: "force", "moment", "number"
+    of    its value in a shown batch
+    """
+
+    name: str
+    kind: str
+    of: Callable[[Shown], Value]
+
+
+class Survey:
+    """The quantities of one mechanism.
+
+    sides      the sides of its joints, as in every solved batch
+    two_force  its two-force members
+    """
+
+    def __init__(self, ready: Ready, first: Solved):
+        self.ready = ready
+        shown = self.show(first)
+        self.sides = shown.sides
+        self.two_force: tuple[TwoForce, ...] = two_force_members(shown.sides, first.closed.at, ready.pushing)
+        self.quantities: dict[str, Quantity] = {q.name: q for q in self._all()}
+
+    def show(self, solved: Solved) -> Shown:
+        return Shown(solved, sides(self.ready, solved))
+
+    def values(self, names: Sequence[str], shown: Shown) -> Array:
+        """(names, case, variant, pose) their values."""
+        shape = shown.solved.balance.status.shape
+        return np.stack([np.broadcast_to(self.quantities[n].of(shown), shape) for n in names])
+
+    def side_name(self, side: Side) -> str:
+        return f"pin {side.pin}" if side.member < 0 else self.ready.drawing.members[side.member]
+
+    def _all(self) -> list[Quantity]:
+        p = self.ready.pushing
+        out: list[Quantity] = []
+        if p.effort:
+            kind = p.effort[0].pusher.kind
+            out.append(Quantity("effort", kind, lambda s: s.solved.balance.effort))
+            if p.effort_asked:
+                out.append(Quantity("tare effort", kind, lambda s: s.solved.balance.tare))
+        if p.load:
+            out.append(Quantity("load", p.load[0].pusher.kind, lambda s: s.solved.balance.load))
+        if p.load and p.effort:
+            out.append(Quantity("force ratio", "number", lambda s: bounded(s.solved.balance.force_ratio)))
+            out.append(Quantity("ideal ratio", "number", lambda s: bounded(s.solved.balance.ideal_ratio)))
+        if p.effort_asked and self.ready.chain.coordinate is not None:
+            out.append(Quantity(EFFORT_SPEED, "number", lambda s: s.solved.balance.effort_speed))
+        if p.load and self.ready.chain.coordinate is not None:
+            out.append(Quantity(LOAD_SPEED, "number", lambda s: s.solved.balance.load_speed))
+        joints: dict[str, list[int]] = {}
+        for k, side in enumerate(self.sides):
+            joints.setdefault(side.joint, []).append(k)
+            out.append(Quantity(f"force at {side.joint} on {self.side_name(side)}", "force", _resultant([k])))
+            if not isinstance(side.moment, float):
+                out.append(Quantity(f"moment at {side.joint} on {self.side_name(side)}", "moment", _moment(k)))
+        loaded = {pin for a in p.all for pin in a.pusher.on_pins} | {s.pin for s in self.sides}
+        for joint, ks in joints.items():
+            # the two sides of a joint feel the same force, unless a load on the pin itself stands between them
+            alike = len(ks) == 2 and joint not in loaded
+            out.append(Quantity(f"force at {joint}", "force", _resultant(ks[:1] if alike else ks)))
+            turned = [k for k in ks if not isinstance(self.sides[k].moment, float)]
+            if turned:
+                out.append(Quantity(f"moment at {joint}", "moment", _moment(turned[0])))
+        for two in self.two_force:
+            name = self.ready.drawing.members[two.member]
+            out.append(Quantity(f"axial force in {name}", "force", _axial(two)))
+        return out
+
+
+def bounded(ratio: Value) -> Value:
+    """At a dead point a ratio has no bound; rounding would show some huge number instead."""
+    with np.errstate(invalid="ignore"):
+        return np.where(np.abs(ratio) > UNBOUNDED, np.inf, ratio)
+
+
+def _resultant(ks: Sequence[int]) -> Callable[[Shown], Value]:
+    def of(shown: Shown) -> Value:
+        each = [np.hypot(shown.sides[k].fx, shown.sides[k].fy) for k in ks]
+        top: Value = each[0] if len(each) == 1 else np.max(np.broadcast_arrays(*each), axis=0)
+        return top
+
+    return of
+
+
+def _moment(k: int) -> Callable[[Shown], Value]:
+    return lambda shown: shown.sides[k].moment
+
+
+def _axial(two: TwoForce) -> Callable[[Shown], Value]:
+    return lambda shown: axial(two, shown.sides)

@@ -1,0 +1,94 @@
+"""Requirements judged at the exact worst pose over all cases."""
+
+from __future__ import annotations
+
+import operator
+from collections.abc import Callable
+
+import numpy as np
+
+from linkcalc.design.answer import Verdict
+from linkcalc.design.curves import Curves, Wanted
+from linkcalc.design.travel import travel
+from linkcalc.faults import fault
+from linkcalc.model.dimensions import evaluate
+from linkcalc.model.requirements import END, START, Requirement, requirements
+from linkcalc.words import nearest
+
+_HOLDS: dict[str, Callable[[float, float], bool]] = {
+    "<=": operator.le,
+    ">=": operator.ge,
+    "<": operator.lt,
+    ">": operator.gt,
+}
+_SIZES = ("effort", "load", "tare effort", "force", "moment")
+_ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
+
+
+def verdicts(curves: Curves) -> tuple[Verdict, ...]:
+    """All requirements of the model, in its order. Raises Faults for one that asks for what is not there."""
+    mechanism = curves.survey.ready.drawing.mechanism
+    names = evaluate(mechanism)
+    return tuple(
+        _judge(curves, r, r.limit(mechanism, names), r.place(mechanism, names)) for r in requirements(mechanism)
+    )
+
+
+def _judge(curves: Curves, requirement: Requirement, limit: float, place: float | None) -> Verdict:
+    mechanism = curves.survey.ready.drawing.mechanism
+    text = mechanism.requirements[requirement.name]
+    kind = requirement.kind(mechanism)
+    if requirement.quantity == "travel":
+        worst, drive, case = travel(curves, requirement.of), float("nan"), ""
+    else:
+        worst, drive, case = _worst(curves, requirement, place)
+    holds = _HOLDS[requirement.relation](worst, limit) and worst != float("-inf")
+    if requirement.relation in ("<=", ">=") and abs(worst - limit) <= _ROUNDING * abs(limit):
+        holds = True
+    return Verdict(requirement.name, text, holds and not np.isnan(worst), worst, limit, kind, case, drive)
+
+
+def _worst(curves: Curves, requirement: Requirement, place: float | None) -> tuple[float, float, str]:
+    _asked(curves, requirement)
+    name, sign = _quantity(requirement)
+    upward = requirement.relation in ("<=", "<")
+    cases = curves.survey.ready.pushing.cases
+    size = requirement.quantity in _SIZES
+    if requirement.at:
+        drive = {START: curves.drive[0], END: curves.drive[-1]}.get(requirement.at, place)
+        assert drive is not None
+        values = sign * curves.at([name], np.array([drive]))[0, :, 0]
+        seen = np.abs(values) if size else values
+        k = int(np.argmax(seen) if upward else np.argmin(seen))
+        return float(seen[k]), float(drive), cases[k]
+    sense = 1 if upward else -1
+    found = curves.extremes([Wanted(name, c, sense * sign, size) for c in range(len(cases))])
+    values = np.array([f.value for f in found])
+    seen = np.abs(values) if size else sign * values
+    if np.isnan(seen).any():
+        return float("nan"), float("nan"), ""
+    k = int(np.argmax(seen) if upward else np.argmin(seen))
+    return float(seen[k]), found[k].drive, cases[k]
+
+
+def _quantity(requirement: Requirement) -> tuple[str, int]:
+    """Name of the quantity in the survey, and the sign it is told with."""
+    q = requirement
+    if q.quantity in ("tension", "compression"):
+        return f"axial force in {q.of}", 1 if q.quantity == "tension" else -1
+    if q.quantity in ("force", "moment"):
+        return f"{q.quantity} at {q.of}" + (f" on {q.on}" if q.on else ""), 1
+    return q.quantity, 1
+
+
+def _asked(curves: Curves, requirement: Requirement) -> None:
+    """Raises Faults for a quantity that the model has not."""
+    name = _quantity(requirement)[0]
+    if name in curves.survey.quantities:
+        return
+    if requirement.quantity in ("tension", "compression"):
+        what = f"{requirement.of} is no two-force member: it is not loaded at two pins only"
+        cure = "name the force of its joint: " + f'"force at PIN on {requirement.of}"'
+    else:
+        what, cure = f"there is no {name!r} here", nearest(name, curves.survey.quantities)
+    raise fault(("requirements", requirement.name), what, cure)

@@ -1,0 +1,126 @@
+"""Many copies of one mechanism, each with its own sizes, walked through the stroke together.
+
+The steps are those of the nominal mechanism's walk; a copy that leaves its branch or cannot come along is told by its
+status and does not hold up the others.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import replace
+
+import numpy as np
+
+from linkcalc.mechanics.balance import Balance, balance
+from linkcalc.mechanics.motion import Closed, along, between, close
+from linkcalc.mechanics.path import Path
+from linkcalc.mechanics.pipeline import Solved
+from linkcalc.mechanics.prepare import Ready
+from linkcalc.mechanics.state import Status
+from linkcalc.parts.pose import Array, Poses, Value
+
+
+def solve_copies(ready: Ready, path: Path, drive: Array) -> Solved:
+    """All copies at some values of the drive (values), in the order of the stroke; arrays (case, variant, pose)."""
+    return _joined(list(each_pose(ready, path, drive)))
+
+
+def each_pose(ready: Ready, path: Path, drive: Array) -> Iterator[Solved]:
+    """The same, one pose after the other, (case, variant, 1) each: for streaming, nothing is kept."""
+    coordinate = ready.chain.coordinate
+    assert coordinate is not None
+    here, before, span = ready.start, ready.start, 0.0
+    drawn = np.asarray(coordinate.value(here.at), float)
+    if coordinate.kind == "angle":
+        drawn = drawn + 2 * np.pi * np.round((path.drawn - drawn) / (2 * np.pi))
+    branch = here.factored.negative
+    live = np.broadcast_to(here.fine, here.fine.shape).copy()
+    last: Value = drawn
+    for target, wanted in _targets(path, drawn, drive):
+        step = target - last
+        even = isinstance(step, float) and span
+        guess = between(before, here, 1 + step / span, span) if even else along(here, step)
+        all_live = bool(live.all())
+        there = close(ready.chain, guess, coordinate.hold(target), sure=1, live=None if all_live else live)
+        if not there.fine.all():
+            live = live & there.fine
+        kept = _kept(path, there, branch, live)
+        span = step if isinstance(step, float) else 0.0
+        before, here, last = here, there, target
+        if wanted:
+            solved = balance(ready.chain, there, ready.pushing)
+            yield Solved(np.full(there.fine.shape, target), there, _told(solved, live, kept))
+        live = live & kept
+
+
+def _targets(path: Path, drawn: Array, drive: Array) -> Iterator[tuple[Value, bool]]:
+    """Values of the drive to go to, and whether the answer wants them. On the way to the first each copy starts
+    from its own drawing pose; then all go together, with nodes of the walk between poses that lie far apart."""
+    whole = drive[0] - path.drawn
+    for node in path.approach[1:-1]:
+        yield drawn + (drive[0] - drawn) * ((node.drive - path.drawn) / whole), False
+    yield np.full(drawn.shape, drive[0]), True
+    nodes = np.array([n.drive for n in path.nodes])
+    for a, b in zip(drive, drive[1:], strict=False):
+        inside = nodes[(nodes - a) * (nodes - b) < 0]
+        if inside.size > 1:
+            yield from ((float(n), False) for n in (inside if b > a else np.sort(inside)[::-1]))
+        yield float(b), True
+
+
+def _kept(path: Path, there: Closed, branch: Array, live: Array) -> Array:
+    """Copies that are still assembled as they were drawn."""
+    if path.passed:
+        return live
+    same: Array = there.factored.negative == branch
+    return same
+
+
+def _told(solved: Balance, live: Array, kept: Array) -> Balance:
+    """Failed copies by NaN and status."""
+    good = live & kept
+    if good.all():
+        return solved
+    shape = solved.status.shape
+    status = solved.status.copy()
+    status[np.broadcast_to(~kept, shape)] = Status.BRANCH_LOST
+    status[np.broadcast_to(~live, shape)] = Status.OUT_OF_REACH
+
+    def masked(value: Value) -> Value:
+        return np.where(good, value, np.nan)
+
+    return replace(
+        solved,
+        effort=masked(solved.effort),
+        load=masked(solved.load),
+        tare=masked(solved.tare),
+        multipliers=[masked(m) for m in solved.multipliers],
+        status=status,
+    )
+
+
+def _joined(poses: list[Solved]) -> Solved:
+    """One batch out of single poses."""
+    closed, first = poses[0].closed, poses[0].balance
+
+    def join(pick) -> Value:  # type: ignore[no-untyped-def]
+        values = [pick(p) for p in poses]
+        if all(isinstance(v, float) and v == values[0] for v in values):
+            return float(values[0])
+        shape = np.broadcast_shapes((1, 1, 1), *(np.shape(v) for v in values))
+        return np.concatenate([np.broadcast_to(v, shape) for v in values], axis=2)
+
+    members = range(len(closed.at.x))
+    x, y, c, s = ([join(lambda p, m=m, n=n: getattr(p.closed.at, n)[m]) for m in members] for n in ("x", "y", "c", "s"))
+    at = Poses(x, y, c, s, closed.at.down, closed.at.field)
+    speed = [join(lambda p, k=k: p.closed.speed[k]) for k in range(len(closed.speed))]
+    fine = np.concatenate([p.closed.fine for p in poses], axis=2)
+    whole = Closed(at, [], fine, max(p.closed.worst for p in poses), closed.factored, speed)
+    told = Balance(
+        *(join(lambda p, n=n: getattr(p.balance, n)) for n in ("effort", "load", "tare", "effort_speed", "load_speed")),
+        multipliers=[join(lambda p, k=k: p.balance.multipliers[k]) for k in range(len(first.multipliers))],
+        unbalance=np.asarray(join(lambda p: p.balance.unbalance)),
+        disagreement=np.asarray(join(lambda p: p.balance.disagreement)),
+        status=np.concatenate([p.balance.status for p in poses], axis=2),
+    )
+    return Solved(np.concatenate([p.drive for p in poses], axis=2), whole, told)
