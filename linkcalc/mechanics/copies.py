@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from dataclasses import replace
+from itertools import pairwise
 
 import numpy as np
 
@@ -61,7 +62,7 @@ def _targets(path: Path, drawn: Array, drive: Array) -> Iterator[tuple[Value, bo
         yield drawn + (drive[0] - drawn) * ((node.drive - path.drawn) / whole), False
     yield np.full(drawn.shape, drive[0]), True
     nodes = np.array([n.drive for n in path.nodes])
-    for a, b in zip(drive, drive[1:], strict=False):
+    for a, b in pairwise(drive):
         inside = nodes[(nodes - a) * (nodes - b) < 0]
         if inside.size > 1:
             yield from ((float(n), False) for n in (inside if b > a else np.sort(inside)[::-1]))

@@ -88,6 +88,17 @@ def lay_path(ready: Ready) -> Path:
     return Path(drawn, start, stop, first.nodes, _nodes(first, second), limits, _inside(first, second, start, stop))
 
 
+def motion_range(ready: Ready) -> tuple[float, float, float]:
+    """Lower limit, drawn value and upper limit of the drive [rad or m]; nan for a limit that is not there."""
+    coordinate = ready.chain.coordinate
+    assert coordinate is not None
+    drawn = float(np.ravel(coordinate.value(ready.start.at))[0])
+    here = Node(drawn, _lone(ready, drawn))
+    far = 2 * np.pi if coordinate.kind == "angle" else _FAR * ready.chain.size
+    down, up = (walk(ready.chain, here, drawn + sense * far) for sense in (-1, 1))
+    return down.limit, drawn, up.limit
+
+
 def _nodes(first: Walk, second: Walk) -> tuple[Node, ...]:
     """One row of nodes that covers the stroke: both walks set out from the drawing pose, to one side or to two."""
     start, stop, drawn = (w.drive for w in (first.nodes[-1], second.nodes[-1], first.nodes[0]))

@@ -88,11 +88,16 @@ class Joint(Protocol):
     angular      one bool a row: True where the gap is an angle [rad], not a length [m]
     """
 
-    name: str
-    members: tuple[int, ...]
-    site: Site
+    word: str
     on_pin: str
     angular: tuple[bool, ...]
+
+    @property
+    def name(self) -> str: ...
+    @property
+    def members(self) -> tuple[int, ...]: ...
+    @property
+    def site(self) -> Site: ...
 
     def gap(self, at: Poses) -> tuple[Value, ...]:
         """One value a row, zero when the joint holds [m] or [rad]."""
@@ -123,10 +128,15 @@ class Pusher(Protocol):
     on_pins      for each entry of its push: the name of the pin that takes it, "" if a member does
     """
 
-    name: str
+    word: str
     kind: str
-    size: Value | None
-    on_pins: tuple[str, ...]
+
+    @property
+    def name(self) -> str: ...
+    @property
+    def size(self) -> Value | None: ...
+    @property
+    def on_pins(self) -> tuple[str, ...]: ...
 
     def strength(self, at: Poses) -> Value:
         """[N] or [N m] how strong it is; not asked of the unknown"""

@@ -1,0 +1,44 @@
+"""The commands. Exit status: 0 fine, 1 a requirement failed, 2 bad input."""
+
+from __future__ import annotations
+
+import typer
+
+from linkcalc.cli.check import check
+from linkcalc.cli.draw import draw
+from linkcalc.cli.start import start
+from linkcalc.cli.stroke import stroke
+
+app = typer.Typer(
+    name="linkcalc",
+    help="Statics of levers, clamps, toggles, linkages and weighing beams, over the whole stroke and every load case.",
+    no_args_is_help=True,
+    rich_markup_mode=None,
+    pretty_exceptions_enable=False,
+    context_settings={"help_option_names": ["-h", "--help"]},
+    epilog="Exit status: 0 fine, 1 a requirement of the model fails, 2 bad input.",
+)
+
+
+@app.callback(invoke_without_command=True)
+def _main(
+    version: bool = typer.Option(False, "--version", help="Print the version and stop.", is_eager=True),
+) -> None:
+    if version:
+        from importlib.metadata import version as installed
+
+        typer.echo(f"linkcalc {installed('linkcalc')}")
+        raise typer.Exit
+
+
+for command in (start, check, stroke, draw):
+    app.command()(command)
+
+
+def main() -> None:
+    """Run the command line."""
+    app()
+
+
+if __name__ == "__main__":
+    main()

@@ -1,0 +1,64 @@
+"""linkcalc stroke"""
+
+from __future__ import annotations
+
+from typing import Annotated
+
+import typer
+
+from linkcalc.cli.files import FAILED, STDOUT, CaseName, CsvFile, JsonFile, ModelFile, in_file, option_fault, put
+
+Poses = Annotated[int | None, typer.Option("--poses", help="Number of poses instead of the model's.", metavar="N")]
+Plots = Annotated[
+    list[str] | None,
+    typer.Option("--plot", help="Write the curves as a picture: .svg, .png or .pdf. May be repeated.", metavar="FILE"),
+]
+AllJoints = Annotated[bool, typer.Option("--joints", help="A column for every joint in the table.")]
+_MOST = 100_000
+
+
+def stroke(
+    file: ModelFile,
+    case: CaseName = None,
+    poses: Poses = None,
+    joints: AllJoints = False,
+    json: JsonFile = None,
+    csv: CsvFile = None,
+    plot: Plots = None,
+) -> None:
+    """Step a mechanism through its stroke: effort, force ratio, every joint force, the poses that matter."""
+    with in_file(file) as model:
+        from linkcalc.design.stroke import stroke as ask
+
+        if poses is not None and not 2 <= poses <= _MOST:
+            raise option_fault("--poses", f"{poses} poses", f"from 2 to {_MOST} are wanted")
+        if json == STDOUT and csv == STDOUT:
+            raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
+        for target in plot or ():
+            from linkcalc.report.figure import picture_format
+
+            picture_format(target)
+        answer = ask(model, case=case, poses=poses)
+        if json:
+            from linkcalc.report.json import as_json
+
+            put(json, lambda: as_json(answer))
+        if csv:
+            from linkcalc.report.csv import as_csv
+            from linkcalc.report.stroke_table import stroke_table
+
+            put(csv, lambda: as_csv(stroke_table(answer)))
+        for target in plot or ():
+            from linkcalc.report.chart import stroke_chart
+            from linkcalc.report.chart_figure import chart_figure
+            from linkcalc.report.figure import save
+
+            save(chart_figure(stroke_chart(answer)), target)
+            typer.echo(f"wrote {target}", err=True)
+        if STDOUT not in (json, csv):
+            from linkcalc.report.stroke_blocks import stroke_blocks
+            from linkcalc.report.text import as_text
+
+            typer.echo(as_text(stroke_blocks(answer, all_joints=joints)))
+    if not answer.holds:
+        raise typer.Exit(FAILED)
