@@ -111,11 +111,9 @@ class _Reader:
         while sign := self.take("+", "-"):
             right = self.product()
             if left.dims != right.dims:
-                to, word = ("to", "added") if sign == "+" else ("from", "taken")
-                what, other = (right, left) if sign == "-" else (left, right)
-                raise fault(
-                    (), f"{u.a(what.dims)} cannot be {word} {to} {u.a(other.dims)} in {self.text!r}", _same(left, right)
-                )
+                verb = "added to" if sign == "+" else "taken from"
+                what = f"{u.a(right.dims)} cannot be {verb} {u.a(left.dims)} in {self.text!r}"
+                raise fault((), what, _same(left, right))
             left = settled(left.value + right.value if sign == "+" else left.value - right.value, left.dims, self.text)
         self.depth -= 1
         return left
@@ -155,7 +153,9 @@ class _Reader:
         dims = base.dims
         if dims != u.NUMBER:
             dims = u.raised(dims, Fraction(float(power.value)).limit_denominator(12))
-        return settled(np.power(base.value, power.value), dims, self.text)
+        # a copy without a value has none as a power either, though numpy takes the power 0 of anything for 1
+        lost = np.isnan(base.value) | np.isnan(power.value)
+        return settled(np.where(lost, np.nan, np.power(base.value, power.value)), dims, self.text)
 
     def atom(self) -> Quantity:
         token = self.next
