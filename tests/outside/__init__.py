@@ -1,0 +1,1 @@
+"""Published cases and sourced facts, put through the public interface only."""
