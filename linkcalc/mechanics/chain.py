@@ -111,6 +111,11 @@ class Chain:
             self._elimination = Elimination(self.columns, self.places, self.row_size, self.column_size)
         return self._elimination.factor(entries, lone=lone)
 
+    def share_plans(self, other: Chain) -> None:
+        """Use the plans of a chain of the same joints with other sizes."""
+        if other.columns == self.columns and other.rows == self.rows and other._elimination is not None:
+            self.places, self._gather, self._elimination = other.places, other._gather, other._elimination
+
     def dense(self, entries: Sequence[Value]) -> Array:
         """(rows, columns) Jacobian of the first pose of a batch, rows and columns scaled to pure numbers."""
         out = np.zeros((self.rows, self.columns))

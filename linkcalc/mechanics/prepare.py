@@ -34,8 +34,11 @@ class Ready:
     steps: bool
 
 
-def prepare(drawing: Drawing) -> Ready:
-    """Raises Faults: too many or too few freedoms, effort missing or idle, drawn in a dead point of the drive."""
+def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
+    """Raises Faults: too many or too few freedoms, effort missing or idle, drawn in a dead point of the drive.
+
+    like  the same mechanism with other sizes, made ready before: its plans of elimination are used again
+    """
     mechanism = drawing.mechanism
     loads = pushing(drawing.assembly())
     at = _drawn(drawing, loads)
@@ -54,6 +57,8 @@ def prepare(drawing: Drawing) -> Ready:
         k = int(np.argmax(np.abs(way)))
         coordinate = Place(k // 3 + 1, k % 3)
         chain = Chain(moving, drawing.joints, coordinate, drawing.size)
+    if like is not None:
+        chain.share_plans(like.chain)
     try:
         drive = None if coordinate is None else coordinate.hold(_shaped(coordinate.value(at)))
         start = close(chain, at, drive)

@@ -61,8 +61,10 @@ def reactions(
                 hubs.setdefault(joint.name, (member, joint))
                 on_pin.setdefault(joint.name, []).append((fx, fy))
             else:
-                moment = 0.0 if hub else about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
-                own = not any(joint.angular) and (hub or member == joint.members[0])
+                turnable = not any(joint.angular)
+                arm_x, arm_y = x - at.x[member], y - at.y[member]
+                moment = 0.0 if turnable else about_origin - (arm_x * fy - arm_y * fx)
+                own = turnable and (hub or member == joint.members[0])
                 sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
     for acting, size in _sized(pushing, at, effort, load):
         pushes = acting.pusher.push(at)

@@ -52,7 +52,7 @@ def sixbar(poses: int = 361) -> Mechanism:
         title="Crank and rocker that moves a second rocker",
         dimensions=_links(drawn.SIXBAR),
         points=_loop() | second,
-        members=first | {"second coupler": Member(("E", "F")), "second rocker": Member(("G", "F", "tip"))},
+        members=first | {"coupler_2": Member(("E", "F")), "rocker_2": Member(("G", "F", "tip"))},
         effort=Torque("crank"),
         load=Force("tip", direction=-90, size=drawn.SIXBAR_LOAD),
         stroke=_once_round(poses),

@@ -81,10 +81,10 @@ def sixbar() -> Linkage:
             "crank": ("A", "B"),
             "coupler": ("B", "C"),
             "rocker": ("D", "C", "E"),
-            "second coupler": ("E", "F"),
-            "second rocker": ("G", "F", "tip"),
+            "coupler_2": ("E", "F"),
+            "rocker_2": ("G", "F", "tip"),
         },
-        loads=(Force("second rocker", "tip", 0.0, -SIXBAR_LOAD),),
+        loads=(Force("rocker_2", "tip", 0.0, -SIXBAR_LOAD),),
         effort=Torque("crank"),
         drive=Turn("crank"),
     )

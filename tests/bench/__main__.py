@@ -1,0 +1,39 @@
+"""The benchmark: `python -m tests.bench`. Prints figures and ratios of one run, and says which targets are met.
+
+One core is used: set OMP_NUM_THREADS=1 (done here before numpy is loaded). Competitors take turns, and the least
+time of each counts: whatever else the machine does only adds.
+"""
+
+from __future__ import annotations
+
+import os
+
+for _variable in ("OMP_NUM_THREADS", "OPENBLAS_NUM_THREADS", "MKL_NUM_THREADS"):
+    os.environ.setdefault(_variable, "1")
+
+import argparse  # noqa: E402
+import sys  # noqa: E402
+
+from tests.bench import accuracy, chain, many_copies, one_stroke, start_up  # noqa: E402
+
+PARTS = {
+    "copies": many_copies.report,
+    "stroke": one_stroke.report,
+    "start": start_up.report,
+    "chain": chain.report,
+    "accuracy": accuracy.report,
+}
+
+
+def main() -> int:
+    parser = argparse.ArgumentParser(description=__doc__, formatter_class=argparse.RawDescriptionHelpFormatter)
+    parser.add_argument("parts", nargs="*", choices=list(PARTS), help="which parts; all if left out")
+    parser.add_argument("--quick", action="store_true", help="fewer copies and rounds: a look, not a measurement")
+    given = parser.parse_args()
+    met = [PARTS[name](quick=given.quick) for name in (given.parts or PARTS)]
+    print(f"\n{sum(met)} of {len(met)} parts meet their targets")
+    return 0 if all(met) else 1
+
+
+if __name__ == "__main__":
+    sys.exit(main())
