@@ -59,7 +59,7 @@ def reckon(
     names = [*mechanism.dimensions, *broken]
     for name in overrides:
         if name not in names:
-            gather.add(("dimensions", name), "unknown dimension", nearest(name, names))
+            gather.add(("dimensions", name), f"unknown dimension {name!r}", nearest(name, names))
     needs: dict[str, tuple[str, ...]] = {}
     for name, dimension in mechanism.dimensions.items():
         with gather.at("dimensions", name):
