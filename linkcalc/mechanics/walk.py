@@ -54,7 +54,8 @@ def walk(chain: Chain, start: Node, stop: float) -> Walk:
     whole = stop - start.drive
     if whole == 0.0:
         return Walk((start,), "", np.nan, ())
-    step = whole * _FIRST
+    # where the way is no longer than rounding, a part of it would be no step at all
+    step = whole * _FIRST if start.drive + whole * _FIRST != start.drive else whole
     for _ in range(_STEPS):
         here = nodes[-1]
         left = stop - here.drive
