@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 from numpy.typing import NDArray
@@ -47,18 +48,26 @@ class Curves:
     def __init__(self, survey: Survey, shown: Shown):
         self.survey, self.shown = survey, shown
         self.drive: Array = shown.solved.drive[0, 0]
+        self._samples: dict[str, Array] = {}
         self._mesh = Mesh(self.drive, [shown.solved.closed]) if self.drive.size > 1 else None
 
     def samples(self, name: str) -> Array:
         """(case, pose) values at the stroke's poses."""
-        values: Array = self.survey.values([name], self.shown)[0, :, 0]
-        return values
+        if name not in self._samples:
+            self._samples[name] = self.survey.values([name], self.shown)[0, :, 0]
+        return self._samples[name]
+
+    @cached_property
+    def largest_force(self) -> float:
+        """[N] the largest force of any joint at any of the samples."""
+        names = [f"force at {s.joint}" for s in self.survey.sides]
+        return max((size_of(self.samples(n)) for n in dict.fromkeys(names)), default=0.0)
 
     def solve(self, drive: Array) -> Solved:
         """Statics at any values of the drive (values)."""
         if self._mesh is None:
             return self.shown.solved
-        return solve_at(self.survey.ready, self._mesh, drive)
+        return solve_at(self.survey.ready, self._mesh, drive, checked=False)
 
     def at(self, names: Sequence[str], drive: Array) -> Array:
         """(names, case, values) at any values of the drive."""
@@ -66,39 +75,51 @@ class Curves:
         return values
 
     def extremes(self, wanted: Sequence[Wanted]) -> list[Found]:
-        """All the extremes asked for, found together."""
+        """All the extremes asked for, found together. Of a size, the value comes with the sign it has there."""
+        if not wanted:
+            return []
         names, which = _numbered([w.name for w in wanted])
         cases = np.array([w.case for w in wanted], int)
         sense = np.array([w.sense for w in wanted], float)
         size = np.array([w.size for w in wanted], bool)
-        if not wanted:
-            return []
-        all_samples = np.stack([self.samples(n) for n in names])[which, cases]
+        raw = np.stack([self.samples(n) for n in names])[which, cases]
+        signs = np.ones(len(wanted))
 
         def seen(y: Array, k: NDArray[np.intp]) -> Array:
             return sense[k] * np.where(size[k], np.abs(y), y)
 
         def f(x: Array, k: NDArray[np.intp]) -> Array:
-            return seen(self.at(names, x)[which[k], cases[k], np.arange(x.size)], k)
+            y = self.at(names, x)[which[k], cases[k], np.arange(x.size)]
+            signs[k] = np.where(y < 0, -1.0, 1.0)
+            return seen(y, k)
 
-        every = np.arange(len(wanted))
-        seen_samples = sense[:, None] * np.where(size[:, None], np.abs(all_samples), all_samples)
-        place, best = sampled_peaks(f, Samples(self.drive, seen_samples))
-        exact = self.at(names, place)[which, cases, every] if self._mesh else all_samples[:, 0]
-        # the sign that the size hides is the one at the place
-        value = np.where(size, np.copysign(best * sense, exact), best * sense)
+        samples = Samples(self.drive, sense[:, None] * np.where(size[:, None], np.abs(raw), raw))
+        place, best = sampled_peaks(f, samples)
+        nearest = raw[np.arange(len(wanted)), np.abs(self.drive - place[:, None]).argmin(axis=1)]
+        signs = np.where(np.isfinite(nearest), np.sign(nearest), signs)
+        value = np.where(size, sense * best * np.where(signs < 0, -1.0, 1.0), sense * best)
         return [Found(float(p), float(v)) for p, v in zip(place, value, strict=True)]
 
-    def zeros(self, name: str) -> list[tuple[int, float]]:
-        """Where a quantity changes its sign: (case, drive), exactly."""
-        samples = self.samples(name)
-        samples = samples[:1] if np.all(samples == samples[:1]) else samples
+    def zeros(self, names: Sequence[str]) -> list[tuple[str, int, float]]:
+        """Where quantities change their sign, exactly: (name, case, drive). What is alike in all cases is told once,
+        for case 0."""
+        if not names:
+            return []
+        samples = np.stack([self.samples(n) for n in names])
+        alike = [bool(np.all(s == s[:1])) for s in samples]
+        which = [(n, c) for n in range(len(names)) for c in range(1 if alike[n] else samples.shape[1])]
+        rows, cases = (np.array(v, int) for v in zip(*which, strict=True))
 
         def f(x: Array, k: NDArray[np.intp]) -> Array:
-            return self.at([name], x)[0, k, np.arange(x.size)]
+            return self.at(names, x)[rows[k], cases[k], np.arange(x.size)]
 
-        place, case = sampled_roots(f, Samples(self.drive, samples))
-        return [(int(c), float(p)) for c, p in zip(case, place, strict=True)]
+        place, curve = sampled_roots(f, Samples(self.drive, samples[rows, cases]))
+        return [(names[rows[k]], int(cases[k]), float(p)) for p, k in zip(place, curve, strict=True)]
+
+
+def size_of(values: Array) -> float:
+    """The largest of absolute values, what is not finite left out."""
+    return float(np.max(np.abs(values), initial=0.0, where=np.isfinite(values)))
 
 
 def _numbered(names: Sequence[str]) -> tuple[list[str], NDArray[np.intp]]:

@@ -43,8 +43,7 @@ def stroke(
 
     Raises Faults: everything wrong with the model, its freedoms or its stroke.
     """
-    mechanism = only_case(mechanism, case)
-    check(mechanism)
+    mechanism = only_case(check(mechanism), case)
     ready = prepare(Drawing(mechanism))
     with located(ready):
         if not ready.steps:

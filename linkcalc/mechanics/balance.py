@@ -56,8 +56,11 @@ class Balance:
             return -np.divide(self.effort_speed, self.load_speed)
 
 
-def balance(chain: Chain, closed: Closed, pushing: Pushing) -> Balance:
-    """Solve the statics of a batch of closed poses."""
+def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = True) -> Balance:
+    """Solve the statics of a batch of closed poses.
+
+    checked  put the forces back into the equations; else ``unbalance`` and ``disagreement`` are NaN
+    """
     at, speed, n = closed.at, closed.speed, chain.columns
     rest = column(pushing.rest, at, n, unit=False)
     load_unit = column(pushing.load, at, n, unit=True)
@@ -84,7 +87,9 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing) -> Balance:
             rest, (load, load_unit) if pushing.load else None, (effort, effort_unit) if pushing.effort else None
         )
         negative = closed.factored.solve(total, transposed=True)
-        unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
+        unbalance = disagreement = _UNCHECKED
+        if checked:
+            unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
     multipliers = [-v for v in negative]
     status = _status(closed, multipliers, dead)
     return Balance(effort, load, tare, effort_speed, load_speed, multipliers, unbalance, disagreement, status)
@@ -100,9 +105,22 @@ def _power(speed: Sequence[Value], push: Column) -> Value:
     return total
 
 
-def _dead(chain: Chain, speed: Sequence[Value], push: Column, power: Value) -> NDArray[np.bool_]:
-    """Where an effort does no work though the mechanism moves: nothing finite answers there."""
+_UNCHECKED = np.full((1, 1, 1), np.nan)
+
+
+def _dead(chain: Chain, speed: Sequence[Value], push: Column, power: Value) -> NDArray[np.bool_] | None:
+    """Where an effort does no work though the mechanism moves: nothing finite answers there. None: nowhere."""
+    # one bound for the whole batch settles nearly every batch, and costs no temporary arrays
+    top = max((_top(v) * size for v, size in zip(speed, chain.column_size, strict=True)), default=0.0)
+    force = max((_top(q) / size for q, size in zip(push, chain.column_size, strict=True)), default=0.0)
+    least = float(np.min(np.abs(power)))
+    if least > DEAD * top * force:
+        return None
     return np.asarray(np.abs(power) <= DEAD * fastest(chain, speed) * _strongest(chain, push))
+
+
+def _top(value: Value) -> float:
+    return abs(value) if isinstance(value, float) else max(float(value.max()), -float(value.min()))
 
 
 def _strongest(chain: Chain, push: Column) -> Value:
@@ -156,15 +174,15 @@ def _checks(
 
 
 def _status(closed: Closed, multipliers: Sequence[Value], dead: NDArray[np.bool_] | None) -> NDArray[np.int8]:
-    shape = np.broadcast_shapes(closed.fine.shape, *(np.shape(m) for m in multipliers))
+    shape = np.broadcast_shapes(closed.fine.shape, *{np.shape(m) for m in multipliers})
     status = np.zeros(shape, np.int8)
-    finite = np.ones(shape, bool)
     for m in multipliers:
-        finite &= np.isfinite(m)
-    status[~finite] = Status.SINGULAR
+        if not np.isfinite(_top(m)):
+            status[np.broadcast_to(~np.isfinite(m), shape)] = Status.SINGULAR
     if dead is not None:
         status[np.broadcast_to(dead, shape)] = Status.DEAD_POINT
-    status[~np.broadcast_to(closed.fine, shape)] = Status.OUT_OF_REACH
+    if not closed.fine.all():
+        status[~np.broadcast_to(closed.fine, shape)] = Status.OUT_OF_REACH
     return status
 
 

@@ -23,11 +23,14 @@ from linkcalc.parts.pose import Array, Poses, Value
 
 def solve_copies(ready: Ready, path: Path, drive: Array) -> Solved:
     """All copies at some values of the drive (values), in the order of the stroke; arrays (case, variant, pose)."""
-    return _joined(list(each_pose(ready, path, drive)))
+    return _joined(list(each_pose(ready, path, drive, checked=True)))
 
 
-def each_pose(ready: Ready, path: Path, drive: Array) -> Iterator[Solved]:
-    """The same, one pose after the other, (case, variant, 1) each: for streaming, nothing is kept."""
+def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Iterator[Solved]:
+    """The same, one pose after the other, (case, variant, 1) each: for streaming, nothing is kept.
+
+    checked  put the forces back into the equations (see ``balance``)
+    """
     coordinate = ready.chain.coordinate
     assert coordinate is not None
     here, before, span = ready.start, ready.start, 0.0
@@ -49,7 +52,7 @@ def each_pose(ready: Ready, path: Path, drive: Array) -> Iterator[Solved]:
         span = step if isinstance(step, float) else 0.0
         before, here, last = here, there, target
         if wanted:
-            solved = balance(ready.chain, there, ready.pushing)
+            solved = balance(ready.chain, there, ready.pushing, checked=checked)
             yield Solved(np.full(there.fine.shape, target), there, _told(solved, live, kept))
         live = live & kept
 

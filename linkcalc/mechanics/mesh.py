@@ -6,6 +6,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 
 from linkcalc.mechanics.motion import Known, between
 from linkcalc.parts.pose import Array, Poses, Value
@@ -28,13 +29,12 @@ class Mesh:
         self.drive = drive
         self._rising = np.sign(drive[-1] - drive[0]) or 1.0
         first = known[0].at
-        self._down, self._field = first.down, first.field
-        members = range(1, len(first.x))
-        self._lists = [
-            [_joined([getattr(k.at, name)[m] for k in known], drive.size) for m in members]
-            for name in ("x", "y", "c", "s")
-        ]
-        self._speed = [_joined([k.speed[j] for k in known], drive.size) for j in range(len(known[0].speed))]
+        self._down, self._field, self._members = first.down, first.field, len(first.x)
+        rows: list[Array] = []
+        for name in ("x", "y", "c", "s"):
+            rows += [_joined([getattr(k.at, name)[m] for k in known], drive.size) for m in range(self._members)]
+        rows += [_joined([k.speed[j] for k in known], drive.size) for j in range(len(known[0].speed))]
+        self._rows = np.stack(rows)
 
     def guess(self, drive: Array) -> Poses:
         """Poses near those at some values of the drive, (1, 1, values), by the cubic through the neighbours."""
@@ -45,10 +45,13 @@ class Mesh:
         t = (drive - self.drive[k]).reshape(1, 1, -1) / span
         return between(self._pick(k), self._pick(k + 1), t, span)
 
-    def _pick(self, k: np.ndarray) -> _Picked:
-        x, y, c, s = ([v[k].reshape(1, 1, -1) for v in values] for values in self._lists)
-        speed: list[Value] = [v[k].reshape(1, 1, -1) for v in self._speed]
-        return _Picked(Poses([0.0, *x], [0.0, *y], [1.0, *c], [0.0, *s], self._down, self._field), speed)
+    def _pick(self, k: NDArray[np.intp]) -> _Picked:
+        rows = list(self._rows[:, k].reshape(len(self._rows), 1, 1, -1))
+        n = self._members
+        x, y, c, s = (rows[i * n : (i + 1) * n] for i in range(4))
+        # the ground stays a constant
+        poses = Poses([0.0, *x[1:]], [0.0, *y[1:]], [1.0, *c[1:]], [0.0, *s[1:]], self._down, self._field)
+        return _Picked(poses, list(rows[4 * n :]))
 
 
 def _joined(values: Sequence[Value], size: int) -> Array:

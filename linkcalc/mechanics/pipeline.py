@@ -24,13 +24,16 @@ class Solved:
     balance: Balance
 
 
-def solve_at(ready: Ready, mesh: Mesh, drive: Array) -> Solved:
-    """Statics of one mechanism at some values of its drive (values); the mesh gives the guesses."""
+def solve_at(ready: Ready, mesh: Mesh, drive: Array, *, checked: bool = True) -> Solved:
+    """Statics of one mechanism at some values of its drive (values); the mesh gives the guesses.
+
+    checked  put the forces back into the equations (see ``balance``)
+    """
     coordinate = ready.chain.coordinate
     assert coordinate is not None
     target = drive.reshape(1, 1, -1)
-    closed = close(ready.chain, mesh.guess(drive), coordinate.hold(target))
-    return Solved(target, closed, balance(ready.chain, closed, ready.pushing))
+    closed = close(ready.chain, mesh.guess(drive), coordinate.hold(target), sure=1)
+    return Solved(target, closed, balance(ready.chain, closed, ready.pushing, checked=checked))
 
 
 def solve_stroke(ready: Ready, poses: int) -> tuple[Solved, Path]:

@@ -1,7 +1,7 @@
 """Order of elimination for a small sparse matrix whose pattern is the same at every pose, planned once.
 
 The matrix is P A Q = L U. Pivots are taken where little fills in, constants before arrays, and only where they
-are not small against their row in any of the sample poses the plan is made from. The elimination is recorded on
+are not small against their row in the pose the plan is made from. The elimination is recorded on
 a tape; the same factors solve A x = b and its transpose, so statics costs no second factorisation.
 """
 
@@ -11,19 +11,18 @@ import heapq
 from collections.abc import Sequence
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.mechanics.tape import Operand, Tape, is_constant
 from linkcalc.parts.pose import Array, Value
 
-_THRESHOLD = 0.1  # a pivot is at least this part of the largest of its row, in every sample pose
+_THRESHOLD = 0.1  # a pivot is at least this part of the largest of its row, in the pose of the plan
 _WEAK = 1e-4  # a pivot below this part of its row's size in the plan is left to LAPACK
-_SAMPLES = 8
+_NOTHING = 1e-9  # against the size of the mechanism: no pivot
 _LOOK = 4  # rows with the fewest entries that are looked at for each pivot
 
 
 class NoPlan(ArithmeticError):
-    """The matrix is singular in the sample poses: rows and columns that found no pivot."""
+    """The matrix is singular in the pose of the plan: rows that found no pivot."""
 
     def __init__(self, rows: list[int]):
         super().__init__(f"no pivot in rows {rows}")
@@ -59,9 +58,9 @@ class Plan:
         tape = Tape(len(self._inputs))
         register = {k: r + 1 for r, k in enumerate(self._inputs)}
         rows: list[dict[int, Operand]] = [{} for _ in range(self.size)]
-        sizes: list[dict[int, Array]] = [{} for _ in range(self.size)]
+        sizes: list[dict[int, float]] = [{} for _ in range(self.size)]
         columns: list[set[int]] = [set() for _ in range(self.size)]
-        samples = _sampled(entries)
+        sample = _sample(entries)
         for k, (i, j) in enumerate(places):
             e = entries[k]
             operand: Operand = e if isinstance(e, float) else register[k]
@@ -70,7 +69,7 @@ class Plan:
             if j in rows[i]:
                 raise AssertionError(f"entry {i}, {j} twice")
             rows[i][j] = operand
-            sizes[i][j] = samples[k] * (row_size[i] / column_size[j])
+            sizes[i][j] = sample[k] * float(row_size[i] / column_size[j])
             columns[j].add(i)
 
         self._pivots: list[tuple[int, int]] = []
@@ -87,7 +86,7 @@ class Plan:
             row, size_row = rows[p], sizes[p]
             pivot, size_pivot = row.pop(q), size_row.pop(q)
             scale = row_size[p] / column_size[q]
-            largest = max([np.abs(size_pivot).max(), *(np.abs(s).max() for s in size_row.values())])
+            largest = max(abs(size_pivot), *(abs(s) for s in size_row.values()), 0.0)
             floors.append(_WEAK * largest / scale)
             pivots.append(pivot)
             inverse = tape.over(1.0, pivot)
@@ -101,7 +100,7 @@ class Plan:
                 lower.append((i, factor))
                 for j, operand in row.items():
                     rows[i][j] = tape.less(rows[i].get(j, 0.0), tape.times(factor, operand))
-                    sizes[i][j] = sizes[i].get(j, _NOTHING) - size_factor * size_row[j]
+                    sizes[i][j] = sizes[i].get(j, 0.0) - size_factor * size_row[j]
                     columns[j].add(i)
                 heapq.heappush(queue, (len(rows[i]), i))
             columns[q].clear()
@@ -126,7 +125,7 @@ class Plan:
         queue: list[tuple[int, int]],
         open_rows: set[int],
         rows: list[dict[int, Operand]],
-        sizes: list[dict[int, Array]],
+        sizes: list[dict[int, float]],
         columns: list[set[int]],
     ) -> tuple[int, int]:
         """The next pivot: least fill-in among the shortest rows; constants first, then the largest."""
@@ -138,10 +137,12 @@ class Plan:
             if i not in open_rows or length != len(rows[i]) or any(i == r for _, r in looked):
                 continue  # an old entry of this row
             looked.append((length, i))
-            largest = np.max([np.abs(s) for s in sizes[i].values()], axis=0) if rows[i] else _NOTHING
+            largest = max(map(abs, sizes[i].values()), default=0.0)
+            if largest < _NOTHING:
+                continue
             for j, operand in rows[i].items():
-                part = float(np.min(np.abs(sizes[i][j]) / np.maximum(largest, 1e-300)))
-                if part < _THRESHOLD or float(np.min(largest)) < 1e-9:
+                part = abs(sizes[i][j]) / largest
+                if part < _THRESHOLD:
                     continue
                 merit = ((len(rows[i]) - 1) * (len(columns[j]) - 1), not is_constant(operand), -part)
                 if best is None or merit < best:
@@ -156,15 +157,14 @@ class Plan:
         return place
 
     def _desperate(
-        self, open_rows: set[int], rows: list[dict[int, Operand]], sizes: list[dict[int, Array]]
+        self, open_rows: set[int], rows: list[dict[int, Operand]], sizes: list[dict[int, float]]
     ) -> tuple[int, int]:
-        """No short row has a good pivot: the entry that is largest, over all rows, in its worst sample pose."""
-        best, place = 1e-9, (-1, -1)
+        """No short row has a good pivot: the entry that is largest of all."""
+        best, place = _NOTHING, (-1, -1)
         for i in sorted(open_rows):
             for j in rows[i]:
-                worst = float(np.median(np.abs(sizes[i][j])))
-                if worst > best:
-                    best, place = worst, (i, j)
+                if abs(sizes[i][j]) > best:
+                    best, place = abs(sizes[i][j]), (i, j)
         if place[0] < 0:
             raise NoPlan(sorted(open_rows))
         return place
@@ -244,25 +244,22 @@ class Plan:
         return tape.finish(z)
 
 
-_NOTHING: NDArray[np.float64] = np.zeros(1)
-
-
 def signature(values: Sequence[Value]) -> tuple[float | None, ...]:
     """Which values are constants, and which; None stands for an array."""
-    return tuple(float(v) if isinstance(v, float) else None for v in values)
+    return tuple([v if isinstance(v, float) else None for v in values])
 
 
-def _sampled(entries: Sequence[Value]) -> list[Array]:
-    """A few of the batch's entries each, spread evenly, those that are not finite left out."""
+def _sample(entries: Sequence[Value]) -> list[float]:
+    """The entries of one pose out of the batch: the middle one, or the nearest to it where all are finite."""
     arrays = [e for e in entries if not isinstance(e, float)]
     shape = np.broadcast_shapes(*(a.shape for a in arrays)) if arrays else (1,)
-    total = int(np.prod(shape))
-    pick = np.unique(np.linspace(0, total - 1, min(total, _SAMPLES)).astype(int))
-    spread = [
-        np.full(pick.size, e) if isinstance(e, float) else np.broadcast_to(e, shape).reshape(-1)[pick] for e in entries
-    ]
-    finite = np.all([np.isfinite(s) for s in spread], axis=0) if spread else np.ones(1, bool)
-    return [s[finite] if finite.any() else np.ones(1) for s in spread]
+    middle = int(np.prod(shape)) // 2
+    for k in range(middle, int(np.prod(shape))):
+        at = np.unravel_index(k, shape)
+        sample = [e if isinstance(e, float) else float(np.broadcast_to(e, shape)[at]) for e in entries]
+        if np.isfinite(sample).all():
+            return sample
+    return [1.0] * len(entries)
 
 
 def _parity(pivots: list[tuple[int, int]]) -> int:

@@ -73,20 +73,36 @@ def reactions(
                 on_pin.setdefault(name, []).append((size * fx, size * fy))
     for name, (member, joint) in hubs.items():
         x, y = at.spot(joint.site)
-        fx = sum((f for f, _ in on_pin[name]), 0.0)
-        fy = sum((f for _, f in on_pin[name]), 0.0)
+        fx: Value = 0.0
+        fy: Value = 0.0
+        for gx, gy in on_pin[name]:
+            fx, fy = _sum(fx, gx), _sum(fy, gy)
         last = max(k for k, s in enumerate(sides) if s.joint == name)
         sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, 0.0, x, y, True))
     return sides
 
 
 def _on_members(joint: Joint, at: Poses, multipliers: Sequence[Value]) -> dict[int, tuple[Value, Value, Value]]:
+    """Force and moment about its origin, on each member; the moment only where the joint can give one."""
+    moments = any(joint.angular)
     out: dict[int, list[Value]] = {}
     for row, m in zip(joint.slope(at), multipliers, strict=True):
         for member, which, value in row:
+            if which == TURN and not moments:
+                continue
             total = out.setdefault(member, [0.0, 0.0, 0.0])
-            total[which] = total[which] + value * m
+            total[which] = _sum(total[which], _times(value, m))
     return {member: (v[X], v[Y], v[TURN]) for member, v in out.items()}
+
+
+def _times(value: Value, m: Value) -> Value:
+    if isinstance(value, float) and abs(value) == 1.0:
+        return m if value > 0 else -m
+    return value * m
+
+
+def _sum(a: Value, b: Value) -> Value:
+    return b if isinstance(a, float) and a == 0.0 else a + b
 
 
 def _sized(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:

@@ -10,6 +10,7 @@ from dataclasses import dataclass
 
 import numpy as np
 from numpy.polynomial import chebyshev
+from numpy.typing import NDArray
 
 from linkcalc.mechanics.refine import Curve, peaks, roots, summit_of
 from linkcalc.parts.pose import Array
@@ -17,6 +18,7 @@ from linkcalc.parts.pose import Array
 _WIDE = 7
 _EVEN = np.linspace(-1, 1, _WIDE)
 _TO_SERIES = np.linalg.inv(chebyshev.chebvander(_EVEN, _WIDE - 1))
+_ZERO = 1e-13  # of the curve's size: a sample that is nothing but rounding
 _AGREES = 1e-9  # of the curve's size: how well the polynomial must foretell what is found
 
 
@@ -78,28 +80,61 @@ def _on_polynomial(samples: Samples, top: Array, low: Array, high: Array) -> tup
     return place, chebyshev.chebval(t, series.T, tensor=False)
 
 
-def sampled_roots(f: Curve, samples: Samples) -> tuple[Array, Array]:
+def sampled_roots(f: Curve, samples: Samples) -> tuple[Array, NDArray[np.intp]]:
     """All passages through zero between samples: (places, number of the curve), in the order of the curves."""
-    y = samples.values
-    if y.shape[1] < 2:
-        return np.zeros(0), np.zeros(0, int)
-    # a sample that is zero to rounding counts with the side that follows
+    y, count = samples.values, samples.where.size
+    none = np.zeros(0), np.zeros(0, np.intp)
+    if count < 2 or not len(y):
+        return none
+    # a sample that is zero to rounding counts with the side before it, so the bracket reaches back to that side
     size = np.abs(y).max(axis=1, initial=0.0, where=np.isfinite(y))[:, None]
-    y = np.where(np.abs(y) <= 1e-13 * size, 0.0, y)
-    sign = np.sign(y)
-    for k in range(1, sign.shape[1]):
-        sign[:, k] = np.where(sign[:, k] == 0, sign[:, k - 1], sign[:, k])
-    curve, at = np.nonzero(sign[:, :-1] * sign[:, 1:] < 0)
+    y = np.where(np.abs(y) <= _ZERO * size, 0.0, y)
+    start = np.where(y != 0.0, np.arange(count), 0)
+    start = np.maximum.accumulate(start, axis=1)
+    sign = np.sign(np.take_along_axis(y, start, axis=1))
+    with np.errstate(invalid="ignore"):
+        curve, at = np.nonzero(sign[:, :-1] * sign[:, 1:] < 0)
     if not curve.size:
-        return np.zeros(0), np.zeros(0, int)
-    # the zero samples before the change carry the sign of an earlier one, so the bracket reaches back to that
-    start = at.copy()
-    for n, (c, k) in enumerate(zip(curve, at, strict=True)):
-        while start[n] > 0 and y[c, start[n]] == 0.0:
-            start[n] -= 1
-        del k
-    place = roots(
-        lambda x, which: f(x, curve[which]),
-        samples.where[start], samples.where[at + 1], y[curve, start], y[curve, at + 1],
-    )  # fmt: skip
-    return place, curve
+        return none
+    low, high = start[curve, at], at + 1
+    if count < _WIDE:
+        return _bracketed(f, samples, y, curve, low, high), curve
+    place, steep = _root_of_polynomial(samples, curve, low, high)
+    found = f(place, curve)
+    # one step of Newton with the polynomial's slope squares what error is left
+    with np.errstate(all="ignore"):
+        better = place - found / steep
+    ends = np.sort(samples.where[np.stack([low, high])], axis=0)
+    sure = (np.abs(found) <= _AGREES * size[curve, 0]) & (better >= ends[0]) & (better <= ends[1])
+    doubt = np.nonzero(~sure)[0]
+    if doubt.size:
+        better[doubt] = _bracketed(f, samples, y, curve[doubt], low[doubt], high[doubt])
+    return better, curve
+
+
+def _bracketed(
+    f: Curve, samples: Samples, y: Array, curve: NDArray[np.intp], low: NDArray[np.intp], high: NDArray[np.intp]
+) -> Array:
+    return roots(
+        lambda x, which: f(x, curve[which]), samples.where[low], samples.where[high], y[curve, low], y[curve, high]
+    )
+
+
+def _root_of_polynomial(
+    samples: Samples, curve: NDArray[np.intp], low: NDArray[np.intp], high: NDArray[np.intp]
+) -> tuple[Array, Array]:
+    """Place of the root on the polynomial through seven samples, and the polynomial's slope there."""
+    first = np.clip(low - _WIDE // 2 + 1, 0, samples.where.size - _WIDE)
+    window = samples.values[curve[:, None], first[:, None] + np.arange(_WIDE)]
+    series = (np.where(np.isfinite(window), window, 0.0) @ _TO_SERIES.T).T
+    slope = chebyshev.chebder(series)
+    half = (_WIDE - 1) / 2
+    t_low, t_high = (low - first) / half - 1, (high - first) / half - 1
+    y_low, y_high = samples.values[curve, low], samples.values[curve, high]
+    t = t_low + (t_high - t_low) * y_low / (y_low - y_high)
+    for _ in range(6):
+        with np.errstate(all="ignore"):
+            step = chebyshev.chebval(t, series, tensor=False) / chebyshev.chebval(t, slope, tensor=False)
+        t = np.clip(t - np.nan_to_num(step), t_low, t_high)
+    place = samples.where[0] + samples.step * (first + (t + 1) * half)
+    return place, chebyshev.chebval(t, slope, tensor=False) / (samples.step * half)

@@ -21,6 +21,7 @@ _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its le
 _STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
 _SMALLEST = 1e-7  # of the whole way
 _FIRST = 1 / 6
+_ROUNDING = 1e-13  # of the drive: no way to go
 _STEPS = 5000
 
 
@@ -52,10 +53,9 @@ def walk(chain: Chain, start: Node, stop: float) -> Walk:
     nodes = [start]
     passed: list[tuple[float, float]] = []
     whole = stop - start.drive
-    if whole == 0.0:
+    if abs(whole) <= _ROUNDING * max(abs(stop), abs(start.drive)):
         return Walk((start,), "", np.nan, ())
-    # where the way is no longer than rounding, a part of it would be no step at all
-    step = whole * _FIRST if start.drive + whole * _FIRST != start.drive else whole
+    step = whole * _FIRST
     for _ in range(_STEPS):
         here = nodes[-1]
         left = stop - here.drive

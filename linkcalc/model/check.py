@@ -6,6 +6,7 @@ Whether the whole can move or stand is for the mechanics to say.
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import replace
 from typing import Any
 
 from linkcalc.model.check_drawing import check_drawing
@@ -30,9 +31,18 @@ def check(mechanism: Mechanism) -> Mechanism:
 
     Raises Faults: everything that is wrong, each with its item.
     """
+    if mechanism.checked:
+        return mechanism
     gather = Gather()
     found = checked(to_tree(mechanism), gather)
     gather.raise_any()
+    return in_order(found, mechanism.source)
+
+
+def in_order(mechanism: Mechanism, source: str) -> Mechanism:
+    """A mechanism that nothing is wrong with, marked so: it need not be looked over again."""
+    found = replace(mechanism, source=source)
+    object.__setattr__(found, "checked", True)  # frozen for everybody else
     return found
 
 

@@ -149,6 +149,7 @@ class Mechanism:
     cases     name -> Case; empty: one case, the model as written
     requirements  name -> text, e.g. "effort <= 150 N"
     source    file it was read from, "" if built in Python; not compared
+    checked   True once everything in it has been found in order (what is replaced starts anew); not compared
     """
 
     title: str = _entry("text", "shown in answers", "")
@@ -166,6 +167,7 @@ class Mechanism:
     cases: Mapping[str, Case] = _entry("named tables", "load cases", dict, of=Case, blanks=True)
     requirements: Mapping[str, str] = _entry("named texts", "what must hold", dict, blanks=True)
     source: str = field(default="", compare=False)
+    checked: bool = field(default=False, init=False, compare=False, repr=False)
 
 
 def strength_kind(load: Any) -> str:

@@ -2,10 +2,9 @@
 
 from __future__ import annotations
 
-from dataclasses import replace
 from pathlib import Path
 
-from linkcalc.model.check import checked
+from linkcalc.model.check import checked, in_order
 from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.source import Source, open_source
@@ -16,7 +15,7 @@ def read(path: str | Path) -> Mechanism:
 
     Raises Faults: everything that is wrong with the file, in its order.
     """
-    return replace(_mechanism(open_source(Path(path))), source=str(path))
+    return _mechanism(open_source(Path(path)), str(path))
 
 
 def parse(text: str, name: str = "model") -> Mechanism:
@@ -27,9 +26,9 @@ def parse(text: str, name: str = "model") -> Mechanism:
     return _mechanism(Source(text, name))
 
 
-def _mechanism(source: Source) -> Mechanism:
+def _mechanism(source: Source, path: str = "") -> Mechanism:
     gather = Gather()
     found = checked(source.tree, gather)
     if gather.faults:
         raise source.located(gather.faults)
-    return found
+    return in_order(found, path)

@@ -5,6 +5,7 @@ from __future__ import annotations
 from dataclasses import replace
 
 from linkcalc.faults import fault
+from linkcalc.model.check import in_order
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.words import nearest
 
@@ -15,4 +16,4 @@ def only_case(mechanism: Mechanism, case: str | None) -> Mechanism:
         return mechanism
     if case not in mechanism.cases:
         raise fault("cases", f"unknown case {case!r}", nearest(case, mechanism.cases))
-    return replace(mechanism, cases={case: mechanism.cases[case]})
+    return in_order(replace(mechanism, cases={case: mechanism.cases[case]}), mechanism.source)

@@ -6,6 +6,7 @@ from dataclasses import replace
 from time import perf_counter
 
 from linkcalc import stroke
+from linkcalc.model.check import check
 from tests.bench.mechanisms import sixbar
 from tests.bench.peers import clock
 from tests.bench.told import head, target
@@ -19,6 +20,7 @@ def report(*, quick: bool) -> bool:
     assert mechanism.stroke is not None
     # half a turn, a degree a pose, as the plain script is given it
     mechanism = replace(mechanism, stroke=replace(mechanism.stroke, start="drawn", stop=_half_turn_on(), poses=POSES))
+    mechanism = check(mechanism)  # as a mechanism that was read from a file has been
     ours, plain = [], []
     for _ in range(5 if quick else 20):
         start = perf_counter()
