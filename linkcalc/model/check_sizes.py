@@ -19,7 +19,6 @@ from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.tokens import names_in
 from linkcalc.model.units import show
 from linkcalc.parts.contract import Size
-from linkcalc.words import nearest
 
 
 def check_sizes(mechanism: Mechanism, known: Known, gather: Gather) -> None:
@@ -61,7 +60,8 @@ def _check(
     words = entry.metadata.get("words", ())
     if isinstance(size, str):
         if words and size.replace(" ", "").isalpha() and size not in known.dimensions:
-            raise fault((), f"unknown word {size!r}", nearest(size, words) + " A size may stand there too")
+            wanted = ", ".join(f"{word!r}" for word in words)
+            raise fault((), f"unknown word {size!r}", f"a size is wanted, or one of {wanted}")
         if any(name not in dimensions for name in names_in(size, known.dimensions)):
             return  # what is wrong with the dimension is told there
     value = to_si(size, kind, mechanism.units, dimensions)
