@@ -1,0 +1,1 @@
+"""What people see: an answer becomes blocks, and blocks become text, CSV, JSON and pictures."""

@@ -1,0 +1,40 @@
+"""Joint forces as each member feels them: components, resultant, direction in ground and in the member's own axes."""
+
+from __future__ import annotations
+
+import numpy as np
+
+from linkcalc.design.answer import Array, StrokeAnswer
+from linkcalc.model.sketch import Drawing
+
+# below this part of the largest force a direction is that of rounding, and there is none
+_NOTHING = 1e-9
+
+
+def resultant(answer: StrokeAnswer) -> Array:
+    """(bearing, case, variant, pose) [N] size of each force."""
+    return np.hypot(answer.force[:, 0], answer.force[:, 1])
+
+
+def direction(answer: StrokeAnswer) -> Array:
+    """(bearing, case, variant, pose) [rad] where each force points, from the x axis; nan where there is no force."""
+    size = resultant(answer)
+    most = np.max(size, initial=0.0, where=np.isfinite(size))
+    angle = np.arctan2(answer.force[:, 1], answer.force[:, 0])
+    return np.where(size > most * _NOTHING, angle, np.nan)
+
+
+def own_direction(answer: StrokeAnswer) -> Array:
+    """(bearing, case, variant, pose) [rad] the same from the member's own x axis (first point to last), which turns
+    with it; the ground's own axes are the ground axes. Within half a turn of zero; a pin itself has none."""
+    sketch = Drawing(answer.mechanism)
+    angle = direction(answer)
+    for i, bearing in enumerate(answer.bearings):
+        if bearing.member not in sketch.members:
+            angle[i] = np.nan
+            continue
+        off = angle[i] - (answer.turn[sketch.member(bearing.member)] + sketch.own_axis(bearing.member))
+        angle[i] = np.arctan2(np.sin(off), np.cos(off))
+        # straight back is half a turn, whichever side of it rounding fell
+        angle[i] = np.where(angle[i] < -np.pi + _NOTHING, np.pi, angle[i])
+    return angle

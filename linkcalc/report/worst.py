@@ -1,0 +1,51 @@
+"""The worst of a quantity over the stroke and all cases: found exactly where the answer has it, else of its poses."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.design.answer import Array, StrokeAnswer
+
+
+@dataclass(frozen=True)
+class Worst:
+    """A largest or smallest value.
+
+    value  SI
+    case   name of its load case
+    drive  [rad or m] where it is, nan without a stroke
+    index  (case, variant, pose) of the computed pose nearest to it
+    """
+
+    value: float
+    case: str
+    drive: float
+    index: tuple[int, int, int]
+
+
+def largest(answer: StrokeAnswer, quantity: str, values: Array, sense: int = 1) -> Worst | None:
+    """The largest of (case, variant, pose) values, or with sense -1 the smallest; None if there are none.
+
+    An event of that quantity may lie between the computed poses; it stands in for them if it goes further.
+    """
+    if not np.isfinite(values).any():
+        return None
+    index = tuple(int(i) for i in np.unravel_index(np.nanargmax(sense * values), values.shape))
+    case, variant, pose = index
+    found = Worst(
+        float(values[index]), answer.cases[case], float(answer.drive[0, variant, pose]), (case, variant, pose)
+    )
+    kind = "largest" if sense > 0 else "smallest"
+    for e in answer.events:
+        if (e.kind, e.quantity) == (kind, quantity) and sense * e.value >= sense * found.value:
+            place = answer.cases.index(e.case) if e.case in answer.cases else case
+            found = Worst(e.value, answer.cases[place], e.drive, (place, variant, nearest_pose(answer, e.drive)))
+    return found
+
+
+def nearest_pose(answer: StrokeAnswer, drive: float) -> int:
+    """Index of the computed pose nearest to a drive; 0 without a stroke."""
+    off = np.abs(answer.drive[0, 0] - drive)
+    return int(np.nanargmin(off)) if np.isfinite(off).any() else 0
