@@ -33,7 +33,9 @@ def number(value: float, digits: int = 4, places: int | None = None, zero: float
     # the exponent after rounding: 9.9996 has one digit more before its point than after
     rounded, exponent = f"{value:.{digits - 1}e}".split("e")
     power = int(exponent)
-    if -4 <= power < max(digits, 7):
+    if digits - 1 <= power < 7:
+        return f"{value:.0f}"  # figures before the point are never rounded away
+    if -4 <= power < digits:
         return f"{float(f'{rounded}e{power}'):.{max(0, digits - 1 - power)}f}"
     return f"{rounded}e{power}"
 
