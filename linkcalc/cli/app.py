@@ -2,10 +2,15 @@
 
 from __future__ import annotations
 
+import os
+import sys
+from importlib.metadata import PackageNotFoundError
+
 import typer
 
 from linkcalc.cli.check import check
 from linkcalc.cli.draw import draw
+from linkcalc.cli.files import BAD
 from linkcalc.cli.start import start
 from linkcalc.cli.stroke import stroke
 
@@ -27,7 +32,10 @@ def _main(
     if version:
         from importlib.metadata import version as installed
 
-        typer.echo(f"linkcalc {installed('linkcalc')}")
+        try:
+            typer.echo(f"linkcalc {installed('linkcalc')}")
+        except PackageNotFoundError:
+            typer.echo("linkcalc, run where it lies: not installed, so without a version")
         raise typer.Exit
 
 
@@ -37,7 +45,14 @@ for command in (start, check, stroke, draw):
 
 def main() -> None:
     """Run the command line."""
-    app()
+    try:
+        app()
+    except OSError as error:
+        # only printing can fail like this: files are read and written with faults of their own
+        typer.echo(f"what is printed: cannot be written: {(error.strerror or str(error)).lower()}", err=True)
+        # what is still in the buffer would raise once more when Python ends
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        sys.exit(BAD)
 
 
 if __name__ == "__main__":

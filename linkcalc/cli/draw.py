@@ -7,10 +7,20 @@ from typing import Annotated
 import numpy as np
 import typer
 
-from linkcalc.cli.files import STDOUT, CaseName, JsonFile, ModelFile, in_file, option_fault, put
+from linkcalc.cli.files import (
+    STDOUT,
+    CaseName,
+    JsonFile,
+    ModelFile,
+    check_outputs,
+    check_picture,
+    in_file,
+    option_fault,
+    put,
+)
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.faults import Fault, Faults
-from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.mechanism import DRAWN, GROUND, Mechanism
 from linkcalc.words import nearest
 
 Output = Annotated[
@@ -48,13 +58,16 @@ def draw(
         from linkcalc.design.stroke import stroke as ask
         from linkcalc.report.drawing import draw_mechanism
         from linkcalc.report.drawing_figure import drawing_figure
-        from linkcalc.report.figure import picture_format, save
+        from linkcalc.report.figure import save
         from linkcalc.report.free_body import free_body
 
         for target in output:
-            picture_format(target)
-        if member is not None and member not in model.members:
-            raise option_fault("--member", f"unknown member {member!r}", nearest(member, model.members))
+            check_picture("--output", target)
+        check_outputs(file, {"--json": [json], "--output": output})
+        moving = [m for m in model.members if m != GROUND]
+        if member is not None and member not in moving:
+            what = "the ground cannot be cut free" if member == GROUND else f"unknown member {member!r}"
+            raise option_fault("--member", what, nearest(member, moving))
         for point in trace or ():
             if point not in model.points:
                 raise option_fault("--trace", f"unknown point {point!r}", nearest(point, model.points))
@@ -76,7 +89,7 @@ def _posed(answer: StrokeAnswer, at: list[str]) -> tuple[StrokeAnswer, list[int]
     """The answer with the poses that are drawn among its poses, and their numbers."""
     last = answer.drive.shape[-1] - 1
     if not answer.drive_name:
-        if at and set(at) != {"drawn"}:
+        if at and set(at) != {DRAWN}:
             raise option_fault("--at", "the model has no stroke", "it is drawn in its drawing pose")
         return answer, [0]
     ends = {"start": float(answer.drive[0, 0, 0]), "end": float(answer.drive[0, 0, -1])}
@@ -100,6 +113,9 @@ def _place(mechanism: Mechanism, text: str, ends: dict[str, float]) -> float:
 
     if text in ends:
         return ends[text]
+    if text.isidentifier() and text != DRAWN and text not in mechanism.dimensions:
+        words = nearest(text, (*ends, DRAWN))
+        raise option_fault("--at", f"unknown pose {text!r}", f'{words}, or a value of the stroke ("30 deg")')
     try:
         return stroke_value(mechanism, text)
     except Faults as found:

@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator
+import os
+from collections.abc import Callable, Iterator, Mapping, Sequence
 from contextlib import contextmanager
 from pathlib import Path
 from typing import Annotated
@@ -60,6 +61,32 @@ def put(target: str, text: Callable[[], str]) -> None:
     else:
         write_whole(target, text())
         typer.echo(f"wrote {target}", err=True)
+
+
+def check_outputs(model: Path, outputs: Mapping[str, Sequence[str | None]]) -> None:
+    """Raises Faults: an option would write over the model, or over what another option writes.
+
+    outputs  option -> the files it names
+    """
+    taken = {os.path.realpath(model): "the model itself"}
+    for option, targets in outputs.items():
+        for target in targets:
+            if not target or target == STDOUT:
+                continue
+            place = os.path.realpath(target)
+            if place in taken:
+                raise option_fault(option, f"{target} is {taken[place]}", "give it another file")
+            taken[place] = f"written by {option} already"
+
+
+def check_picture(option: str, target: str) -> None:
+    """Raises Faults: no picture can be written under that name."""
+    from linkcalc.report.figure import picture_format
+
+    try:
+        picture_format(target)
+    except Faults as found:
+        raise Faults([Fault((), f"{option}: {target}: {f.what}", f.wanted) for f in found.faults]) from None
 
 
 def option_fault(option: str, what: str, wanted: str = "") -> Faults:

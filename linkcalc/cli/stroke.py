@@ -6,7 +6,19 @@ from typing import Annotated
 
 import typer
 
-from linkcalc.cli.files import FAILED, STDOUT, CaseName, CsvFile, JsonFile, ModelFile, in_file, option_fault, put
+from linkcalc.cli.files import (
+    FAILED,
+    STDOUT,
+    CaseName,
+    CsvFile,
+    JsonFile,
+    ModelFile,
+    check_outputs,
+    check_picture,
+    in_file,
+    option_fault,
+    put,
+)
 
 Poses = Annotated[int | None, typer.Option("--poses", help="Number of poses instead of the model's.", metavar="N")]
 Plots = Annotated[
@@ -35,10 +47,16 @@ def stroke(
         if json == STDOUT and csv == STDOUT:
             raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
         for target in plot or ():
-            from linkcalc.report.figure import picture_format
-
-            picture_format(target)
+            check_picture("--plot", target)
+        check_outputs(file, {"--json": [json], "--csv": [csv], "--plot": plot or []})
         answer = ask(model, case=case, poses=poses)
+        figures = []
+        for target in plot or ():
+            from linkcalc.report.chart import stroke_chart
+            from linkcalc.report.chart_figure import chart_figure
+
+            # made before anything is written: a model without a stroke has no curves
+            figures.append((chart_figure(stroke_chart(answer)), target))
         if json:
             from linkcalc.report.json import as_json
 
@@ -48,12 +66,10 @@ def stroke(
             from linkcalc.report.stroke_table import stroke_table
 
             put(csv, lambda: as_csv(stroke_table(answer)))
-        for target in plot or ():
-            from linkcalc.report.chart import stroke_chart
-            from linkcalc.report.chart_figure import chart_figure
+        for figure, target in figures:
             from linkcalc.report.figure import save
 
-            save(chart_figure(stroke_chart(answer)), target)
+            save(figure, target)
             typer.echo(f"wrote {target}", err=True)
         if STDOUT not in (json, csv):
             from linkcalc.report.stroke_blocks import stroke_blocks

@@ -13,6 +13,7 @@ from linkcalc.design.travel import travel
 from linkcalc.faults import fault
 from linkcalc.model.dimensions import evaluate
 from linkcalc.model.requirements import END, START, Requirement, requirements
+from linkcalc.model.units import show
 from linkcalc.words import nearest
 
 _HOLDS: dict[str, Callable[[float, float], bool]] = {
@@ -57,6 +58,7 @@ def _worst(curves: Curves, requirement: Requirement, place: float | None) -> tup
     if requirement.at:
         drive = {START: curves.drive[0], END: curves.drive[-1]}.get(requirement.at, place)
         assert drive is not None
+        _inside(curves, requirement, drive)
         values = sign * curves.at([name], np.array([drive]))[0, :, 0]
         seen = np.abs(values) if size else values
         k = int(np.argmax(seen) if upward else np.argmin(seen))
@@ -69,6 +71,20 @@ def _worst(curves: Curves, requirement: Requirement, place: float | None) -> tup
         return float("nan"), float("nan"), ""
     k = int(np.argmax(seen) if upward else np.argmin(seen))
     return float(seen[k]), found[k].drive, cases[k]
+
+
+def _inside(curves: Curves, requirement: Requirement, drive: float) -> None:
+    """Raises Faults for a pose outside the stroke: what holds there was never walked to."""
+    start, end = float(curves.drive[0]), float(curves.drive[-1])
+    slack = 1e-9 * abs(end - start)
+    if min(start, end) - slack <= drive <= max(start, end) + slack:
+        return
+    coordinate = curves.survey.ready.chain.coordinate
+    assert coordinate is not None
+    units = curves.survey.ready.drawing.mechanism.units
+    place, first, last = (show(v, coordinate.kind, units) for v in (drive, start, end))
+    what = f"{place} is outside the stroke, which goes from {first} to {last}"
+    raise fault(("requirements", requirement.name), what, "name a pose between its ends, or make the stroke longer")
 
 
 def _quantity(requirement: Requirement) -> tuple[str, int]:

@@ -70,8 +70,9 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     if not bool(np.any(start.fine)):
         raise Faults(Fault(("points",), "the drawing pose does not close", "check the points that slots guide"))
     if mechanism.stroke and not asked:
-        what = "no effort" if not loads.effort else "nothing is asked: effort and load both have a size"
-        raise Faults(Fault(("effort",), what, "leave out the size of the effort (or of the load)"))
+        # that effort and load both have a size is a fault of the model, found before it comes here
+        what = "nothing drives it: the model has no effort"
+        raise Faults(Fault(("stroke",), what, "give it an [effort] without a size"))
     return Ready(drawing, chain, start, loads, mechanism.stroke is not None)
 
 
@@ -110,7 +111,8 @@ def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
         spare = found.free - wanted
         takes = f", of which {driven} takes one" if wanted else ""
         what = f"{_number(found.free)}{takes}: {', '.join(movers)} can move"
-        cure = "give the model an effort" if not wanted and spare == 1 else "hold them with a pin, slot, slide or weld"
+        much = f"hold them by {spare} more: a slot holds 1, a pin or slide 2, a weld 3"
+        cure = f"give the model an [effort], or {much}" if not wanted and spare == 1 else much
         faults.append(Fault(("members", movers[0] if movers else "ground"), what, cure))
     if found.excess:
         what = f"held {found.excess} time{'s' if found.excess > 1 else ''} more than needed, among joints {joints}"
