@@ -2,9 +2,10 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Collection, Sequence
 from dataclasses import dataclass
 from functools import cached_property
+from typing import Any
 
 import numpy as np
 from numpy.typing import NDArray
@@ -12,7 +13,7 @@ from numpy.typing import NDArray
 from linkcalc.design.survey import Shown, Survey
 from linkcalc.mechanics.mesh import Mesh
 from linkcalc.mechanics.pipeline import Solved, solve_at
-from linkcalc.mechanics.sampled import Samples, sampled_peaks, sampled_roots
+from linkcalc.mechanics.sampled import Peaks, Roots, Samples
 from linkcalc.parts.pose import Array
 
 
@@ -49,6 +50,11 @@ class Curves:
         self.survey, self.shown = survey, shown
         self.drive: Array = shown.solved.drive[0, 0]
         self._samples: dict[str, Array] = {}
+        self._sizes: dict[str, float] = {}
+        self._names = list(survey.quantities)
+        self._row = {name: k for k, name in enumerate(self._names)}
+        self._column: dict[float, int] = {}
+        self._values: Array = np.zeros((len(self._names), len(survey.ready.pushing.cases), 0))
         self._mesh = Mesh(self.drive, [shown.solved.closed]) if self.drive.size > 1 else None
 
     def samples(self, name: str) -> Array:
@@ -61,7 +67,15 @@ class Curves:
     def largest_force(self) -> float:
         """[N] the largest force of any joint at any of the samples."""
         names = [f"force at {s.joint}" for s in self.survey.sides]
-        return max((size_of(self.samples(n)) for n in dict.fromkeys(names)), default=0.0)
+        return max((self.size(n) for n in dict.fromkeys(names)), default=0.0)
+
+    def size(self, name: str) -> float:
+        """The largest of a quantity's absolute values at the samples, what is not finite left out."""
+        if name not in self._sizes:
+            values = np.abs(self.samples(name))
+            top = float(values.max())
+            self._sizes[name] = top if np.isfinite(top) else float(values.max(initial=0.0, where=np.isfinite(values)))
+        return self._sizes[name]
 
     def solve(self, drive: Array) -> Solved:
         """Statics at any values of the drive (values)."""
@@ -70,56 +84,103 @@ class Curves:
         return solve_at(self.survey.ready, self._mesh, drive, checked=False)
 
     def at(self, names: Sequence[str], drive: Array) -> Array:
-        """(names, case, values) at any values of the drive."""
-        values: Array = self.survey.values(names, self.survey.show(self.solve(drive)))[:, :, 0]
-        return values
+        """(names, case, values) at any values of the drive; what was asked before is not solved again."""
+        new = np.array([d for d in dict.fromkeys(drive.tolist()) if d not in self._column])
+        if new.size:
+            values = self.survey.values(self._names, self.survey.show(self.solve(new)))[:, :, 0]
+            start = len(self._column)
+            self._column.update((d, start + k) for k, d in enumerate(new.tolist()))
+            self._values = np.concatenate([self._values, values], axis=2)
+        columns = [self._column[d] for d in drive.tolist()]
+        rows = [self._row[n] for n in names]
+        found: Array = self._values[rows][:, :, columns]
+        return found
 
     def extremes(self, wanted: Sequence[Wanted]) -> list[Found]:
         """All the extremes asked for, found together. Of a size, the value comes with the sign it has there."""
+        found = Extremes(self, wanted).found()
+        return [found[w] for w in wanted]
+
+
+class Extremes:
+    """Extremes looked for together: foretold places first, then found exactly."""
+
+    def __init__(self, curves: Curves, wanted: Sequence[Wanted]):
+        self._curves, self.wanted = curves, tuple(wanted)
         if not wanted:
-            return []
-        names, which = _numbered([w.name for w in wanted])
-        cases = np.array([w.case for w in wanted], int)
-        sense = np.array([w.sense for w in wanted], float)
-        size = np.array([w.size for w in wanted], bool)
-        raw = np.stack([self.samples(n) for n in names])[which, cases]
-        signs = np.ones(len(wanted))
+            return
+        self._names, self._which = _numbered([w.name for w in wanted])
+        self._case = np.array([w.case for w in wanted], int)
+        self._sense = np.array([w.sense for w in wanted], float)
+        self._size = np.array([w.size for w in wanted], bool)
+        self._raw = np.stack([curves.samples(n) for n in self._names])[self._which, self._case]
+        self._peaks = Peaks(Samples(curves.drive, self._seen(self._raw, slice(None))))
 
-        def seen(y: Array, k: NDArray[np.intp]) -> Array:
-            return sense[k] * np.where(size[k], np.abs(y), y)
+    @property
+    def places(self) -> Array:
+        """Where the samples foretell them."""
+        return self._peaks.place
+
+    def found(self, besides: Collection[Wanted] = ()) -> dict[Wanted, Found]:
+        """All of them, but for those that are known already."""
+        left = [k for k, w in enumerate(self.wanted) if w not in besides]
+        if not left:
+            return {}
+        signs = np.ones(len(self._case))
 
         def f(x: Array, k: NDArray[np.intp]) -> Array:
-            y = self.at(names, x)[which[k], cases[k], np.arange(x.size)]
+            y = self._curves.at(self._names, x)[self._which[k], self._case[k], np.arange(x.size)]
             signs[k] = np.where(y < 0, -1.0, 1.0)
-            return seen(y, k)
+            return self._seen(y, k)
 
-        samples = Samples(self.drive, sense[:, None] * np.where(size[:, None], np.abs(raw), raw))
-        place, best = sampled_peaks(f, samples)
-        nearest = raw[np.arange(len(wanted)), np.abs(self.drive - place[:, None]).argmin(axis=1)]
-        signs = np.where(np.isfinite(nearest), np.sign(nearest), signs)
-        value = np.where(size, sense * best * np.where(signs < 0, -1.0, 1.0), sense * best)
-        return [Found(float(p), float(v)) for p, v in zip(place, value, strict=True)]
+        only = np.array(left)
+        place, best = self._peaks.confirmed(f, only)
+        value = self._sense[only] * best
+        if self._size.any():
+            drive = self._curves.drive
+            nearest = self._raw[only, np.abs(drive - place[:, None]).argmin(axis=1)]
+            told = np.where(np.isfinite(nearest), nearest, signs[only])
+            value = np.where(self._size[only] & (told < 0), -value, value)
+        return {self.wanted[k]: Found(float(p), float(v)) for k, p, v in zip(left, place, value, strict=True)}
 
-    def zeros(self, names: Sequence[str]) -> list[tuple[str, int, float]]:
-        """Where quantities change their sign, exactly: (name, case, drive). What is alike in all cases is told once,
-        for case 0."""
-        if not names:
-            return []
-        samples = np.stack([self.samples(n) for n in names])
+    def _seen(self, y: Array, k: Any) -> Array:
+        """What is to be largest; a row a curve, or one value each."""
+        sense, size = self._sense[k], self._size[k]
+        if y.ndim == 2:
+            sense, size = sense[:, None], size[:, None]
+        seen: Array = sense * np.where(size, np.abs(y), y)
+        return seen
+
+
+class Zeros:
+    """Where quantities change their sign: foretold places first, then found exactly."""
+
+    def __init__(self, curves: Curves, names: Sequence[str]):
+        self._curves, self._names = curves, list(names)
+        samples = np.stack([curves.samples(n) for n in names]) if names else np.zeros((0, 1, curves.drive.size))
+        # what is alike in all cases is told once, for case 0
         alike = [bool(np.all(s == s[:1])) for s in samples]
-        which = [(n, c) for n in range(len(names)) for c in range(1 if alike[n] else samples.shape[1])]
-        rows, cases = (np.array(v, int) for v in zip(*which, strict=True))
+        which = [(n, c) for n in range(len(alike)) for c in range(1 if alike[n] else samples.shape[1])]
+        self._rows, self._cases = np.array(which, int).reshape(-1, 2).T
+        self._roots = Roots(Samples(curves.drive, samples[self._rows, self._cases]))
+
+    @property
+    def places(self) -> Array:
+        """Where the samples foretell them."""
+        return self._roots.place
+
+    def names(self) -> list[str]:
+        """Name of the quantity of each of them."""
+        return [self._names[self._rows[k]] for k in self._roots.curve]
+
+    def found(self) -> list[tuple[str, int, float]]:
+        """(name, case, drive) of each, exactly."""
 
         def f(x: Array, k: NDArray[np.intp]) -> Array:
-            return self.at(names, x)[rows[k], cases[k], np.arange(x.size)]
+            return self._curves.at(self._names, x)[self._rows[k], self._cases[k], np.arange(x.size)]
 
-        place, curve = sampled_roots(f, Samples(self.drive, samples[rows, cases]))
-        return [(names[rows[k]], int(cases[k]), float(p)) for p, k in zip(place, curve, strict=True)]
-
-
-def size_of(values: Array) -> float:
-    """The largest of absolute values, what is not finite left out."""
-    return float(np.max(np.abs(values), initial=0.0, where=np.isfinite(values)))
+        cases = [int(self._cases[k]) for k in self._roots.curve]
+        return list(zip(self.names(), cases, self._roots.confirmed(f).tolist(), strict=True))
 
 
 def _numbered(names: Sequence[str]) -> tuple[list[str], NDArray[np.intp]]:

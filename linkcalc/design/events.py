@@ -2,14 +2,15 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Sequence
 
 import numpy as np
 
 from linkcalc.design.answer import Event
-from linkcalc.design.curves import Curves, Found, Wanted, size_of
+from linkcalc.design.curves import Curves, Extremes, Found, Wanted, Zeros
 from linkcalc.design.survey import EFFORT_SPEED, LOAD_SPEED
 from linkcalc.mechanics.path import Path
+from linkcalc.parts.pose import Array
 
 _BOTH_WAYS = ("effort", "load", "force ratio", "ideal ratio")
 _POLE = 1e-7  # of the stroke: how near a dead point is looked at to see whether a curve has a bound there
@@ -21,33 +22,51 @@ def events(curves: Curves, path: Path) -> tuple[Event, ...]:
     """All events, limits and dead points first, then reversals, then extremes in the order of the quantities."""
     out = [Event("limit", "stroke", "", limit, np.nan, "number") for limit in path.limits]
     out += [Event("change point", "stroke", "", (a + b) / 2, np.nan, "number") for a, b in path.passed]
-    out += _passages(curves)
+    zeros = Zeros(curves, _turning(curves))
+    wanted = Extremes(curves, [w for w in _wanted(curves) if not _carries_nothing(curves, w.name)])
+    _solve_ahead(curves, zeros, wanted)
+    out += _passages(curves, zeros)
     dead = {e.drive for e in out if e.kind == "dead point"}
     zero = {e.drive for e in out if e.kind in ("dead point", "reversal")}
-    out += _extremes(curves, sorted(dead), sorted(zero))
+    out += _extremes(curves, wanted, sorted(dead), sorted(zero))
     return tuple(out)
 
 
-def _passages(curves: Curves) -> Iterator[Event]:
+def _solve_ahead(curves: Curves, zeros: Zeros, wanted: Extremes) -> None:
+    """All the places that the samples foretell go into one batch: the cost is in the number of batches."""
+    if curves.drive.size < 2 or not wanted.wanted:
+        return
+    dead = [p for n, p in zip(zeros.names(), zeros.places, strict=True) if n in _SPEEDS]
+    places = [zeros.places, wanted.places, _beside(curves, dead)]
+    curves.at([], np.concatenate(places))
+
+
+_SPEEDS = {EFFORT_SPEED: "effort", LOAD_SPEED: "load"}
+
+
+def _turning(curves: Curves) -> list[str]:
+    """What is looked at for a change of sign."""
+    axial = [f"axial force in {m}" for m in _members(curves)]
+    return [
+        *(name for name in _SPEEDS if name in curves.survey.quantities),
+        *(name for name in axial if not _carries_nothing(curves, name)),
+    ]
+
+
+def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
     """Dead points, where the speed of effort or load passes through zero, and reversals of two-force members."""
-    names = {EFFORT_SPEED: "effort", LOAD_SPEED: "load"}
-    speeds = [name for name in names if name in curves.survey.quantities]
-    axial = {f"axial force in {m}": m for m in _members(curves)}
-    alone = {n for n in axial if _carries_nothing(curves, n)}
-    for name, case, drive in curves.zeros([*speeds, *(n for n in axial if n not in alone)]):
-        if name in names:
-            label = _case(curves, case) if case else ""
-            yield Event("dead point", names[name], label, drive, np.nan, "number")
+    for name, case, drive in zeros.found():
+        if name in _SPEEDS:
+            yield Event("dead point", _SPEEDS[name], _case(curves, case) if case else "", drive, np.nan, "number")
         else:
-            yield Event("reversal", axial[name], _case(curves, case), drive, 0.0, "force")
+            member = name.removeprefix("axial force in ")
+            yield Event("reversal", member, _case(curves, case), drive, 0.0, "force")
 
 
-def _extremes(curves: Curves, dead: list[float], zero: list[float]) -> Iterator[Event]:
-    wanted = [w for w in _wanted(curves) if not _carries_nothing(curves, w.name)]
-    known = _at_passages(curves, wanted, dead, zero)
-    left = [w for w in wanted if w not in known]
-    found = dict(zip(left, curves.extremes(left), strict=True)) | known
-    for w in wanted:
+def _extremes(curves: Curves, wanted: Extremes, dead: list[float], zero: list[float]) -> Iterator[Event]:
+    found = _at_passages(curves, wanted.wanted, dead, zero)
+    found |= wanted.found(besides=found)
+    for w in wanted.wanted:
         if not np.isnan(found[w].value):
             kind = "largest" if w.sense > 0 else "smallest"
             value_kind = curves.survey.quantities[w.name].kind
@@ -73,28 +92,34 @@ def _wanted(curves: Curves) -> Iterator[Wanted]:
             yield Wanted(f"axial force in {member}", case, -1)
 
 
-def _at_passages(curves: Curves, wanted: list[Wanted], dead: list[float], zero: list[float]) -> dict[Wanted, Found]:
+def _at_passages(curves: Curves, wanted: Sequence[Wanted], dead: list[float], zero: list[float]) -> dict[Wanted, Found]:
     """Extremes that stand where something passes through zero: at a dead point some curves have no bound, and where
     a force turns round, its size (and that of others that hang on it) is nothing. Neither is a smooth peak."""
     if not zero or curves.drive.size < 2 or not wanted:
         return {}
-    low, high = min(curves.drive[0], curves.drive[-1]), max(curves.drive[0], curves.drive[-1])
-    near = (high - low) * _POLE
     names = list(dict.fromkeys(w.name for w in wanted))
-    beside = np.clip(np.add.outer(dead, [-near, near]).ravel(), low, high)
+    beside = _beside(curves, dead)
     values = curves.at(names, np.concatenate([beside, zero]))
     out: dict[Wanted, Found] = {}
     for w in wanted:
         there = values[names.index(w.name), w.case]
-        top, usual = _size(curves, w.name), _usual(curves, w)
+        top = curves.size(w.name)
         rise = w.sense * (np.abs(there[: beside.size]) if w.size else there[: beside.size])
+        steepest = float(rise.max()) if rise.size else 0.0
         small = np.abs(there[beside.size :])
         never_minus = w.size or np.min(curves.samples(w.name)[w.case]) >= 0
-        if rise.size and np.max(rise) > max(_RISE * usual, 1e-300):
+        if steepest > top and steepest > _RISE * _usual(curves, w):
             out[w] = Found(dead[int(np.argmax(rise)) // 2], w.sense * np.inf)
         elif w.sense < 0 and never_minus and np.min(small) <= _NOTHING * top:
             out[w] = Found(zero[int(np.argmin(small))], 0.0)
     return out
+
+
+def _beside(curves: Curves, dead: list[float]) -> Array:
+    """Two places close to each dead point, one on either side."""
+    low, high = min(curves.drive[0], curves.drive[-1]), max(curves.drive[0], curves.drive[-1])
+    near = (high - low) * _POLE
+    return np.clip(np.add.outer(dead, [-near, near]).ravel(), low, high)
 
 
 def _usual(curves: Curves, w: Wanted) -> float:
@@ -109,11 +134,7 @@ def _carries_nothing(curves: Curves, name: str) -> bool:
         return False
     quantity = curves.survey.quantities[name]
     arm = curves.survey.ready.chain.size if quantity.kind == "moment" else 1.0
-    return _size(curves, name) <= _NOTHING * curves.largest_force * arm
-
-
-def _size(curves: Curves, name: str) -> float:
-    return size_of(curves.samples(name))
+    return curves.size(name) <= _NOTHING * curves.largest_force * arm
 
 
 def _members(curves: Curves) -> list[str]:

@@ -52,7 +52,7 @@ def stroke(
             assert mechanism.stroke is not None
             solved, path = solve_stroke(ready, poses or mechanism.stroke.poses)
     survey = Survey(ready, solved)
-    shown = survey.show(solved)
+    shown = survey.first
     curves = Curves(survey, shown)
     found = events(curves, path) if path is not None else ()
     judged = verdicts(curves)
@@ -70,7 +70,7 @@ def _copies(mechanism: Mechanism, sizes: Mapping[str, Array], path: Path | None,
     drawing = Drawing(mechanism, {k: np.reshape(v, (1, -1, 1)) for k, v in sizes.items()})
     ready = prepare(drawing)
     solved = solve_drawn(ready) if path is None else solve_copies(ready, path, drive[0, 0])
-    return ready, Survey(ready, solved).show(solved)
+    return ready, Survey(ready, solved).first
 
 
 def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged, warned) -> StrokeAnswer:  # type: ignore[no-untyped-def]

@@ -43,13 +43,14 @@ class Quantity:
 class Survey:
     """The quantities of one mechanism.
 
+    first      the batch it was made from
     sides      the sides of its joints, as in every solved batch
     two_force  its two-force members
     """
 
     def __init__(self, ready: Ready, first: Solved):
         self.ready = ready
-        shown = self.show(first)
+        self.first = shown = self.show(first)
         self.sides = shown.sides
         self.two_force: tuple[TwoForce, ...] = two_force_members(shown.sides, first.closed.at, ready.pushing)
         self.quantities: dict[str, Quantity] = {q.name: q for q in self._all()}

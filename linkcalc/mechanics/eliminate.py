@@ -7,6 +7,7 @@ If they become many, the order is planned anew from the batch at hand.
 from __future__ import annotations
 
 from collections.abc import Sequence
+from functools import cached_property
 from typing import Protocol
 
 import numpy as np
@@ -30,6 +31,8 @@ class Elimination:
     def __init__(self, size: int, places: Sequence[tuple[int, int]], row_size: Array, column_size: Array):
         self.size, self.places = size, tuple(places)
         self.row_size, self.column_size = row_size, column_size
+        self.scale = row_size[:, None] / column_size
+        self.row_index, self.column_index = (list(k) for k in zip(*self.places, strict=True))
         self._plans: dict[tuple[float | None, ...], Plan] = {}
 
     def factor(self, entries: Sequence[Value], *, lone: bool) -> Factors:
@@ -82,7 +85,8 @@ class Factors(Protocol):
     negative  (1, variant, pose) True where the determinant is below zero: it changes on another branch
     """
 
-    negative: NDArray[np.bool_]
+    @property
+    def negative(self) -> NDArray[np.bool_]: ...
 
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]: ...
 
@@ -91,15 +95,14 @@ class Single:
     """One matrix of plain floats, solved densely: for a small one this is quicker than any plan."""
 
     def __init__(self, owner: Elimination, entries: Sequence[Value]):
-        self._matrix = np.zeros((owner.size, owner.size))
-        for (i, j), e in zip(owner.places, entries, strict=True):
-            self._matrix[i, j] = e
+        matrix = np.zeros((owner.size, owner.size))
+        matrix[owner.row_index, owner.column_index] = entries
         self._row, self._column = owner.row_size, owner.column_size
-        self._scaled = self._matrix * self._row[:, None] / self._column
-        sign, log_size = np.linalg.slogdet(self._scaled)
-        if not np.isfinite(log_size):
-            raise NoPlan(list(range(owner.size)))
-        self.negative = np.full((1, 1, 1), sign < 0)
+        self._scaled = matrix * owner.scale
+
+    @cached_property
+    def negative(self) -> NDArray[np.bool_]:
+        return np.full((1, 1, 1), np.linalg.slogdet(self._scaled)[0] < 0)
 
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]:
         b = np.array(rhs, float)

@@ -122,7 +122,7 @@ def summit_of(series: Array, low: Array, high: Array) -> Array:
     inside = (low[:, None] - 1e-12 <= _FINE) & (high[:, None] + 1e-12 >= _FINE)
     x = _FINE[np.argmax(np.where(inside, series @ _FINE_VALUES.T, -np.inf), axis=1)]
     first, second = chebyshev.chebder(series.T), chebyshev.chebder(series.T, 2)
-    for _ in range(4):
+    for _ in range(3):
         slope, bend = chebyshev.chebval(x, first, tensor=False), chebyshev.chebval(x, second, tensor=False)
         with np.errstate(all="ignore"):
             step = np.where(bend < 0, slope / bend, 0.0)

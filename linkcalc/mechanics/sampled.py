@@ -18,6 +18,8 @@ from linkcalc.parts.pose import Array
 _WIDE = 7
 _EVEN = np.linspace(-1, 1, _WIDE)
 _TO_SERIES = np.linalg.inv(chebyshev.chebvander(_EVEN, _WIDE - 1))
+_HALF = (_WIDE - 1) / 2
+_STILL = 1e-10  # of the step between samples: no correction worth making
 _ZERO = 1e-13  # of the curve's size: a sample that is nothing but rounding
 _AGREES = 1e-9  # of the curve's size: how well the polynomial must foretell what is found
 
@@ -37,104 +39,139 @@ class Samples:
         return float(self.where[1] - self.where[0])
 
 
+class Peaks:
+    """The largest value of each curve: foretold from the samples alone, then confirmed.
+
+    place  (curves) where the polynomial has it
+    """
+
+    def __init__(self, samples: Samples):
+        self._samples = samples
+        y = np.where(np.isfinite(samples.values), samples.values, -np.inf)
+        self._top = np.argmax(y, axis=1) if y.size else np.zeros(0, np.intp)
+        count = samples.where.size
+        self._low, self._high = np.maximum(self._top - 1, 0), np.minimum(self._top + 1, count - 1)
+        self.place = samples.where[self._top]
+        self._foretold = samples.values[np.arange(len(self._top)), self._top]
+        if count >= _WIDE and len(self._top):
+            self._foretell()
+
+    def _foretell(self) -> None:
+        samples, count = self._samples, self._samples.where.size
+        first, series = _polynomial(samples, np.arange(len(self._top)), self._top - _WIDE // 2)
+        t = summit_of(series, (self._low - first) / _HALF - 1, (self._high - first) / _HALF - 1)
+        index = first + (t + 1) * _HALF
+        # exactly the sample where it is the sample: the ends of the stroke are told as given
+        nearest = np.clip(np.round(index).astype(int), 0, count - 1)
+        self.place = np.where(
+            np.abs(index - nearest) < 1e-12, samples.where[nearest], samples.where[0] + samples.step * index
+        )
+        self._foretold = chebyshev.chebval(t, series.T, tensor=False)
+
+    def confirmed(self, f: Curve, only: NDArray[np.intp]) -> tuple[Array, Array]:
+        """Places and values, both (only), of some of the curves; they can be had anywhere."""
+        where, count = self._samples.where, self._samples.where.size
+        top, place, values = self._top[only], self.place[only], self._samples.values[only]
+        low, high = where[self._low[only]], where[self._high[only]]
+        best = values[np.arange(only.size), top]
+        if count == 1 or not only.size:
+            return place, best
+        if count < _WIDE:
+            return peaks(lambda x, which: f(x, only[which]), low, high)
+        found = f(place, only)
+        size = np.maximum(np.abs(values).max(axis=1, initial=0.0, where=np.isfinite(values)), 1e-300)
+        sure = (np.abs(found - self._foretold[only]) <= _AGREES * size) & (found >= best - 1e-14 * size)
+        # a peak at the very end of the stroke needs no search
+        end = ((top == 0) | (top == count - 1)) & (place == where[top])
+        value = np.where(end, best, found)
+        doubt = np.nonzero(~(sure | end))[0]
+        if doubt.size:
+            place[doubt], value[doubt] = peaks(lambda x, which: f(x, only[doubt[which]]), low[doubt], high[doubt])
+        return place, value
+
+
+class Roots:
+    """All passages of curves through zero between samples: foretold from the samples alone, then confirmed.
+
+    place  (roots) where the polynomials have them
+    curve  (roots) number of the curve of each, rising
+    """
+
+    def __init__(self, samples: Samples):
+        self._samples = samples
+        y, count = samples.values, samples.where.size
+        self.place, self.curve = np.zeros(0), np.zeros(0, np.intp)
+        self._low = self._high = self.curve
+        if count < 2 or not len(y):
+            return
+        # a sample that is zero to rounding counts with the side before it, so the bracket reaches back to that side
+        self._size = np.abs(y).max(axis=1, initial=0.0, where=np.isfinite(y))
+        self._y = y = np.where(np.abs(y) <= _ZERO * self._size[:, None], 0.0, y)
+        start = np.maximum.accumulate(np.where(y != 0.0, np.arange(count), 0), axis=1)
+        sign = np.sign(np.take_along_axis(y, start, axis=1))
+        with np.errstate(invalid="ignore"):
+            self.curve, at = np.nonzero(sign[:, :-1] * sign[:, 1:] < 0)
+        self._low, self._high = start[self.curve, at], at + 1
+        if count >= _WIDE and self.curve.size:
+            self._foretell()
+        else:
+            self.place = (samples.where[self._low] + samples.where[self._high]) / 2
+
+    def _foretell(self) -> None:
+        samples, curve, low, high = self._samples, self.curve, self._low, self._high
+        first, series = _polynomial(samples, curve, low - _WIDE // 2 + 1)
+        slope = chebyshev.chebder(series.T)
+        t_low, t_high = (low - first) / _HALF - 1, (high - first) / _HALF - 1
+        y_low, y_high = samples.values[curve, low], samples.values[curve, high]
+        t = t_low + (t_high - t_low) * y_low / (y_low - y_high)
+        for _ in range(4):
+            with np.errstate(all="ignore"):
+                step = chebyshev.chebval(t, series.T, tensor=False) / chebyshev.chebval(t, slope, tensor=False)
+            t = np.clip(t - np.nan_to_num(step), t_low, t_high)
+        self.place = samples.where[0] + samples.step * (first + (t + 1) * _HALF)
+        self._steep = chebyshev.chebval(t, slope, tensor=False) / (samples.step * _HALF)
+
+    def confirmed(self, f: Curve) -> Array:
+        """(roots) places, of curves that can be had anywhere."""
+        samples, curve = self._samples, self.curve
+        if not curve.size:
+            return self.place
+        every = np.arange(curve.size)
+        if samples.where.size < _WIDE:
+            return self._bracketed(f, every)
+        found = f(self.place, curve)
+        # one step of Newton with the polynomial's slope squares what error is left; a step too small is not made
+        with np.errstate(all="ignore"):
+            step = found / self._steep
+        better = np.where(np.abs(step) <= _STILL * abs(samples.step), self.place, self.place - step)
+        ends = np.sort(samples.where[np.stack([self._low, self._high])], axis=0)
+        sure = (np.abs(found) <= _AGREES * self._size[curve]) & (better >= ends[0]) & (better <= ends[1])
+        doubt = np.nonzero(~sure)[0]
+        if doubt.size:
+            better[doubt] = self._bracketed(f, doubt)
+        return better
+
+    def _bracketed(self, f: Curve, k: NDArray[np.intp]) -> Array:
+        curve, low, high = self.curve[k], self._low[k], self._high[k]
+        where = self._samples.where
+        return roots(
+            lambda x, which: f(x, curve[which]), where[low], where[high], self._y[curve, low], self._y[curve, high]
+        )
+
+
+def _polynomial(samples: Samples, curve: NDArray[np.intp], first: NDArray[np.intp]) -> tuple[NDArray[np.intp], Array]:
+    """First sample of each window of seven, and the Chebyshev series through it (windows, 7) on -1..1."""
+    first = np.clip(first, 0, samples.where.size - _WIDE)
+    window = samples.values[curve[:, None], first[:, None] + np.arange(_WIDE)]
+    return first, np.where(np.isfinite(window), window, 0.0) @ _TO_SERIES.T
+
+
 def sampled_peaks(f: Curve, samples: Samples) -> tuple[Array, Array]:
     """The largest value of each curve and where it is: (places, values), each (curves)."""
-    count = samples.where.size
-    every = np.arange(len(samples.values))
-    if count == 1 or not len(every):
-        return np.full(every.shape, samples.where[0] if count else np.nan), samples.values[
-            :, 0
-        ] if count else every * 0.0
-    y = np.where(np.isfinite(samples.values), samples.values, -np.inf)
-    top = np.argmax(y, axis=1)
-    low, high = np.maximum(top - 1, 0), np.minimum(top + 1, count - 1)
-    if count < _WIDE:
-        return peaks(f, samples.where[low], samples.where[high])
-    place, foretold = _on_polynomial(samples, top, low, high)
-    found = f(place, every)
-    size = np.maximum(np.abs(samples.values).max(axis=1, initial=0.0, where=np.isfinite(samples.values)), 1e-300)
-    best = samples.values[every, top]
-    sure = (np.abs(found - foretold) <= _AGREES * size) & (found >= best - 1e-14 * size)
-    # a peak at the very end of the stroke needs no search
-    end = ((top == 0) | (top == count - 1)) & (place == samples.where[top])
-    value = np.where(end, best, found)
-    doubt = np.nonzero(~(sure | end))[0]
-    if doubt.size:
-        place[doubt], value[doubt] = peaks(
-            lambda x, which: f(x, doubt[which]), samples.where[low[doubt]], samples.where[high[doubt]]
-        )
-    return place, value
-
-
-def _on_polynomial(samples: Samples, top: Array, low: Array, high: Array) -> tuple[Array, Array]:
-    count = samples.where.size
-    first = np.clip(top - _WIDE // 2, 0, count - _WIDE)
-    window = np.take_along_axis(samples.values, first[:, None] + np.arange(_WIDE), axis=1)
-    series = np.where(np.isfinite(window), window, 0.0) @ _TO_SERIES.T
-    half = (_WIDE - 1) / 2
-    t = summit_of(series, (low - first) / half - 1, (high - first) / half - 1)
-    place = samples.where[0] + samples.step * (first + (t + 1) * half)
-    # exactly the sample where it is the sample: the ends of the stroke are told as given
-    nearest = np.clip(np.round(first + (t + 1) * half).astype(int), 0, count - 1)
-    place = np.where(np.abs(place - samples.where[nearest]) < 1e-12 * abs(samples.step), samples.where[nearest], place)
-    return place, chebyshev.chebval(t, series.T, tensor=False)
+    return Peaks(samples).confirmed(f, np.arange(len(samples.values)))
 
 
 def sampled_roots(f: Curve, samples: Samples) -> tuple[Array, NDArray[np.intp]]:
     """All passages through zero between samples: (places, number of the curve), in the order of the curves."""
-    y, count = samples.values, samples.where.size
-    none = np.zeros(0), np.zeros(0, np.intp)
-    if count < 2 or not len(y):
-        return none
-    # a sample that is zero to rounding counts with the side before it, so the bracket reaches back to that side
-    size = np.abs(y).max(axis=1, initial=0.0, where=np.isfinite(y))[:, None]
-    y = np.where(np.abs(y) <= _ZERO * size, 0.0, y)
-    start = np.where(y != 0.0, np.arange(count), 0)
-    start = np.maximum.accumulate(start, axis=1)
-    sign = np.sign(np.take_along_axis(y, start, axis=1))
-    with np.errstate(invalid="ignore"):
-        curve, at = np.nonzero(sign[:, :-1] * sign[:, 1:] < 0)
-    if not curve.size:
-        return none
-    low, high = start[curve, at], at + 1
-    if count < _WIDE:
-        return _bracketed(f, samples, y, curve, low, high), curve
-    place, steep = _root_of_polynomial(samples, curve, low, high)
-    found = f(place, curve)
-    # one step of Newton with the polynomial's slope squares what error is left
-    with np.errstate(all="ignore"):
-        better = place - found / steep
-    ends = np.sort(samples.where[np.stack([low, high])], axis=0)
-    sure = (np.abs(found) <= _AGREES * size[curve, 0]) & (better >= ends[0]) & (better <= ends[1])
-    doubt = np.nonzero(~sure)[0]
-    if doubt.size:
-        better[doubt] = _bracketed(f, samples, y, curve[doubt], low[doubt], high[doubt])
-    return better, curve
-
-
-def _bracketed(
-    f: Curve, samples: Samples, y: Array, curve: NDArray[np.intp], low: NDArray[np.intp], high: NDArray[np.intp]
-) -> Array:
-    return roots(
-        lambda x, which: f(x, curve[which]), samples.where[low], samples.where[high], y[curve, low], y[curve, high]
-    )
-
-
-def _root_of_polynomial(
-    samples: Samples, curve: NDArray[np.intp], low: NDArray[np.intp], high: NDArray[np.intp]
-) -> tuple[Array, Array]:
-    """Place of the root on the polynomial through seven samples, and the polynomial's slope there."""
-    first = np.clip(low - _WIDE // 2 + 1, 0, samples.where.size - _WIDE)
-    window = samples.values[curve[:, None], first[:, None] + np.arange(_WIDE)]
-    series = (np.where(np.isfinite(window), window, 0.0) @ _TO_SERIES.T).T
-    slope = chebyshev.chebder(series)
-    half = (_WIDE - 1) / 2
-    t_low, t_high = (low - first) / half - 1, (high - first) / half - 1
-    y_low, y_high = samples.values[curve, low], samples.values[curve, high]
-    t = t_low + (t_high - t_low) * y_low / (y_low - y_high)
-    for _ in range(6):
-        with np.errstate(all="ignore"):
-            step = chebyshev.chebval(t, series, tensor=False) / chebyshev.chebval(t, slope, tensor=False)
-        t = np.clip(t - np.nan_to_num(step), t_low, t_high)
-    place = samples.where[0] + samples.step * (first + (t + 1) * half)
-    return place, chebyshev.chebval(t, slope, tensor=False) / (samples.step * half)
+    found = Roots(samples)
+    return found.confirmed(f), found.curve
