@@ -21,20 +21,23 @@ def direction(answer: StrokeAnswer) -> Array:
     size = resultant(answer)
     most = np.max(size, initial=0.0, where=np.isfinite(size))
     angle = np.arctan2(answer.force[:, 1], answer.force[:, 0])
-    return np.where(size > most * _NOTHING, angle, np.nan)
+    return _within_half_a_turn(np.where(size > most * _NOTHING, angle, np.nan))
 
 
 def own_direction(answer: StrokeAnswer) -> Array:
     """(bearing, case, variant, pose) [rad] the same from the member's own x axis (first point to last), which turns
-    with it; the ground's own axes are the ground axes. Within half a turn of zero; a pin itself has none."""
+    with it; the ground's own axes are the ground axes. A pin itself has none."""
     sketch = Drawing(answer.mechanism)
     angle = direction(answer)
     for i, bearing in enumerate(answer.bearings):
-        if bearing.member not in sketch.members:
+        if bearing.member in sketch.members:
+            angle[i] -= answer.turn[sketch.member(bearing.member)] + sketch.own_axis(bearing.member)
+        else:
             angle[i] = np.nan
-            continue
-        off = angle[i] - (answer.turn[sketch.member(bearing.member)] + sketch.own_axis(bearing.member))
-        angle[i] = np.arctan2(np.sin(off), np.cos(off))
-        # straight back is half a turn, whichever side of it rounding fell
-        angle[i] = np.where(angle[i] < -np.pi + _NOTHING, np.pi, angle[i])
-    return angle
+    return _within_half_a_turn(angle)
+
+
+def _within_half_a_turn(angle: Array) -> Array:
+    """Straight back is plus half a turn, whichever side of it rounding fell."""
+    wound = np.arctan2(np.sin(angle), np.cos(angle))
+    return np.where(wound < -np.pi + _NOTHING, np.pi, wound)

@@ -62,12 +62,11 @@ def _curves(edge: Edge, name: str, values: Array, what: str, hue: int) -> list[C
 def _largest(
     answer: StrokeAnswer, edge: Edge, name: str, quantity: str, values: Array, what: str, hue: int
 ) -> list[Flag]:
-    worst = largest(answer, quantity, values)
-    if worst is None or edge.one(worst.value, what) <= edge.zero(what):
+    worst = largest(answer, quantity, values, by_size=True)
+    if worst is None or abs(edge.one(worst.value, what)) <= edge.zero(what):
         return []
     value = edge.one(worst.value, what)
-    text = f"{name} {edge.text(worst.value, what)}".strip()
-    return [Flag("largest", edge.one(worst.drive, "drive"), value, text, hue)]
+    return [Flag("largest", edge.one(worst.drive, "drive"), value, f"{name} {edge.text(worst.value, what)}", hue)]
 
 
 def _case_labels(answer: StrokeAnswer, edge: Edge) -> tuple[str, ...]:

@@ -136,12 +136,15 @@ def _rows(words: Sequence[str]) -> int:
 def _case_key(figure: Figure, chart: Chart, height: float) -> None:
     from matplotlib.lines import Line2D
 
-    if not any(chart.cases):
+    left = _LEFT / style.PAGE_WIDTH
+    if len(chart.cases) == 1:
+        figure.text(left, height, chart.cases[0], fontsize=style.SMALL, va="top")
+    if len(chart.cases) < 2:
         return
     lines = [Line2D([], [], color=style.INK, lw=style.CURVE, linestyle=style.dash(i)) for i in range(len(chart.cases))]
     figure.legend(
         lines, chart.cases, loc="upper left", borderaxespad=0, borderpad=0,
-        bbox_to_anchor=(_LEFT / style.PAGE_WIDTH, height), handlelength=2.6, columnspacing=1.2,
+        bbox_to_anchor=(left, height), handlelength=2.6, columnspacing=1.2,
         ncols=_in_row(chart.cases),
     )  # fmt: skip
 

@@ -107,7 +107,9 @@ class Scene:
                 moment = turning - ((x - float(at.x[member])) * fy - (y - float(at.y[member])) * fx)
                 if abs(moment) <= 1e-9 * self.sketch.size * np.hypot(fx, fy):
                     moment = 0.0  # rounding of a force's moment about its own place
-                found.append(Acts(pusher.name, tone, member, pusher.on_pins[k], (x, y), (fx, fy), moment))
+                # where all members at a point are welded there is no pin to take the load: its member does
+                pin = pusher.on_pins[k] if pusher.on_pins[k] in self.sketch.pins else ""
+                found.append(Acts(pusher.name, tone, member, pin, (x, y), (fx, fy), moment))
         return found
 
     def bearings(self, pose: int, case: int) -> list[Acts]:

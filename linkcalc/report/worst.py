@@ -25,23 +25,30 @@ class Worst:
     index: tuple[int, int, int]
 
 
-def largest(answer: StrokeAnswer, quantity: str, values: Array, sense: int = 1) -> Worst | None:
+def largest(
+    answer: StrokeAnswer, quantity: str, values: Array, sense: int = 1, *, by_size: bool = False
+) -> Worst | None:
     """The largest of (case, variant, pose) values, or with sense -1 the smallest; None if there are none.
+
+    by_size  whichever sign it has
 
     An event of that quantity may lie between the computed poses; it stands in for them if it goes further.
     """
     if not np.isfinite(values).any():
         return None
-    index = tuple(int(i) for i in np.unravel_index(np.nanargmax(sense * values), values.shape))
+    rank = np.abs(values) if by_size else sense * values
+    index = tuple(int(i) for i in np.unravel_index(np.nanargmax(rank), values.shape))
     case, variant, pose = index
     found = Worst(
         float(values[index]), answer.cases[case], float(answer.drive[0, variant, pose]), (case, variant, pose)
     )
-    kind = "largest" if sense > 0 else "smallest"
+    top, kind = float(rank[index]), "largest" if sense > 0 else "smallest"
     for e in answer.events:
-        if (e.kind, e.quantity) == (kind, quantity) and sense * e.value >= sense * found.value:
+        further = abs(e.value) if by_size else sense * e.value
+        if (e.kind, e.quantity) == (kind, quantity) and further >= top:
             place = answer.cases.index(e.case) if e.case in answer.cases else case
             found = Worst(e.value, answer.cases[place], e.drive, (place, variant, nearest_pose(answer, e.drive)))
+            top = further
     return found
 
 

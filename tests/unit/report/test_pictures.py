@@ -157,3 +157,11 @@ def test_report_modules_do_not_load_the_drawing_library():
     )
     done = subprocess.run([sys.executable, "-c", code], capture_output=True, text=True, check=True)
     assert done.stdout.strip() == "[]"
+
+
+def test_an_effort_the_other_way_round_is_marked_where_it_is_largest_in_size():
+    answer = toggle()
+    chart = stroke_chart(replace(answer, effort=-answer.effort, events=()))
+    (flag,) = chart.panels[0].flags
+    assert flag.drive == pytest.approx(30)
+    assert flag.value == pytest.approx(-2 * 1500 * math.tan(math.radians(30)))
