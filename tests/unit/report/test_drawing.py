@@ -5,11 +5,14 @@ import math
 import numpy as np
 import pytest
 
+from linkcalc import parse, stroke
 from linkcalc.faults import Faults
-from linkcalc.model.read import parse
 from linkcalc.model.sketch import Drawing
 from linkcalc.parts.pose import Poses
+from linkcalc.report.blocks import Drawing as Sheet
+from linkcalc.report.blocks import Item
 from linkcalc.report.drawing import draw_mechanism
+from linkcalc.report.drawing_figure import drawing_figure
 from linkcalc.report.free_body import free_body, free_body_table
 from linkcalc.report.scene import Scene
 from linkcalc.report.shapes import SHAPES
@@ -128,6 +131,24 @@ def test_what_is_not_there_is_a_clear_fault(ask, message):
         ask()
 
 
+TWO_SPOTS = ("bar", "stem", "path", "guide", "pair")
+NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple")
+STEM = """
+[points]
+A = [0, 0]
+B = [100, 0]
+up = [50, 20]
+[members]
+ground = ["A"]
+bar = { points = ["A", "up", "B"], path = ["A", "B"] }
+[effort]
+at = "up"
+direction = 0
+[load]
+at = "B"
+direction = -90
+size = 10
+"""
 EVERY_KIND = """
 [points]
 A = [0, 0]
@@ -175,3 +196,30 @@ def test_every_kind_of_joint_and_load_has_its_shape():
     at = Poses([x for x, _ in sketch.origins], [y for _, y in sketch.origins], [1.0] * n, [0.0] * n)
     marks = [part.mark(at) for part in (*sketch.joints, *sketch.pushers().values())]
     assert {mark.shape for mark in marks} <= set(SHAPES)
+
+
+@pytest.mark.parametrize("shape", sorted(SHAPES))
+def test_every_shape_leaves_ink_and_its_name_on_the_page(shape):
+    frame = Item("path", ((0.0, 0.0), (100.0, 60.0)))
+    spots = ((20.0, 30.0), (70.0, 30.0)) if shape in TWO_SPOTS else ((50.0, 30.0),)
+    bare = drawing_figure(Sheet("sheet", "mm", (frame,)))
+    full = drawing_figure(Sheet("sheet", "mm", (frame, Item(shape, spots, (1.0, 0.0), "name"))))
+    inked = [sum(map(len, (ax.lines, ax.patches, ax.texts))) for ax in (bare.axes[0], full.axes[0])]
+    # a force and a torque are their arrow and have no body besides
+    assert (inked[1] > inked[0]) == (shape not in ("force", "torque"))
+    named = "name" in [t.get_text() for t in full.axes[0].texts]
+    assert named == (shape in NAMED)
+
+
+def test_the_footing_stands_clear_of_the_member_over_it():
+    up = Item("bar", ((0.0, 0.0), (0.0, -80.0)), name="post")
+    figure = drawing_figure(Sheet("sheet", "mm", (up, Item("footing", ((0.0, 0.0),)))))
+    corners = figure.axes[0].patches[0].get_xy()
+    assert corners[:, 1].max() > 1
+    assert corners[:, 1].min() > -1
+
+
+def test_a_point_beside_its_members_body_hangs_on_a_stem():
+    answer = stroke(parse(STEM))
+    stems = _items(draw_mechanism(answer), "stem")
+    np.testing.assert_allclose(stems[0].spots, [(50, 0), (50, 20)], atol=1e-9)
