@@ -49,19 +49,19 @@ class Curves:
     def __init__(self, survey: Survey, shown: Shown):
         self.survey, self.shown = survey, shown
         self.drive: Array = shown.solved.drive[0, 0]
-        self._samples: dict[str, Array] = {}
-        self._sizes: dict[str, float] = {}
         self._names = list(survey.quantities)
         self._row = {name: k for k, name in enumerate(self._names)}
+        self._samples = survey.values(self._names, shown)[:, :, 0]
+        sizes = np.abs(self._samples)
+        self._sizes = sizes.max(axis=(1, 2), initial=0.0, where=np.isfinite(sizes)).tolist()
         self._column: dict[float, int] = {}
         self._values: Array = np.zeros((len(self._names), len(survey.ready.pushing.cases), 0))
         self._mesh = Mesh(self.drive, [shown.solved.closed]) if self.drive.size > 1 else None
 
     def samples(self, name: str) -> Array:
         """(case, pose) values at the stroke's poses."""
-        if name not in self._samples:
-            self._samples[name] = self.survey.values([name], self.shown)[0, :, 0]
-        return self._samples[name]
+        values: Array = self._samples[self._row[name]]
+        return values
 
     @cached_property
     def largest_force(self) -> float:
@@ -71,11 +71,8 @@ class Curves:
 
     def size(self, name: str) -> float:
         """The largest of a quantity's absolute values at the samples, what is not finite left out."""
-        if name not in self._sizes:
-            values = np.abs(self.samples(name))
-            top = float(values.max())
-            self._sizes[name] = top if np.isfinite(top) else float(values.max(initial=0.0, where=np.isfinite(values)))
-        return self._sizes[name]
+        size: float = self._sizes[self._row[name]]
+        return size
 
     def solve(self, drive: Array) -> Solved:
         """Statics at any values of the drive (values)."""

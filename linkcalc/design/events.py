@@ -100,18 +100,18 @@ def _at_passages(curves: Curves, wanted: Sequence[Wanted], dead: list[float], ze
     names = list(dict.fromkeys(w.name for w in wanted))
     beside = _beside(curves, dead)
     values = curves.at(names, np.concatenate([beside, zero]))
+    sizes = np.abs(values)
+    largest = sizes[:, :, : beside.size].max(axis=2, initial=0.0)
+    smallest = sizes[:, :, beside.size :].min(axis=2)
     out: dict[Wanted, Found] = {}
     for w in wanted:
-        there = values[names.index(w.name), w.case]
-        top = curves.size(w.name)
-        rise = w.sense * (np.abs(there[: beside.size]) if w.size else there[: beside.size])
-        steepest = float(rise.max()) if rise.size else 0.0
-        small = np.abs(there[beside.size :])
-        never_minus = w.size or np.min(curves.samples(w.name)[w.case]) >= 0
-        if steepest > top and steepest > _RISE * _usual(curves, w):
-            out[w] = Found(dead[int(np.argmax(rise)) // 2], w.sense * np.inf)
-        elif w.sense < 0 and never_minus and np.min(small) <= _NOTHING * top:
-            out[w] = Found(zero[int(np.argmin(small))], 0.0)
+        row, top = (names.index(w.name), w.case), curves.size(w.name)
+        if largest[row] > top and largest[row] > _RISE * _usual(curves, w):
+            at = int(np.argmax(sizes[row][: beside.size]))
+            if w.size or w.sense * values[row][at] > 0:
+                out[w] = Found(dead[at // 2], w.sense * np.inf)
+        elif w.sense < 0 and smallest[row] <= _NOTHING * top and (w.size or np.min(curves.samples(w.name)) >= 0):
+            out[w] = Found(zero[int(np.argmin(sizes[row][beside.size :]))], 0.0)
     return out
 
 

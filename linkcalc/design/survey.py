@@ -60,8 +60,10 @@ class Survey:
 
     def values(self, names: Sequence[str], shown: Shown) -> Array:
         """(names, case, variant, pose) their values."""
-        shape = shown.solved.balance.status.shape
-        return np.stack([np.broadcast_to(self.quantities[n].of(shown), shape) for n in names])
+        out: Array = np.empty((len(names), *shown.solved.balance.status.shape))
+        for k, name in enumerate(names):
+            out[k] = self.quantities[name].of(shown)
+        return out
 
     def side_name(self, side: Side) -> str:
         return f"pin {side.pin}" if side.member < 0 else self.ready.drawing.members[side.member]

@@ -8,12 +8,14 @@ built-in check of equilibrium against virtual work.
 
 from __future__ import annotations
 
+import math
 from collections.abc import Sequence
 from dataclasses import dataclass
 
 import numpy as np
 from numpy.typing import NDArray
 
+from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.motion import Closed, fastest
 from linkcalc.mechanics.pushing import Column, Pushing, column, strength
@@ -111,16 +113,11 @@ _UNCHECKED = np.full((1, 1, 1), np.nan)
 def _dead(chain: Chain, speed: Sequence[Value], push: Column, power: Value) -> NDArray[np.bool_] | None:
     """Where an effort does no work though the mechanism moves: nothing finite answers there. None: nowhere."""
     # one bound for the whole batch settles nearly every batch, and costs no temporary arrays
-    top = max((_top(v) * size for v, size in zip(speed, chain.column_size, strict=True)), default=0.0)
-    force = max((_top(q) / size for q, size in zip(push, chain.column_size, strict=True)), default=0.0)
-    least = float(np.min(np.abs(power)))
-    if least > DEAD * top * force:
+    top = max((t * size for t, size in zip(tops(speed), chain.sizes, strict=True)), default=0.0)
+    force = max(t / size for t, size in zip(tops(push), chain.sizes, strict=True))
+    if float(np.min(np.abs(power))) > DEAD * top * force:
         return None
     return np.asarray(np.abs(power) <= DEAD * fastest(chain, speed) * _strongest(chain, push))
-
-
-def _top(value: Value) -> float:
-    return abs(value) if isinstance(value, float) else max(float(value.max()), -float(value.min()))
 
 
 def _strongest(chain: Chain, push: Column) -> Value:
@@ -176,8 +173,8 @@ def _checks(
 def _status(closed: Closed, multipliers: Sequence[Value], dead: NDArray[np.bool_] | None) -> NDArray[np.int8]:
     shape = np.broadcast_shapes(closed.fine.shape, *{np.shape(m) for m in multipliers})
     status = np.zeros(shape, np.int8)
-    for m in multipliers:
-        if not np.isfinite(_top(m)):
+    for m, top in zip(multipliers, tops(multipliers), strict=True):
+        if not math.isfinite(top):
             status[np.broadcast_to(~np.isfinite(m), shape)] = Status.SINGULAR
     if dead is not None:
         status[np.broadcast_to(dead, shape)] = Status.DEAD_POINT

@@ -5,12 +5,14 @@ Columns are x, y, turn of member 1, of member 2, ...; rows are those of the join
 
 from __future__ import annotations
 
+import math
 from collections.abc import Sequence
 from typing import Protocol
 
 import numpy as np
 from numpy.typing import NDArray
 
+from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.eliminate import Elimination, Factors
 from linkcalc.parts.contract import TURN, Drive, Joint, Row
 from linkcalc.parts.pose import Array, Poses, Value
@@ -46,6 +48,7 @@ class Chain:
         self.rows = len(angular)
         self.row_size = np.where(angular, size, 1.0)
         self.column_size = np.where(np.arange(self.columns) % 3 == TURN, size, 1.0)
+        self.sizes: list[float] = self.column_size.tolist()
         self._gap_size = (self.row_size / size).tolist()
         self._gather: list[list[int]] | None = None
         self._elimination: Elimination | None = None
@@ -86,13 +89,8 @@ class Chain:
         if live is not None:
             each = self.worst_each(gaps)
             return float(np.max(each[np.broadcast_to(live, each.shape)], initial=0.0))
-        top = 0.0
-        for gap, size in zip(gaps, self._gap_size, strict=True):
-            # two reductions without a temporary array are cheaper than the largest of absolute values
-            far = abs(gap) if isinstance(gap, float) else max(float(gap.max()), -float(gap.min()))
-            if not far * size <= top:
-                top = far * size if far == far else np.inf
-        return float(top)
+        parts = [t * size for t, size in zip(tops(gaps), self._gap_size, strict=True)]
+        return max(parts) if all(p == p for p in parts) else math.inf
 
     def worst_each(self, gaps: Sequence[Value]) -> Array:
         """(1, variant, pose) largest gap of each pose over the size of the mechanism; inf for NaN."""

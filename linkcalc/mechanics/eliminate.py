@@ -13,9 +13,11 @@ from typing import Protocol
 import numpy as np
 from numpy.typing import NDArray
 
+from linkcalc.mechanics.batch import lows
 from linkcalc.mechanics.plan import NoPlan, Plan, signature
 from linkcalc.parts.pose import Array, Value
 
+Mask = NDArray[np.bool_]
 SMALL = 48  # rows up to which a single matrix goes to LAPACK
 _MANY = 0.05  # part of a batch with weak pivots that calls for a new plan
 
@@ -44,14 +46,14 @@ class Elimination:
         fresh = plan is None
         if plan is None:
             plan = self._plan(entries, key)
-        factors, weak, sign = self._replay(plan, entries)
+        factors, pivots, weak = self._replay(plan, entries)
         if weak is not None and not fresh and np.mean(weak) > _MANY:
             try:
                 plan = self._plan(entries, key)
-                factors, weak, sign = self._replay(plan, entries)
+                factors, pivots, weak = self._replay(plan, entries)
             except NoPlan:
                 pass
-        return Factored(self, plan, factors, entries, weak, sign)
+        return Factored(self, plan, factors, pivots, entries, weak)
 
     def _plan(self, entries: Sequence[Value], key: tuple[float | None, ...]) -> Plan:
         plan = self._plans[key] = Plan(self.size, self.places, entries, self.row_size, self.column_size)
@@ -59,17 +61,16 @@ class Elimination:
 
     def _replay(
         self, plan: Plan, entries: Sequence[Value]
-    ) -> tuple[list[Value], NDArray[np.bool_] | None, NDArray[np.bool_]]:
+    ) -> tuple[list[Value], list[Value], NDArray[np.bool_] | None]:
+        """Factors, the pivots that vary, and where one of them is weak (None: nowhere)."""
         with np.errstate(all="ignore"):
             factors, pivots = plan.factor(entries)
-        negative: NDArray[np.bool_] = np.zeros((1, 1, 1), bool)
-        weak: NDArray[np.bool_] | None = None
-        for pivot, floor in pivots:
-            negative = negative ^ np.less(pivot, 0.0)
-            bad = ~(np.abs(pivot) >= floor)
-            if bad.any():
+        weak: Mask | None = None
+        for pivot, low, floor in zip(pivots, lows(pivots), plan.floors, strict=True):
+            if not low >= floor:
+                bad = ~(np.abs(pivot) >= floor)
                 weak = bad if weak is None else weak | bad
-        return factors, weak, negative if plan.sign > 0 else ~negative
+        return factors, pivots, weak
 
     def dense(self, entries: Sequence[Value], where: tuple[NDArray[np.intp], ...], shape: tuple[int, ...]) -> Array:
         """(picked, size, size) matrices of some entries of the batch."""
@@ -115,29 +116,34 @@ class Single:
 
 
 class Factored:
-    """Factors of a batch.
-
-    negative  (1, variant, pose) True where the determinant is below zero: it changes on another branch
-    """
+    """Factors of a batch, replayed from a plan; entries with a weak pivot are kept as dense matrices."""
 
     def __init__(
         self,
         owner: Elimination,
         plan: Plan,
         factors: list[Value],
+        pivots: list[Value],
         entries: Sequence[Value],
-        weak: NDArray[np.bool_] | None,
-        negative: NDArray[np.bool_],
+        weak: Mask | None,
     ):
-        self._owner, self._plan, self._factors, self._entries = owner, plan, factors, entries
-        self.negative = negative
+        self._owner, self._plan, self._factors, self._pivots = owner, plan, factors, pivots
         self._where: tuple[NDArray[np.intp], ...] = ()
         if weak is not None:
             self._shape = weak.shape
             self._where = np.nonzero(weak)
             self._matrices = owner.dense(entries, self._where, self._shape)
-            self.negative = np.array(np.broadcast_to(negative, self._shape))
-            self.negative[self._where] = _negative_determinant(self._matrices)
+
+    @cached_property
+    def negative(self) -> NDArray[np.bool_]:
+        """(1, variant, pose) True where the determinant is below zero."""
+        negative: NDArray[np.bool_] = np.full((1, 1, 1), self._plan.sign < 0)
+        for pivot in self._pivots:
+            negative = negative ^ np.less(pivot, 0.0)
+        if self._where:
+            negative = np.array(np.broadcast_to(negative, self._shape))
+            negative[self._where] = _negative_determinant(self._matrices)
+        return negative
 
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]:
         """x of A x = b, or of its transpose.

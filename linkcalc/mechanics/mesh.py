@@ -3,19 +3,11 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
 
 import numpy as np
-from numpy.typing import NDArray
 
-from linkcalc.mechanics.motion import Known, between
+from linkcalc.mechanics.motion import Known, cubic, turned_between
 from linkcalc.parts.pose import Array, Poses, Value
-
-
-@dataclass(frozen=True, eq=False)
-class _Picked:
-    at: Poses
-    speed: list[Value]
 
 
 class Mesh:
@@ -29,29 +21,28 @@ class Mesh:
         self.drive = drive
         self._rising = np.sign(drive[-1] - drive[0]) or 1.0
         first = known[0].at
-        self._down, self._field, self._members = first.down, first.field, len(first.x)
-        rows: list[Array] = []
-        for name in ("x", "y", "c", "s"):
-            rows += [_joined([getattr(k.at, name)[m] for k in known], drive.size) for m in range(self._members)]
-        rows += [_joined([k.speed[j] for k in known], drive.size) for j in range(len(known[0].speed))]
-        self._rows = np.stack(rows)
+        self._down, self._field = first.down, first.field
+        moving = range(1, len(first.x))
+        self._x, self._y, self._c, self._s = (
+            np.stack([_joined([getattr(k.at, name)[m] for k in known], drive.size) for m in moving])
+            for name in ("x", "y", "c", "s")
+        )
+        self._turning = np.stack([_joined([k.speed[3 * m - 1] for k in known], drive.size) for m in moving])
 
     def guess(self, drive: Array) -> Poses:
         """Poses near those at some values of the drive, (1, 1, values), by the cubic through the neighbours."""
-        if self.drive.size == 1:
-            return self._pick(np.zeros(drive.size, int)).at
-        k = np.clip(np.searchsorted(self._rising * self.drive, self._rising * drive) - 1, 0, self.drive.size - 2)
-        span = (self.drive[k + 1] - self.drive[k]).reshape(1, 1, -1)
-        t = (drive - self.drive[k]).reshape(1, 1, -1) / span
-        return between(self._pick(k), self._pick(k + 1), t, span)
-
-    def _pick(self, k: NDArray[np.intp]) -> _Picked:
-        rows = list(self._rows[:, k].reshape(len(self._rows), 1, 1, -1))
-        n = self._members
-        x, y, c, s = (rows[i * n : (i + 1) * n] for i in range(4))
-        # the ground stays a constant
-        poses = Poses([0.0, *x[1:]], [0.0, *y[1:]], [1.0, *c[1:]], [0.0, *s[1:]], self._down, self._field)
-        return _Picked(poses, list(rows[4 * n :]))
+        last = self.drive.size - 1
+        a = np.clip(np.searchsorted(self._rising * self.drive, self._rising * drive) - 1, 0, max(last - 1, 0))
+        b = np.minimum(a + 1, last)
+        span = self.drive[b] - self.drive[a]
+        t = (drive - self.drive[a]) / np.where(span == 0.0, 1.0, span)
+        c, s = turned_between(
+            cubic(t, span),
+            (self._c[:, a], self._s[:, a], self._turning[:, a]),
+            (self._c[:, b], self._s[:, b], self._turning[:, b]),
+        )
+        x, y, c, s = (list(v.reshape(len(v), 1, 1, -1)) for v in (self._x[:, b], self._y[:, b], c, s))
+        return Poses([0.0, *x], [0.0, *y], [1.0, *c], [0.0, *s], self._down, self._field)
 
 
 def _joined(values: Sequence[Value], size: int) -> Array:

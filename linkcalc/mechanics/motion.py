@@ -22,6 +22,7 @@ from linkcalc.parts.pose import Array, Poses, Value
 
 CLOSED = 1e-12  # largest gap of a closed pose, over the size of the mechanism
 _AIM = 2e-15  # no use in iterating below this
+_SPARE = 2e-3  # of what is allowed: what Newton is made to reach
 _STEPS = 12
 
 
@@ -61,12 +62,14 @@ def close(
     *,
     steps: int = _STEPS,
     sure: int = 0,
+    within: float = CLOSED,
     live: NDArray[np.bool_] | None = None,
 ) -> Closed:
     """Newton from a guess. Entries that do not arrive are told by ``fine``. Raises NoPlan where all are singular.
 
     steps  how many at most
     sure   that many are made without asking whether they are needed
+    within the largest gap of a closed pose, over the size of the mechanism
     live   (1, variant, pose) only these are waited for
     """
     at, last, worst = guess, math.inf, math.inf
@@ -76,14 +79,16 @@ def close(
         if k >= sure:
             worst = chain.worst(gaps, live)
             # rounding sets the floor: stop where a further step gains nothing
-            if worst <= _AIM or (worst <= CLOSED / 10 and worst > 0.1 * last) or drive is None or k == steps:
+            if worst <= max(_AIM, within * _SPARE) or drive is None or k == steps:
+                break
+            if worst <= within / 10 and worst > 0.1 * last:
                 break
             last = worst
         at = moved(at, chain.factor(entries, lone=lone).solve(gaps))
     fine = np.ones(_batch(at), bool)
-    if not worst <= CLOSED or live is not None:
+    if not worst <= within or live is not None:
         each = chain.worst_each(gaps)
-        fine = fine & (each <= CLOSED)
+        fine = fine & (each <= within)
         worst = float(each[np.broadcast_to(fine, each.shape)].max(initial=0.0))
     factored = chain.factor(entries, lone=lone)
     speed = factored.solve([0.0] * (chain.rows - 1) + [1.0]) if drive is not None else []
@@ -113,20 +118,35 @@ def between(a: Known, b: Known, t: Value, span: Value) -> Poses:
     Only turns are foretold: places follow from them in one Newton step, for the constraints are linear in them.
     span  drive at b less drive at a; the error goes with its fourth power
     """
-    t2 = t * t
-    t3 = t2 * t
-    h00, h10, h01, h11 = 2 * t3 - 3 * t2 + 1, (t3 - 2 * t2 + t) * span, 3 * t2 - 2 * t3, (t3 - t2) * span
+    weights = cubic(t, span)
     pa, pb = a.at, b.at
     c, s = [pa.c[0]], [pa.s[0]]
     for k in range(1, len(pa.x)):
-        ga, gb = h10 * a.speed[3 * k - 1], h11 * b.speed[3 * k - 1]
-        ck, sk = _normed(
-            h00 * pa.c[k] + h01 * pb.c[k] - ga * pa.s[k] - gb * pb.s[k],
-            h00 * pa.s[k] + h01 * pb.s[k] + ga * pa.c[k] + gb * pb.c[k],
-        )
+        wa, wb = a.speed[3 * k - 1], b.speed[3 * k - 1]
+        ck, sk = turned_between(weights, (pa.c[k], pa.s[k], wa), (pb.c[k], pb.s[k], wb))
         c.append(ck)
         s.append(sk)
     return Poses(pb.x, pb.y, c, s, pa.down, pa.field)
+
+
+Weights = tuple[Value, Value, Value, Value]
+Turning = tuple[Value, Value, Value]
+
+
+def cubic(t: Value, span: Value) -> Weights:
+    """Weights of value and slope at the start, value and slope at the end, of the cubic between two poses."""
+    t2 = t * t
+    t3 = t2 * t
+    late = 3 * t2 - 2 * t3
+    return 1 - late, (t3 - 2 * t2 + t) * span, late, (t3 - t2) * span
+
+
+def turned_between(weights: Weights, a: Turning, b: Turning) -> tuple[Value, Value]:
+    """Cosine and sine of a turn between two, from cosine, sine and speed of both."""
+    h00, h10, h01, h11 = weights
+    (ca, sa, wa), (cb, sb, wb) = a, b
+    ga, gb = h10 * wa, h11 * wb
+    return _normed(h00 * ca + h01 * cb - ga * sa - gb * sb, h00 * sa + h01 * sb + ga * ca + gb * cb)
 
 
 def along(a: Known, step: Value) -> Poses:

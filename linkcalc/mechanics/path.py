@@ -118,8 +118,9 @@ def _lone(ready: Ready, drawn: float) -> Closed:
     """The drawing pose for the walk; of a small chain in plain floats, which is quicker for one pose at a time."""
     chain = ready.chain
     assert chain.coordinate is not None
-    at = ready.start.at if chain.columns > SMALL else alone(ready.start.at)
-    return close(chain, at, chain.coordinate.hold(drawn))
+    if isinstance(ready.start.at.c[-1], float) or chain.columns > SMALL:
+        return ready.start
+    return close(chain, alone(ready.start.at), chain.coordinate.hold(drawn))
 
 
 _WORDS = (DRAWN, LOWER, UPPER)

@@ -32,6 +32,7 @@ class NoPlan(ArithmeticError):
 class Plan:
     """Pivot order and tapes for one pattern.
 
+    floors    sizes below which a varying pivot is weak
     size      number of rows and columns
     places    (row, column) of each entry
     entries   values of the entries in some batch: floats stay constant, arrays are inputs of the tape
@@ -110,14 +111,15 @@ class Plan:
             self._upper.append(sorted(row.items()))
 
         sign = _parity(self._pivots)
-        self._watched = [(o, f) for o, f in zip(pivots, floors, strict=True) if not is_constant(o)]
+        self.floors = [f for o, f in zip(pivots, floors, strict=True) if not is_constant(o)]
+        watched = [o for o in pivots if not is_constant(o)]
         for pivot in pivots:
             if isinstance(pivot, float) and pivot < 0:
                 sign = -sign
         self.sign = sign
         factors = [o for o in self._factors() if not is_constant(o)]
         self._kept = list(dict.fromkeys(abs(o) for o in factors))
-        self._tape = tape.finish([*self._kept, *(o for o, _ in self._watched)])
+        self._tape = tape.finish([*self._kept, *watched])
         self._renumber({register: k + 1 for k, register in enumerate(self._kept)})
 
     def _choose(
@@ -188,11 +190,11 @@ class Plan:
 
     # -- replay ------------------------------------------------------------------------------------------
 
-    def factor(self, entries: Sequence[Value]) -> tuple[list[Value], list[tuple[Value, float]]]:
-        """Factors for a batch, and the pivots to watch, each with the size below which it is weak."""
+    def factor(self, entries: Sequence[Value]) -> tuple[list[Value], list[Value]]:
+        """Factors for a batch, and the pivots that vary, in the order of ``floors``."""
         out = self._tape.play([entries[k] for k in self._inputs])
         kept = len(self._kept)
-        return out[:kept], [(p, f) for p, (_, f) in zip(out[kept:], self._watched, strict=True)]
+        return out[:kept], out[kept:]
 
     def solve(self, factors: list[Value], rhs: Sequence[Value], *, transposed: bool) -> list[Value]:
         """x of A x = b, or of its transpose; constants of b (zeros above all) are folded into the tape."""

@@ -8,9 +8,10 @@ import numpy as np
 
 from linkcalc.faults import Fault, Faults
 from linkcalc.mechanics.chain import Chain
+from linkcalc.mechanics.eliminate import SMALL
 from linkcalc.mechanics.freedom import Freedom, freedom, motion_of
 from linkcalc.mechanics.limit import Place
-from linkcalc.mechanics.motion import Closed, close
+from linkcalc.mechanics.motion import Closed, alone, close
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.pushing import Pushing, pushing
 from linkcalc.model.sketch import Drawing
@@ -22,7 +23,7 @@ class Ready:
     """A mechanism ready to be solved.
 
     chain     joints, with the coordinate that is stepped, or one that is held where there is no stroke
-    start     the drawing pose, closed; (1, variant, 1)
+    start     the drawing pose, closed; (1, variant, 1), or plain floats where a stroke is walked through from it
     pushing   loads of all cases
     steps     True if there is a stroke
     """
@@ -60,8 +61,10 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     if like is not None:
         chain.share_plans(like.chain)
     try:
-        drive = None if coordinate is None else coordinate.hold(_shaped(coordinate.value(at)))
-        start = close(chain, at, drive)
+        if mechanism.stroke and chain.columns <= SMALL and _single(at):
+            at = alone(at)  # the walk takes one pose at a time
+        value = None if coordinate is None else coordinate.value(at)
+        start = close(chain, at, None if value is None else coordinate.hold(value))
     except NoPlan:
         found = freedom(chain, at)
         if found.free == wanted and mechanism.stroke:
@@ -87,6 +90,10 @@ def _drawn(drawing: Drawing, loads: Pushing) -> Poses:
         c.append(_shaped(1.0))
         s.append(_shaped(0.0))
     return Poses(x, y, c, s, loads.down, loads.field)
+
+
+def _single(at: Poses) -> bool:
+    return all(np.size(x) == 1 for x in (*at.x, *at.y))
 
 
 def _shaped(value: Value) -> Value:

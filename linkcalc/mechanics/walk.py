@@ -21,6 +21,7 @@ _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its le
 _STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
 _SMALLEST = 1e-7  # of the whole way
 _FIRST = 1 / 6
+_CLOSE = 1e-7  # nodes only guide the poses between them, which are closed for themselves
 _ROUNDING = 1e-13  # of the drive: no way to go
 _STEPS = 5000
 
@@ -88,7 +89,7 @@ def _step(chain: Chain, nodes: list[Node], drive: float) -> Node | None:
     else:
         guess = along(here.pose, step)
     try:
-        there = close(chain, guess, chain.coordinate.hold(drive), steps=6)
+        there = close(chain, guess, chain.coordinate.hold(drive), steps=6, within=_CLOSE)
     except NoPlan:
         return None
     if not there.fine.all() or not np.isfinite(single(there.speed)).all():
