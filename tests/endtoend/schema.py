@@ -1,0 +1,88 @@
+"""What docs/json.md says of the JSON, held against a text: keys, axes, shapes, units. Written from the page alone."""
+
+from __future__ import annotations
+
+from typing import Any
+
+TOP = [
+    "schema", "answer", "title", "note", "drive", "axes", "quantities", "joints", "two-force members", "members",
+    "events", "requirements", "holds", "warnings", "checks", "status",
+]  # fmt: skip
+QUANTITIES = ["drive", "effort", "load", "tare effort", "force ratio", "ideal ratio"]
+JOINT = {
+    "x": "force", "y": "force", "resultant": "force", "direction": "angle", "direction from own axis": "angle",
+    "moment": "moment",
+}  # fmt: skip
+EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point"}
+BATCH = ["case", "variant", "pose"]
+STILL = ["one", "variant", "pose"]
+
+
+class Schema:
+    """One answer, with the units of its model: kind of size -> unit; "number" -> ""."""
+
+    def __init__(self, tree: dict[str, Any], units: dict[str, str]):
+        self.tree, self.units = tree, {"number": "", **units}
+        axes = tree["axes"]
+        self.lengths = {"case": len(axes["case"]), "variant": axes["variant"], "pose": axes["pose"], "one": 1}
+
+    def check(self, kinds: dict[str, str]) -> None:
+        """kinds  of drive, effort and load in this model"""
+        tree = self.tree
+        assert list(tree) == TOP
+        assert (tree["schema"], tree["answer"]) == (1, "stroke")
+        assert list(tree["axes"]) == ["case", "variant", "pose", "member", "joint"]
+        for name, array in tree["quantities"].items():
+            assert array["text"]
+            kind = {"tare effort": "effort"}.get(name, name)
+            self.array(array, kinds.get(kind, "number"), STILL if name == "drive" else BATCH, more=frozenset({"text"}))
+        assert sorted(tree["quantities"]) == sorted(QUANTITIES)
+        for side in tree["joints"]:
+            assert list(side) == ["joint", "kind", "member", *JOINT]
+            assert side["joint"] in tree["axes"]["joint"]
+            for key, kind in JOINT.items():
+                self.array(side[key], kind, BATCH)
+        assert {s["joint"] for s in tree["joints"]} == set(tree["axes"]["joint"])
+        for entry in tree["two-force members"]:
+            assert entry["member"] in tree["axes"]["member"]
+            self.array(entry["axial"], "force", BATCH)
+        assert [entry["member"] for entry in tree["members"]] == tree["axes"]["member"]
+        for entry in tree["members"]:
+            for key, kind in (("x", "length"), ("y", "length"), ("turn", "angle")):
+                self.array(entry[key], kind, STILL)
+        self._told(kinds)
+        self._status()
+
+    def array(self, array: dict[str, Any], kind: str, axes: list[str], more: frozenset[str] = frozenset()) -> None:
+        assert set(array) == {"unit", "axes", "values", *more}
+        assert array["axes"] == axes
+        assert array["unit"] == self.units[kind]
+        self._nested(array["values"], axes)
+
+    def _nested(self, values: Any, axes: list[str]) -> None:
+        if not axes:
+            assert values is None or type(values) is float
+            return
+        assert len(values) == self.lengths[axes[0]]
+        for value in values:
+            self._nested(value, axes[1:])
+
+    def _told(self, kinds: dict[str, str]) -> None:
+        for event in self.tree["events"]:
+            assert list(event) == ["kind", "quantity", "case", "drive", "value"]
+            assert event["kind"] in EVENTS
+            assert event["case"] is None or event["case"] in self.tree["axes"]["case"]
+            assert event["drive"]["unit"] == self.units[kinds["drive"]]
+            assert event["value"]["unit"] in self.units.values()
+        for verdict in self.tree["requirements"]:
+            assert list(verdict) == ["name", "text", "holds", "case", "worst", "limit", "drive"]
+            assert verdict["worst"]["unit"] == verdict["limit"]["unit"]
+        assert self.tree["holds"] == all(v["holds"] for v in self.tree["requirements"])
+        assert all(list(w) == ["item", "text"] for w in self.tree["warnings"])
+        assert list(self.tree["checks"]) == ["closure", "equilibrium", "virtual work"]
+
+    def _status(self) -> None:
+        status = self.tree["status"]
+        assert status["axes"] == BATCH
+        codes = {code for case in status["values"] for variant in case for code in variant}
+        assert {str(code) for code in codes} <= set(status["meaning"])

@@ -1,0 +1,53 @@
+"""Every example and every template goes through all commands, and keeps what it requires of itself."""
+
+from __future__ import annotations
+
+import json
+import tomllib
+from pathlib import Path
+
+import pytest
+
+from linkcalc.cli.start import kinds
+from tests.endtoend.models import EXAMPLES, linkcalc
+
+
+def _example(name: str, folder: Path) -> Path:
+    if name in kinds():
+        path = folder / f"{name}.toml"
+        assert linkcalc("start", name, "--output", path).status == 0
+        return path
+    return next(p for p in EXAMPLES if p.stem == name.removesuffix(".toml"))
+
+
+@pytest.mark.parametrize("name", [*(p.name for p in EXAMPLES), *kinds()])
+def test_it_goes_through_all_commands(name: str, tmp_path: Path) -> None:
+    path = _example(name, tmp_path)
+    model = tomllib.loads(path.read_text(encoding="utf-8"))
+
+    looked = linkcalc("check", path)
+    assert (looked.status, looked.err) == (0, "")
+    assert model["title"] in looked.out
+
+    answer = tmp_path / "answer.json"
+    stepped = linkcalc("stroke", path, "--json", answer, "--csv", tmp_path / "answer.csv")
+    assert stepped.status == 0
+    tree = json.loads(answer.read_text(encoding="utf-8"))
+    assert tree["holds"] is True
+    assert [r["name"] for r in tree["requirements"]] == list(model.get("requirements", {}))
+    assert tree["axes"]["case"] == list(model.get("cases", {"": {}}))
+    assert all(status == 0 for case in tree["status"]["values"] for variant in case for status in variant)
+
+    picture = tmp_path / "drawing.svg"
+    drawn = linkcalc("draw", path, "--output", picture)
+    assert (drawn.status, drawn.out) == (0, f"wrote {picture}\n")
+    assert picture.read_text(encoding="utf-8").startswith("<?xml")
+    if "stroke" in model:
+        assert linkcalc("stroke", path, "--plot", tmp_path / "curves.svg").status == 0
+
+
+def test_every_example_has_a_caution_and_a_hand_calculation() -> None:
+    for path in EXAMPLES:
+        text = path.read_text(encoding="utf-8")
+        assert "# By hand" in text, path.name
+        assert "aution" in tomllib.loads(text)["note"], path.name
