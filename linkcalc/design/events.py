@@ -106,10 +106,11 @@ def _at_passages(curves: Curves, wanted: Sequence[Wanted], dead: list[float], ze
     out: dict[Wanted, Found] = {}
     for w in wanted:
         row, top = (names.index(w.name), w.case), curves.size(w.name)
-        if largest[row] > top and largest[row] > _RISE * _usual(curves, w):
-            at = int(np.argmax(sizes[row][: beside.size]))
-            if w.size or w.sense * values[row][at] > 0:
-                out[w] = Found(dead[at // 2], w.sense * np.inf)
+        at = int(np.argmax(sizes[row][: beside.size])) if beside.size else 0
+        rises = largest[row] > top and largest[row] > _RISE * _usual(curves, w)
+        # a size has no bound at its largest only; a force with a sign runs off one way
+        if rises and (w.sense > 0 if w.size else w.sense * values[row][at] > 0):
+            out[w] = Found(dead[at // 2], w.sense * np.inf)
         elif w.sense < 0 and smallest[row] <= _NOTHING * top and (w.size or np.min(curves.samples(w.name)) >= 0):
             out[w] = Found(zero[int(np.argmin(sizes[row][beside.size :]))], 0.0)
     return out

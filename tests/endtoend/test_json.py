@@ -120,3 +120,5 @@ def test_a_ratio_without_bound_is_null_and_the_event_says_so(tmp_path: Path) -> 
     assert largest["value"] == {"unit": "", "value": None, "unbounded": True}
     dead = next(e for e in tree["events"] if e["kind"] == "dead point")
     assert (dead["quantity"], round(dead["drive"]["value"], 6)) == ("load", 100)
+    smallest = next(e for e in tree["events"] if (e["kind"], e["quantity"]) == ("smallest", "force ratio"))
+    assert smallest["value"]["value"] == pytest.approx(min(abs(r) for r in ratio if r is not None), rel=1e-12)
