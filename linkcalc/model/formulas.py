@@ -32,8 +32,8 @@ def evaluate(text: str, names: Mapping[str, Quantity] = _NOTHING) -> Quantity:
     names  what its words stand for, SI; values float or (1, variant, 1)
     ->     value [SI], float or (1, variant, 1), and its dimension
 
-    >>> evaluate("3/8 in + 2*t", {"t": Quantity(0.001, (1, 0, 0, 0))})
-    Quantity(value=0.011525, dims=(1, 0, 0, 0))
+    >>> evaluate("1/4 in + 2*t", {"t": Quantity(0.001, (1, 0, 0, 0))})
+    Quantity(value=0.00835, dims=(1, 0, 0, 0))
 
     Raises Faults: not a formula, unknown word, dimensions that do not fit, no finite value.
     """

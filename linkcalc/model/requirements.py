@@ -83,8 +83,7 @@ class Requirement:
         if self.at in ("", START, END) or mechanism.stroke is None:
             return None
         if self.at.isalpha() and self.at not in names:
-            wanted = nearest(self.at, (START, END, *names)) + ", or a value of the stroke"
-            raise fault((), f"{self.at!r} is no place in the stroke", wanted.replace("?,", "?"))
+            raise fault((), f"{self.at!r} is no place in the stroke", nearest(self.at, (START, END, *names)))
         return float(to_si(_size(self.at), mechanism.stroke.along.kind, mechanism.units, names))
 
 

@@ -2,14 +2,24 @@
 
 from __future__ import annotations
 
+import copy
+import datetime
+import math
 import tomllib
+from collections.abc import Iterator
 from pathlib import Path
 from typing import Any
 
 import pytest
+from hypothesis import given, settings
+from hypothesis import strategies as st
 
 from linkcalc.faults import Faults
+from linkcalc.model.check import checked
+from linkcalc.model.gather import Gather
 from linkcalc.model.read import parse
+from linkcalc.model.sketch import Drawing
+from linkcalc.model.write import dumps
 from tests.unit.model.samples import EVERYTHING, HOLD_DOWN
 
 Change = tuple[str, str]
@@ -95,3 +105,48 @@ def test_what_is_no_fault(change: Change) -> None:
     old, new = change
     assert old in HOLD_DOWN
     parse(HOLD_DOWN.replace(old, new).replace("effort <= 400 N", "force at A <= 1 N"))
+
+
+def places(tree: Any, path: tuple[Any, ...] = ()) -> Iterator[tuple[Any, ...]]:
+    """Paths of everything in a tree of tables and lists."""
+    if path:
+        yield path
+    if isinstance(tree, (dict, list)):
+        for key in tree if isinstance(tree, dict) else range(len(tree)):
+            yield from places(tree[key], (*path, key))
+
+
+ODD = st.one_of(
+    st.sampled_from([
+        0, -1, 1e-320, 1e29, 1e300, -0.0, math.inf, math.nan, 10**400, True, "", " ", "A", "ground", "load", "drawn",
+        "a", "1/0", "a*b", "c", "0 mm", "0 deg", "1e-300 m", "1e29 m", "upper limit", "effort", [], {}, [0, 0],
+        ["A", "A"], ["A", "B"], [["A", 1], ["B", 1]], [["A", "B"], ["A", "B"]], datetime.date(2020, 1, 1), {"at": "A"},
+        "force at A <= 1 N at 3 deg", "1 N" * 300, "\u00b2", "\u0661", "é",
+    ]),
+    st.integers(), st.floats(), st.text(max_size=6),
+)  # fmt: skip
+
+
+@settings(max_examples=400, deadline=None)
+@given(st.sampled_from([HOLD_DOWN, EVERYTHING]), st.lists(st.tuples(st.integers(0), ODD, st.booleans()), max_size=3))
+def test_whatever_stands_in_a_model_faults_are_all_that_comes(text: str, changes: list[tuple[int, Any, bool]]) -> None:
+    """Values, names and tables of a sound model replaced or taken away: it is read, or told what is wrong with it."""
+    tree = tomllib.loads(text)
+    for number, value, away in changes:
+        paths = list(places(tree))
+        *path, last = paths[number % len(paths)]
+        inner = tree
+        for key in path:
+            inner = inner[key]
+        if away:
+            del inner[last]
+        else:
+            inner[last] = copy.deepcopy(value)
+        if not tree:
+            return
+    gather = Gather()
+    mechanism = checked(tree, gather)
+    assert all(fault.what for fault in gather.faults)
+    if not gather.faults:
+        Drawing(mechanism).assembly()
+        assert parse(dumps(mechanism)) == mechanism

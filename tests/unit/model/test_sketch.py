@@ -3,16 +3,19 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Mapping
 from dataclasses import replace
+from typing import Any
 
 import numpy as np
 import pytest
 
 from linkcalc.faults import Faults
 from linkcalc.model.check_drawing import drawn_poses
-from linkcalc.model.mechanism import Dimension, Mechanism, Member
+from linkcalc.model.mechanism import Dimension, Mechanism, Member, Units
 from linkcalc.model.read import parse
 from linkcalc.model.sketch import Drawing
+from linkcalc.parts.fields import part_fields
 from linkcalc.parts.points.coordinates import Coordinates
 from linkcalc.parts.points.on_line import OnLine
 from linkcalc.parts.points.polar import Polar
@@ -205,3 +208,52 @@ def test_a_copy_that_does_not_assemble_is_nan_among_the_others() -> None:
     mechanism = replace(MODELS["hold-down"], dimensions={"link": Dimension(40), "lean": Dimension("12 deg")})
     x, _ = Drawing(mechanism, {"link": np.array([0.04, 0.2]).reshape(1, 2, 1)}).point("C")
     assert np.isnan(x).ravel().tolist() == [False, True]
+
+
+def spelt_out(part: Any, mechanism: Mechanism) -> Any:
+    """A part with the unit of the file written behind every bare number."""
+
+    def told(size: Any, kind: str) -> Any:
+        bare = isinstance(size, (int, float)) and kind != "number"
+        return f"{size!r} {mechanism.units.of(kind)}" if bare else size
+
+    given = {}
+    for entry in part_fields(part):
+        value, kind = getattr(part, entry.name), entry.metadata["kind"]
+        if kind == "arcs":
+            given[entry.name] = tuple((centre, told(radius, "length")) for centre, radius in value)
+        elif kind in ("size", "line"):
+            given[entry.name] = told(value, entry.metadata.get("unit", "angle"))
+    return replace(part, **given)
+
+
+@models
+def test_other_units_of_the_file_change_nothing(mechanism: Mechanism) -> None:
+    """All bare numbers written out in their unit, then the file's units changed: the drawing stays where it is."""
+
+    def each(parts: Mapping[str, Any]) -> dict[str, Any]:
+        return {name: spelt_out(part, mechanism) for name, part in parts.items()}
+
+    length = mechanism.units.length
+    dimensions = {
+        name: Dimension(size if isinstance(size := d.size, str) else f"{size} {length}")
+        for name, d in mechanism.dimensions.items()
+    }
+    other = replace(
+        mechanism,
+        units=Units(length="yd", angle="turn", force="kip", mass="slug", moment="ft*lbf", acceleration="ft/s^2"),
+        dimensions=dimensions,
+        points=each(mechanism.points),
+        members=each(mechanism.members),
+        joints={word: each(parts) for word, parts in mechanism.joints.items()},
+        effort=spelt_out(mechanism.effort, mechanism),
+        load=spelt_out(mechanism.load, mechanism),
+        loads=each(mechanism.loads),
+        cases={
+            name: replace(case, add=each(case.add), gravity=spelt_out(case.gravity, mechanism))
+            for name, case in mechanism.cases.items()
+        },
+    )
+    drawings = [Drawing(mechanism), Drawing(other)]
+    first, second = (numbers([d.points, d.origins, d.joints, d.assembly()], []) for d in drawings)
+    np.testing.assert_allclose(second, first, rtol=1e-14, atol=1e-15)
