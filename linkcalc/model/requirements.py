@@ -10,10 +10,12 @@ from linkcalc.faults import fault
 from linkcalc.model.formulas import to_si
 from linkcalc.model.functions import Quantity
 from linkcalc.model.mechanism import Mechanism, strength_kind
+from linkcalc.model.shapes import shown
 from linkcalc.parts.contract import Size
 from linkcalc.words import nearest
 
 START, END = "start", "end"
+_LONGEST = 500
 _FORM = '"force at C on arm <= 2 kN", "effort <= 150 N at start" or the like is wanted'
 _TEXT = re.compile(r"\s*(?P<left>[^<>=≤≥]+?)\s*(?P<relation><=|>=|=<|=>|≤|≥|<|>)\s*(?P<right>[^<>=≤≥]+?)\s*")
 _SAME = {"≤": "<=", "≥": ">=", "=<": "<=", "=>": ">="}
@@ -103,9 +105,9 @@ def requirement(name: str, text: str) -> Requirement:
 
     Raises Faults.
     """
-    match = _TEXT.fullmatch(text)
-    if not match:
-        raise fault((), f"{text!r} is no requirement", _FORM)
+    match = _TEXT.fullmatch(text) if len(text) <= _LONGEST else None
+    if not match or not match["left"].strip():
+        raise fault((), f"{shown(text)} is no requirement", _FORM)
     value, _, at = (part.strip() for part in re.sub(r"\s+", " ", match["right"]).partition(" at "))
     quantity, of, on = _told_of(match["left"].split(), text)
     relation = _SAME.get(match["relation"], match["relation"])

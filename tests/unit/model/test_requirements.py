@@ -72,6 +72,8 @@ FORM = '"force at C on arm <= 2 kN", "effort <= 150 N at start" or the like is w
     [
         ("effort", f"'effort' is no requirement; {FORM}"),
         ("effort <=", f"'effort <=' is no requirement; {FORM}"),
+        ("effort" + " " * 600 + "<= 1 N", f"'effort{' ' * 39}...' is no requirement; {FORM}"),
+        (" <= 1 N", f"' <= 1 N' is no requirement; {FORM}"),
         ("effort <= 1 N <= 2 N", f"'effort <= 1 N <= 2 N' is no requirement; {FORM}"),
         ("efort <= 1 N", "unknown quantity 'efort' in 'efort <= 1 N'; did you mean 'effort' or 'tare effort'?"),
         (
