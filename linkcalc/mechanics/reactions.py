@@ -47,13 +47,15 @@ def reactions(
     sides: list[Side] = []
     on_pin: dict[str, list[tuple[Value, Value]]] = {}
     hubs: dict[str, tuple[int, Joint]] = {}
+    pins = {joint.name for joint in chain.joints if joint.word == "pin"}
     for joint, first in zip(chain.joints, chain.first_row, strict=True):
         x, y = at.spot(joint.site)
         forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)])
         hub = joint.word == "pin"
         for member in dict.fromkeys(joint.members):
             fx, fy, about_origin = forces.get(member, (0.0, 0.0, 0.0))
-            pin = joint.on_pin if member == joint.members[0] else ""
+            # where all that meet are welded together there is no pin: the member that stands for it takes the force
+            pin = joint.on_pin if member == joint.members[0] and joint.on_pin in pins else ""
             if pin:
                 on_pin.setdefault(pin, []).append((fx, fy))
                 sides.append(Side(joint.name, joint.word, -1, pin, fx, fy, 0.0, x, y, False))
