@@ -93,7 +93,7 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
         if checked:
             unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
     multipliers = [-v for v in negative]
-    status = _status(closed, multipliers, dead)
+    status = _status(closed, multipliers, dead, len(pushing.cases))
     return Balance(effort, load, tare, effort_speed, load_speed, multipliers, unbalance, disagreement, status)
 
 
@@ -170,8 +170,11 @@ def _checks(
     return unbalance, np.asarray(np.abs(negative[-1]) / work, float)
 
 
-def _status(closed: Closed, multipliers: Sequence[Value], dead: NDArray[np.bool_] | None) -> NDArray[np.int8]:
-    shape = np.broadcast_shapes(closed.fine.shape, *{np.shape(m) for m in multipliers})
+def _status(
+    closed: Closed, multipliers: Sequence[Value], dead: NDArray[np.bool_] | None, cases: int
+) -> NDArray[np.int8]:
+    # cases that turn out alike are several all the same: who asks for the second must find it
+    shape = np.broadcast_shapes((cases, 1, 1), closed.fine.shape, *{np.shape(m) for m in multipliers})
     status = np.zeros(shape, np.int8)
     for m, top in zip(multipliers, tops(multipliers), strict=True):
         if not math.isfinite(top):
