@@ -177,6 +177,6 @@ def single(values: Sequence[Value]) -> Array:
 
 
 def alone(at: Poses) -> Poses:
-    """The first pose of a batch as Python floats."""
-    x, y, c, s, down = (single(v).tolist() for v in (at.x, at.y, at.c, at.s, at.down))
-    return Poses(x, y, c, s, (down[0], down[1]), at.field)
+    """The first pose of a batch as Python floats; gravity stays what it is in each case."""
+    x, y, c, s = (single(v).tolist() for v in (at.x, at.y, at.c, at.s))
+    return Poses(x, y, c, s, at.down, at.field)

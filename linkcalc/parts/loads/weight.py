@@ -4,6 +4,8 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
+import numpy as np
+
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Mark, Poses, Push, Site, Size, Sketch, Value
 from linkcalc.words import word
@@ -45,5 +47,5 @@ class WeightPush:
 
     def mark(self, at: Poses) -> Mark:
         x, y = at.spot(self.site)
-        dx, dy = at.down
-        return Mark("weight", ((float(x), float(y)),), (float(dx), float(dy)), self.name)
+        dx, dy = (float(np.ravel(d)[0]) for d in at.down)  # as the first case has it
+        return Mark("weight", ((float(x), float(y)),), (dx, dy), self.name)
