@@ -68,9 +68,7 @@ def _value(value: Any, item: tuple[str, ...]) -> str:
         return (
             '"""\n' + "\n".join(_quoted(line)[1:-1] for line in value.split("\n")) + '"""' if long else _quoted(value)
         )
-    if isinstance(value, bool):
-        return "true" if value else "false"
-    if isinstance(value, (int, float)):
+    if isinstance(value, (int, float)) and not isinstance(value, bool):
         return float.__repr__(value) if isinstance(value, float) else str(value)
     if isinstance(value, Mapping):
         inner = ", ".join(_pair(key, one, (*item, key)) for key, one in value.items())

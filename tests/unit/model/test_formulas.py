@@ -94,6 +94,7 @@ def test_values(text: str, value: float, dims: u.Dims) -> None:
         ("2 mm 3", "'3' cannot stand there in '2 mm 3'; put a sign between '2 mm' and '3'"),
         ("3,5 mm", "',' cannot stand there in '3,5 mm'; write a decimal point, not a comma"),
         ("12 kg*", "the formula is not finished in '12 kg*'"),
+        ("sin(30 deg", "the formula is not finished in 'sin(30 deg'"),
         ("(link", "the formula is not finished in '(link'"),
         ("link)", "')' cannot stand there in 'link)'"),
         ("link.real", "'.' cannot stand in 'link.real'; a number with a unit or a formula is wanted"),

@@ -119,10 +119,14 @@ def test_what_python_builds_is_checked_alike() -> None:
     ]
 
 
-def test_what_a_file_cannot_say() -> None:
+@pytest.mark.parametrize(
+    ("value", "message"),
+    [({1, 2}, "set {1, 2} cannot stand in a model file"), (True, "bool True cannot stand in a model file")],
+)
+def test_what_a_file_cannot_say(value: object, message: str) -> None:
     with pytest.raises(Faults) as raised:
-        dumps(Mechanism(points={"A": Coordinates(0, {1, 2})}))  # type: ignore[arg-type]
-    assert str(raised.value) == "points.A: set {1, 2} cannot stand in a model file"
+        dumps(Mechanism(points={"A": Coordinates(0, value)}))  # type: ignore[arg-type]
+    assert str(raised.value) == f"points.A: {message}"
 
 
 def test_where_a_model_cannot_be_written(tmp_path: Path) -> None:
