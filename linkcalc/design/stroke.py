@@ -77,7 +77,6 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
     solved, b, p = shown.solved, shown.solved.balance, ready.pushing
     shape = b.status.shape
     still = (1, *shape[1:])
-    members = range(len(ready.drawing.members))
     at = solved.closed.at
     drawn = alone(ready.start.at)
     kinds = {}
@@ -103,12 +102,12 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         tare_effort=_full(b.tare, shape),
         force_ratio=_full(bounded(b.force_ratio), shape),
         ideal_ratio=_full(bounded(b.ideal_ratio), shape),
-        force=np.array([[_full(s.fx, shape), _full(s.fy, shape)] for s in shown.sides]).reshape(-1, 2, *shape),
-        moment=np.array([_full(s.moment, shape) for s in shown.sides]).reshape(-1, *shape),
-        axial=np.array([_full(a, shape) for a in axial]).reshape(-1, *shape),
-        x=np.array([_full(at.x[m], still) for m in members]),
-        y=np.array([_full(at.y[m], still) for m in members]),
-        turn=np.array([_full(np.arctan2(at.s[m], at.c[m]), still) for m in members]),
+        force=_stacked([f for s in shown.sides for f in (s.fx, s.fy)], shape).reshape(-1, 2, *shape),
+        moment=_stacked([s.moment for s in shown.sides], shape),
+        axial=_stacked(axial, shape),
+        x=_stacked(at.x, still),
+        y=_stacked(at.y, still),
+        turn=np.arctan2(_stacked(at.s, still), _stacked(at.c, still)),
         status=b.status,
         checks=checks,
         events=found,
@@ -136,6 +135,13 @@ def _checks(solved: Solved) -> Checks:
 
     b = solved.balance
     return Checks(solved.closed.worst, worst(b.unbalance), worst(b.disagreement))
+
+
+def _stacked(values: Sequence[Value], shape: tuple[int, ...]) -> Array:
+    out: Array = np.empty((len(values), *shape))
+    for row, value in zip(out, values, strict=True):
+        row[...] = value
+    return out
 
 
 def _full(value: Value, shape: tuple[int, ...]) -> Array:

@@ -8,13 +8,13 @@ import numpy as np
 
 from linkcalc.parts.pose import Value
 
-_SHORT = 1024  # entries: below, the number of calls counts; above, the number of temporary arrays
+SHORT = 1024  # entries: below, the number of calls counts; above, the number of temporary arrays
 
 
 def tops(values: Sequence[Value]) -> list[float]:
     """Largest absolute value of each over its whole batch; NaN if one entry is."""
     arrays = [v for v in values if not isinstance(v, float)]
-    if arrays and arrays[0].size <= _SHORT and len({a.shape for a in arrays}) == 1:
+    if arrays and arrays[0].size <= SHORT and len({a.shape for a in arrays}) == 1:
         stacked = np.abs(np.array(arrays)).reshape(len(arrays), -1).max(axis=1).tolist()
         found = iter(stacked)
         return [abs(v) if isinstance(v, float) else next(found) for v in values]
@@ -25,7 +25,7 @@ def tops(values: Sequence[Value]) -> list[float]:
 def lows(values: Sequence[Value]) -> list[float]:
     """Smallest absolute value of each over its whole batch; NaN if one entry is."""
     arrays = [v for v in values if not isinstance(v, float)]
-    if arrays and arrays[0].size <= _SHORT and len({a.shape for a in arrays}) == 1:
+    if arrays and arrays[0].size <= SHORT and len({a.shape for a in arrays}) == 1:
         stacked = np.abs(np.array(arrays)).reshape(len(arrays), -1).min(axis=1).tolist()
         found = iter(stacked)
         return [abs(v) if isinstance(v, float) else next(found) for v in values]

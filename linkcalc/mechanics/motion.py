@@ -15,6 +15,7 @@ from typing import Protocol
 import numpy as np
 from numpy.typing import NDArray
 
+from linkcalc.mechanics.batch import SHORT
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.eliminate import Factors
 from linkcalc.parts.contract import Drive
@@ -101,6 +102,9 @@ def _batch(at: Poses) -> tuple[int, ...]:
 
 def moved(at: Poses, step: Sequence[Value]) -> Poses:
     """Poses less a step: every member shifted by -dx, -dy and turned by -atan(dturn)."""
+    turn = at.c[-1]
+    if not isinstance(turn, float) and turn.size <= SHORT:
+        return _moved_short(at, step)
     x, y, c, s = [at.x[0]], [at.y[0]], [at.c[0]], [at.s[0]]
     for k in range(1, len(at.x)):
         dx, dy, dt = step[3 * k - 3 : 3 * k]
@@ -110,6 +114,22 @@ def moved(at: Poses, step: Sequence[Value]) -> Poses:
         c.append(ck)
         s.append(sk)
     return Poses(x, y, c, s, at.down, at.field)
+
+
+def _moved_short(at: Poses, step: Sequence[Value]) -> Poses:
+    """The same with all members in one array: for a short batch the number of calls counts."""
+    shape = np.broadcast_shapes((1, 1, 1), *(v.shape for v in (*step, at.c[-1]) if not isinstance(v, float)))
+    moves = np.empty((len(step), *shape))
+    for k, value in enumerate(step):
+        moves[k] = value
+    stacked = np.empty((4, len(at.x) - 1, *shape))
+    for row, values in zip(stacked, (at.x, at.y, at.c, at.s), strict=True):
+        for k, value in enumerate(values[1:]):
+            row[k] = value
+    c, s, dt = stacked[2], stacked[3], moves[2::3]
+    c, s = _normed(c + s * dt, s - c * dt)
+    x, y = stacked[0] - moves[0::3], stacked[1] - moves[1::3]
+    return Poses([at.x[0], *x], [at.y[0], *y], [at.c[0], *c], [at.s[0], *s], at.down, at.field)
 
 
 def between(a: Known, b: Known, t: Value, span: Value) -> Poses:

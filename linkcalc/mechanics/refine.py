@@ -20,8 +20,10 @@ Curve = Callable[[Array, NDArray[np.intp]], Array]
 
 _NODES = np.cos(np.pi * np.arange(7) / 6)[::-1]  # -1 .. 1
 _TO_SERIES = np.linalg.inv(chebyshev.chebvander(_NODES, 6))
+_TO_POWERS = np.array([np.pad(chebyshev.cheb2poly(np.eye(7)[k]), (0, 6 - k)) for k in range(7)]).T
+_POWERS = np.arange(1.0, 7.0)[:, None]
 _FINE = np.linspace(-1, 1, 97)
-_FINE_VALUES = chebyshev.chebvander(_FINE, 6)
+_FINE_POWERS = np.vander(_FINE, 7, increasing=True).T
 _SHRINK = 0.1
 _ROUNDS = 30
 
@@ -113,18 +115,28 @@ def _summit(y: Array) -> tuple[Array, NDArray[np.bool_]]:
         series = y @ _TO_SERIES.T
         spread = np.max(np.abs(series[:, 1:]), axis=1)
         smooth = np.isfinite(spread) & (np.abs(series[:, -2:]).max(axis=1) <= 0.02 * spread)
-    x = summit_of(np.where(np.isfinite(series), series, 0.0), np.full(len(y), -1.0), np.full(len(y), 1.0))
-    return x, smooth
+    power = _TO_POWERS @ np.where(np.isfinite(series), series, 0.0).T
+    return summit_of(power, np.full(len(y), -1.0), np.full(len(y), 1.0)), smooth
 
 
-def summit_of(series: Array, low: Array, high: Array) -> Array:
-    """Where Chebyshev series (curves, 7) are largest between two places of -1..1 each: (curves)."""
+def horner(t: Array, power: Array) -> Array:
+    """Values at t (curves) of polynomials, (powers, curves), lowest power first."""
+    total = power[-1]
+    for coefficient in power[-2::-1]:
+        total = total * t + coefficient
+    return total
+
+
+def summit_of(power: Array, low: Array, high: Array) -> Array:
+    """Where polynomials of degree 6, (powers, curves), are largest between two places of -1..1 each: (curves)."""
     inside = (low[:, None] - 1e-12 <= _FINE) & (high[:, None] + 1e-12 >= _FINE)
-    x = _FINE[np.argmax(np.where(inside, series @ _FINE_VALUES.T, -np.inf), axis=1)]
-    first, second = chebyshev.chebder(series.T), chebyshev.chebder(series.T, 2)
-    for _ in range(3):
-        slope, bend = chebyshev.chebval(x, first, tensor=False), chebyshev.chebval(x, second, tensor=False)
-        with np.errstate(all="ignore"):
+    x = _FINE[np.argmax(np.where(inside, power.T @ _FINE_POWERS, -np.inf), axis=1)]
+    first = power[1:] * _POWERS
+    second = first[1:] * _POWERS[:-1]
+    with np.errstate(all="ignore"):
+        for _ in range(3):
+            slope, bend = horner(x, first), horner(x, second)
             step = np.where(bend < 0, slope / bend, 0.0)
-        x = np.clip(x - np.clip(np.nan_to_num(step), -0.05, 0.05), low, high)
+            step = np.minimum(np.maximum(step, -0.05), 0.05)
+            x = np.minimum(np.maximum(x - step, low), high)
     return x

@@ -9,15 +9,15 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 import numpy as np
-from numpy.polynomial import chebyshev
 from numpy.typing import NDArray
 
-from linkcalc.mechanics.refine import Curve, peaks, roots, summit_of
+from linkcalc.mechanics.refine import Curve, horner, peaks, roots, summit_of
 from linkcalc.parts.pose import Array
 
 _WIDE = 7
 _EVEN = np.linspace(-1, 1, _WIDE)
-_TO_SERIES = np.linalg.inv(chebyshev.chebvander(_EVEN, _WIDE - 1))
+_TO_POWERS = np.linalg.inv(np.vander(_EVEN, increasing=True))
+_POWERS = np.arange(1.0, _WIDE)[:, None]
 _HALF = (_WIDE - 1) / 2
 _STILL = 1e-10  # of the step between samples: no correction worth making
 _ZERO = 1e-13  # of the curve's size: a sample that is nothing but rounding
@@ -58,15 +58,15 @@ class Peaks:
 
     def _foretell(self) -> None:
         samples, count = self._samples, self._samples.where.size
-        first, series = _polynomial(samples, np.arange(len(self._top)), self._top - _WIDE // 2)
-        t = summit_of(series, (self._low - first) / _HALF - 1, (self._high - first) / _HALF - 1)
+        first, power = _polynomial(samples, np.arange(len(self._top)), self._top - _WIDE // 2)
+        t = summit_of(power, (self._low - first) / _HALF - 1, (self._high - first) / _HALF - 1)
         index = first + (t + 1) * _HALF
         # exactly the sample where it is the sample: the ends of the stroke are told as given
-        nearest = np.clip(np.round(index).astype(int), 0, count - 1)
+        nearest = np.minimum(np.maximum(np.rint(index).astype(int), 0), count - 1)
         self.place = np.where(
             np.abs(index - nearest) < 1e-12, samples.where[nearest], samples.where[0] + samples.step * index
         )
-        self._foretold = chebyshev.chebval(t, series.T, tensor=False)
+        self._foretold = horner(t, power)
 
     def confirmed(self, f: Curve, only: NDArray[np.intp]) -> tuple[Array, Array]:
         """Places and values, both (only), of some of the curves; they can be had anywhere."""
@@ -108,7 +108,7 @@ class Roots:
         self._size = np.abs(y).max(axis=1, initial=0.0, where=np.isfinite(y))
         self._y = y = np.where(np.abs(y) <= _ZERO * self._size[:, None], 0.0, y)
         start = np.maximum.accumulate(np.where(y != 0.0, np.arange(count), 0), axis=1)
-        sign = np.sign(np.take_along_axis(y, start, axis=1))
+        sign = np.sign(y[np.arange(len(y))[:, None], start])
         with np.errstate(invalid="ignore"):
             self.curve, at = np.nonzero(sign[:, :-1] * sign[:, 1:] < 0)
         self._low, self._high = start[self.curve, at], at + 1
@@ -119,17 +119,18 @@ class Roots:
 
     def _foretell(self) -> None:
         samples, curve, low, high = self._samples, self.curve, self._low, self._high
-        first, series = _polynomial(samples, curve, low - _WIDE // 2 + 1)
-        slope = chebyshev.chebder(series.T)
+        first, power = _polynomial(samples, curve, low - _WIDE // 2 + 1)
+        slope = power[1:] * _POWERS
         t_low, t_high = (low - first) / _HALF - 1, (high - first) / _HALF - 1
         y_low, y_high = samples.values[curve, low], samples.values[curve, high]
         t = t_low + (t_high - t_low) * y_low / (y_low - y_high)
-        for _ in range(4):
-            with np.errstate(all="ignore"):
-                step = chebyshev.chebval(t, series.T, tensor=False) / chebyshev.chebval(t, slope, tensor=False)
-            t = np.clip(t - np.nan_to_num(step), t_low, t_high)
+        with np.errstate(all="ignore"):
+            for _ in range(3):
+                step = horner(t, power) / horner(t, slope)
+                t = np.minimum(np.maximum(t - step, t_low), t_high)
+        t = np.where(np.isfinite(t), t, (t_low + t_high) / 2)
         self.place = samples.where[0] + samples.step * (first + (t + 1) * _HALF)
-        self._steep = chebyshev.chebval(t, slope, tensor=False) / (samples.step * _HALF)
+        self._steep = horner(t, slope) / (samples.step * _HALF)
 
     def confirmed(self, f: Curve) -> Array:
         """(roots) places, of curves that can be had anywhere."""
@@ -160,10 +161,10 @@ class Roots:
 
 
 def _polynomial(samples: Samples, curve: NDArray[np.intp], first: NDArray[np.intp]) -> tuple[NDArray[np.intp], Array]:
-    """First sample of each window of seven, and the Chebyshev series through it (windows, 7) on -1..1."""
-    first = np.clip(first, 0, samples.where.size - _WIDE)
+    """First sample of each window of seven, and the polynomial through it, (powers, windows), on -1..1."""
+    first = np.minimum(np.maximum(first, 0), samples.where.size - _WIDE)
     window = samples.values[curve[:, None], first[:, None] + np.arange(_WIDE)]
-    return first, np.where(np.isfinite(window), window, 0.0) @ _TO_SERIES.T
+    return first, _TO_POWERS @ np.where(np.isfinite(window), window, 0.0).T
 
 
 def sampled_peaks(f: Curve, samples: Samples) -> tuple[Array, Array]:

@@ -21,7 +21,8 @@ _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its le
 _STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
 _SMALLEST = 1e-7  # of the whole way
 _FIRST = 1 / 6
-_CLOSE = 1e-7  # nodes only guide the poses between them, which are closed for themselves
+_CLOSE = 1e-5  # nodes only guide the poses between them, which are closed for themselves
+_FAST = 10.0  # times the speed of the drive itself: a limit of motion is near
 _ROUNDING = 1e-13  # of the drive: no way to go
 _STEPS = 5000
 
@@ -92,8 +93,14 @@ def _step(chain: Chain, nodes: list[Node], drive: float) -> Node | None:
         there = close(chain, guess, chain.coordinate.hold(drive), steps=6, within=_CLOSE)
     except NoPlan:
         return None
-    if not there.fine.all() or not np.isfinite(single(there.speed)).all():
+    speed = single(there.speed) * chain.column_size
+    if not there.fine.all() or not np.isfinite(speed).all():
         return None
+    if np.abs(speed).max() > _FAST * (chain.size if chain.coordinate.kind == "angle" else 1.0):
+        # close to a limit of motion a small gap hides a large way: it could even seem to go beyond
+        there = close(chain, there.at, chain.coordinate.hold(drive), steps=6)
+        if not there.fine.all():
+            return None
     strict = there.factored.negative.flat[0] != here.pose.factored.negative.flat[0]
     if _departure(chain, here.pose, there, step) > (_STRICT if strict else _SMOOTH):
         return None
