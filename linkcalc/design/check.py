@@ -13,7 +13,7 @@ from linkcalc.mechanics.freedom import freedom
 from linkcalc.mechanics.path import motion_range
 from linkcalc.mechanics.prepare import Ready, prepare
 from linkcalc.model.mechanism import Mechanism
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import drawn
 
 
 @dataclass(frozen=True)
@@ -64,7 +64,7 @@ class CheckAnswer:
 def check_model(mechanism: Mechanism, *, case: str | None = None) -> CheckAnswer:
     """Look a model over. Raises Faults: whatever keeps it from being solved."""
     answer = stroke(mechanism, case=case)
-    drawing = Drawing(answer.mechanism)
+    drawing = drawn(answer.mechanism)
     ready = prepare(drawing)
     joints = Counter(word for word, _ in dict.fromkeys((j.word, j.name) for j in drawing.joints))
     asked = "effort" if ready.pushing.effort_asked else "load" if ready.pushing.load_asked else ""

@@ -18,7 +18,7 @@ from linkcalc.mechanics.pipeline import Solved
 from linkcalc.mechanics.prepare import prepare
 from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.words import nearest
 
 BLOCK = 4096
@@ -62,7 +62,7 @@ def copies(
     count = _count(mechanism, sizes)
     if mechanism.stroke is None:
         raise fault("stroke", "the model has no stroke to walk through", "give it one, or use stroke(sizes=...)")
-    nominal = prepare(Drawing(mechanism))
+    nominal = prepare(drawn(mechanism))
     with located(nominal):
         path = lay_path(nominal)
     drive = path.poses(poses or mechanism.stroke.poses)

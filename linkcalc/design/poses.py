@@ -7,7 +7,7 @@ import numpy as np
 from linkcalc.mechanics.path import lay_path
 from linkcalc.mechanics.prepare import prepare
 from linkcalc.model.mechanism import DRAWN, Mechanism
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import drawn
 
 
 def stroke_value(mechanism: Mechanism, text: str) -> float:
@@ -15,7 +15,7 @@ def stroke_value(mechanism: Mechanism, text: str) -> float:
 
     Raises Faults: no size, or one of the wrong kind.
     """
-    drawing = Drawing(mechanism)
+    drawing = drawn(mechanism)
     assert mechanism.stroke is not None
     if text == DRAWN:
         return lay_path(prepare(drawing)).drawn

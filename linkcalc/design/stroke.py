@@ -21,7 +21,7 @@ from linkcalc.mechanics.prepare import Ready, prepare
 from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.select import only_case
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.pose import Value
 
 
@@ -44,7 +44,7 @@ def stroke(
     Raises Faults: everything wrong with the model, its freedoms or its stroke.
     """
     mechanism = only_case(check(mechanism), case)
-    ready = prepare(Drawing(mechanism))
+    ready = prepare(drawn(mechanism))
     with located(ready):
         if not ready.steps:
             solved, path = solve_drawn(ready), None

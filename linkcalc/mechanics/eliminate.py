@@ -8,7 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from functools import cached_property
-from typing import Protocol
+from typing import Any, Protocol
 
 import numpy as np
 from numpy.typing import NDArray
@@ -19,6 +19,9 @@ from linkcalc.parts.pose import Array, Value
 
 Mask = NDArray[np.bool_]
 SMALL = 48  # rows up to which a single matrix goes to LAPACK
+_MOST = 64  # plans that are kept
+_KEPT: dict[Any, Plan] = {}
+"""Plans made before, the latest last: a search asks of the same mechanism again and again."""
 _MANY = 0.05  # part of a batch with weak pivots that calls for a new plan
 
 
@@ -35,6 +38,7 @@ class Elimination:
         self.row_size, self.column_size = row_size, column_size
         self.scale = row_size[:, None] / column_size
         self.row_index, self.column_index = (list(k) for k in zip(*self.places, strict=True))
+        self._same = (self.places, row_size.tobytes(), column_size.tobytes())
         self._plans: dict[tuple[float | None, ...], Plan] = {}
 
     def factor(self, entries: Sequence[Value], *, lone: bool) -> Factors:
@@ -42,7 +46,7 @@ class Elimination:
         if lone and self.size <= SMALL:
             return Single(self, entries)
         key = signature(entries)
-        plan = self._plans.get(key)
+        plan = self._plans.get(key) or _KEPT.get((self._same, key))
         fresh = plan is None
         if plan is None:
             plan = self._plan(entries, key)
@@ -57,6 +61,11 @@ class Elimination:
 
     def _plan(self, entries: Sequence[Value], key: tuple[float | None, ...]) -> Plan:
         plan = self._plans[key] = Plan(self.size, self.places, entries, self.row_size, self.column_size)
+        whole = (self._same, key)
+        _KEPT.pop(whole, None)
+        _KEPT[whole] = plan
+        if len(_KEPT) > _MOST:
+            del _KEPT[next(iter(_KEPT))]
         return plan
 
     def _replay(

@@ -64,8 +64,9 @@ def reactions(
                 on_pin.setdefault(joint.name, []).append((fx, fy))
             else:
                 turnable = not any(joint.angular)
-                arm_x, arm_y = x - at.x[member], y - at.y[member]
-                moment = 0.0 if turnable else about_origin - (arm_x * fy - arm_y * fx)
+                moment: Value = 0.0
+                if not turnable:
+                    moment = about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
                 own = turnable and (hub or member == joint.members[0])
                 sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
     for acting, size in _sized(pushing, at, effort, load):

@@ -21,6 +21,7 @@ _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its le
 _STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
 _SMALLEST = 1e-7  # of the whole way
 _FIRST = 1 / 6
+_GROWTH = 1.6
 _CLOSE = 1e-5  # nodes only guide the poses between them, which are closed for themselves
 _FAST = 10.0  # times the speed of the drive itself: a limit of motion is near
 _ROUNDING = 1e-13  # of the drive: no way to go
@@ -69,7 +70,7 @@ def walk(chain: Chain, start: Node, stop: float) -> Walk:
             if there.pose.factored.negative.flat[0] != here.pose.factored.negative.flat[0]:
                 passed.append((here.drive, there.drive))
             nodes.append(there)
-            step = 1.6 * (there.drive - here.drive)
+            step = _GROWTH * (there.drive - here.drive)
             continue
         step = (left if last else step) / 4
         if abs(step) < _SMALLEST * abs(whole):

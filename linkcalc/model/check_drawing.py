@@ -10,7 +10,7 @@ from linkcalc.faults import Faults, fault
 from linkcalc.model import walk
 from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import DRAWN, GROUND, LOWER, UPPER, Mechanism, Stroke
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.model.units import show
 from linkcalc.parts.contract import Coordinate, Poses
 from linkcalc.parts.coordinates.distance import Distance
@@ -22,7 +22,7 @@ _CLOSED = 1e-6
 def check_drawing(mechanism: Mechanism, gather: Gather) -> Drawing | None:
     """Lay the mechanism out and look at it. The drawing, if lines and points are in order."""
     try:
-        drawing = Drawing(mechanism)
+        drawing = drawn(mechanism)
     except Faults as found:
         gather.faults += found.faults
         return None

@@ -61,7 +61,7 @@ class Drawing:
             with _located("members", name):
                 self.origins.append(self.point(self.first_point(name)))
         self.pins: dict[str, PinGroup] = pin_groups(mechanism, self._carriers)
-        self.size: float = Drawing(mechanism).size if overrides else self._extent()
+        self.size: float = drawn(mechanism).size if overrides else self._extent()
 
     # what parts ask
 
@@ -176,6 +176,19 @@ class Drawing:
         places = np.array(list(self.points.values()), float).reshape(-1, 2)
         extent = float(np.max(np.ptp(places, axis=0), initial=0.0))
         return extent or 1.0
+
+
+def drawn(mechanism: Mechanism) -> Drawing:
+    """A mechanism with its own sizes, laid out once and kept with it: frozen as it is, it will not change.
+
+    Raises Faults.
+    """
+    kept = mechanism.__dict__.get("_drawn")
+    if kept is None:
+        kept = Drawing(mechanism)
+        object.__setattr__(mechanism, "_drawn", kept)
+    found: Drawing = kept
+    return found
 
 
 @contextmanager

@@ -5,7 +5,7 @@ from __future__ import annotations
 import numpy as np
 
 from linkcalc.design.answer import Array, StrokeAnswer
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import drawn
 
 # below this part of the largest force a direction is that of rounding, and there is none
 _NOTHING = 1e-9
@@ -27,7 +27,7 @@ def direction(answer: StrokeAnswer) -> Array:
 def own_direction(answer: StrokeAnswer) -> Array:
     """(bearing, case, variant, pose) [rad] the same from the member's own x axis (first point to last), which turns
     with it; the ground's own axes are the ground axes. A pin itself has none."""
-    sketch = Drawing(answer.mechanism)
+    sketch = drawn(answer.mechanism)
     angle = direction(answer)
     for i, bearing in enumerate(answer.bearings):
         if bearing.member in sketch.members:

@@ -10,7 +10,7 @@ import numpy as np
 
 from linkcalc.design.answer import SCHEMA, Array, StrokeAnswer, quantities
 from linkcalc.mechanics.state import Status
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import drawn
 from linkcalc.report.bearings import direction, own_direction, resultant
 from linkcalc.report.edge import Edge
 
@@ -38,7 +38,7 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
     """A stroke as plain dicts and lists, in the units of the model file; nan is None."""
     edge = Edge(answer)
     mechanism = answer.mechanism
-    members = list(Drawing(mechanism).members)
+    members = list(drawn(mechanism).members)
     return {
         "schema": SCHEMA,
         "answer": "stroke",

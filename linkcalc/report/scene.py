@@ -10,7 +10,7 @@ import numpy as np
 
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.parts_list import EFFORT, LOAD, CaseLoads
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import drawn
 from linkcalc.parts.contract import Joint, Mark, Pusher
 from linkcalc.parts.pose import Poses
 
@@ -48,7 +48,7 @@ class Scene:
 
     def __init__(self, answer: StrokeAnswer):
         self.answer = answer
-        self.sketch = Drawing(answer.mechanism)
+        self.sketch = drawn(answer.mechanism)
 
     @cached_property
     def _cases(self) -> tuple[CaseLoads, ...]:
