@@ -1,0 +1,218 @@
+"""At least one small machine for every word of the registry: the laws of parts are held against these.
+
+A kind without a sample fails ``test_every_part.py``, so a new kind is tested by existing.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from linkcalc import parse
+from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.sketch import Drawing
+
+
+@dataclass(frozen=True)
+class Sample:
+    """A machine that uses a word.
+
+    family, word  of the registry
+    name          what the machine calls the part: a joint, load or point; "" for the coordinate of the stroke
+    text          the machine, as a model file
+    """
+
+    family: str
+    word: str
+    name: str
+    text: str
+
+    def __str__(self) -> str:
+        return f"{self.family} {self.word} {self.name}".strip()
+
+    @property
+    def mechanism(self) -> Mechanism:
+        return parse(self.text)
+
+    @property
+    def drawing(self) -> Drawing:
+        return Drawing(self.mechanism)
+
+
+RAM = """
+[points]
+A = [0, 0]
+B = { from = "A", distance = 40, angle = 60 }
+C = { meets = [["B", 110], ["A", 128]], side = "right" }
+nose = { on = ["A", "C"], distance = 150, offset = 12 }
+[members]
+ground = ["A"]
+crank = ["A", "B"]
+rod = ["B", "C"]
+ram = { points = ["C", "nose"], mass = 1.5 }
+[slides.guide]
+member = "ram"
+along = ["A", "C"]
+at = "nose"
+[effort]
+torque_on = "crank"
+[load]
+at = "nose"
+direction = -172
+size = 300
+[loads.spring]
+between = ["B", "nose"]
+size = -45
+[loads.brake]
+torque_on = "rod"
+against = "crank"
+size = 2
+[stroke]
+travel = "guide"
+from = "drawn"
+to = 155
+poses = 7
+"""
+"""A crank pushes a ram up a guide that leans a little; the stroke is the travel of the ram."""
+
+COLLAR = """
+[points]
+A = [0, 0]
+B = { from = "A", distance = 50, angle = 110 }
+O = [0, -90]
+P = { from = "O", distance = 160, angle = 83 }
+Q = { on = ["O", "P"], part = "0.3", offset = -8 }
+grip = { mirror = "P", line = ["O", "A"] }
+[members]
+ground = ["A", "O"]
+crank = ["A", "B"]
+rocker = ["O", "Q", "P", "grip"]
+collar = { points = ["B"], mass = 0.8 }
+[slides.collar_on_rocker]
+member = "collar"
+on = "rocker"
+along = ["O", "P"]
+[effort]
+torque_on = "crank"
+[load]
+at = "grip"
+square_to = ["O", "grip"]
+size = 60
+[loads.tool]
+at = "P"
+along = ["P", "Q"]
+size = 20
+[loads.plate]
+mass_at = "grip"
+mass = 3
+[stroke]
+turn = "rocker"
+line = ["O", "grip"]
+against = "crank"
+to = 10
+poses = 7
+"""
+"""A collar on a moving rocker, guided through a point beside the line; the stroke is a turn against the crank."""
+
+SLOTTED = """
+[points]
+A = [0, 0]
+B = { from = "A", distance = 45, angle = 20 }
+O = [10, -70]
+tip = { on = ["O", "B"], distance = 190 }
+side = { crossing = [["O", "tip"], ["A", "low"]] }
+low = [60, -3]
+[members]
+ground = ["A", "O"]
+crank = { points = ["A", "B"], mass = 0.6 }
+link = ["B", "low"]
+arm = ["O", "tip", "side"]
+[slots.in_arm]
+point = "B"
+along = ["O", "tip"]
+on = "arm"
+[slots.level]
+point = "low"
+along = 5
+[effort]
+at = "B"
+square_to = ["A", "B"]
+on = "crank"
+[load]
+at = "tip"
+direction = 170
+turns_with = "arm"
+size = 80
+[loads.bob]
+mass_at = "B"
+mass = 2
+[stroke]
+distance = ["A", "low"]
+to = 66
+poses = 7
+"""
+"""A slot in a moving arm that guides the pin of two other members; the stroke is a distance."""
+
+BRACKET = """
+[points]
+W = [0, 0]
+K = [0, 120]
+E = [200, 130]
+T = [260, 90]
+[members]
+ground = ["W"]
+post = { points = ["W", "K"], mass = 4 }
+beam = { points = ["K", "E"], mass = 3 }
+stay = ["E", "T"]
+[slots.roller]
+point = "T"
+along = 80
+[welds.foot]
+members = ["post", "ground"]
+at = "W"
+[welds.corner]
+members = ["beam", "post"]
+at = "K"
+[loads.hook]
+at = "E"
+direction = -80
+size = 500
+[loads.twist]
+torque_on = "beam"
+size = -15
+"""
+"""A bracket built into the ground and welded at its corner: a frame without a stroke."""
+
+SAMPLES = (
+    Sample("joint", "slide", "guide", RAM),
+    Sample("joint", "slide", "collar_on_rocker", COLLAR),
+    Sample("joint", "slot", "in_arm", SLOTTED),
+    Sample("joint", "slot", "level", SLOTTED),
+    Sample("joint", "weld", "corner", BRACKET),
+    Sample("joint", "weld", "foot", BRACKET),
+    Sample("load", "at", "load", RAM),
+    Sample("load", "at", "load", COLLAR),
+    Sample("load", "at", "tool", COLLAR),
+    Sample("load", "at", "load", SLOTTED),
+    Sample("load", "at", "effort", SLOTTED),
+    Sample("load", "between", "spring", RAM),
+    Sample("load", "torque_on", "effort", RAM),
+    Sample("load", "torque_on", "brake", RAM),
+    Sample("load", "torque_on", "twist", BRACKET),
+    Sample("load", "mass_at", "plate", COLLAR),
+    Sample("load", "mass_at", "bob", SLOTTED),
+    Sample("coordinate", "travel", "", RAM),
+    Sample("coordinate", "turn", "", COLLAR),
+    Sample("coordinate", "distance", "", SLOTTED),
+    Sample("construction", "x", "A", RAM),
+    Sample("construction", "from", "B", RAM),
+    Sample("construction", "meets", "C", RAM),
+    Sample("construction", "on", "nose", RAM),
+    Sample("construction", "on", "Q", COLLAR),
+    Sample("construction", "crossing", "side", SLOTTED),
+    Sample("construction", "mirror", "grip", COLLAR),
+)
+
+
+def samples(family: str) -> list[Sample]:
+    """Those of one family."""
+    return [sample for sample in SAMPLES if sample.family == family]
