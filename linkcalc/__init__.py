@@ -22,11 +22,43 @@
 (200.0, 3.0)
 """
 
-import linkcalc.parts  # noqa: F401  every kind of part enters the registry of words
-from linkcalc.design.stroke import stroke
-from linkcalc.faults import Fault, Faults
-from linkcalc.model.mechanism import Mechanism
-from linkcalc.model.read import parse, read
-from linkcalc.model.write import dumps, write
+from __future__ import annotations
 
-__all__ = ["Fault", "Faults", "Mechanism", "dumps", "parse", "read", "stroke", "write"]
+from importlib import import_module
+from typing import TYPE_CHECKING, Any
+
+if TYPE_CHECKING:
+    from linkcalc.design.check import check_model
+    from linkcalc.design.copies import copies
+    from linkcalc.design.stroke import stroke
+    from linkcalc.faults import Fault, Faults
+    from linkcalc.model.mechanism import Mechanism
+    from linkcalc.model.read import parse, read
+    from linkcalc.model.write import dumps, write
+
+__all__ = ["Fault", "Faults", "Mechanism", "check_model", "copies", "dumps", "parse", "read", "stroke", "write"]
+
+# loaded when first asked for: a command starts with what it needs
+_HOMES = {
+    "check_model": "linkcalc.design.check",
+    "copies": "linkcalc.design.copies",
+    "stroke": "linkcalc.design.stroke",
+    "Fault": "linkcalc.faults",
+    "Faults": "linkcalc.faults",
+    "Mechanism": "linkcalc.model.mechanism",
+    "parse": "linkcalc.model.read",
+    "read": "linkcalc.model.read",
+    "dumps": "linkcalc.model.write",
+    "write": "linkcalc.model.write",
+}
+
+
+def __getattr__(name: str) -> Any:
+    if name not in _HOMES:
+        raise AttributeError(f"module 'linkcalc' has no attribute {name!r}")
+    found = globals()[name] = getattr(import_module(_HOMES[name]), name)
+    return found
+
+
+def __dir__() -> list[str]:
+    return sorted(__all__)

@@ -102,7 +102,7 @@ def _posed(answer: StrokeAnswer, at: list[str]) -> tuple[StrokeAnswer, list[int]
             raise option_fault("--at", f"{text} is outside the stroke", "choose a pose between its ends")
     from linkcalc.design.stroke import stroke as ask
 
-    drive = np.unique(np.concatenate([answer.drive[0, 0], places]))
+    drive = np.array(sorted({*answer.drive[0, 0].tolist(), *places}))
     drive = drive if ends["end"] >= ends["start"] else drive[::-1]
     case = answer.cases[0] if len(answer.cases) == 1 and answer.mechanism.cases else None
     return ask(answer.mechanism, case=case, at=drive.tolist()), [int(np.argmin(np.abs(drive - p))) for p in places]

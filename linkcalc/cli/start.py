@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from importlib.resources import files
 from pathlib import Path
 from typing import Annotated
 
@@ -12,7 +11,7 @@ from linkcalc.cli.files import option_fault, told
 from linkcalc.files import write_whole
 from linkcalc.words import nearest
 
-_TEMPLATES = files("linkcalc.cli") / "templates"
+_TEMPLATES = Path(__file__).parent / "templates"
 
 
 def kinds() -> list[str]:

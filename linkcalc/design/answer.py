@@ -10,12 +10,11 @@ from dataclasses import dataclass, field, fields
 from typing import Any
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.parts.contract import Mark
+from linkcalc.parts.pose import Array, Codes
 
-Array = NDArray[np.float64]
 SCHEMA = 1
 
 
@@ -135,7 +134,7 @@ class StrokeAnswer:
     x: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="x of the member's first point")
     y: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="y of the member's first point")
     turn: Array = quantity("angle", axes=("member", "one", "variant", "pose"), text="turn from the drawing pose")
-    status: NDArray[np.int8] = field()
+    status: Codes = field()
     checks: Checks = field()
     events: tuple[Event, ...] = ()
     verdicts: tuple[Verdict, ...] = ()

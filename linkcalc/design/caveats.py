@@ -6,12 +6,13 @@ from collections.abc import Iterator, Sequence
 
 import numpy as np
 
-from linkcalc.design.answer import Array, Caveat, Event
+from linkcalc.design.answer import Caveat, Event
 from linkcalc.design.curves import Curves
 from linkcalc.mechanics.balance import part_of_motion
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.state import Status
 from linkcalc.model.units import show
+from linkcalc.parts.pose import Array
 
 _AT = 1e-8  # speed of load or effort over the fastest in the mechanism: a dead point
 _NEAR = 0.05  # the same: the rigid answer is doubtful if, besides, the speed is falling to nothing
@@ -68,7 +69,7 @@ def _passed(curves: Curves, path: Path | None) -> Iterator[Caveat]:
 
 def _failed(curves: Curves) -> Iterator[Caveat]:
     status = curves.shown.solved.balance.status
-    for code in np.unique(status):
+    for code in sorted(set(status.ravel().tolist())):
         if code == Status.FINE:
             continue
         poses = sorted({int(k) for k in np.nonzero(status == code)[2]})

@@ -6,9 +6,7 @@ from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
 import numpy as np
-from numpy.typing import NDArray
 
-from linkcalc.design.answer import Array
 from linkcalc.design.reach import located
 from linkcalc.faults import fault
 from linkcalc.mechanics.chain import Chain
@@ -19,6 +17,7 @@ from linkcalc.mechanics.prepare import prepare
 from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.sketch import Drawing, drawn
+from linkcalc.parts.pose import Array, Codes
 from linkcalc.words import nearest
 
 BLOCK = 4096
@@ -44,7 +43,7 @@ class CopiesPose:
     effort: Array
     load: Array
     joints: Mapping[str, tuple[Array, ...]]
-    status: NDArray[np.int8]
+    status: Codes
 
 
 def copies(

@@ -8,13 +8,12 @@ from functools import cached_property
 from typing import Any
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.design.survey import Shown, Survey
 from linkcalc.mechanics.mesh import Mesh
 from linkcalc.mechanics.pipeline import Solved, solve_at
 from linkcalc.mechanics.sampled import Peaks, Roots, Samples
-from linkcalc.parts.pose import Array
+from linkcalc.parts.pose import Array, Numbers
 
 
 @dataclass(frozen=True)
@@ -125,7 +124,7 @@ class Extremes:
             return {}
         signs = np.ones(len(self._case))
 
-        def f(x: Array, k: NDArray[np.intp]) -> Array:
+        def f(x: Array, k: Numbers) -> Array:
             y = self._curves.at(self._names, x)[self._which[k], self._case[k], np.arange(x.size)]
             signs[k] = np.where(y < 0, -1.0, 1.0)
             return self._seen(y, k)
@@ -173,13 +172,13 @@ class Zeros:
     def found(self) -> list[tuple[str, int, float]]:
         """(name, case, drive) of each, exactly."""
 
-        def f(x: Array, k: NDArray[np.intp]) -> Array:
+        def f(x: Array, k: Numbers) -> Array:
             return self._curves.at(self._names, x)[self._rows[k], self._cases[k], np.arange(x.size)]
 
         cases = [int(self._cases[k]) for k in self._roots.curve]
         return list(zip(self.names(), cases, self._roots.confirmed(f).tolist(), strict=True))
 
 
-def _numbered(names: Sequence[str]) -> tuple[list[str], NDArray[np.intp]]:
+def _numbered(names: Sequence[str]) -> tuple[list[str], Numbers]:
     unique = list(dict.fromkeys(names))
     return unique, np.array([unique.index(n) for n in names], np.intp)

@@ -6,14 +6,13 @@ from collections.abc import Mapping, Sequence
 
 import numpy as np
 
-from linkcalc.design.answer import Array, Bearing, Checks, StrokeAnswer
+from linkcalc.design.answer import Bearing, Checks, StrokeAnswer
 from linkcalc.design.caveats import caveats
 from linkcalc.design.curves import Curves
 from linkcalc.design.events import events
 from linkcalc.design.reach import located
 from linkcalc.design.survey import Shown, Survey, bounded
 from linkcalc.design.verdicts import verdicts
-from linkcalc.mechanics.copies import solve_copies
 from linkcalc.mechanics.motion import alone
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.pipeline import Solved, solve_at, solve_drawn, solve_stroke
@@ -22,7 +21,7 @@ from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.select import only_case
 from linkcalc.model.sketch import Drawing, drawn
-from linkcalc.parts.pose import Value
+from linkcalc.parts.pose import Array, Value
 
 
 def stroke(
@@ -67,6 +66,8 @@ def stroke(
 
 
 def _copies(mechanism: Mechanism, sizes: Mapping[str, Array], path: Path | None, drive: Array) -> tuple[Ready, Shown]:
+    from linkcalc.mechanics.copies import solve_copies  # one mechanism alone does not need it
+
     drawing = Drawing(mechanism, {k: np.reshape(v, (1, -1, 1)) for k, v in sizes.items()})
     ready = prepare(drawing)
     solved = solve_drawn(ready) if path is None else solve_copies(ready, path, drive[0, 0])

@@ -13,14 +13,13 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.motion import Closed, fastest
 from linkcalc.mechanics.pushing import Column, Pushing, column, strength
 from linkcalc.mechanics.state import Status
-from linkcalc.parts.pose import Array, Value
+from linkcalc.parts.pose import Array, Codes, Mask, Value
 
 DEAD = 1e-9  # speed of the effort, over the fastest in the mechanism, below which no answer is given
 
@@ -45,7 +44,7 @@ class Balance:
     multipliers: list[Value]
     unbalance: Array
     disagreement: Array
-    status: NDArray[np.int8]
+    status: Codes
 
     @property
     def force_ratio(self) -> Value:
@@ -71,7 +70,7 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
     effort: Value = np.nan
     load: Value = np.nan
     tare: Value = np.nan
-    dead: NDArray[np.bool_] | None = None
+    dead: Mask | None = None
     with np.errstate(all="ignore"):
         if pushing.load and not pushing.load_asked:
             load = strength(pushing.load, at)
@@ -110,7 +109,7 @@ def _power(speed: Sequence[Value], push: Column) -> Value:
 _UNCHECKED = np.full((1, 1, 1), np.nan)
 
 
-def _dead(chain: Chain, speed: Sequence[Value], push: Column, power: Value) -> NDArray[np.bool_] | None:
+def _dead(chain: Chain, speed: Sequence[Value], push: Column, power: Value) -> Mask | None:
     """Where an effort does no work though the mechanism moves: nothing finite answers there. None: nowhere."""
     # one bound for the whole batch settles nearly every batch, and costs no temporary arrays
     top = max((t * size for t, size in zip(tops(speed), chain.sizes, strict=True)), default=0.0)
@@ -170,9 +169,7 @@ def _checks(
     return unbalance, np.asarray(np.abs(negative[-1]) / work, float)
 
 
-def _status(
-    closed: Closed, multipliers: Sequence[Value], dead: NDArray[np.bool_] | None, cases: int
-) -> NDArray[np.int8]:
+def _status(closed: Closed, multipliers: Sequence[Value], dead: Mask | None, cases: int) -> Codes:
     # cases that turn out alike are several all the same: who asks for the second must find it
     shape = np.broadcast_shapes((cases, 1, 1), closed.fine.shape, *{np.shape(m) for m in multipliers})
     status = np.zeros(shape, np.int8)

@@ -10,12 +10,11 @@ from collections.abc import Sequence
 from typing import Protocol
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.eliminate import Elimination, Factors
 from linkcalc.parts.contract import TURN, Drive, Joint, Row
-from linkcalc.parts.pose import Array, Poses, Value
+from linkcalc.parts.pose import Array, Mask, Poses, Value
 
 
 class Holder(Protocol):
@@ -84,7 +83,7 @@ class Chain:
         self.places = list(at)
         self._gather = list(at.values())
 
-    def worst(self, gaps: Sequence[Value], live: NDArray[np.bool_] | None = None) -> float:
+    def worst(self, gaps: Sequence[Value], live: Mask | None = None) -> float:
         """Largest gap of a batch over the size of the mechanism; inf if one is not a number."""
         if live is not None:
             each = self.worst_each(gaps)

@@ -11,13 +11,11 @@ from functools import cached_property
 from typing import Any, Protocol
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.mechanics.batch import lows
 from linkcalc.mechanics.plan import NoPlan, Plan, signature
-from linkcalc.parts.pose import Array, Value
+from linkcalc.parts.pose import Array, Mask, Numbers, Value
 
-Mask = NDArray[np.bool_]
 SMALL = 48  # rows up to which a single matrix goes to LAPACK
 _MOST = 64  # plans that are kept
 _KEPT: dict[Any, Plan] = {}
@@ -68,9 +66,7 @@ class Elimination:
             del _KEPT[next(iter(_KEPT))]
         return plan
 
-    def _replay(
-        self, plan: Plan, entries: Sequence[Value]
-    ) -> tuple[list[Value], list[Value], NDArray[np.bool_] | None]:
+    def _replay(self, plan: Plan, entries: Sequence[Value]) -> tuple[list[Value], list[Value], Mask | None]:
         """Factors, the pivots that vary, and where one of them is weak (None: nowhere)."""
         with np.errstate(all="ignore"):
             factors, pivots = plan.factor(entries)
@@ -81,7 +77,7 @@ class Elimination:
                 weak = bad if weak is None else weak | bad
         return factors, pivots, weak
 
-    def dense(self, entries: Sequence[Value], where: tuple[NDArray[np.intp], ...], shape: tuple[int, ...]) -> Array:
+    def dense(self, entries: Sequence[Value], where: tuple[Numbers, ...], shape: tuple[int, ...]) -> Array:
         """(picked, size, size) matrices of some entries of the batch."""
         out = np.zeros((where[0].size, self.size, self.size))
         for (i, j), e in zip(self.places, entries, strict=True):
@@ -96,7 +92,7 @@ class Factors(Protocol):
     """
 
     @property
-    def negative(self) -> NDArray[np.bool_]: ...
+    def negative(self) -> Mask: ...
 
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]: ...
 
@@ -111,7 +107,7 @@ class Single:
         self._scaled = matrix * owner.scale
 
     @cached_property
-    def negative(self) -> NDArray[np.bool_]:
+    def negative(self) -> Mask:
         return np.full((1, 1, 1), np.linalg.slogdet(self._scaled)[0] < 0)
 
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]:
@@ -137,16 +133,16 @@ class Factored:
         weak: Mask | None,
     ):
         self._owner, self._plan, self._factors, self._pivots = owner, plan, factors, pivots
-        self._where: tuple[NDArray[np.intp], ...] = ()
+        self._where: tuple[Numbers, ...] = ()
         if weak is not None:
             self._shape = weak.shape
             self._where = np.nonzero(weak)
             self._matrices = owner.dense(entries, self._where, self._shape)
 
     @cached_property
-    def negative(self) -> NDArray[np.bool_]:
+    def negative(self) -> Mask:
         """(1, variant, pose) True where the determinant is below zero."""
-        negative: NDArray[np.bool_] = np.full((1, 1, 1), self._plan.sign < 0)
+        negative: Mask = np.full((1, 1, 1), self._plan.sign < 0)
         for pivot in self._pivots:
             negative = negative ^ np.less(pivot, 0.0)
         if self._where:
@@ -195,7 +191,7 @@ def _solve_each(a: Array, b: Array) -> Array:
         return out
 
 
-def _negative_determinant(a: Array) -> NDArray[np.bool_]:
+def _negative_determinant(a: Array) -> Mask:
     finite = np.isfinite(a).all(axis=(1, 2))
     sign = np.zeros(len(a))
     sign[finite] = np.linalg.slogdet(a[finite])[0]

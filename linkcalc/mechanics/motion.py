@@ -13,13 +13,12 @@ from dataclasses import dataclass
 from typing import Protocol
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.mechanics.batch import SHORT
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.eliminate import Factors
 from linkcalc.parts.contract import Drive
-from linkcalc.parts.pose import Array, Poses, Value
+from linkcalc.parts.pose import Array, Mask, Poses, Value
 
 CLOSED = 1e-12  # largest gap of a closed pose, over the size of the mechanism
 _AIM = 2e-15  # no use in iterating below this
@@ -50,7 +49,7 @@ class Closed:
 
     at: Poses
     entries: list[Value]
-    fine: NDArray[np.bool_]
+    fine: Mask
     worst: float
     factored: Factors
     speed: list[Value]
@@ -64,7 +63,7 @@ def close(
     steps: int = _STEPS,
     sure: int = 0,
     within: float = CLOSED,
-    live: NDArray[np.bool_] | None = None,
+    live: Mask | None = None,
 ) -> Closed:
     """Newton from a guess. Entries that do not arrive are told by ``fine``. Raises NoPlan where all are singular.
 

@@ -10,17 +10,15 @@ from __future__ import annotations
 from collections.abc import Callable
 
 import numpy as np
-from numpy.polynomial import chebyshev
-from numpy.typing import NDArray
 
-from linkcalc.parts.pose import Array
+from linkcalc.parts.pose import Array, Mask, Numbers
 
-Curve = Callable[[Array, NDArray[np.intp]], Array]
+Curve = Callable[[Array, Numbers], Array]
 """f(where, which) -> values: at each place the curve of that number."""
 
 _NODES = np.cos(np.pi * np.arange(7) / 6)[::-1]  # -1 .. 1
-_TO_SERIES = np.linalg.inv(chebyshev.chebvander(_NODES, 6))
-_TO_POWERS = np.array([np.pad(chebyshev.cheb2poly(np.eye(7)[k]), (0, 6 - k)) for k in range(7)]).T
+_TO_SERIES = np.linalg.inv(np.cos(np.arange(7) * np.arccos(_NODES)[:, None]))  # Chebyshev series through the nodes
+_TO_POWERS = np.linalg.inv(np.vander(_NODES, increasing=True))  # powers of the polynomial through the nodes
 _POWERS = np.arange(1.0, 7.0)[:, None]
 _FINE = np.linspace(-1, 1, 97)
 _FINE_POWERS = np.vander(_FINE, 7, increasing=True).T
@@ -109,13 +107,13 @@ def peaks(f: Curve, low: Array, high: Array, tolerance: float = 1e-9) -> tuple[A
     return place, value
 
 
-def _summit(y: Array) -> tuple[Array, NDArray[np.bool_]]:
+def _summit(y: Array) -> tuple[Array, Mask]:
     """Peak of the polynomial through the nodes, on -1..1, and whether the polynomial is to be believed."""
     with np.errstate(all="ignore"):
         series = y @ _TO_SERIES.T
         spread = np.max(np.abs(series[:, 1:]), axis=1)
         smooth = np.isfinite(spread) & (np.abs(series[:, -2:]).max(axis=1) <= 0.02 * spread)
-    power = _TO_POWERS @ np.where(np.isfinite(series), series, 0.0).T
+    power = _TO_POWERS @ np.where(np.isfinite(series).all(axis=1)[:, None], y, 0.0).T
     return summit_of(power, np.full(len(y), -1.0), np.full(len(y), 1.0)), smooth
 
 

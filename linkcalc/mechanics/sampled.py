@@ -9,10 +9,9 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 import numpy as np
-from numpy.typing import NDArray
 
 from linkcalc.mechanics.refine import Curve, horner, peaks, roots, summit_of
-from linkcalc.parts.pose import Array
+from linkcalc.parts.pose import Array, Numbers
 
 _WIDE = 7
 _EVEN = np.linspace(-1, 1, _WIDE)
@@ -68,7 +67,7 @@ class Peaks:
         )
         self._foretold = horner(t, power)
 
-    def confirmed(self, f: Curve, only: NDArray[np.intp]) -> tuple[Array, Array]:
+    def confirmed(self, f: Curve, only: Numbers) -> tuple[Array, Array]:
         """Places and values, both (only), of some of the curves; they can be had anywhere."""
         where, count = self._samples.where, self._samples.where.size
         top, place, values = self._top[only], self.place[only], self._samples.values[only]
@@ -152,7 +151,7 @@ class Roots:
             better[doubt] = self._bracketed(f, doubt)
         return better
 
-    def _bracketed(self, f: Curve, k: NDArray[np.intp]) -> Array:
+    def _bracketed(self, f: Curve, k: Numbers) -> Array:
         curve, low, high = self.curve[k], self._low[k], self._high[k]
         where = self._samples.where
         return roots(
@@ -160,7 +159,7 @@ class Roots:
         )
 
 
-def _polynomial(samples: Samples, curve: NDArray[np.intp], first: NDArray[np.intp]) -> tuple[NDArray[np.intp], Array]:
+def _polynomial(samples: Samples, curve: Numbers, first: Numbers) -> tuple[Numbers, Array]:
     """First sample of each window of seven, and the polynomial through it, (powers, windows), on -1..1."""
     first = np.minimum(np.maximum(first, 0), samples.where.size - _WIDE)
     window = samples.values[curve[:, None], first[:, None] + np.arange(_WIDE)]
@@ -172,7 +171,7 @@ def sampled_peaks(f: Curve, samples: Samples) -> tuple[Array, Array]:
     return Peaks(samples).confirmed(f, np.arange(len(samples.values)))
 
 
-def sampled_roots(f: Curve, samples: Samples) -> tuple[Array, NDArray[np.intp]]:
+def sampled_roots(f: Curve, samples: Samples) -> tuple[Array, Numbers]:
     """All passages through zero between samples: (places, number of the curve), in the order of the curves."""
     found = Roots(samples)
     return found.confirmed(f), found.curve

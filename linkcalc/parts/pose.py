@@ -9,12 +9,20 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
 import numpy as np
-from numpy.typing import NDArray
 
-Array = NDArray[np.float64]
+if TYPE_CHECKING:
+    from numpy.typing import NDArray
+
+    Array = NDArray[np.float64]
+    Mask = NDArray[np.bool_]
+    Numbers = NDArray[np.intp]
+    Codes = NDArray[np.int8]
+else:  # numpy.typing takes longer to load than a stroke to solve
+    Array = Mask = Numbers = Codes = np.ndarray
+
 Value = float | Array
 X, Y, TURN = 0, 1, 2
 

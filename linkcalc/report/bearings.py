@@ -4,8 +4,9 @@ from __future__ import annotations
 
 import numpy as np
 
-from linkcalc.design.answer import Array, StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.sketch import drawn
+from linkcalc.parts.pose import Array
 
 # below this part of the largest force a direction is that of rounding, and there is none
 _NOTHING = 1e-9

@@ -7,8 +7,9 @@ from dataclasses import replace
 
 import numpy as np
 
-from linkcalc.design.answer import Array, StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer
 from linkcalc.faults import fault
+from linkcalc.parts.pose import Array
 from linkcalc.report.blocks import Axis, Chart, Curve, Flag, Panel
 from linkcalc.report.edge import Edge
 from linkcalc.report.numbers import plain

@@ -6,8 +6,9 @@ import math
 
 import numpy as np
 
-from linkcalc.design.answer import Array, StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.units import from_si
+from linkcalc.parts.pose import Array
 from linkcalc.report.numbers import number, plain
 
 # what rounding leaves of an exact nothing, as a part of the largest of its kind

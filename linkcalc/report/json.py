@@ -8,9 +8,10 @@ from typing import Any
 
 import numpy as np
 
-from linkcalc.design.answer import SCHEMA, Array, StrokeAnswer, quantities
+from linkcalc.design.answer import SCHEMA, StrokeAnswer, quantities
 from linkcalc.mechanics.state import Status
 from linkcalc.model.sketch import drawn
+from linkcalc.parts.pose import Array
 from linkcalc.report.bearings import direction, own_direction, resultant
 from linkcalc.report.edge import Edge
 

@@ -9,9 +9,9 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 
 import numpy as np
-from numpy.typing import NDArray
 
-Array = NDArray[np.float64]
+from linkcalc.parts.pose import Array
+
 _DIRECTIONS = 24
 _RINGS = (1.0, 1.6, 2.4, 3.6, 5.2, 7.5, 10.5, 15.0, 21.0)
 _GAP = 1.5

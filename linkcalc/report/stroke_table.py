@@ -4,8 +4,9 @@ from __future__ import annotations
 
 import numpy as np
 
-from linkcalc.design.answer import Array, StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer
 from linkcalc.mechanics.state import Status
+from linkcalc.parts.pose import Array
 from linkcalc.report.bearings import direction, own_direction, resultant
 from linkcalc.report.blocks import Cell, Column, Table
 from linkcalc.report.edge import Edge

@@ -6,7 +6,8 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from linkcalc.design.answer import Array, StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer
+from linkcalc.parts.pose import Array
 
 
 @dataclass(frozen=True)

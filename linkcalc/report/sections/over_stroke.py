@@ -4,8 +4,9 @@ from __future__ import annotations
 
 import numpy as np
 
-from linkcalc.design.answer import Array, StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer
 from linkcalc.mechanics.state import Status
+from linkcalc.parts.pose import Array
 from linkcalc.report.blocks import Block, Cell, Column, Note, Table
 from linkcalc.report.edge import Edge
 from linkcalc.report.numbers import places_for
@@ -37,11 +38,10 @@ def over_stroke(answer: StrokeAnswer, *, all_joints: bool = False) -> list[Block
 
 def _failed(answer: StrokeAnswer) -> list[Block]:
     """Why there are gaps: no entry goes missing without its reason."""
-    codes, counts = np.unique(answer.status, return_counts=True)
-    total = answer.status.size
+    codes = answer.status.ravel().tolist()
     return [
-        Note(f"no answer at {n} of {total} poses: {Status(int(code)).text}", "Gaps")
-        for code, n in zip(codes, counts, strict=True)
+        Note(f"no answer at {codes.count(code)} of {len(codes)} poses: {Status(code).text}", "Gaps")
+        for code in sorted(set(codes))
         if code != Status.FINE
     ]
 
