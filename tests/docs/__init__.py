@@ -1,0 +1,1 @@
+"""The pages of the documentation: their commands run, excerpts are what is printed, links lead somewhere."""
