@@ -122,6 +122,8 @@ class StrokeAnswer:
     drive_name: str  # "turn of handle", "travel of ram"; "" without a stroke
     bearings: tuple[Bearing, ...]
     two_force: tuple[str, ...]  # names of the two-force members, in the order of `axial`
+    status: Codes  # (case, variant, pose) mechanics.state.Status
+    checks: Checks
     drive: Array = quantity("drive", axes=("one", "variant", "pose"), text="stepped coordinate")
     effort: Array = quantity("effort", axes=BATCH, text="effort")
     load: Array = quantity("load", axes=BATCH, text="load")
@@ -134,8 +136,6 @@ class StrokeAnswer:
     x: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="x of the member's first point")
     y: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="y of the member's first point")
     turn: Array = quantity("angle", axes=("member", "one", "variant", "pose"), text="turn from the drawing pose")
-    status: Codes = field()
-    checks: Checks = field()
     events: tuple[Event, ...] = ()
     verdicts: tuple[Verdict, ...] = ()
     caveats: tuple[Caveat, ...] = ()

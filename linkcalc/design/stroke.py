@@ -79,7 +79,8 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
     shape = b.status.shape
     still = (1, *shape[1:])
     at = solved.closed.at
-    drawn = alone(ready.start.at)
+    nominal = survey.ready
+    drawn = alone(nominal.start.at)
     kinds = {}
     if ready.steps and ready.chain.coordinate is not None:
         kinds["drive"] = ready.chain.coordinate.kind
@@ -114,7 +115,8 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         events=found,
         verdicts=judged,
         caveats=warned,
-        marks=tuple(j.mark(drawn) for j in ready.chain.joints) + tuple(a.pusher.mark(drawn) for a in p.all),
+        marks=tuple(j.mark(drawn) for j in nominal.chain.joints)
+        + tuple(a.pusher.mark(drawn) for a in nominal.pushing.all),
     )
 
 

@@ -84,6 +84,10 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             dead = _dead(chain, speed, effort_unit, effort_speed)
         if dead is not None and dead.any():
             effort, load, tare = (np.where(dead, np.nan, v) for v in (effort, load, tare))
+        lost = _lost(closed)
+        if lost is not None:
+            told = (effort, load, tare, effort_speed, load_speed)
+            effort, load, tare, effort_speed, load_speed = (np.where(lost, np.nan, v) for v in told)
         total = _sum(
             rest, (load, load_unit) if pushing.load else None, (effort, effort_unit) if pushing.effort else None
         )
@@ -91,9 +95,17 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
         unbalance = disagreement = _UNCHECKED
         if checked:
             unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
-    multipliers = [-v for v in negative]
+    multipliers = [-v if lost is None else np.where(lost, np.nan, -v) for v in negative]
     status = _status(closed, multipliers, dead, len(pushing.cases))
     return Balance(effort, load, tare, effort_speed, load_speed, multipliers, unbalance, disagreement, status)
+
+
+def _lost(closed: Closed) -> Mask | None:
+    """Where there is no pose to speak of, or one that the joints do not hold: nothing is told. None: nowhere."""
+    lost = closed.factored.singular
+    if closed.fine.all():
+        return lost
+    return ~closed.fine if lost is None else lost | ~closed.fine
 
 
 def _power(speed: Sequence[Value], push: Column) -> Value:

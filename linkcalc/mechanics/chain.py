@@ -20,7 +20,8 @@ from linkcalc.parts.pose import Array, Mask, Poses, Value
 class Holder(Protocol):
     """What can be stepped or held: a coordinate."""
 
-    kind: str
+    @property
+    def kind(self) -> str: ...
 
     def value(self, at: Poses) -> Value: ...
     def hold(self, target: Value) -> Drive: ...

@@ -18,7 +18,7 @@ from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.pipeline import Solved
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.state import Status
-from linkcalc.parts.pose import Array, Poses, Value
+from linkcalc.parts.pose import Array, Mask, Poses, Value
 
 
 def solve_copies(ready: Ready, path: Path, drive: Array) -> Solved:
@@ -72,15 +72,15 @@ def _targets(path: Path, drawn: Array, drive: Array) -> Iterator[tuple[Value, bo
         yield float(b), True
 
 
-def _kept(path: Path, there: Closed, branch: Array, live: Array) -> Array:
+def _kept(path: Path, there: Closed, branch: Mask, live: Mask) -> Mask:
     """Copies that are still assembled as they were drawn."""
     if path.passed:
         return live
-    same: Array = there.factored.negative == branch
+    same: Mask = there.factored.negative == branch
     return same
 
 
-def _told(solved: Balance, live: Array, kept: Array) -> Balance:
+def _told(solved: Balance, live: Mask, kept: Mask) -> Balance:
     """Failed copies by NaN and status."""
     good = live & kept
     if good.all():
@@ -121,7 +121,11 @@ def _joined(poses: list[Solved]) -> Solved:
     fine = np.concatenate([p.closed.fine for p in poses], axis=2)
     whole = Closed(at, [], fine, max(p.closed.worst for p in poses), closed.factored, speed)
     told = Balance(
-        *(join(lambda p, n=n: getattr(p.balance, n)) for n in ("effort", "load", "tare", "effort_speed", "load_speed")),
+        effort=join(lambda p: p.balance.effort),
+        load=join(lambda p: p.balance.load),
+        tare=join(lambda p: p.balance.tare),
+        effort_speed=join(lambda p: p.balance.effort_speed),
+        load_speed=join(lambda p: p.balance.load_speed),
         multipliers=[join(lambda p, k=k: p.balance.multipliers[k]) for k in range(len(first.multipliers))],
         unbalance=np.asarray(join(lambda p: p.balance.unbalance)),
         disagreement=np.asarray(join(lambda p: p.balance.disagreement)),

@@ -7,6 +7,7 @@ If they become many, the order is planned anew from the batch at hand.
 from __future__ import annotations
 
 from collections.abc import Sequence
+from contextlib import suppress
 from functools import cached_property
 from typing import Any, Protocol
 
@@ -20,6 +21,8 @@ SMALL = 48  # rows up to which a single matrix goes to LAPACK
 _MOST = 64  # plans that are kept
 _KEPT: dict[Any, Plan] = {}
 """Plans made before, the latest last: a search asks of the same mechanism again and again."""
+_SINGULAR = 1e-7  # smallest over largest singular value: a pose closed to rounding is known to its square root only
+_BESIDE = (0.5, 0.2, 0.8)  # of the batch: where a plan is made from
 _MANY = 0.05  # part of a batch with weak pivots that calls for a new plan
 
 
@@ -58,13 +61,21 @@ class Elimination:
         return Factored(self, plan, factors, pivots, entries, weak)
 
     def _plan(self, entries: Sequence[Value], key: tuple[float | None, ...]) -> Plan:
-        plan = self._plans[key] = Plan(self.size, self.places, entries, self.row_size, self.column_size)
+        plan = self._plans[key] = self._made(entries)
         whole = (self._same, key)
         _KEPT.pop(whole, None)
         _KEPT[whole] = plan
         if len(_KEPT) > _MOST:
             del _KEPT[next(iter(_KEPT))]
         return plan
+
+    def _made(self, entries: Sequence[Value]) -> Plan:
+        """A plan from the middle of the batch, or from a pose beside it if the middle one is singular."""
+        *beside, last = _BESIDE
+        for part in beside:
+            with suppress(NoPlan):
+                return Plan(self.size, self.places, entries, self.row_size, self.column_size, part=part)
+        return Plan(self.size, self.places, entries, self.row_size, self.column_size, part=last)
 
     def _replay(self, plan: Plan, entries: Sequence[Value]) -> tuple[list[Value], list[Value], Mask | None]:
         """Factors, the pivots that vary, and where one of them is weak (None: nowhere)."""
@@ -75,6 +86,8 @@ class Elimination:
             if not low >= floor:
                 bad = ~(np.abs(pivot) >= floor)
                 weak = bad if weak is None else weak | bad
+        if weak is not None:
+            weak = np.broadcast_to(weak, np.broadcast_shapes(weak.shape, *{np.shape(e) for e in entries}))
         return factors, pivots, weak
 
     def dense(self, entries: Sequence[Value], where: tuple[Numbers, ...], shape: tuple[int, ...]) -> Array:
@@ -89,16 +102,22 @@ class Factors(Protocol):
     """What a factored batch can do.
 
     negative  (1, variant, pose) True where the determinant is below zero: it changes on another branch
+    singular  (1, variant, pose) True where rounding decides what is solved; None: nowhere
     """
 
     @property
     def negative(self) -> Mask: ...
+
+    @property
+    def singular(self) -> Mask | None: ...
 
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]: ...
 
 
 class Single:
     """One matrix of plain floats, solved densely: for a small one this is quicker than any plan."""
+
+    singular = None
 
     def __init__(self, owner: Elimination, entries: Sequence[Value]):
         matrix = np.zeros((owner.size, owner.size))
@@ -150,6 +169,17 @@ class Factored:
             negative[self._where] = _negative_determinant(self._matrices)
         return negative
 
+    @cached_property
+    def singular(self) -> Mask | None:
+        """(1, variant, pose) True where rounding decides what is solved; None: nowhere."""
+        if not self._where:
+            return None
+        finite = np.isfinite(self._matrices).all(axis=(1, 2))
+        sizes = np.linalg.svd(self._matrices[finite] * self._owner.scale, compute_uv=False)
+        out: Mask = np.zeros(self._shape, bool)
+        out[tuple(k[finite] for k in self._where)] = sizes[:, -1] <= _SINGULAR * sizes[:, 0]
+        return out if out.any() else None
+
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]:
         """x of A x = b, or of its transpose.
 
@@ -161,7 +191,7 @@ class Factored:
 
     def _mended(self, x: list[Value], rhs: Sequence[Value], transposed: bool) -> list[Value]:
         shape = np.broadcast_shapes(self._shape, *(np.shape(b) for b in rhs))
-        where = (slice(None), *self._where[1:])
+        where: Any = (slice(None), *self._where[1:])
         picked = [np.broadcast_to(b, shape)[where] for b in rhs]  # each (case, picked)
         b = np.moveaxis(np.stack(picked), 2, 0)  # (picked, size, case)
         a = np.swapaxes(self._matrices, 1, 2) if transposed else self._matrices
@@ -180,7 +210,7 @@ class Factored:
 
 def _solve_each(a: Array, b: Array) -> Array:
     try:
-        return np.linalg.solve(a, b)
+        return np.asarray(np.linalg.solve(a, b), np.float64)
     except np.linalg.LinAlgError:
         out = np.full(b.shape, np.nan)
         for k in range(len(a)):

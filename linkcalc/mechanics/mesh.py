@@ -36,12 +36,13 @@ class Mesh:
         b = np.minimum(a + 1, last)
         span = self.drive[b] - self.drive[a]
         t = (drive - self.drive[a]) / np.where(span == 0.0, 1.0, span)
-        c, s = turned_between(
+        turned = turned_between(
             cubic(t, span),
             (self._c[:, a], self._s[:, a], self._turning[:, a]),
             (self._c[:, b], self._s[:, b], self._turning[:, b]),
         )
-        x, y, c, s = (list(v.reshape(len(v), 1, 1, -1)) for v in (self._x[:, b], self._y[:, b], c, s))
+        foretold = (self._x[:, b], self._y[:, b], *map(np.asarray, turned))
+        x, y, c, s = (list(v.reshape(len(v), 1, 1, -1)) for v in foretold)
         return Poses([0.0, *x], [0.0, *y], [1.0, *c], [0.0, *s], self._down, self._field)
 
 

@@ -126,9 +126,9 @@ def _moved_short(at: Poses, step: Sequence[Value]) -> Poses:
         for k, value in enumerate(values[1:]):
             row[k] = value
     c, s, dt = stacked[2], stacked[3], moves[2::3]
-    c, s = _normed(c + s * dt, s - c * dt)
+    turned = [np.asarray(v) for v in _normed(c + s * dt, s - c * dt)]
     x, y = stacked[0] - moves[0::3], stacked[1] - moves[1::3]
-    return Poses([at.x[0], *x], [at.y[0], *y], [at.c[0], *c], [at.s[0], *s], at.down, at.field)
+    return Poses([at.x[0], *x], [at.y[0], *y], [at.c[0], *turned[0]], [at.s[0], *turned[1]], at.down, at.field)
 
 
 def between(a: Known, b: Known, t: Value, span: Value) -> Poses:

@@ -143,8 +143,9 @@ def _to(ready: Ready, start: Node, end: Size, begin: float, far: float, key: str
         last = walk(ready.chain, nodes[-1] if nodes else start, short)
         return Walk((*nodes[:-1], *last.nodes) if nodes else last.nodes, "limit", way.limit, way.passed)
     if way.stopped:
-        last = way.nodes[-1]
-        raise OutOfReach(key, target, last.drive, way.limit, _in_line(ready, last) if way.stopped == "limit" else "")
+        far_node = way.nodes[-1]
+        why = _in_line(ready, far_node) if way.stopped == "limit" else ""
+        raise OutOfReach(key, target, far_node.drive, way.limit, why)
     return way
 
 

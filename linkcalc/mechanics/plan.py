@@ -17,6 +17,7 @@ from linkcalc.parts.pose import Array, Value
 
 _THRESHOLD = 0.1  # a pivot is at least this part of the largest of its row, in the pose of the plan
 _WEAK = 1e-4  # a pivot below this part of its row's size in the plan is left to LAPACK
+_FAINT = 1e-5  # the same against the row before the elimination, should the plan's own pose be nearly singular
 _NOTHING = 1e-9  # against the size of the mechanism: no pivot
 _LOOK = 4  # rows with the fewest entries that are looked at for each pivot
 
@@ -37,6 +38,7 @@ class Plan:
     places    (row, column) of each entry
     entries   values of the entries in some batch: floats stay constant, arrays are inputs of the tape
     row_size, column_size  what rows are multiplied and columns divided by, to compare lengths with angles
+    part      how far along the batch the pose stands that the plan is made from
     """
 
     def __init__(
@@ -46,22 +48,28 @@ class Plan:
         entries: Sequence[Value],
         row_size: Array,
         column_size: Array,
+        *,
+        part: float = 0.5,
     ):
         self.size = size
         self.key = signature(entries)
         self._inputs = [k for k, e in enumerate(entries) if not isinstance(e, float)]
-        self._order(places, entries, row_size, column_size)
+        self._order(places, _sample(entries, part), entries, row_size, column_size)
         self._solves: dict[tuple[bool, tuple[float | None, ...]], Tape] = {}
 
     def _order(
-        self, places: Sequence[tuple[int, int]], entries: Sequence[Value], row_size: Array, column_size: Array
+        self,
+        places: Sequence[tuple[int, int]],
+        sample: Sequence[float],
+        entries: Sequence[Value],
+        row_size: Array,
+        column_size: Array,
     ) -> None:
         tape = Tape(len(self._inputs))
         register = {k: r + 1 for r, k in enumerate(self._inputs)}
         rows: list[dict[int, Operand]] = [{} for _ in range(self.size)]
         sizes: list[dict[int, float]] = [{} for _ in range(self.size)]
         columns: list[set[int]] = [set() for _ in range(self.size)]
-        sample = _sample(entries)
         for k, (i, j) in enumerate(places):
             e = entries[k]
             operand: Operand = e if isinstance(e, float) else register[k]
@@ -73,6 +81,7 @@ class Plan:
             sizes[i][j] = sample[k] * float(row_size[i] / column_size[j])
             columns[j].add(i)
 
+        whole = [max(map(abs, row.values()), default=0.0) for row in sizes]
         self._pivots: list[tuple[int, int]] = []
         self._inverse: list[Operand] = []
         self._lower: list[list[tuple[int, Operand]]] = []
@@ -88,7 +97,7 @@ class Plan:
             pivot, size_pivot = row.pop(q), size_row.pop(q)
             scale = row_size[p] / column_size[q]
             largest = max(abs(size_pivot), *(abs(s) for s in size_row.values()), 0.0)
-            floors.append(_WEAK * largest / scale)
+            floors.append(max(_WEAK * largest, _FAINT * whole[p]) / scale)
             pivots.append(pivot)
             inverse = tape.over(1.0, pivot)
             lower: list[tuple[int, Operand]] = []
@@ -118,7 +127,7 @@ class Plan:
                 sign = -sign
         self.sign = sign
         factors = [o for o in self._factors() if not is_constant(o)]
-        self._kept = list(dict.fromkeys(abs(o) for o in factors))
+        self._kept = list(dict.fromkeys(abs(int(o)) for o in factors))
         self._tape = tape.finish([*self._kept, *watched])
         self._renumber({register: k + 1 for k, register in enumerate(self._kept)})
 
@@ -251,17 +260,24 @@ def signature(values: Sequence[Value]) -> tuple[float | None, ...]:
     return tuple([v if isinstance(v, float) else None for v in values])
 
 
-def _sample(entries: Sequence[Value]) -> list[float]:
-    """The entries of one pose out of the batch: the middle one, or the nearest to it where all are finite."""
+def _sample(entries: Sequence[Value], part: float) -> list[float]:
+    """The entries of one pose out of the batch: the one so far along it, or the nearest where all are finite."""
     arrays = [e for e in entries if not isinstance(e, float)]
     shape = np.broadcast_shapes(*(a.shape for a in arrays)) if arrays else (1,)
-    middle = int(np.prod(shape)) // 2
-    for k in range(middle, int(np.prod(shape))):
+    first = min(int(np.prod(shape) * part), int(np.prod(shape)) - 1)
+
+    def pose(k: int) -> list[float]:
         at = np.unravel_index(k, shape)
-        sample = [e if isinstance(e, float) else float(np.broadcast_to(e, shape)[at]) for e in entries]
-        if np.isfinite(sample).all():
-            return sample
-    return [1.0] * len(entries)
+        return [e if isinstance(e, float) else float(np.broadcast_to(e, shape)[at]) for e in entries]
+
+    sample = pose(first)
+    if np.isfinite(sample).all():
+        return sample
+    finite = np.ones(shape, bool)
+    for a in arrays:
+        finite &= np.isfinite(a)
+    sound = np.flatnonzero(finite)
+    return pose(int(sound[np.argmin(np.abs(sound - first))])) if sound.size else [1.0] * len(entries)
 
 
 def _parity(pivots: list[tuple[int, int]]) -> int:

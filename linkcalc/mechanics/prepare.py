@@ -14,7 +14,7 @@ from linkcalc.mechanics.limit import Place
 from linkcalc.mechanics.motion import Closed, alone, close
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.pushing import Pushing, pushing
-from linkcalc.model.sketch import Drawing
+from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.pose import Poses, Value
 
 
@@ -61,10 +61,12 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     if like is not None:
         chain.share_plans(like.chain)
     try:
-        if mechanism.stroke and chain.columns <= SMALL and _single(at):
-            at = alone(at)  # the walk takes one pose at a time
-        value = None if coordinate is None else coordinate.value(at)
-        start = close(chain, at, None if value is None else coordinate.hold(value))
+        if mechanism.stroke and chain.columns <= SMALL and drawing is drawn(mechanism):
+            at = alone(at)  # no copies: the walk takes one pose at a time
+        start = close(chain, at, None if coordinate is None else coordinate.hold(coordinate.value(at)))
+        singular = start.factored.singular
+        if singular is not None and singular.all() and freedom(chain, at).free != wanted:
+            raise NoPlan([])
     except NoPlan:
         found = freedom(chain, at)
         if found.free == wanted and mechanism.stroke:
@@ -90,10 +92,6 @@ def _drawn(drawing: Drawing, loads: Pushing) -> Poses:
         c.append(_shaped(1.0))
         s.append(_shaped(0.0))
     return Poses(x, y, c, s, loads.down, loads.field)
-
-
-def _single(at: Poses) -> bool:
-    return all(np.size(x) == 1 for x in (*at.x, *at.y))
 
 
 def _shaped(value: Value) -> Value:

@@ -76,8 +76,7 @@ def reactions(
                 on_pin.setdefault(name, []).append((size * fx, size * fy))
     for name, (member, joint) in hubs.items():
         x, y = at.spot(joint.site)
-        fx: Value = 0.0
-        fy: Value = 0.0
+        fx, fy = 0.0, 0.0
         for gx, gy in on_pin[name]:
             fx, fy = _sum(fx, gx), _sum(fy, gy)
         last = max(k for k, s in enumerate(sides) if s.joint == name)

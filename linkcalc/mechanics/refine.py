@@ -113,7 +113,7 @@ def _summit(y: Array) -> tuple[Array, Mask]:
         series = y @ _TO_SERIES.T
         spread = np.max(np.abs(series[:, 1:]), axis=1)
         smooth = np.isfinite(spread) & (np.abs(series[:, -2:]).max(axis=1) <= 0.02 * spread)
-    power = _TO_POWERS @ np.where(np.isfinite(series).all(axis=1)[:, None], y, 0.0).T
+    power = _TO_POWERS @ np.where(np.isfinite(spread)[:, None], y, 0.0).T
     return summit_of(power, np.full(len(y), -1.0), np.full(len(y), 1.0)), smooth
 
 

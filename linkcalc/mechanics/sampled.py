@@ -163,7 +163,7 @@ def _polynomial(samples: Samples, curve: Numbers, first: Numbers) -> tuple[Numbe
     """First sample of each window of seven, and the polynomial through it, (powers, windows), on -1..1."""
     first = np.minimum(np.maximum(first, 0), samples.where.size - _WIDE)
     window = samples.values[curve[:, None], first[:, None] + np.arange(_WIDE)]
-    return first, _TO_POWERS @ np.where(np.isfinite(window), window, 0.0).T
+    return first, np.asarray(_TO_POWERS @ np.where(np.isfinite(window), window, 0.0).T, np.float64)
 
 
 def sampled_peaks(f: Curve, samples: Samples) -> tuple[Array, Array]:

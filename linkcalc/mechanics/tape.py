@@ -40,18 +40,18 @@ class Tape:
         if isinstance(a, float):
             a, b = b, a
         if isinstance(b, float):
-            if isinstance(a, float):
-                return a * b
-            if b == 0.0:
-                return 0.0
-            if b == 1.0:
-                return a
-            if b == -1.0:
-                return -a
-            product = self._record(np.multiply, abs(a), self._constant(b))
-            return product if a > 0 else -product
+            return a * b if isinstance(a, float) else self._scaled(a, b)
+        assert not isinstance(a, float)
         sign = 1 if (a > 0) == (b > 0) else -1
         return sign * self._record(np.multiply, abs(a), abs(b))
+
+    def _scaled(self, a: int, factor: float) -> Operand:
+        if factor == 0.0:
+            return 0.0
+        if abs(factor) == 1.0:
+            return a if factor > 0 else -a
+        product = self._record(np.multiply, abs(a), self._constant(factor))
+        return product if a > 0 else -product
 
     def over(self, a: Operand, b: Operand) -> Operand:
         """a / b; a constant b is folded into a product."""

@@ -149,9 +149,10 @@ class Pusher(Protocol):
 
 
 class Drive(Protocol):
-    """A coordinate held at a target: one more constraint row."""
+    """A coordinate held at a target: one more constraint row; angular as for a joint's rows."""
 
-    angular: bool
+    @property
+    def angular(self) -> bool: ...
 
     def gap(self, at: Poses) -> Value: ...
     def slope(self, at: Poses) -> Row: ...

@@ -9,6 +9,7 @@ from typing import TYPE_CHECKING, Any
 
 import numpy as np
 
+from linkcalc.parts.pose import Array
 from linkcalc.report import labels, style
 
 if TYPE_CHECKING:
@@ -34,7 +35,7 @@ class Pen:
 
     def __init__(self, ax: Axes, point: float, centre: Spot):
         self.ax, self.point, self.centre = ax, point, centre
-        self._clear: list[labels.Array] = []
+        self._clear: list[Array] = []
         self._words: list[_Words] = []
 
     def away(self, spot: Spot) -> Spot:
@@ -110,7 +111,7 @@ class Pen:
         """Pixels of the figure in a point."""
         return float(self.ax.get_figure(root=True).dpi) / 72.0  # type: ignore[union-attr]
 
-    def _page(self, spots: Sequence[Spot]) -> labels.Array:
+    def _page(self, spots: Sequence[Spot]) -> Array:
         """(n, 2) places in points of the page."""
         return np.asarray(self.ax.transData.transform(np.asarray(spots, dtype=np.float64))) / self._pixel
 
