@@ -17,11 +17,12 @@ from linkcalc.mechanics.motion import alone
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.pipeline import Solved, solve_at, solve_drawn, solve_stroke
 from linkcalc.mechanics.prepare import Ready, prepare
+from linkcalc.mechanics.state import Status
 from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.select import only_case
 from linkcalc.model.sketch import Drawing, drawn
-from linkcalc.parts.pose import Array, Value
+from linkcalc.parts.pose import Array, Codes, Value
 
 
 def stroke(
@@ -107,9 +108,9 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         force=_stacked([f for s in shown.sides for f in (s.fx, s.fy)], shape).reshape(-1, 2, *shape),
         moment=_stacked([s.moment for s in shown.sides], shape),
         axial=_stacked(axial, shape),
-        x=_stacked(at.x, still),
-        y=_stacked(at.y, still),
-        turn=np.arctan2(_stacked(at.s, still), _stacked(at.c, still)),
+        x=_placed(_stacked(at.x, still), b.status),
+        y=_placed(_stacked(at.y, still), b.status),
+        turn=_placed(np.arctan2(_stacked(at.s, still), _stacked(at.c, still)), b.status),
         status=b.status,
         checks=checks,
         events=found,
@@ -138,6 +139,12 @@ def _checks(solved: Solved) -> Checks:
 
     b = solved.balance
     return Checks(solved.closed.worst, worst(b.unbalance), worst(b.disagreement))
+
+
+def _placed(values: Array, status: Codes) -> Array:
+    """Coordinates of members, not a number where there is no pose that could have some."""
+    missing = np.isin(status[:1], [Status.NOT_DRAWN, Status.OUT_OF_REACH, Status.BRANCH_LOST])
+    return np.where(missing, np.nan, values) if missing.any() else values
 
 
 def _stacked(values: Sequence[Value], shape: tuple[int, ...]) -> Array:

@@ -10,7 +10,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
@@ -48,8 +48,9 @@ class Balance:
 
     @property
     def force_ratio(self) -> Value:
+        """Load over effort; NaN in a case that has no load."""
         with np.errstate(all="ignore"):
-            return np.divide(self.load, self.effort)
+            return np.divide(np.where(np.equal(self.load, 0.0), np.nan, self.load), self.effort)
 
     @property
     def ideal_ratio(self) -> Value:
@@ -106,6 +107,16 @@ def _lost(closed: Closed) -> Mask | None:
     if closed.fine.all():
         return lost
     return ~closed.fine if lost is None else lost | ~closed.fine
+
+
+def failed(told: Balance, where: Mask, status: Status) -> Balance:
+    """The same with some entries failed: not a number, and a status that says why."""
+    shape = told.status.shape
+    names = ("effort", "load", "tare", "effort_speed", "load_speed")
+    masked = {name: np.where(where, np.nan, getattr(told, name)) for name in names}
+    multipliers: list[Value] = [np.where(where, np.nan, m) for m in told.multipliers]
+    codes = np.where(np.broadcast_to(where, shape), np.int8(status), told.status)
+    return replace(told, **masked, multipliers=multipliers, status=codes)
 
 
 def _power(speed: Sequence[Value], push: Column) -> Value:

@@ -7,12 +7,11 @@ status and does not hold up the others.
 from __future__ import annotations
 
 from collections.abc import Iterator
-from dataclasses import replace
 from itertools import pairwise
 
 import numpy as np
 
-from linkcalc.mechanics.balance import Balance, balance
+from linkcalc.mechanics.balance import Balance, balance, failed
 from linkcalc.mechanics.motion import Closed, along, between, close
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.pipeline import Solved
@@ -38,7 +37,8 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
     if coordinate.kind == "angle":
         drawn = drawn + 2 * np.pi * np.round((path.drawn - drawn) / (2 * np.pi))
     branch = here.factored.negative
-    live = np.broadcast_to(here.fine, here.fine.shape).copy()
+    live: Mask = here.fine
+    lost: Mask = np.zeros_like(live)
     last: Value = drawn
     for target, wanted in _targets(path, drawn, drive):
         step = target - last
@@ -49,12 +49,18 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
         if not there.fine.all():
             live = live & there.fine
         kept = _kept(path, there, branch, live)
+        if not kept.all():
+            lost, live = lost | (live & ~kept), live & kept
         span = step if isinstance(step, float) else 0.0
         before, here, last = here, there, target
         if wanted:
             solved = balance(ready.chain, there, ready.pushing, checked=checked)
-            yield Solved(np.full(there.fine.shape, target), there, _told(solved, live, kept))
-        live = live & kept
+            if not live.all():
+                solved = failed(solved, ~live, Status.OUT_OF_REACH)
+                solved = failed(solved, lost, Status.BRANCH_LOST)
+            if ready.undrawn is not None:
+                solved = failed(solved, ready.undrawn, Status.NOT_DRAWN)
+            yield Solved(np.full(there.fine.shape, target), there, solved)
 
 
 def _targets(path: Path, drawn: Array, drive: Array) -> Iterator[tuple[Value, bool]]:
@@ -78,29 +84,6 @@ def _kept(path: Path, there: Closed, branch: Mask, live: Mask) -> Mask:
         return live
     same: Mask = there.factored.negative == branch
     return same
-
-
-def _told(solved: Balance, live: Mask, kept: Mask) -> Balance:
-    """Failed copies by NaN and status."""
-    good = live & kept
-    if good.all():
-        return solved
-    shape = solved.status.shape
-    status = solved.status.copy()
-    status[np.broadcast_to(~kept, shape)] = Status.BRANCH_LOST
-    status[np.broadcast_to(~live, shape)] = Status.OUT_OF_REACH
-
-    def masked(value: Value) -> Value:
-        return np.where(good, value, np.nan)
-
-    return replace(
-        solved,
-        effort=masked(solved.effort),
-        load=masked(solved.load),
-        tare=masked(solved.tare),
-        multipliers=[masked(m) for m in solved.multipliers],
-        status=status,
-    )
 
 
 def _joined(poses: list[Solved]) -> Solved:

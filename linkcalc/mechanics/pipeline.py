@@ -6,12 +6,13 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from linkcalc.mechanics.balance import Balance, balance
+from linkcalc.mechanics.balance import Balance, balance, failed
 from linkcalc.mechanics.mesh import Mesh
 from linkcalc.mechanics.motion import Closed, close
 from linkcalc.mechanics.path import Path, lay_path
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.reactions import Side, reactions
+from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array
 
 
@@ -45,7 +46,10 @@ def solve_stroke(ready: Ready, poses: int) -> tuple[Solved, Path]:
 def solve_drawn(ready: Ready) -> Solved:
     """Statics in the drawing pose, of one mechanism or of many copies."""
     nothing = np.full(ready.start.fine.shape, np.nan)
-    return Solved(nothing, ready.start, balance(ready.chain, ready.start, ready.pushing))
+    solved = balance(ready.chain, ready.start, ready.pushing)
+    if ready.undrawn is not None:
+        solved = failed(solved, ready.undrawn, Status.NOT_DRAWN)
+    return Solved(nothing, ready.start, solved)
 
 
 def sides(ready: Ready, solved: Solved) -> list[Side]:

@@ -15,7 +15,7 @@ from linkcalc.mechanics.motion import Closed, alone, close
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.pushing import Pushing, pushing
 from linkcalc.model.sketch import Drawing, drawn
-from linkcalc.parts.pose import Poses, Value
+from linkcalc.parts.pose import Mask, Poses, Value
 
 
 @dataclass(frozen=True, eq=False)
@@ -26,6 +26,7 @@ class Ready:
     start     the drawing pose, closed; (1, variant, 1), or plain floats where a stroke is walked through from it
     pushing   loads of all cases
     steps     True if there is a stroke
+    undrawn   (1, variant, 1) True for copies of which some point cannot be drawn; None: all can
     """
 
     drawing: Drawing
@@ -33,6 +34,7 @@ class Ready:
     start: Closed
     pushing: Pushing
     steps: bool
+    undrawn: Mask | None = None
 
 
 def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
@@ -78,7 +80,13 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
         # that effort and load both have a size is a fault of the model, found before it comes here
         what = "nothing drives it: the model has no effort"
         raise Faults(Fault(("stroke",), what, "give it an [effort] without a size"))
-    return Ready(drawing, chain, start, loads, mechanism.stroke is not None)
+    return Ready(drawing, chain, start, loads, mechanism.stroke is not None, _undrawn(drawing))
+
+
+def _undrawn(drawing: Drawing) -> Mask | None:
+    missing = [np.isnan(v) for place in drawing.points.values() for v in place if not isinstance(v, float)]
+    undrawn = np.logical_or.reduce(np.broadcast_arrays(*missing)) if missing else np.zeros((1, 1, 1), bool)
+    return undrawn if undrawn.any() else None
 
 
 def _drawn(drawing: Drawing, loads: Pushing) -> Poses:
