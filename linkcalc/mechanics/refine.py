@@ -100,8 +100,11 @@ def peaks(f: Curve, low: Array, high: Array, tolerance: float = 1e-9) -> tuple[A
         )
         done = np.abs(high[k] - low[k]) <= tolerance * width[k]
         # the value cannot gain any more than rounding: the parabola's rise over the bracket is below it
-        flat = smooth & (np.ptp(y, axis=1) <= 1e-15 * np.abs(y[rows, top]))
-        live[k[done | flat]] = False
+        best = y[rows, top]
+        nothing = best == -np.inf
+        with np.errstate(invalid="ignore"):
+            flat = smooth & (best - y.min(axis=1) <= 1e-15 * np.abs(best))
+        live[k[done | flat | nothing]] = False
         if not live.any():
             break
     return place, value
