@@ -39,14 +39,14 @@ def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
             continue
         inside = [e.drive for e in events if e.kind == "dead point" and e.quantity == name]
         least = np.min(part, axis=(0, 1))
-        k = int(np.argmin(least))
         if inside:
             where = ", ".join(_drive(curves, d) for d in dict.fromkeys(inside))
             yield Caveat(name, f"dead point of the {name} at {where}: {texts[name]}")
-        elif least[k] < _AT or (least[k] < _NEAR and _ahead(least, k)):
-            place = f" at {_drive(curves, float(curves.drive[k]))}" if ready.steps else ""
-            much = "at" if least[k] < _AT else "close to"
-            yield Caveat(name, f"the pose{place} is {much} a dead point of the {name}: {texts[name]}")
+        for k in sorted({0, least.size - 1, int(np.argmin(least))}):
+            if least[k] < _AT or (least[k] < _NEAR and not inside and _ahead(least, k)):
+                place = f" at {_drive(curves, float(curves.drive[k]))}" if ready.steps else ""
+                much = "at" if least[k] < _AT else "close to"
+                yield Caveat(name, f"the pose{place} is {much} a dead point of the {name}: {texts[name]}")
 
 
 def _ahead(part: Array, k: int) -> bool:

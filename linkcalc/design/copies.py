@@ -20,7 +20,7 @@ from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.pose import Array, Codes
 from linkcalc.words import nearest
 
-BLOCK = 4096
+BLOCK = 8192
 """Copies that go through the stroke together: few enough for their arrays to stay in the processor's cache."""
 
 

@@ -61,15 +61,18 @@ def _worst(curves: Curves, requirement: Requirement, place: float | None) -> tup
         _inside(curves, requirement, drive)
         values = sign * curves.at([name], np.array([drive]))[0, :, 0]
         seen = np.abs(values) if size else values
-        k = int(np.argmax(seen) if upward else np.argmin(seen))
+        if np.isnan(seen).all():
+            return float("nan"), float(drive), ""
+        k = int(np.nanargmax(seen) if upward else np.nanargmin(seen))
         return float(seen[k]), float(drive), cases[k]
     sense = 1 if upward else -1
     found = curves.extremes([Wanted(name, c, sense * sign, size) for c in range(len(cases))])
     values = np.array([f.value for f in found])
     seen = np.abs(values) if size else sign * values
-    if np.isnan(seen).any():
+    if np.isnan(seen).all():
         return float("nan"), float("nan"), ""
-    k = int(np.argmax(seen) if upward else np.argmin(seen))
+    # a case without the load has no ratio, and is not judged by it
+    k = int(np.nanargmax(seen) if upward else np.nanargmin(seen))
     return float(seen[k]), found[k].drive, cases[k]
 
 

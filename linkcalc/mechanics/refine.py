@@ -81,6 +81,7 @@ def peaks(f: Curve, low: Array, high: Array, tolerance: float = 1e-9) -> tuple[A
         k = which[live]
         middle, half = (low[k] + high[k]) / 2, (high[k] - low[k]) / 2
         x = middle[:, None] + half[:, None] * _NODES
+        x[:, 0], x[:, -1] = low[k], high[k]  # without rounding: an end is told as it was given
         y = f(x.ravel(), np.repeat(k, _NODES.size)).reshape(x.shape)
         y = np.where(np.isfinite(y), y, -np.inf)
         top = np.argmax(y, axis=1)

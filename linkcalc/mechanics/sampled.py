@@ -47,46 +47,75 @@ class Peaks:
     def __init__(self, samples: Samples):
         self._samples = samples
         y = np.where(np.isfinite(samples.values), samples.values, -np.inf)
-        self._top = np.argmax(y, axis=1) if y.size else np.zeros(0, np.intp)
-        count = samples.where.size
-        self._low, self._high = np.maximum(self._top - 1, 0), np.minimum(self._top + 1, count - 1)
+        self._top = self._highest = np.argmax(y, axis=1) if y.size else np.zeros(0, np.intp)
         self.place = samples.where[self._top]
         self._foretold = samples.values[np.arange(len(self._top)), self._top]
-        if count >= _WIDE and len(self._top):
-            self._foretell()
+        if samples.where.size >= _WIDE and len(self._top):
+            self._choose(y)
 
-    def _foretell(self) -> None:
+    def _choose(self, y: Array) -> None:
+        """Of several humps the one that is foretold to be the highest, which need not have the highest sample."""
+        humps = np.isfinite(y)
+        humps[:, 1:] &= y[:, 1:] > y[:, :-1]
+        humps[:, :-1] &= y[:, :-1] >= y[:, 1:]
+        humps[np.arange(len(y)), self._highest] = True
+        curve, top = np.nonzero(humps)
+        place, foretold = self._foretell(curve, top)
+        best = np.lexsort((foretold, curve))[np.cumsum(humps.sum(axis=1)) - 1]
+        self._top, self.place, self._foretold = top[best], place[best], foretold[best]
+
+    def _foretell(self, curve: Numbers, top: Numbers) -> tuple[Array, Array]:
+        """Places and values of the summits beside some samples; where no number is near, of the samples."""
         samples, count = self._samples, self._samples.where.size
-        first, power = _polynomial(samples, np.arange(len(self._top)), self._top - _WIDE // 2)
-        t = summit_of(power, (self._low - first) / _HALF - 1, (self._high - first) / _HALF - 1)
+        low, high = self._beside(top)
+        first, power = _polynomial(samples, curve, top - _WIDE // 2)
+        t = summit_of(power, (low - first) / _HALF - 1, (high - first) / _HALF - 1)
         index = first + (t + 1) * _HALF
         # exactly the sample where it is the sample: the ends of the stroke are told as given
         nearest = np.minimum(np.maximum(np.rint(index).astype(int), 0), count - 1)
-        self.place = np.where(
+        place = np.where(
             np.abs(index - nearest) < 1e-12, samples.where[nearest], samples.where[0] + samples.step * index
         )
-        self._foretold = horner(t, power)
+        sound = np.isfinite(samples.values[curve, low] + samples.values[curve, high])
+        return place, np.where(sound, horner(t, power), samples.values[curve, top])
+
+    def _beside(self, top: Numbers) -> tuple[Numbers, Numbers]:
+        return np.maximum(top - 1, 0), np.minimum(top + 1, self._samples.where.size - 1)
 
     def confirmed(self, f: Curve, only: Numbers) -> tuple[Array, Array]:
         """Places and values, both (only), of some of the curves; they can be had anywhere."""
         where, count = self._samples.where, self._samples.where.size
         top, place, values = self._top[only], self.place[only], self._samples.values[only]
-        low, high = where[self._low[only]], where[self._high[only]]
-        best = values[np.arange(only.size), top]
+        every = np.arange(only.size)
+        best = values[every, top]
         if count == 1 or not only.size:
             return place, best
         if count < _WIDE:
-            return peaks(lambda x, which: f(x, only[which]), low, high)
+            return self._bracketed(f, only, top)
         found = f(place, only)
-        size = np.maximum(np.abs(values).max(axis=1, initial=0.0, where=np.isfinite(values)), 1e-300)
+        # compared with what is near: beside a dead point the rest of a curve may be larger without bound
+        far = np.abs(np.where(np.isfinite(values), values, 0.0))
+        near = np.max([far[every, k] for k in (*self._beside(top), top)], axis=0)
+        size = np.maximum(np.maximum(near, 1e-6 * far.max(axis=1)), 1e-300)
         sure = (np.abs(found - self._foretold[only]) <= _AGREES * size) & (found >= best - 1e-14 * size)
+        sure |= ~np.isfinite(values).any(axis=1)  # there is no such curve
         # a peak at the very end of the stroke needs no search
         end = ((top == 0) | (top == count - 1)) & (place == where[top])
-        value = np.where(end, best, found)
+        value = np.where(end | np.isnan(best), best, found)
         doubt = np.nonzero(~(sure | end))[0]
         if doubt.size:
-            place[doubt], value[doubt] = peaks(lambda x, which: f(x, only[doubt[which]]), low[doubt], high[doubt])
+            place[doubt], value[doubt] = self._bracketed(f, only[doubt], top[doubt])
+            # what was foretold may have led to the wrong hump
+            other = doubt[top[doubt] != self._highest[only[doubt]]]
+            if other.size:
+                there, as_high = self._bracketed(f, only[other], self._highest[only[other]])
+                higher = as_high > value[other]
+                place[other[higher]], value[other[higher]] = there[higher], as_high[higher]
         return place, value
+
+    def _bracketed(self, f: Curve, only: Numbers, top: Numbers) -> tuple[Array, Array]:
+        low, high = self._beside(top)
+        return peaks(lambda x, which: f(x, only[which]), self._samples.where[low], self._samples.where[high])
 
 
 class Roots:

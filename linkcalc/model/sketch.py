@@ -18,6 +18,7 @@ from linkcalc.model.drafting import Place, draw, plain
 from linkcalc.model.formulas import to_si
 from linkcalc.model.mechanism import GROUND, Mechanism, Member
 from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
+from linkcalc.model.units import show
 from linkcalc.parts.contract import Joint, Pusher, Site, Size, Travelled, Value
 from linkcalc.words import nearest
 
@@ -74,6 +75,10 @@ class Drawing:
         if name not in self.points:
             raise fault((), f"unknown point {name!r}", nearest(name, self.mechanism.points))
         return self.points[name]
+
+    def shown(self, length: float) -> str:
+        """A length [m] for a message, in the file's unit."""
+        return show(length, "length", self.mechanism.units)
 
     def site(self, point: str, member: str | None = None) -> Site:
         """A point as a member carries it, always the same object for the same two. Without a member: the pin

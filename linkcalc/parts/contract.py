@@ -59,6 +59,9 @@ class Sketch(Protocol):
     def point(self, name: str) -> tuple[Value, Value]:
         """[m] the drawn place of a point"""
 
+    def shown(self, length: float) -> str:
+        """a length [m] for a message, in the file's unit"""
+
     def site(self, point: str, member: str | None = None) -> Site:
         """a point as a member carries it; without a member: the pin itself, by the member that stands for it"""
 

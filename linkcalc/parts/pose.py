@@ -86,7 +86,8 @@ class Poses:
     def spot(self, site: Site) -> tuple[Value, Value]:
         """The site in ground axes [m]."""
         a, b = self.arm(site)
-        return self.x[site.member] + a, self.y[site.member] + b
+        x, y = self.x[site.member], self.y[site.member]
+        return x if _zero(a) else x + a, y if _zero(b) else y + b
 
     def turned(self, member: int, u: Value, v: Value) -> tuple[Value, Value]:
         """A direction that is fixed in a member, in ground axes."""

@@ -37,11 +37,9 @@ class Meets:
         square = r1 * r1 - along * along
         # one copy out of many that does not assemble is no fault of the drawing: it becomes NaN and gets a status
         if np.ndim(square) == 0 and square < -_SLACK * d * d:
-            short = d > r1 + r2
-            raise NoPlace(
-                f"the arcs about {first} and {second} do not meet: centres are {d:.6g} m apart, "
-                + (f"the radii reach {r1 + r2:.6g} m" if short else f"the radii differ by {abs(r1 - r2):.6g} m")
-            )
+            apart, reach, differ = (sketch.shown(float(np.abs(v))) for v in (d, r1 + r2, r1 - r2))
+            radii = f"the radii together reach {reach}" if d > r1 + r2 else f"the radii differ by {differ}"
+            raise NoPlace(f"the arcs about {first} and {second} do not meet: the centres are {apart} apart, {radii}")
         with np.errstate(invalid="ignore"):
             off = np.sqrt(np.where(square < 0, np.where(square < -_SLACK * d * d, np.nan, 0.0), square))
         off = off if self.side == "left" else -off

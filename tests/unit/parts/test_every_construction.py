@@ -36,6 +36,9 @@ class Board:
         """Lengths of a scaled board are scaled; the rest stays."""
         return size * self.scale if kind == "length" else size
 
+    def shown(self, length: float) -> str:
+        return f"{length * 1e3:g} mm"
+
 
 def random_points(seed: int) -> dict[str, tuple[float, float]]:
     rng = np.random.default_rng(seed)
@@ -188,8 +191,14 @@ ON_A_LINE = {"A": (0.0, 0.0), "B": (1.0, 0.0), "C": (0.0, 1.0), "D": (1.0, 1.0),
 @pytest.mark.parametrize(
     ("part", "reason"),
     [
-        (Meets((("A", 0.3), ("B", 0.4)), "left"), "do not meet: centres are 1 m apart, the radii reach 0.7 m"),
-        (Meets((("A", 2.5), ("B", 1.2)), "left"), "do not meet: centres are 1 m apart, the radii differ by 1.3 m"),
+        (
+            Meets((("A", 0.3), ("B", 0.4)), "left"),
+            "do not meet: the centres are 1000 mm apart, the radii together reach 700 mm",
+        ),
+        (
+            Meets((("A", 2.5), ("B", 1.2)), "left"),
+            "do not meet: the centres are 1000 mm apart, the radii differ by 1300 mm",
+        ),
         (Meets((("A", 1.0), ("E", 1.0)), "left"), "have the same centre"),
         (Crossing((("A", "B"), ("C", "D"))), "the two lines are parallel"),
         (Crossing((("A", "E"), ("C", "D"))), "the two lines are parallel"),
