@@ -20,6 +20,8 @@ _POWERS = np.arange(1.0, _WIDE)[:, None]
 _HALF = (_WIDE - 1) / 2
 _STILL = 1e-10  # of the step between samples: no correction worth making
 _ZERO = 1e-13  # of the curve's size: a sample that is nothing but rounding
+_RIVAL = 1e-3  # of the curve's size: humps foretold as close to the highest are looked at too
+_FAINT = 1e-6  # of the curve's size: what is smaller need not be foretold better
 _AGREES = 1e-9  # of the curve's size: how well the polynomial must foretell what is found
 
 
@@ -41,28 +43,32 @@ class Samples:
 class Peaks:
     """The largest value of each curve: foretold from the samples alone, then confirmed.
 
-    place  (curves) where the polynomial has it
+    Of a curve with several humps each that could be the highest is looked at: the samples may show another.
+
+    place  (places) where the polynomials have them, in the order of the curves
     """
 
     def __init__(self, samples: Samples):
         self._samples = samples
         y = np.where(np.isfinite(samples.values), samples.values, -np.inf)
-        self._top = self._highest = np.argmax(y, axis=1) if y.size else np.zeros(0, np.intp)
+        self._curve = np.arange(len(y))
+        self._top = np.argmax(y, axis=1) if y.size else np.zeros(0, np.intp)
         self.place = samples.where[self._top]
-        self._foretold = samples.values[np.arange(len(self._top)), self._top]
-        if samples.where.size >= _WIDE and len(self._top):
-            self._choose(y)
+        self._foretold = samples.values[self._curve, self._top]
+        if samples.where.size >= _WIDE and len(y):
+            self._look_at_humps(y)
 
-    def _choose(self, y: Array) -> None:
-        """Of several humps the one that is foretold to be the highest, which need not have the highest sample."""
+    def _look_at_humps(self, y: Array) -> None:
+        every, highest = self._curve, self._top
         humps = np.isfinite(y)
         humps[:, 1:] &= y[:, 1:] > y[:, :-1]
         humps[:, :-1] &= y[:, :-1] >= y[:, 1:]
-        humps[np.arange(len(y)), self._highest] = True
+        humps[every, highest] = True
         curve, top = np.nonzero(humps)
         place, foretold = self._foretell(curve, top)
-        best = np.lexsort((foretold, curve))[np.cumsum(humps.sum(axis=1)) - 1]
-        self._top, self.place, self._foretold = top[best], place[best], foretold[best]
+        best = np.maximum.reduceat(foretold, np.searchsorted(curve, every))
+        could = (foretold >= (best - _RIVAL * _sizes(self._samples.values))[curve]) | (top == highest[curve])
+        self._curve, self._top, self.place, self._foretold = (v[could] for v in (curve, top, place, foretold))
 
     def _foretell(self, curve: Numbers, top: Numbers) -> tuple[Array, Array]:
         """Places and values of the summits beside some samples; where no number is near, of the samples."""
@@ -76,46 +82,45 @@ class Peaks:
         place = np.where(
             np.abs(index - nearest) < 1e-12, samples.where[nearest], samples.where[0] + samples.step * index
         )
-        sound = np.isfinite(samples.values[curve, low] + samples.values[curve, high])
+        sound = np.isfinite(samples.values[curve, low]) & np.isfinite(samples.values[curve, high])
         return place, np.where(sound, horner(t, power), samples.values[curve, top])
 
     def _beside(self, top: Numbers) -> tuple[Numbers, Numbers]:
         return np.maximum(top - 1, 0), np.minimum(top + 1, self._samples.where.size - 1)
 
     def confirmed(self, f: Curve, only: Numbers) -> tuple[Array, Array]:
-        """Places and values, both (only), of some of the curves; they can be had anywhere."""
-        where, count = self._samples.where, self._samples.where.size
-        top, place, values = self._top[only], self.place[only], self._samples.values[only]
-        every = np.arange(only.size)
-        best = values[every, top]
-        if count == 1 or not only.size:
+        """Places and values, both (only), of some of the curves, in rising order; they can be had anywhere."""
+        k = np.nonzero(np.isin(self._curve, only))[0]
+        place, value = self._each(f, k)
+        rank = np.lexsort((np.where(np.isnan(value), -np.inf, value), self._curve[k]))
+        best = rank[np.searchsorted(self._curve[k], only, side="right") - 1]
+        return place[best], value[best]
+
+    def _each(self, f: Curve, k: Numbers) -> tuple[Array, Array]:
+        """Places and values of some of the humps."""
+        where, values, count = self._samples.where, self._samples.values, self._samples.where.size
+        curve, top, place = self._curve[k], self._top[k], self.place[k]
+        best = values[curve, top]
+        if count == 1 or not k.size:
             return place, best
+        low, high = self._beside(top)
         if count < _WIDE:
-            return self._bracketed(f, only, top)
-        found = f(place, only)
+            return peaks(lambda x, which: f(x, curve[which]), where[low], where[high])
+        found = f(place, curve)
         # compared with what is near: beside a dead point the rest of a curve may be larger without bound
-        far = np.abs(np.where(np.isfinite(values), values, 0.0))
-        near = np.max([far[every, k] for k in (*self._beside(top), top)], axis=0)
-        size = np.maximum(np.maximum(near, 1e-6 * far.max(axis=1)), 1e-300)
-        sure = (np.abs(found - self._foretold[only]) <= _AGREES * size) & (found >= best - 1e-14 * size)
-        sure |= ~np.isfinite(values).any(axis=1)  # there is no such curve
+        near = np.max(np.abs([values[curve, low], best, values[curve, high]]), axis=0)
+        size = np.maximum(np.where(np.isfinite(near), near, 0.0), _FAINT * _sizes(values)[curve])
+        sure = (np.abs(found - self._foretold[k]) <= _AGREES * size) & (found >= best - 1e-14 * size)
+        sure |= ~np.isfinite(best)  # there is no such curve
         # a peak at the very end of the stroke needs no search
         end = ((top == 0) | (top == count - 1)) & (place == where[top])
         value = np.where(end | np.isnan(best), best, found)
         doubt = np.nonzero(~(sure | end))[0]
         if doubt.size:
-            place[doubt], value[doubt] = self._bracketed(f, only[doubt], top[doubt])
-            # what was foretold may have led to the wrong hump
-            other = doubt[top[doubt] != self._highest[only[doubt]]]
-            if other.size:
-                there, as_high = self._bracketed(f, only[other], self._highest[only[other]])
-                higher = as_high > value[other]
-                place[other[higher]], value[other[higher]] = there[higher], as_high[higher]
+            place[doubt], value[doubt] = peaks(
+                lambda x, which: f(x, curve[doubt[which]]), where[low[doubt]], where[high[doubt]]
+            )
         return place, value
-
-    def _bracketed(self, f: Curve, only: Numbers, top: Numbers) -> tuple[Array, Array]:
-        low, high = self._beside(top)
-        return peaks(lambda x, which: f(x, only[which]), self._samples.where[low], self._samples.where[high])
 
 
 class Roots:
@@ -133,7 +138,7 @@ class Roots:
         if count < 2 or not len(y):
             return
         # a sample that is zero to rounding counts with the side before it, so the bracket reaches back to that side
-        self._size = np.abs(y).max(axis=1, initial=0.0, where=np.isfinite(y))
+        self._size = _sizes(y)
         self._y = y = np.where(np.abs(y) <= _ZERO * self._size[:, None], 0.0, y)
         start = np.maximum.accumulate(np.where(y != 0.0, np.arange(count), 0), axis=1)
         sign = np.sign(y[np.arange(len(y))[:, None], start])
@@ -186,6 +191,12 @@ class Roots:
         return roots(
             lambda x, which: f(x, curve[which]), where[low], where[high], self._y[curve, low], self._y[curve, high]
         )
+
+
+def _sizes(values: Array) -> Array:
+    """Largest of absolute values, (curves), what is not finite left out."""
+    sizes: Array = np.abs(values).max(axis=1, initial=1e-300, where=np.isfinite(values))
+    return sizes
 
 
 def _polynomial(samples: Samples, curve: Numbers, first: Numbers) -> tuple[Numbers, Array]:
