@@ -24,6 +24,9 @@ from linkcalc.model.select import only_case
 from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.pose import Array, Codes, Value
 
+_WATCHED = 61
+"""Poses at the least that events are looked for between: the worst does not hang on how many a table shows."""
+
 
 def stroke(
     mechanism: Mechanism,
@@ -50,20 +53,30 @@ def stroke(
             solved, path = solve_drawn(ready), None
         else:
             assert mechanism.stroke is not None
-            solved, path = solve_stroke(ready, poses or mechanism.stroke.poses)
+            poses = poses or mechanism.stroke.poses
+            solved, path = solve_stroke(ready, max(poses, _WATCHED))
     survey = Survey(ready, solved)
     shown = survey.first
     curves = Curves(survey, shown)
     found = events(curves, path) if path is not None else ()
     judged = verdicts(curves)
-    if path is not None and at is not None:
-        shown = survey.show(solve_at(ready, path.mesh, np.asarray(at, float)))
+    drive = _asked(path, poses, at, solved)
+    if path is not None and drive is not None:
+        shown = survey.show(solve_at(ready, path.mesh, drive))
     if sizes is not None:
         copies, shown = _copies(mechanism, sizes, path, shown.solved.drive)
         warned = caveats(curves, path, found)
         return _answer(copies, survey, shown, checks=_checks(shown.solved), found=found, judged=judged, warned=warned)
     warned = caveats(curves, path, found)
     return _answer(ready, survey, shown, checks=_checks(shown.solved), found=found, judged=judged, warned=warned)
+
+
+def _asked(path: Path | None, poses: int | None, at: Sequence[float] | None, solved: Solved) -> Array | None:
+    """Values of the stroke that the answer is to show, if others than those that were watched."""
+    if path is None or poses is None:
+        return None
+    drive = path.poses(poses) if at is None else np.asarray(at, float)
+    return None if at is None and drive.size == solved.drive.size else drive
 
 
 def _copies(mechanism: Mechanism, sizes: Mapping[str, Array], path: Path | None, drive: Array) -> tuple[Ready, Shown]:
