@@ -43,7 +43,8 @@ def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
             where = ", ".join(_drive(curves, d) for d in dict.fromkeys(inside))
             yield Caveat(name, f"dead point of the {name} at {where}: {texts[name]}")
         for k in sorted({0, least.size - 1, int(np.argmin(least))}):
-            if least[k] < _AT or (least[k] < _NEAR and not inside and _ahead(least, k)):
+            told = any(abs(d - curves.drive[k]) <= 1e-6 * np.ptp(curves.drive) for d in inside)
+            if not told and (least[k] < _AT or (least[k] < _NEAR and not inside and _ahead(least, k))):
                 place = f" at {_drive(curves, float(curves.drive[k]))}" if ready.steps else ""
                 much = "at" if least[k] < _AT else "close to"
                 yield Caveat(name, f"the pose{place} is {much} a dead point of the {name}: {texts[name]}")

@@ -6,8 +6,8 @@ from collections.abc import Sequence
 
 import numpy as np
 
-from linkcalc.mechanics.motion import Known, cubic, turned_between
-from linkcalc.parts.pose import Array, Poses, Value
+from linkcalc.mechanics.motion import Known, cubic, table, turned_between
+from linkcalc.parts.pose import Array, Poses
 
 
 class Mesh:
@@ -22,12 +22,16 @@ class Mesh:
         self._rising = np.sign(drive[-1] - drive[0]) or 1.0
         first = known[0].at
         self._down, self._field = first.down, first.field
-        moving = range(1, len(first.x))
-        self._x, self._y, self._c, self._s = (
-            np.stack([_joined([getattr(k.at, name)[m] for k in known], drive.size) for m in moving])
-            for name in ("x", "y", "c", "s")
-        )
-        self._turning = np.stack([_joined([k.speed[3 * m - 1] for k in known], drive.size) for m in moving])
+        if len(known) == drive.size:
+            tables = np.array([table(k) for k in known]).transpose(1, 2, 0)
+        else:
+            tables = np.empty((5, len(first.x) - 1, drive.size))
+            for row, values in zip(
+                tables, (first.x, first.y, first.c, first.s, (0.0, *known[0].speed[2::3])), strict=True
+            ):
+                for m, value in enumerate(values[1:]):
+                    row[m] = np.ravel(value)
+        self._x, self._y, self._c, self._s, self._turning = tables
 
     def guess(self, drive: Array) -> Poses:
         """Poses near those at some values of the drive, (1, 1, values), by the cubic through the neighbours."""
@@ -44,8 +48,3 @@ class Mesh:
         foretold = (self._x[:, b], self._y[:, b], *map(np.asarray, turned))
         x, y, c, s = (list(v.reshape(len(v), 1, 1, -1)) for v in foretold)
         return Poses([0.0, *x], [0.0, *y], [1.0, *c], [0.0, *s], self._down, self._field)
-
-
-def _joined(values: Sequence[Value], size: int) -> Array:
-    flat = np.concatenate([np.ravel(v) for v in values])
-    return np.broadcast_to(flat, size) if flat.size == 1 else flat

@@ -85,7 +85,7 @@ def close(
                 break
             last = worst
         at = moved(at, chain.factor(entries, lone=lone).solve(gaps))
-    fine = np.ones(_batch(at), bool)
+    fine = np.ones((1, 1, 1) if lone else _batch(at), bool)
     if not worst <= within or live is not None:
         each = chain.worst_each(gaps)
         fine = fine & (each <= within)
@@ -193,6 +193,13 @@ def fastest(chain: Chain, speed: Sequence[Value]) -> Value:
 def single(values: Sequence[Value]) -> Array:
     """(values) of the first pose of a batch, as one vector."""
     return np.array([v if isinstance(v, float) else np.ravel(v)[0] for v in values], float)
+
+
+def table(pose: Known) -> Array:
+    """(5, members) of a single pose: x and y, cosine, sine and speed of the turn of each moving member."""
+    at = pose.at
+    rows = single([*at.x[1:], *at.y[1:], *at.c[1:], *at.s[1:], *pose.speed[2::3]])
+    return rows.reshape(5, -1)
 
 
 def alone(at: Poses) -> Poses:

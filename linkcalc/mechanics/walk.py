@@ -13,9 +13,9 @@ import numpy as np
 
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.limit import limit_beyond
-from linkcalc.mechanics.motion import Closed, along, between, close, single
+from linkcalc.mechanics.motion import Closed, along, between, close, single, table
 from linkcalc.mechanics.plan import NoPlan
-from linkcalc.parts.pose import Array, Poses
+from linkcalc.parts.pose import Array
 
 _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its length
 _STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
@@ -111,13 +111,13 @@ def _step(chain: Chain, nodes: list[Node], drive: float) -> Node | None:
 def _departure(chain: Chain, a: Closed, b: Closed, step: float) -> float:
     """How far the way from a to b is from the mean of their speeds times the step, over the longer of the two ways."""
     ua, ub = single(a.speed) * chain.column_size, single(b.speed) * chain.column_size
-    apart = _way(a.at, b.at) * chain.column_size - step * (ua + ub) / 2
+    apart = _way(a, b) * chain.column_size - step * (ua + ub) / 2
     longest = abs(step) * max(float(np.abs(ua).max()), float(np.abs(ub).max()))
     return float(np.abs(apart).max()) / max(longest, 1e-12 * chain.size)
 
 
-def _way(a: Poses, b: Poses) -> Array:
+def _way(a: Closed, b: Closed) -> Array:
     """(columns) coordinates of b less those of a."""
-    (xa, ya, ca, sa), (xb, yb, cb, sb) = ([single(v[1:]) for v in (p.x, p.y, p.c, p.s)] for p in (a, b))
+    (xa, ya, ca, sa, _), (xb, yb, cb, sb, _) = table(a), table(b)
     turn = np.arctan2(sb * ca - cb * sa, cb * ca + sb * sa)
-    return np.stack([xb - xa, yb - ya, turn], axis=1).ravel()
+    return np.array([xb - xa, yb - ya, turn]).T.ravel()
