@@ -7,6 +7,7 @@ table of bearings, loads from what the model says. A sum that is not nothing is 
 from __future__ import annotations
 
 from collections.abc import Iterator
+from itertools import pairwise
 from typing import Any
 
 import numpy as np
@@ -118,7 +119,7 @@ class Resum:
         if member.centre:
             return self.drawing.points[member.centre]
         spots = [np.array(self.drawing.points[p]) for p in member.path or member.points]
-        pieces = [(np.hypot(*(b - a)), (a + b) / 2) for a, b in zip(spots[:-1], spots[1:], strict=True)]
+        pieces = [(np.hypot(*(b - a)), (a + b) / 2) for a, b in pairwise(spots)]
         whole = sum(length for length, _ in pieces)
         middle = sum(length * place for length, place in pieces) / whole if whole else spots[0]
         return middle[0], middle[1]

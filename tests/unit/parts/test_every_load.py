@@ -5,6 +5,7 @@ from __future__ import annotations
 import numpy as np
 import pytest
 
+from linkcalc.model.sketch import Drawing
 from linkcalc.parts.contract import Pusher
 from linkcalc.parts.loads.pair import PairPush
 from linkcalc.parts.loads.torque import TorquePush
@@ -22,8 +23,6 @@ def pusher(sample: Sample, by: float | None = None) -> tuple[Pusher, int]:
     mechanism = sample.mechanism
     if by is not None:
         mechanism = turned(mechanism, by)
-    from linkcalc.model.sketch import Drawing
-
     drawing = Drawing(mechanism)
     return drawing.pushers()["", sample.name], len(drawing.members)
 

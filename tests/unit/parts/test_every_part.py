@@ -103,7 +103,7 @@ def test_a_batch_is_its_poses_one_by_one(joint: Joint, members: int) -> None:
 def test_a_plain_float_in_a_slope_never_changes(joint: Joint, members: int) -> None:
     """The whole interface to the folding of constants: the engine takes a float for the same in every pose."""
     seen = [joint.slope(random_poses(members, seed=seed)) for seed in (1, 2)]
-    for first, second in zip(*(sum((list(row) for row in rows), []) for rows in seen), strict=True):
+    for first, second in zip(*([entry for row in rows for entry in row] for rows in seen), strict=True):
         assert first[:2] == second[:2]
         assert isinstance(first[2], float) == isinstance(second[2], float)
         if isinstance(first[2], float):
