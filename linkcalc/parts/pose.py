@@ -9,6 +9,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from functools import cached_property
 from typing import TYPE_CHECKING, Any
 
 import numpy as np
@@ -39,6 +40,11 @@ class Site:
     u: Value
     v: Value
 
+    @cached_property
+    def along(self) -> tuple[bool, bool]:
+        """Whether u and v are more than an exact zero, which folds away."""
+        return not _zero(self.u), not _zero(self.v)
+
 
 class Poses:
     """All members in a batch of poses; index 0 is the ground.
@@ -64,30 +70,32 @@ class Poses:
     ):
         self.x, self.y, self.c, self.s = x, y, c, s
         self.down, self.field = down, field
-        self._arms: dict[int, tuple[Site, Value, Value]] = {}
+        self._arms: dict[int, tuple[Value, Value, Site]] = {}  # by the site's identity; the site is kept alive
 
     def arm(self, site: Site) -> tuple[Value, Value]:
         """From the member's origin to the site, ground axes [m]; worked out once a batch."""
+        has_u, has_v = site.along
+        if not (has_u or has_v):
+            return 0.0, 0.0
         known = self._arms.get(id(site))
-        if known is not None:
-            return known[1], known[2]
-        c, s, u, v = self.c[site.member], self.s[site.member], site.u, site.v
-        a: Value
-        b: Value
-        if _zero(v):
-            a, b = (0.0, 0.0) if _zero(u) else (c * u, s * u)
-        elif _zero(u):
-            a, b = -(s * v), c * v
-        else:
-            a, b = c * u - s * v, s * u + c * v
-        self._arms[id(site)] = (site, a, b)
-        return a, b
+        if known is None:
+            c, s, u, v = self.c[site.member], self.s[site.member], site.u, site.v
+            if not has_v:
+                known = (c * u, s * u, site)
+            elif not has_u:
+                known = (-(s * v), c * v, site)
+            else:
+                known = (c * u - s * v, s * u + c * v, site)
+            self._arms[id(site)] = known
+        return known[0], known[1]
 
     def spot(self, site: Site) -> tuple[Value, Value]:
         """The site in ground axes [m]."""
-        a, b = self.arm(site)
         x, y = self.x[site.member], self.y[site.member]
-        return x if _zero(a) else x + a, y if _zero(b) else y + b
+        if site.along == (False, False):
+            return x, y
+        a, b = self.arm(site)
+        return x + a, y + b
 
     def turned(self, member: int, u: Value, v: Value) -> tuple[Value, Value]:
         """A direction that is fixed in a member, in ground axes."""
