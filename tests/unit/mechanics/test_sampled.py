@@ -1,4 +1,4 @@
-"""Peaks and roots of sampled curves: as exact as in brackets, at the cost of one evaluation where the curve is smooth."""
+"""Peaks and roots of sampled curves: as exact as in brackets, at one evaluation where the curve is smooth."""
 
 from __future__ import annotations
 
