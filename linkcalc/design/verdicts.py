@@ -29,6 +29,8 @@ _ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
 def verdicts(curves: Curves) -> tuple[Verdict, ...]:
     """All requirements of the model, in its order. Raises Faults for one that asks for what is not there."""
     mechanism = curves.survey.ready.drawing.mechanism
+    if not mechanism.requirements:
+        return ()
     names = evaluate(mechanism)
     return tuple(
         _judge(curves, r, r.limit(mechanism, names), r.place(mechanism, names)) for r in requirements(mechanism)

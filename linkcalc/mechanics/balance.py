@@ -215,10 +215,12 @@ def part_of_motion(chain: Chain, closed: Closed, pushing: Pushing) -> tuple[Arra
 
     Two arrays (case, variant, pose); 1 where there is no effort or load.
     """
-    out = []
-    for acting in (pushing.effort, pushing.load):
-        push = column(acting, closed.at, chain.columns, unit=True)
-        power = np.abs(_power(closed.speed, push))
-        whole = fastest(chain, closed.speed) * _strongest(chain, push)
-        out.append(np.atleast_3d(np.divide(power, whole, out=np.ones(np.shape(whole)), where=np.asarray(whole) > 0)))
+    out = [np.ones((1, 1, 1)), np.ones((1, 1, 1))]
+    top = fastest(chain, closed.speed)
+    for k, acting in enumerate((pushing.effort, pushing.load)):
+        if acting:
+            push = column(acting, closed.at, chain.columns, unit=True)
+            whole = np.asarray(top * _strongest(chain, push))
+            part = np.abs(_power(closed.speed, push)) / np.where(whole > 0, whole, 1.0)
+            out[k] = np.ones((1, 1, 1)) * np.where(whole > 0, part, 1.0)
     return out[0], out[1]

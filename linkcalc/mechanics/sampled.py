@@ -90,7 +90,9 @@ class Peaks:
 
     def confirmed(self, f: Curve, only: Numbers) -> tuple[Array, Array]:
         """Places and values, both (only), of some of the curves, in rising order; they can be had anywhere."""
-        k = np.nonzero(np.isin(self._curve, only))[0]
+        asked = np.zeros(len(self._samples.values), bool)
+        asked[only] = True
+        k = np.nonzero(asked[self._curve])[0]
         place, value = self._each(f, k)
         rank = np.lexsort((np.where(np.isnan(value), -np.inf, value), self._curve[k]))
         best = rank[np.searchsorted(self._curve[k], only, side="right") - 1]

@@ -54,6 +54,7 @@ class Drawing:
         self._sites: dict[tuple[str, int], Site] = {}
         self._centres: dict[str, Site] = {}
         self._joint_list: tuple[Joint, ...] | None = None
+        self._assembly: Assembly | None = None
         self.points: dict[str, Place] = {}
         draw(mechanism.points, self, self.points)
         self.points = {name: self.points[name] for name in mechanism.points}
@@ -144,7 +145,9 @@ class Drawing:
 
     def assembly(self) -> Assembly:
         """Pushers, and what each load case makes of them. Raises Faults."""
-        return assemble(self)
+        if self._assembly is None:
+            self._assembly = assemble(self)
+        return self._assembly
 
     def mass_site(self, member: str) -> Site:
         """The centre of mass of a member: the point named for it, else the middle of its path. Raises Faults."""
