@@ -58,7 +58,7 @@ def copies(
     different counts.
     """
     mechanism = check(mechanism)
-    count = _count(mechanism, sizes)
+    count = copies_in(mechanism, sizes)
     if mechanism.stroke is None:
         raise fault("stroke", "the model has no stroke to walk through", "give it one, or use stroke(sizes=...)")
     nominal = prepare(drawn(mechanism))
@@ -72,7 +72,8 @@ def copies(
             yield _told(first, pose, float(drive[pose]), solved, ready.chain)
 
 
-def _count(mechanism: Mechanism, sizes: Mapping[str, Array]) -> int:
+def copies_in(mechanism: Mechanism, sizes: Mapping[str, Array]) -> int:
+    """How many copies there are sizes for. Raises Faults: unknown dimensions, different counts."""
     counts = set()
     for name, size in sizes.items():
         if name not in mechanism.dimensions:
@@ -89,7 +90,7 @@ def _told(first: int, pose: int, drive: float, solved: Solved, chain: Chain) -> 
 
     def flat(value: object) -> Array:
         array = np.asarray(value)
-        return array[:, :, 0] if array.ndim == 3 else np.broadcast_to(array, shape)
+        return np.broadcast_to(array[:, :, 0] if array.ndim == 3 else array, shape)
 
     joints: dict[str, tuple[Array, ...]] = {}
     for joint, row in zip(chain.joints, chain.first_row, strict=True):

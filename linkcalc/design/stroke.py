@@ -80,8 +80,10 @@ def _asked(path: Path | None, poses: int | None, at: Sequence[float] | None, sol
 
 
 def _copies(mechanism: Mechanism, sizes: Mapping[str, Array], path: Path | None, drive: Array) -> tuple[Ready, Shown]:
-    from linkcalc.mechanics.copies import solve_copies  # one mechanism alone does not need it
+    from linkcalc.design.copies import copies_in  # one mechanism alone does not need them
+    from linkcalc.mechanics.copies import solve_copies
 
+    copies_in(mechanism, sizes)
     drawing = Drawing(mechanism, {k: np.reshape(v, (1, -1, 1)) for k, v in sizes.items()})
     ready = prepare(drawing)
     solved = solve_drawn(ready) if path is None else solve_copies(ready, path, drive[0, 0])
@@ -118,9 +120,9 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         tare_effort=_full(b.tare, shape),
         force_ratio=_full(bounded(b.force_ratio), shape),
         ideal_ratio=_full(bounded(b.ideal_ratio), shape),
-        force=_stacked([f for s in shown.sides for f in (s.fx, s.fy)], shape).reshape(-1, 2, *shape),
-        moment=_stacked([s.moment for s in shown.sides], shape),
-        axial=_stacked(axial, shape),
+        force=_solved(_stacked([f for s in shown.sides for f in (s.fx, s.fy)], shape), b.status).reshape(-1, 2, *shape),
+        moment=_solved(_stacked([s.moment for s in shown.sides], shape), b.status),
+        axial=_solved(_stacked(axial, shape), b.status),
         x=_placed(_stacked(at.x, still), b.status),
         y=_placed(_stacked(at.y, still), b.status),
         turn=_placed(np.arctan2(_stacked(at.s, still), _stacked(at.c, still)), b.status),
@@ -152,6 +154,11 @@ def _checks(solved: Solved) -> Checks:
 
     b = solved.balance
     return Checks(solved.closed.worst, worst(b.unbalance), worst(b.disagreement))
+
+
+def _solved(values: Array, status: Codes) -> Array:
+    """Forces, not a number where there is no answer: those that are nothing in every pose too."""
+    return np.where(status != Status.FINE, np.nan, values) if status.any() else values
 
 
 def _placed(values: Array, status: Codes) -> Array:
