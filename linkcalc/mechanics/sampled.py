@@ -83,8 +83,9 @@ class Peaks:
         place = np.where(
             np.abs(index - nearest) < 1e-12, samples.where[nearest], samples.where[0] + samples.step * index
         )
-        sound = np.isfinite(samples.values[curve, low]) & np.isfinite(samples.values[curve, high])
-        return np.where(sound, place, samples.where[top]), np.where(sound, horner(t, power), samples.values[curve, top])
+        best = samples.values[curve, top]
+        sound = np.isfinite([samples.values[curve, low], best, samples.values[curve, high]]).all(axis=0)
+        return np.where(sound, place, samples.where[top]), np.where(sound, horner(t, power), best)
 
     def _beside(self, top: Numbers) -> tuple[Numbers, Numbers]:
         return np.maximum(top - 1, 0), np.minimum(top + 1, self._samples.where.size - 1)
