@@ -4,6 +4,7 @@
     line of force C on arm   direction of that force, 0 to 180 degrees, whichever sense it has
     moment guide on arm      moment of a slide or weld on a member
     axial strut              force in a two-force member, tension plus
+    tension hoist            of a rope
     effort, load, force ratio, ideal ratio
     range                    how far the stroke goes from its first to its last pose
 
@@ -55,6 +56,8 @@ def _asked(answer: Any, words: str) -> Any:
         return answer.moment_on(moment[1], moment[2])
     if axial := re.fullmatch(r"axial (\S+)", words):
         return answer.axial_in(axial[1])
+    if rope := re.fullmatch(r"tension (\S+)", words):
+        return answer.tension_of(rope[1])
     if words == "range":
         return np.abs(answer.drive[..., -1:] - answer.drive[..., :1])
     if words in ("effort", "load", "force ratio", "ideal ratio"):
