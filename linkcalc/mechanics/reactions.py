@@ -11,7 +11,7 @@ from dataclasses import dataclass
 
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.pushing import Acting, Pushing, strength
-from linkcalc.parts.contract import TURN, Joint, X, Y
+from linkcalc.parts.contract import TURN, Joint, Push, X, Y
 from linkcalc.parts.pose import Poses, Value
 
 
@@ -41,16 +41,23 @@ class Side:
 
 
 def reactions(
-    chain: Chain, at: Poses, multipliers: Sequence[Value], pushing: Pushing, effort: Value, load: Value
-) -> list[Side]:
-    """All sides of all joints, in the order of the joints."""
+    chain: Chain, at: Poses, multipliers: Sequence[Value], friction: Sequence[Value], pushing: Pushing,
+    effort: Value, load: Value,
+) -> list[Side]:  # fmt: skip
+    """All sides of all joints, in the order of the joints.
+
+    friction  of each of the chain's rubs, along its push; empty without friction
+    """
+    rubbed = _rubbed(chain, at, friction)
     sides: list[Side] = []
     on_pin: dict[str, list[tuple[Value, Value]]] = {}
     hubs: dict[str, tuple[int, Joint]] = {}
     pins = {joint.name for joint in chain.joints if joint.word == "pin"}
-    for joint, first in zip(chain.joints, chain.first_row, strict=True):
+    turning: dict[str, Value] = {}
+    for number, (joint, first) in enumerate(zip(chain.joints, chain.first_row, strict=True)):
         x, y = at.spot(joint.site)
-        forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)])
+        pushes = rubbed.get(number, ())
+        forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)], pushes)
         hub = joint.word == "pin"
         for member in dict.fromkeys(joint.members):
             fx, fy, about_origin = forces.get(member, (0.0, 0.0, 0.0))
@@ -62,9 +69,11 @@ def reactions(
             elif hub and member == joint.members[1]:
                 hubs.setdefault(joint.name, (member, joint))
                 on_pin.setdefault(joint.name, []).append((fx, fy))
+                if pushes:
+                    turning[joint.name] = _sum(turning.get(joint.name, 0.0), pushes[-1][3])
             else:
                 turnable = not any(joint.angular)
-                moment: Value = 0.0
+                moment: Value = pushes[0][3] if hub and pushes else 0.0
                 if not turnable:
                     moment = about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
                 own = turnable and (hub or member == joint.members[0])
@@ -80,11 +89,25 @@ def reactions(
         for gx, gy in on_pin[name]:
             fx, fy = _sum(fx, gx), _sum(fy, gy)
         last = max(k for k, s in enumerate(sides) if s.joint == name)
-        sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, 0.0, x, y, True))
+        moment = turning.get(name, 0.0)
+        sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, moment, x, y, True))
     return sides
 
 
-def _on_members(joint: Joint, at: Poses, multipliers: Sequence[Value]) -> dict[int, tuple[Value, Value, Value]]:
+def _rubbed(chain: Chain, at: Poses, friction: Sequence[Value]) -> dict[int, list[Push]]:
+    """Number of a joint -> what its friction does to its members."""
+    out: dict[int, list[Push]] = {}
+    if friction:
+        for (number, rub), size in zip(chain.rubs, friction, strict=True):
+            for member, *parts in rub.push(at):
+                fx, fy, moment = (_times(p, size) if not isinstance(p, float) or p else 0.0 for p in parts)
+                out.setdefault(number, []).append((member, fx, fy, moment))
+    return out
+
+
+def _on_members(
+    joint: Joint, at: Poses, multipliers: Sequence[Value], pushes: Sequence[Push]
+) -> dict[int, tuple[Value, Value, Value]]:
     """Force and moment about its origin, on each member; the moment only where the joint can give one."""
     moments = any(joint.angular)
     out: dict[int, list[Value]] = {}
@@ -94,6 +117,10 @@ def _on_members(joint: Joint, at: Poses, multipliers: Sequence[Value]) -> dict[i
                 continue
             total = out.setdefault(member, [0.0, 0.0, 0.0])
             total[which] = _sum(total[which], _times(value, m))
+    for member, *parts in pushes:
+        total = out.setdefault(member, [0.0, 0.0, 0.0])
+        for which, part in enumerate(parts):
+            total[which] = _sum(total[which], part)
     return {member: (v[X], v[Y], v[TURN]) for member, v in out.items()}
 
 

@@ -10,14 +10,14 @@ the engine leaves them out. A value that is a Python float never changes with th
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from typing import Protocol
 
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
-    "TURN", "Array", "Coordinate", "Drive", "Entry", "Joint", "Mark", "Poses", "Push", "Pusher", "Row", "Site",
+    "TURN", "Array", "Coordinate", "Drive", "Entry", "Joint", "Mark", "Poses", "Push", "Pusher", "Row", "Rub", "Site",
     "Size", "Sketch", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
@@ -77,8 +77,27 @@ class Sketch(Protocol):
     def own_axis(self, member: str) -> Value:
         """[rad] direction of the member's own x axis (first to last point) in the drawing pose"""
 
+    def coefficient(self, kind: str, own: Size | None) -> Value:
+        """[-] coefficient of friction: a joint's own, else that of its kind ("pins", "slots", "slides"), else 0.0"""
+
     def travelled(self, name: str) -> Travelled:
         """the slot or slide of that name, for a stroke along it"""
+
+
+@dataclass(frozen=True, eq=False)
+class Rub:
+    """Friction at a joint: a law on the joint's own reaction, against the relative motion.
+
+    normals  the normal force is the sum of these parts; each is the size of a vector whose components are linear
+             forms of the joint's multipliers, one coefficient a row: ((1, 0), (0, 1)) is the resultant of a pin
+    factor   friction for a normal force of 1: a coefficient [-], or the radius of the friction circle [m]
+    push     (poses) -> what a friction of 1 would do to each member if it pushed along the relative motion; its power
+             tells which way that is
+    """
+
+    normals: tuple[tuple[tuple[float, ...], ...], ...]
+    factor: Value
+    push: Callable[[Poses], tuple[Push, ...]]
 
 
 class Joint(Protocol):
@@ -108,6 +127,9 @@ class Joint(Protocol):
     def slope(self, at: Poses) -> tuple[Row, ...]:
         """Derivative of each gap by the coordinates of the members, sparse. A row's multiplier times its slope
         is the generalised force it puts on each member."""
+
+    def rubs(self) -> tuple[Rub, ...]:
+        """Its friction; empty if it has none."""
 
     def mark(self, at: Poses) -> Mark:
         """How to draw it in a single pose."""
