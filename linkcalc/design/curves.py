@@ -149,13 +149,17 @@ class Extremes:
 
 
 class Zeros:
-    """Where quantities change their sign: foretold places first, then found exactly."""
+    """Where quantities change their sign: foretold places first, then found exactly.
+
+    alike  names of those that are the same in all cases
+    """
 
     def __init__(self, curves: Curves, names: Sequence[str]):
         self._curves, self._names = curves, list(names)
         samples = np.stack([curves.samples(n) for n in names]) if names else np.zeros((0, 1, curves.drive.size))
         # what is alike in all cases is told once, for case 0
         alike = [bool(np.all(s == s[:1])) for s in samples]
+        self.alike = {name for name, same in zip(self._names, alike, strict=True) if same}
         which = [(n, c) for n in range(len(alike)) for c in range(1 if alike[n] else samples.shape[1])]
         self._rows, self._cases = np.array(which, int).reshape(-1, 2).T
         self._roots = Roots(Samples(curves.drive, samples[self._rows, self._cases]))

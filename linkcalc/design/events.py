@@ -57,7 +57,8 @@ def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
     """Dead points, where the speed of effort or load passes through zero, and reversals of two-force members."""
     for name, case, drive in zeros.found():
         if name in _SPEEDS:
-            yield Event("dead point", _SPEEDS[name], _case(curves, case) if case else "", drive, np.nan, "number")
+            of = "" if name in zeros.alike else _case(curves, case)
+            yield Event("dead point", _SPEEDS[name], of, drive, np.nan, "number")
         else:
             member = name.removeprefix("axial force in ")
             yield Event("reversal", member, _case(curves, case), drive, 0.0, "force")
