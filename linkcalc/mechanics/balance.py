@@ -10,7 +10,8 @@ from __future__ import annotations
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass, replace
+from dataclasses import dataclass, field, replace
+from typing import Any
 
 import numpy as np
 
@@ -49,7 +50,7 @@ class Balance:
     disagreement: Array
     status: Codes
     frictionless: Value = np.nan
-    friction: tuple[Value, ...] = ()
+    friction: list[Value] = field(default_factory=list)
 
     @property
     def force_ratio(self) -> Value:
@@ -99,7 +100,8 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             rest, (load, load_unit) if pushing.load else None, (effort, effort_unit) if pushing.effort else None
         )
         negative = closed.factored.solve(total, transposed=True)
-        frictionless, friction = effort, tuple[Value, ...]()
+        frictionless = effort
+        friction: list[Value] = []
         if chain.rubs and speed:
             asked = load_unit if pushing.load_asked else effort_unit
             asked_speed = load_speed if pushing.load_asked else effort_speed
@@ -108,7 +110,7 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             more = found.unknown - (load if pushing.load_asked else effort)
             total = _sum(total, (more, asked), *zip(found.amounts, found.columns, strict=True))
             effort, load = (effort, found.unknown) if pushing.load_asked else (found.unknown, load)
-            negative, friction, jammed = found.negative, tuple(found.amounts), found.jammed
+            negative, friction, jammed = found.negative, found.amounts, found.jammed
         unbalance = disagreement = _UNCHECKED
         if checked:
             unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
@@ -142,11 +144,12 @@ def _lost(closed: Closed) -> Mask | None:
 def failed(told: Balance, where: Mask, status: Status) -> Balance:
     """The same with some entries failed: not a number, and a status that says why."""
     shape = told.status.shape
-    names = ("effort", "load", "tare", "effort_speed", "load_speed")
-    masked = {name: np.where(where, np.nan, getattr(told, name)) for name in names}
+    names = ("effort", "load", "tare", "effort_speed", "load_speed", "frictionless")
+    masked: Any = {name: np.where(where, np.nan, getattr(told, name)) for name in names}
     multipliers: list[Value] = [np.where(where, np.nan, m) for m in told.multipliers]
+    friction: list[Value] = [np.where(where, np.nan, f) for f in told.friction]
     codes = np.where(np.broadcast_to(where, shape), np.int8(status), told.status)
-    return replace(told, **masked, multipliers=multipliers, status=codes)
+    return replace(told, **masked, multipliers=multipliers, friction=friction, status=codes)
 
 
 def _power(speed: Sequence[Value], push: Column) -> Value:

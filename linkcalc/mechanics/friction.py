@@ -78,7 +78,7 @@ def _amounts(
     """Friction of each rub: weight times normal force, the normal forces found together."""
     forms = [_forms(chain, k, one) for k, one in chain.rubs]
 
-    def reaction(rows: Sequence[Value], form: Sequence[tuple[int, float]]) -> Value:
+    def reaction(rows: Sequence[Value], form: Sequence[tuple[int, Value]]) -> Value:
         total: Value = 0.0
         for row, coefficient in form:
             total = _sum(total, _times(coefficient, rows[row]))
@@ -96,7 +96,7 @@ def _amounts(
                 for weight, other, n in zip(weights, each, normals, strict=True):
                     side = side + scale * (weight * n) * other
                 sides.append(side)
-            total = _sum(total, np.abs(sides[0]) if len(sides) == 1 else np.hypot(*sides))
+            total = _sum(total, np.abs(sides[0]) if len(sides) == 1 else np.hypot(sides[0], sides[1]))
         return total
 
     every = range(len(forms))
@@ -118,8 +118,12 @@ def _amounts(
 
 
 def _raised(
-    base: list, gain: list, weights: Sequence[Value], normals: Sequence[Value], doubt: Mask
-) -> tuple[list[Value], Mask | None]:  # type: ignore[type-arg]
+    base: list[list[list[Value]]],
+    gain: list[list[list[list[Value]]]],
+    weights: Sequence[Value],
+    normals: Sequence[Value],
+    doubt: Mask,
+) -> tuple[list[Value], Mask | None]:
     """Newton on the entries in doubt, the friction raised from nothing; those without an answer jam."""
     shape = np.broadcast_shapes(doubt.shape, *(np.shape(n) for n in normals), *(np.shape(w) for w in weights))
     where = np.nonzero(np.broadcast_to(doubt, shape))
@@ -171,12 +175,12 @@ def _raised(
 
 def _solved(matrix: Array, gap: Array) -> Array:
     try:
-        return np.linalg.solve(matrix, gap[:, :, None])[:, :, 0]
+        return np.asarray(np.linalg.solve(matrix, gap[:, :, None])[:, :, 0], np.float64)
     except np.linalg.LinAlgError:
         return np.full(gap.shape, np.nan)
 
 
-def _forms(chain: Chain, joint: int, one: Rub) -> list[list[list[tuple[int, float]]]]:
+def _forms(chain: Chain, joint: int, one: Rub) -> list[list[list[tuple[int, Value]]]]:
     first = chain.first_row[joint]
     return [[[(first + i, c) for i, c in enumerate(form)] for form in part] for part in one.normals]
 

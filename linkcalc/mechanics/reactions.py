@@ -56,7 +56,7 @@ def reactions(
     turning: dict[str, Value] = {}
     for number, (joint, first) in enumerate(zip(chain.joints, chain.first_row, strict=True)):
         x, y = at.spot(joint.site)
-        pushes = rubbed.get(number, ())
+        pushes = rubbed.get(number, [])
         forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)], pushes)
         hub = joint.word == "pin"
         for member in dict.fromkeys(joint.members):
@@ -79,8 +79,7 @@ def reactions(
                 own = turnable and (hub or member == joint.members[0])
                 sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
     for acting, size in _sized(pushing, at, effort, load):
-        pushes = acting.pusher.push(at)
-        for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, pushes, strict=False):
+        for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, acting.pusher.push(at), strict=False):
             if name:
                 on_pin.setdefault(name, []).append((size * fx, size * fy))
     for name, (member, joint) in hubs.items():

@@ -95,7 +95,7 @@ class Rub:
              tells which way that is
     """
 
-    normals: tuple[tuple[tuple[float, ...], ...], ...]
+    normals: tuple[tuple[tuple[Value, ...], ...], ...]
     factor: Value
     push: Callable[[Poses], tuple[Push, ...]]
 

@@ -91,8 +91,8 @@ class SlotJoint:
 
 def _as_pushes(row: Row) -> tuple[Push, ...]:
     """A row of six entries, x, y and turn of two members, as forces for a multiplier of 1."""
-    values = [value for _, _, value in row]
-    return (row[0][0], *values[:3]), (row[3][0], *values[3:])
+    (a, _, ax), (_, _, ay), (_, _, at), (b, _, bx), (_, _, by), (_, _, bt) = row
+    return (a, ax, ay, at), (b, bx, by, bt)
 
 
 def _row(joint: SlotJoint, at: Poses, dx: Value, dy: Value, nx: Value, ny: Value) -> Row:
