@@ -56,12 +56,12 @@ def _turning(curves: Curves) -> list[str]:
 def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
     """Dead points, where the speed of effort or load passes through zero, and reversals of two-force members."""
     for name, case, drive in zeros.found():
+        of = "" if name in zeros.alike else _case(curves, case)
         if name in _SPEEDS:
-            of = "" if name in zeros.alike else _case(curves, case)
             yield Event("dead point", _SPEEDS[name], of, drive, np.nan, "number")
         else:
             member = name.removeprefix("axial force in ")
-            yield Event("reversal", member, _case(curves, case), drive, 0.0, "force")
+            yield Event("reversal", member, of, drive, 0.0, "force")
 
 
 def _extremes(curves: Curves, wanted: Extremes, dead: list[float], zero: list[float]) -> Iterator[Event]:

@@ -112,7 +112,8 @@ class Peaks:
         # compared with what is near: beside a dead point the rest of a curve may be larger without bound
         near = np.max(np.abs([values[curve, low], best, values[curve, high]]), axis=0)
         size = np.maximum(np.where(np.isfinite(near), near, 0.0), _FAINT * _sizes(values)[curve])
-        sure = (np.abs(found - self._foretold[k]) <= _AGREES * size) & (found >= best - 1e-14 * size)
+        with np.errstate(invalid="ignore"):
+            sure = (np.abs(found - self._foretold[k]) <= _AGREES * size) & (found >= best - 1e-14 * size)
         sure |= ~np.isfinite(best)  # there is no such curve
         # a peak at the very end of the stroke needs no search
         end = ((top == 0) | (top == count - 1)) & (place == where[top])

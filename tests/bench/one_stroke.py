@@ -1,4 +1,4 @@
-"""Target 2: one six-bar, 181 poses with all joint forces and events, against the plain script's poses and forces alone."""
+"""Target 2: one six-bar, 181 poses: joint forces and events, against the plain script's poses and forces alone."""
 
 from __future__ import annotations
 

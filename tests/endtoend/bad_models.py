@@ -84,7 +84,8 @@ BAD = [
         "arcs that do not meet",
         "strut_length = 100",
         "strut_length = 20",
-        "points.C.meets: the arcs about B and D do not meet: the centres are 126.5 mm apart, the radii together reach 70 mm",
+        "points.C.meets: the arcs about B and D do not meet: "
+        "the centres are 126.5 mm apart, the radii together reach 70 mm",
         blamed='C = { meets = [["B", "strut_length"], ["D", "leg"]], side = "left" }',
     ),
     _changed(
