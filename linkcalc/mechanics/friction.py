@@ -21,6 +21,7 @@ from linkcalc.parts.pose import Array, Mask, Value
 
 _ROUNDS = 40
 _CLOSE = 1e-14  # of the largest normal force: no use in going on
+_SURE = 1e-13  # of the largest normal force: what is not that close goes to Newton
 _RAISES = 10
 _NEWTON = 30
 
@@ -87,30 +88,33 @@ def _amounts(
     base = [[[reaction(negative, f) for f in part] for part in parts] for parts in forms]
     gain = [[[[reaction(r, f) for r in responses] for f in part] for part in parts] for parts in forms]
 
-    def normal(k: int, normals: Sequence[Value], scale: float = 1.0) -> Value:
+    def normal(k: int, amounts: Sequence[Value]) -> Value:
         total: Value = 0.0
         for part, gains in zip(base[k], gain[k], strict=True):
             sides = []
             for value, each in zip(part, gains, strict=True):
                 side = value
-                for weight, other, n in zip(weights, each, normals, strict=True):
-                    side = side + scale * (weight * n) * other
+                for other, amount in zip(each, amounts, strict=True):
+                    side = _sum(side, _times(other, amount))
                 sides.append(side)
             total = _sum(total, np.abs(sides[0]) if len(sides) == 1 else np.hypot(sides[0], sides[1]))
         return total
 
     every = range(len(forms))
-    zero: list[Value] = [0.0 for _ in every]
-    normals = [normal(k, zero) for k in every]
+    normals = [normal(k, [0.0 for _ in every]) for k in every]
     apart: Value = np.inf
+    coming: Value = np.inf
     for _ in range(_ROUNDS):
-        following = [normal(k, normals) for k in every]
-        largest = _largest(following)
-        apart = _largest([np.abs(np.subtract(a, b)) for a, b in zip(following, normals, strict=True)])
+        amounts = [w * n for w, n in zip(weights, normals, strict=True)]
+        following = [normal(k, amounts) for k in every]
+        last, apart = apart, _largest([np.abs(np.subtract(a, b)) for a, b in zip(following, normals, strict=True)])
         normals = following
-        if not np.any(apart > _CLOSE * largest):
+        # what the next round would still change is foretold by how much less this one changed than the last
+        with np.errstate(all="ignore"):
+            coming = apart * np.minimum(np.divide(apart, last), 1.0)
+        if not np.any(coming > _CLOSE * _largest(following)):
             break
-    doubt = ~(np.asarray(apart) <= 1e-13 * _largest(normals))
+    doubt = ~(np.asarray(coming) <= _SURE * _largest(normals))
     jammed: Mask | None = None
     if doubt.any():
         normals, jammed = _raised(base, gain, weights, normals, doubt)
