@@ -111,7 +111,7 @@ def _amounts(
         normals = following
         # what the next round would still change is foretold by how much less this one changed than the last
         with np.errstate(all="ignore"):
-            coming = apart * np.minimum(np.divide(apart, last), 1.0)
+            coming = apart * np.where(np.isfinite(last), np.minimum(np.divide(apart, last), 1.0), 1.0)
         if not np.any(coming > _CLOSE * _largest(following)):
             break
     doubt = ~(np.asarray(coming) <= _SURE * _largest(normals))
