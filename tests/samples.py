@@ -182,11 +182,80 @@ size = -15
 """
 """A bracket built into the ground and welded at its corner: a frame without a stroke."""
 
+BOOM = """
+[points]
+O = [0, 0]
+T = { from = "O", distance = 200, angle = 50 }
+Q = { on = ["O", "T"], part = "0.5", offset = 15 }
+M = [-60, 180]
+K = [-80, 150]
+W = [-120, 40]
+B = [190, -40]
+[members]
+ground = ["O", "M", "K", "W"]
+boom = { points = ["O", "T", "Q"], mass = 4 }
+pan = { points = ["B"], mass = 2 }
+[slides.ways]
+member = "pan"
+along = 80
+[ropes.line]
+path = ["M", { pulley = "T", radius = 6, wrap = "left" }, "B"]
+[ropes.fall]
+path = ["Q", { pulley = "K", radius = 3, wrap = "right" }, "W"]
+end = "hauling"
+[effort]
+haul = "fall"
+[load]
+mass_at = "B"
+mass = 40
+[stroke]
+haul = "fall"
+from = -15
+to = 25
+poses = 7
+"""
+"""A boom that carries a rope with a pan on it, and is drawn up by another rope; the stroke is the rope hauled in."""
+
+SECTOR = """
+[points]
+O = [0, 0]
+A = { from = "O", distance = 80, angle = 100 }
+R = [160, 20]
+P = { meets = [["A", 150], ["R", 110]], side = "left" }
+S = [230, -90]
+foot = [230, -190]
+[members]
+ground = ["O", "R"]
+lever = ["O", "A"]
+link = ["A", "P"]
+rocker = ["R", "P"]
+weight = { points = ["S", "foot"], mass = 6 }
+[slides.shaft]
+member = "weight"
+along = 85
+[ropes.strap]
+path = [{ drum = "O", radius = 10, wrap = "left", on = "lever" }, { pulley = "P", radius = 4, wrap = "right" }, "S"]
+[effort]
+torque_on = "lever"
+[load]
+at = "foot"
+direction = -90
+size = 200
+[stroke]
+turn = "lever"
+from = "drawn"
+to = 125
+poses = 7
+"""
+"""A strap from a sector of a lever, crossed to a pulley on a pin of the linkage, to a weight in a shaft."""
+
 SAMPLES = (
     Sample("joint", "slide", "guide", RAM),
     Sample("joint", "slide", "collar_on_rocker", COLLAR),
     Sample("joint", "slot", "in_arm", SLOTTED),
     Sample("joint", "slot", "level", SLOTTED),
+    Sample("joint", "rope", "line", BOOM),
+    Sample("joint", "rope", "strap", SECTOR),
     Sample("joint", "weld", "corner", BRACKET),
     Sample("joint", "weld", "foot", BRACKET),
     Sample("load", "at", "load", RAM),
@@ -200,6 +269,8 @@ SAMPLES = (
     Sample("load", "torque_on", "twist", BRACKET),
     Sample("load", "mass_at", "plate", COLLAR),
     Sample("load", "mass_at", "bob", SLOTTED),
+    Sample("load", "haul", "effort", BOOM),
+    Sample("coordinate", "haul", "", BOOM),
     Sample("coordinate", "travel", "", RAM),
     Sample("coordinate", "turn", "", COLLAR),
     Sample("coordinate", "distance", "", SLOTTED),

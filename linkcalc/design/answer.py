@@ -50,7 +50,7 @@ class Bearing:
 class Event:
     """Something that happens at an exact pose.
 
-    kind      "largest", "smallest", "reversal", "dead point", "limit"
+    kind      "largest", "smallest", "reversal", "dead point", "slack", "limit"
     quantity  what it happens to, in the words of the requirements: "effort", "force ratio", "force at C", "strut"
     case      name of the load case, "" if it is the same for all
     drive     [rad or m] value of the stepped coordinate, found by root finding, not by sampling
@@ -122,6 +122,7 @@ class StrokeAnswer:
     drive_name: str  # "turn of handle", "travel of ram"; "" without a stroke
     bearings: tuple[Bearing, ...]
     two_force: tuple[str, ...]  # names of the two-force members, in the order of `axial`
+    ropes: tuple[str, ...]  # names of the ropes, in the order of `tension`
     status: Codes  # (case, variant, pose) mechanics.state.Status
     checks: Checks
     rubs: bool  # True if joints have friction: each case then comes twice, moving along the stroke and moving back
@@ -136,6 +137,7 @@ class StrokeAnswer:
     force: Array = quantity("force", axes=("bearing", "xy", *BATCH), text="force of the joint on the member")
     moment: Array = quantity("moment", axes=("bearing", *BATCH), text="moment of the joint on the member")
     axial: Array = quantity("force", axes=("two-force member", *BATCH), text="axial force, tension plus")
+    tension: Array = quantity("force", axes=("rope", *BATCH), text="tension of a rope, pull plus")
     x: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="x of the member's first point")
     y: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="y of the member's first point")
     turn: Array = quantity("angle", axes=("member", "one", "variant", "pose"), text="turn from the drawing pose")
@@ -175,6 +177,13 @@ class StrokeAnswer:
         if member not in self.two_force:
             raise KeyError(f"{member} is no two-force member; they are: {', '.join(self.two_force) or 'none'}")
         return self.axial[self.two_force.index(member)]
+
+    def tension_of(self, rope: str) -> Array:
+        """(case, variant, pose) [N] tension of a rope, pull plus."""
+        if rope not in self.ropes:
+            raise KeyError(f"no rope {rope}; known: {', '.join(self.ropes) or 'none'}")
+        tension: Array = self.tension[self.ropes.index(rope)]
+        return tension
 
     @property
     def joints(self) -> tuple[str, ...]:

@@ -8,12 +8,14 @@ import numpy as np
 
 from linkcalc.design.answer import Caveat, Event
 from linkcalc.design.curves import Curves
+from linkcalc.design.events import SLACK
 from linkcalc.mechanics.balance import part_of_motion
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.state import Status
 from linkcalc.model.units import show
 from linkcalc.parts.pose import Array, Mask
 
+_NOTHING = 1e-9  # of the largest force: no push, but rounding
 _AT = 1e-8  # speed of load or effort over the fastest in the mechanism: a dead point
 _NEAR = 0.05  # the same: the rigid answer is doubtful if, besides, the speed is falling to nothing
 _REACH = 0.1  # of the stroke: a dead point no farther than this beyond an end counts as close
@@ -21,7 +23,13 @@ _REACH = 0.1  # of the stroke: a dead point no farther than this beyond an end c
 
 def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple[Caveat, ...]:
     """All warnings of a solved stroke."""
-    return (*_dead(curves, events), *_passed(curves, path), *_held(curves, events), *_failed(curves))
+    return (
+        *_dead(curves, events),
+        *_slack(curves, events),
+        *_passed(curves, path),
+        *_held(curves, events),
+        *_failed(curves),
+    )
 
 
 def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
@@ -48,6 +56,22 @@ def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
                 place = f" at {_drive(curves, float(curves.drive[k]))}" if ready.steps else ""
                 much = "at" if least[k] < _AT else "close to"
                 yield Caveat(name, f"the pose{place} is {much} a dead point of the {name}: {texts[name]}")
+
+
+def _slack(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
+    """Ropes that would have to push."""
+    cases = curves.survey.ready.pushing.cases
+    for rope in curves.survey.ropes:
+        samples = curves.samples(f"tension of {rope}")
+        for k, case in enumerate(cases):
+            if not np.any(samples[k] < -_NOTHING * curves.largest_force):
+                continue
+            where = [_drive(curves, e.drive) for e in events if (e.kind, e.quantity, e.case) == (SLACK, rope, case)]
+            told = f"slack from {' and '.join(where)} on" if len(where) == 1 else f"slack between {' and '.join(where)}"
+            if not where:
+                told = "slack throughout" if np.all(samples[k] < 0) else "slack at some poses"
+            of_case = f" in case {case}" if case else ""
+            yield Caveat(rope, f"the rope is {told}{of_case}: it cannot push; the answer there is not that of a rope")
 
 
 def _ahead(part: Array, k: int) -> bool:

@@ -119,9 +119,10 @@ class Extremes:
 
     def found(self, besides: Collection[Wanted] = ()) -> dict[Wanted, Found]:
         """All of them, but for those that are known already."""
-        left = [k for k, w in enumerate(self.wanted) if w not in besides]
+        endless = self._endless(besides)
+        left = [k for k, w in enumerate(self.wanted) if w not in besides and w not in endless]
         if not left:
-            return {}
+            return endless
         signs = np.ones(len(self._case))
 
         def f(x: Array, k: Numbers) -> Array:
@@ -137,7 +138,17 @@ class Extremes:
             nearest = self._raw[only, np.abs(drive - place[:, None]).argmin(axis=1)]
             told = np.where(np.isfinite(nearest), nearest, signs[only])
             value = np.where(self._size[only] & (told < 0), -value, value)
-        return {self.wanted[k]: Found(float(p), float(v)) for k, p, v in zip(left, place, value, strict=True)}
+        found = {self.wanted[k]: Found(float(p), float(v)) for k, p, v in zip(left, place, value, strict=True)}
+        return found | endless
+
+    def _endless(self, besides: Collection[Wanted]) -> dict[Wanted, Found]:
+        """Those that have no bound at one of the poses themselves: a stroke may begin or end at a dead point."""
+        where = np.isposinf(self._seen(self._raw, slice(None))) if self.wanted else np.zeros((0, 1), bool)
+        return {
+            w: Found(float(self._curves.drive[np.argmax(row)]), w.sense * np.inf)
+            for w, row in zip(self.wanted, where, strict=True)
+            if row.any() and w not in besides
+        }
 
     def _seen(self, y: Array, k: Any) -> Array:
         """What is to be largest; a row a curve, or one value each."""

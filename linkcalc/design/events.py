@@ -12,6 +12,8 @@ from linkcalc.design.survey import EFFORT_SPEED, LOAD_SPEED
 from linkcalc.mechanics.path import Path
 from linkcalc.parts.pose import Array
 
+SLACK = "slack"
+"""Kind of the event where the tension of a rope passes through nothing."""
 _BOTH_WAYS = ("effort", "load", "force ratio", "ideal ratio")
 
 _POLE = 1e-7  # of the stroke: how near a dead point is looked at to see whether a curve has a bound there
@@ -28,7 +30,7 @@ def events(curves: Curves, path: Path) -> tuple[Event, ...]:
     _solve_ahead(curves, zeros, wanted)
     out += _passages(curves, zeros)
     dead = {e.drive for e in out if e.kind == "dead point"}
-    zero = {e.drive for e in out if e.kind in ("dead point", "reversal")}
+    zero = {e.drive for e in out if e.kind in ("dead point", "reversal", SLACK)}
     out += _extremes(curves, wanted, sorted(dead), sorted(zero))
     return tuple(out)
 
@@ -52,6 +54,7 @@ def _turning(curves: Curves) -> list[str]:
         *(name for name in _SPEEDS if name in curves.survey.quantities),
         *(name for name in axial if not _carries_nothing(curves, name)),
         *(["effort"] if curves.survey.ready.chain.rubs else []),
+        *(name for name in _tensions(curves) if not _carries_nothing(curves, name)),
     ]
 
 
@@ -64,6 +67,9 @@ def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
         elif name == "effort":
             # no effort is on the edge of the band between moving on and moving back
             yield Event("self-locking edge", "effort", of, drive, 0.0, curves.survey.quantities[name].kind)
+        elif name in _tensions(curves):
+            rope = name.removeprefix("tension of ")
+            yield Event(SLACK, rope, _case(curves, case), drive, 0.0, "force")
         else:
             member = name.removeprefix("axial force in ")
             yield Event("reversal", member, of, drive, 0.0, "force")
@@ -96,6 +102,9 @@ def _wanted(curves: Curves) -> Iterator[Wanted]:
             yield Wanted(f"force at {joint}", case, -1)
             if f"moment at {joint}" in curves.survey.quantities:
                 yield Wanted(f"moment at {joint}", case, 1, True)
+        for name in _tensions(curves):
+            yield Wanted(name, case, 1)
+            yield Wanted(name, case, -1)
         for member in _members(curves):
             yield Wanted(f"axial force in {member}", case, 1)
             yield Wanted(f"axial force in {member}", case, -1)
@@ -146,6 +155,10 @@ def _carries_nothing(curves: Curves, name: str) -> bool:
     quantity = curves.survey.quantities[name]
     arm = curves.survey.ready.chain.size if quantity.kind == "moment" else 1.0
     return curves.size(name) <= _NOTHING * curves.largest_force * arm
+
+
+def _tensions(curves: Curves) -> list[str]:
+    return [f"tension of {rope}" for rope in curves.survey.ropes]
 
 
 def _members(curves: Curves) -> list[str]:

@@ -105,6 +105,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
     if p.load:
         kinds["load"] = p.load[0].pusher.kind
     axial = [survey.quantities[f"axial force in {name}"].of(shown) for name in _two_force(survey)]
+    tension = [survey.quantities[f"tension of {rope}"].of(shown) for rope in survey.ropes]
     drive = solved.drive if ready.steps else np.full(still, np.nan)
     stroke_part = ready.drawing.mechanism.stroke
     return StrokeAnswer(
@@ -114,6 +115,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         drive_name=drive_name(stroke_part.along) if stroke_part else "",
         bearings=tuple(Bearing(s.joint, s.word, survey.side_name(s)) for s in shown.sides),
         two_force=tuple(_two_force(survey)),
+        ropes=survey.ropes,
         drive=_full(drive, (1, drive.shape[1], shape[2])),
         effort=_full(b.effort, shape),
         load=_full(b.load, shape),
@@ -125,6 +127,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         force=_solved(_stacked([f for s in shown.sides for f in (s.fx, s.fy)], shape), b.status).reshape(-1, 2, *shape),
         moment=_solved(_stacked([s.moment for s in shown.sides], shape), b.status),
         axial=_solved(_stacked(axial, shape), b.status),
+        tension=_solved(_stacked(tension, shape), b.status),
         x=_placed(_stacked(at.x, still), b.status),
         y=_placed(_stacked(at.y, still), b.status),
         turn=_placed(np.arctan2(_stacked(at.s, still), _stacked(at.c, still)), b.status),

@@ -32,7 +32,7 @@ class Shown:
 class Quantity:
     """Something with a value in every (case, variant, pose).
 
-    name  in trade words: "effort", "force at C", "force at C on arm", "axial force in strut"
+    name  in trade words: "effort", "force at C", "force at C on arm", "axial force in strut", "tension of hoist"
     kind  of its size: "force", "moment", "number"
     of    its value in a shown batch
     """
@@ -48,6 +48,7 @@ class Survey:
     first      the batch it was made from
     sides      the sides of its joints, as in every solved batch
     two_force  its two-force members
+    ropes      names of its ropes
     """
 
     def __init__(self, ready: Ready, first: Solved):
@@ -55,6 +56,7 @@ class Survey:
         self.first = shown = self.show(first)
         self.sides = shown.sides
         self.two_force: tuple[TwoForce, ...] = two_force_members(shown.sides, first.closed.at, ready.pushing)
+        self.ropes = tuple(dict.fromkeys(s.part_of for s in shown.sides if s.part_of))
         self.quantities: dict[str, Quantity] = {q.name: q for q in self._all()}
 
     def show(self, solved: Solved) -> Shown:
@@ -106,6 +108,9 @@ class Survey:
             turned = [k for k in ks if not isinstance(self.sides[k].moment, float)]
             if turned:
                 out.append(Quantity(f"moment at {joint}", "moment", _moment(turned[0])))
+        for rope in self.ropes:
+            first = next(k for k, side in enumerate(self.sides) if side.part_of == rope)
+            out.append(Quantity(f"tension of {rope}", "force", _carried(first)))
         for two in self.two_force:
             name = self.ready.drawing.members[two.member]
             out.append(Quantity(f"axial force in {name}", "force", _axial(two)))
@@ -136,6 +141,10 @@ def _resultant(ks: Sequence[int]) -> Callable[[Shown], Value]:
 
 def _moment(k: int) -> Callable[[Shown], Value]:
     return lambda shown: shown.sides[k].moment
+
+
+def _carried(k: int) -> Callable[[Shown], Value]:
+    return lambda shown: shown.sides[k].carried
 
 
 def _axial(two: TwoForce) -> Callable[[Shown], Value]:

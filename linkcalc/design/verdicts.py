@@ -53,7 +53,7 @@ def _judge(curves: Curves, requirement: Requirement, limit: float, place: float 
 
 def _worst(curves: Curves, requirement: Requirement, place: float | None) -> tuple[float, float, str]:
     _asked(curves, requirement)
-    name, sign = _quantity(requirement)
+    name, sign = _quantity(curves, requirement)
     upward = requirement.relation in ("<=", "<")
     cases = curves.survey.ready.pushing.cases
     size = requirement.quantity in _SIZES
@@ -92,9 +92,11 @@ def _inside(curves: Curves, requirement: Requirement, drive: float) -> None:
     raise fault(("requirements", requirement.name), what, "name a pose between its ends, or make the stroke longer")
 
 
-def _quantity(requirement: Requirement) -> tuple[str, int]:
+def _quantity(curves: Curves, requirement: Requirement) -> tuple[str, int]:
     """Name of the quantity in the survey, and the sign it is told with."""
     q = requirement
+    if q.quantity == "tension" and f"tension of {q.of}" in curves.survey.quantities:
+        return f"tension of {q.of}", 1
     if q.quantity in ("tension", "compression"):
         return f"axial force in {q.of}", 1 if q.quantity == "tension" else -1
     if q.quantity in ("force", "moment"):
@@ -104,7 +106,7 @@ def _quantity(requirement: Requirement) -> tuple[str, int]:
 
 def _asked(curves: Curves, requirement: Requirement) -> None:
     """Raises Faults for a quantity that the model has not."""
-    name = _quantity(requirement)[0]
+    name = _quantity(curves, requirement)[0]
     if name in curves.survey.quantities:
         return
     if requirement.quantity in ("tension", "compression"):

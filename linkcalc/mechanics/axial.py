@@ -27,7 +27,7 @@ def two_force_members(sides: Sequence[Side], at: Poses, pushing: Pushing) -> tup
         entry[0]
         for acting in pushing.all
         for entry, pin in zip(acting.pusher.push(at), acting.pusher.on_pins, strict=True)
-        if not pin
+        if not pin and not hasattr(acting.pusher, "through")
     }
     held: dict[int, list[int]] = {}
     for k, side in enumerate(sides):

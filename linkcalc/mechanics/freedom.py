@@ -81,7 +81,7 @@ def _names(chain: Chain, amount: Sequence[float] | Array) -> tuple[str, ...]:
     found = [
         joint.name
         for joint, first, end in zip(chain.joints, chain.first_row, ends, strict=True)
-        if np.max(amount[first:end]) > _TAKES_PART * top
+        if end > first and np.max(amount[first:end]) > _TAKES_PART * top
     ]
     return tuple(dict.fromkeys(found))
 

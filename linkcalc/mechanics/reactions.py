@@ -8,6 +8,9 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
 
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.pushing import Acting, Pushing, strength
@@ -26,6 +29,9 @@ class Side:
     moment       [N m] moment on it, about the joint's place
     x, y         [m] that place
     own_point    True if the place is a fixed point of the member, and no moment can act there
+    part_of      name of the joint that this is one of several sides of, each with its own name ("hoist" of a side
+                 "hoist at P"); "" otherwise
+    carried      [N] of such a joint what it carries throughout (the tension of a rope)
     """
 
     joint: str
@@ -38,6 +44,8 @@ class Side:
     x: Value
     y: Value
     own_point: bool
+    part_of: str = ""
+    carried: Value = 0.0
 
 
 def reactions(
@@ -54,7 +62,18 @@ def reactions(
     hubs: dict[str, tuple[int, Joint]] = {}
     pins = {joint.name for joint in chain.joints if joint.word == "pin"}
     turning: dict[str, Value] = {}
+    sized = list(_sized(pushing, at, effort, load))
     for number, (joint, first) in enumerate(zip(chain.joints, chain.first_row, strict=True)):
+        if hasattr(joint, "contacts"):
+            if joint.angular:
+                carried = multipliers[first]
+            else:  # what fails is not a number throughout
+                carried = np.where(np.isfinite(multipliers[0]), _passed_on(joint.name, sized), np.nan)
+            for side in _spread(joint, at, carried, pins):
+                if side.pin:
+                    on_pin.setdefault(side.pin, []).append((side.fx, side.fy))
+                sides.append(side)
+            continue
         x, y = at.spot(joint.site)
         pushes = rubbed.get(number, [])
         forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)], pushes)
@@ -78,7 +97,9 @@ def reactions(
                     moment = about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
                 own = turnable and (hub or member == joint.members[0])
                 sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
-    for acting, size in _sized(pushing, at, effort, load):
+    for acting, size in sized:
+        if hasattr(acting.pusher, "through"):
+            continue  # the joint has told it
         for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, acting.pusher.push(at), strict=False):
             if name:
                 on_pin.setdefault(name, []).append((size * fx, size * fy))
@@ -102,6 +123,27 @@ def _rubbed(chain: Chain, at: Poses, friction: Sequence[Value]) -> dict[int, lis
                 fx, fy, moment = (_times(p, size) if not isinstance(p, float) or p else 0.0 for p in parts)
                 out.setdefault(number, []).append((member, fx, fy, moment))
     return out
+
+
+def _passed_on(joint: str, sized: Sequence[tuple[Acting, Value]]) -> Value:
+    """[N] what all that push through a joint give it together: at the hauling end of a rope its tension."""
+    total: Value = 0.0
+    for acting, size in sized:
+        if getattr(acting.pusher, "through", "") == joint:
+            total = total + size
+    return total
+
+
+def _spread(joint: Any, at: Poses, carried: Value, pins: set[str]) -> Iterator[Side]:
+    """The sides of a joint that acts at several places, each told by itself."""
+    for c in joint.contacts(at):
+        x, y = at.spot(c.site)
+        fx, fy = carried * c.fx, carried * c.fy
+        turned = not (isinstance(c.moment, float) and c.moment == 0.0)
+        pin = c.on_pin if c.on_pin in pins else ""
+        member = -1 if pin else c.site.member
+        yield Side(c.name, joint.word, member, pin, fx, fy, carried * c.moment if turned else 0.0, x, y,
+                   not (pin or turned), joint.name, carried)  # fmt: skip
 
 
 def _on_members(

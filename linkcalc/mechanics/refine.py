@@ -83,7 +83,7 @@ def peaks(f: Curve, low: Array, high: Array, tolerance: float = 1e-9) -> tuple[A
         x = middle[:, None] + half[:, None] * _NODES
         x[:, 0], x[:, -1] = low[k], high[k]  # without rounding: an end is told as it was given
         y = f(x.ravel(), np.repeat(k, _NODES.size)).reshape(x.shape)
-        y = np.where(np.isfinite(y), y, -np.inf)
+        y = np.where(np.isnan(y), -np.inf, y)
         top = np.argmax(y, axis=1)
         rows = np.arange(k.size)
         better = y[rows, top] > value[k]
@@ -102,10 +102,10 @@ def peaks(f: Curve, low: Array, high: Array, tolerance: float = 1e-9) -> tuple[A
         done = np.abs(high[k] - low[k]) <= tolerance * width[k]
         # the value cannot gain any more than rounding: the parabola's rise over the bracket is below it
         best = y[rows, top]
-        nothing = best == -np.inf
+        boundless = np.isinf(best)
         with np.errstate(invalid="ignore"):
             flat = smooth & (best - y.min(axis=1) <= 1e-15 * np.abs(best))
-        live[k[done | flat | nothing]] = False
+        live[k[done | flat | boundless]] = False
         if not live.any():
             break
     return place, value

@@ -50,7 +50,8 @@ class Peaks:
 
     def __init__(self, samples: Samples):
         self._samples = samples
-        y = np.where(np.isfinite(samples.values), samples.values, -np.inf)
+        # what is no number is no peak; what has no bound is the highest there is
+        y = np.where(np.isnan(samples.values), -np.inf, samples.values)
         self._curve = np.arange(len(y))
         self._top = np.argmax(y, axis=1) if y.size else np.zeros(0, np.intp)
         self.place = samples.where[self._top]
@@ -60,7 +61,7 @@ class Peaks:
 
     def _look_at_humps(self, y: Array) -> None:
         every, highest = self._curve, self._top
-        humps = np.isfinite(y)
+        humps = y > -np.inf
         humps[:, 1:] &= y[:, 1:] > y[:, :-1]
         humps[:, :-1] &= y[:, :-1] >= y[:, 1:]
         humps[every, highest] = True
@@ -83,7 +84,7 @@ class Peaks:
             np.abs(index - nearest) < 1e-12, samples.where[nearest], samples.where[0] + samples.step * index
         )
         sound = np.isfinite(samples.values[curve, low]) & np.isfinite(samples.values[curve, high])
-        return place, np.where(sound, horner(t, power), samples.values[curve, top])
+        return np.where(sound, place, samples.where[top]), np.where(sound, horner(t, power), samples.values[curve, top])
 
     def _beside(self, top: Numbers) -> tuple[Numbers, Numbers]:
         return np.maximum(top - 1, 0), np.minimum(top + 1, self._samples.where.size - 1)
@@ -114,10 +115,10 @@ class Peaks:
         size = np.maximum(np.where(np.isfinite(near), near, 0.0), _FAINT * _sizes(values)[curve])
         with np.errstate(invalid="ignore"):
             sure = (np.abs(found - self._foretold[k]) <= _AGREES * size) & (found >= best - 1e-14 * size)
-        sure |= ~np.isfinite(best)  # there is no such curve
+        sure |= ~np.isfinite(best)  # there is no such curve, or it has no bound
         # a peak at the very end of the stroke needs no search
         end = ((top == 0) | (top == count - 1)) & (place == where[top])
-        value = np.where(end | np.isnan(best), best, found)
+        value = np.where(end | ~np.isfinite(best), best, found)
         doubt = np.nonzero(~(sure | end))[0]
         if doubt.size:
             place[doubt], value[doubt] = peaks(

@@ -19,8 +19,9 @@ from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.sketch import Drawing
 from linkcalc.model.tree import from_tree, to_tree
+from linkcalc.words import kinds
 
-_SHAPE = ("points", "members", "slots", "slides", "welds", "dimensions", "units")
+_SHAPE = ("points", "members", *(f"{word}s" for word in kinds("joint")), "dimensions", "units")
 _LOADS = ("effort", "load", "loads", "cases")
 
 

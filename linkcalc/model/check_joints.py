@@ -9,6 +9,7 @@ from typing import Any
 from linkcalc.model import walk
 from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import GROUND, Mechanism
+from linkcalc.parts.joints.rope import DEAD, HAULING, Pulley, Rope
 from linkcalc.parts.joints.slide import Slide
 from linkcalc.parts.joints.slot import Slot
 from linkcalc.parts.joints.weld import Weld
@@ -109,6 +110,35 @@ def _slide(joint: Slide, item: Item, carried: Carried, gather: Gather) -> None:
         gather.add((*item, "member"), "the ground does not slide", "name the ground in 'on'")
     if joint.at is not None:
         carried.check((joint.at,), joint.member, (*item, "at"), gather)
+
+
+@_check.register
+def _rope(joint: Rope, item: Item, carried: Carried, gather: Gather) -> None:
+    if item[-1] in carried.mechanism.members:
+        gather.add(item, f"{item[-1]!r} is a member already", "another name is wanted")
+    last = len(joint.path)
+    for k, step in enumerate(joint.path, 1):
+        where, carriers = (*item, "path", str(k)), carried.by(step.point)
+        if not carriers:
+            gather.add(where, f"no member carries {step.point}", f"name {step.point} in a member")
+        elif step.on is not None and step.on not in carriers:
+            wanted = f"one of {', '.join(carriers)}" if len(carriers) > 1 else f"{carriers[0]}, or left out"
+            gather.add((*where, "on"), f"{step.on} does not carry {step.point}", f"{wanted} is wanted")
+        elif step.fixed and step.on is None and len(carriers) > 1:
+            gather.add(where, f"{' and '.join(carriers)} carry {step.point}", "name in 'on' which of them the drum is")
+        ends, pulley = k in (1, last), isinstance(step, Pulley)
+        if ends and pulley:
+            what = f"the rope has one end only: it {'begins' if k == 1 else 'ends'} at the pulley at {step.point}"
+            gather.add((*item, "path"), what, "a point or drum is wanted at both ends")
+        elif not ends and not pulley:
+            wanted = f'{{ pulley = "{step.point}", radius = 30, wrap = "left" }} is wanted between the ends'
+            gather.add((*item, "path"), f"{step.point} is an end in the middle of the rope", wanted)
+    if joint.end == HAULING and joint.path[-1].fixed:
+        gather.add((*item, "end"), "a drum is no hauling end: it winds by its turn", "a point is wanted there")
+    pulled = [getattr(load.part, "haul", "") for load in walk.loads(carried.mechanism)]
+    if joint.end == HAULING and item[-1] not in pulled:
+        cure = f'an effort or load with haul = "{item[-1]}" is wanted, or end = "{DEAD}"'
+        gather.add((*item, "end"), "nothing pulls at its hauling end", cure)
 
 
 @_check.register

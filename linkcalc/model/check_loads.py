@@ -10,8 +10,11 @@ from linkcalc.model.check_joints import Carried
 from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import GROUND, Mechanism, strength_kind
 from linkcalc.parts.coordinates.distance import Distance
+from linkcalc.parts.coordinates.haul import Haul
 from linkcalc.parts.coordinates.turn import Turn
+from linkcalc.parts.joints.rope import HAULING
 from linkcalc.parts.loads.force import Force
+from linkcalc.parts.loads.haul import HaulForce
 from linkcalc.parts.loads.pair import Pair
 from linkcalc.parts.loads.torque import Torque
 from linkcalc.parts.loads.weight import Weight
@@ -135,6 +138,14 @@ def _pair(load: Pair, item: Item, carried: Carried, gather: Gather) -> None:
     alone = [{member} if member else set(carried.by(point)) for point, member in zip(load.between, ends, strict=True)]
     if alone[0] == alone[1] and len(alone[0]) == 1:
         gather.add(item, f"both points are on {alone[0].pop()}: it does nothing", "points of two members are wanted")
+
+
+@_check.register
+def _haul(part: Haul | HaulForce, item: Item, carried: Carried, gather: Gather) -> None:
+    rope = carried.mechanism.joints.get("rope", {}).get(part.haul)
+    if rope is not None and rope.end != HAULING:
+        cure = f'end = "{HAULING}" is wanted in [ropes.{part.haul}]'
+        gather.add((*item, "haul"), f"{part.haul} has no hauling end: both are made fast", cure)
 
 
 @_check.register

@@ -24,6 +24,7 @@ class Known:
     joints: tuple[str, ...]
     loads: tuple[str, ...]
     dimensions: tuple[str, ...]
+    ropes: tuple[str, ...] = ()
 
     @classmethod
     def of(cls, tree: Mapping[str, Any]) -> Known:
@@ -34,11 +35,12 @@ class Known:
         joints = tuple(name for word in kinds("joint") for name in names(f"{word}s"))
         loads = (*((_LOAD,) if "load" in tree else ()), *names("loads"))
         members = (GROUND, *(m for m in names("members") if m != GROUND))
-        return cls(names("points"), members, joints, loads, names("dimensions"))
+        return cls(names("points"), members, joints, loads, names("dimensions"), names("ropes"))
 
     def table(self, of: str) -> tuple[str, ...]:
-        """The names that a field may give: of = "point", "member", "guide", "load"."""
-        return {"point": self.points, "member": self.members, "guide": self.joints, "load": self.loads}[of]
+        """The names that a field may give: of = "point", "member", "guide", "load", "rope"."""
+        tables = {"point": self.points, "member": self.members, "guide": self.joints, "load": self.loads}
+        return {**tables, "rope": self.ropes}[of]
 
 
 def _one(value: Any, of: str) -> Iterator[tuple[str, str]]:

@@ -44,8 +44,10 @@ def _check_has(one: Requirement, mechanism: Mechanism) -> None:
 
 
 def _check_names(one: Requirement, known: Known, drawing: Drawing | None) -> None:
-    joints = tuple(joint.name for joint in drawing.joints) if drawing else known.joints + known.points
+    joints = tuple(_sides(drawing)) if drawing else known.joints + known.points
     pools = {"at": ("joint", joints), "in": ("member", known.members[1:])}
+    if one.quantity == "tension" and known.ropes:
+        pools["in"] = ("member or rope", known.members[1:] + known.ropes)
     pools["of"] = ("point, slot or slide", known.joints + known.points)
     word = MEASURES[one.quantity].word
     if word:
@@ -59,7 +61,9 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
     """The joint must have that force, moment or travel, and the member that side of it."""
     word = MEASURES[one.quantity].word
     joints = [joint for joint in drawing.joints if joint.name == one.of]
-    if word == "at":
+    if word == "at" and not joints:  # one side of a joint that acts at several places
+        _check_side(one, drawing)
+    elif word == "at":
         if MEASURES[one.quantity].kind == "moment" and not any(any(joint.angular) for joint in joints):
             able = [j.name for j in drawing.joints if any(j.angular)]
             raise fault((), f"{one.of!r} takes no moment", nearest(one.of, able))
@@ -68,6 +72,27 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
             raise fault((), f"{one.of!r} does not join {one.on!r}", f"it joins {', '.join(sorted(sides))}")
     if word == "of" and one.of not in drawing.points and not any(hasattr(joint, "travel") for joint in joints):
         raise fault((), f"{one.of!r} has no travel", "a point, slot or slide is wanted")
+
+
+def _sides(drawing: Drawing) -> dict[str, str]:
+    """Names of all joints; of one that acts at several places those of its sides, each with its member or pin."""
+    sides: dict[str, str] = {}
+    for joint in drawing.joints:
+        if not hasattr(joint, "contacts"):
+            sides[joint.name] = ""
+            continue
+        for contact in joint.contacts(drawing.drawn):
+            pin = contact.on_pin if contact.on_pin in drawing.pins else ""
+            sides[contact.name] = f"pin {pin}" if pin else drawing.members[contact.site.member]
+    return sides
+
+
+def _check_side(one: Requirement, drawing: Drawing) -> None:
+    feels = _sides(drawing)[one.of]
+    if MEASURES[one.quantity].kind == "moment":
+        raise fault((), f"{one.of!r} takes no moment", "a slide or weld is wanted")
+    if one.on and one.on != feels:
+        raise fault((), f"{one.of!r} does not join {one.on!r}", f"it acts on {feels}: leave 'on {one.on}' out")
 
 
 def _known(name: str, what: str, pool: Iterable[str]) -> None:

@@ -28,10 +28,12 @@ class Measure:
 
     kind  kind of its size; "effort" and "load": as the model's effort or load has it
     word  the word before the name it is told of: "at", "in", "of"; "" if it is of the whole
+    also  words that may stand in its place
     """
 
     kind: str
     word: str = ""
+    also: tuple[str, ...] = ()
 
 
 MEASURES: dict[str, Measure] = {
@@ -42,7 +44,7 @@ MEASURES: dict[str, Measure] = {
     "ideal ratio": Measure("number"),
     "force": Measure("force", "at"),
     "moment": Measure("moment", "at"),
-    "tension": Measure("force", "in"),
+    "tension": Measure("force", "in", ("of",)),
     "compression": Measure("force", "in"),
     "travel": Measure("length", "of"),
 }
@@ -124,11 +126,11 @@ def _told_of(words: list[str], text: str) -> tuple[str, str, str]:
         rest = words[count:]
         if not measure.word and not rest:
             return quantity, "", ""
-        if measure.word and len(rest) >= 2 and rest[0] == measure.word:
-            if len(rest) == 2:
-                return quantity, rest[1], ""
-            if len(rest) == 4 and rest[2] == "on" and measure.word == "at":
-                return quantity, rest[1], rest[3]
+        if measure.word and len(rest) >= 2 and rest[0] in (measure.word, *measure.also):
+            told, on = (rest[1:-2], rest[-1]) if rest[-2] == "on" and measure.word == "at" else (rest[1:], "")
+            # a side of a rope is told by the rope and its place: "hoist at P"
+            if len(told) == 1 or (len(told) == 3 and told[1] == "at" and measure.word == "at"):
+                return quantity, " ".join(told), on
         form = f"'{quantity} {measure.word} NAME'" if measure.word else f"{quantity!r} alone"
         form += f" or '{quantity} at NAME on MEMBER'" if measure.word == "at" else ""
         raise fault((), f"{' '.join(words)!r} is no quantity", f"{form} is wanted")

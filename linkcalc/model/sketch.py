@@ -7,6 +7,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from contextlib import contextmanager
+from functools import cached_property
 from itertools import pairwise
 from typing import Any
 
@@ -19,7 +20,7 @@ from linkcalc.model.formulas import to_si
 from linkcalc.model.mechanism import GROUND, Mechanism, Member, Pin
 from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
 from linkcalc.model.units import show
-from linkcalc.parts.contract import Joint, Pusher, Site, Size, Travelled, Value
+from linkcalc.parts.contract import Hauled, Joint, Poses, Pusher, Site, Size, Travelled, Value
 from linkcalc.words import nearest
 
 
@@ -147,6 +148,21 @@ class Drawing:
             raise fault((), f"unknown slot or slide {name!r}", nearest(name, able))
         found: Travelled = able[name]
         return found
+
+    def hauled(self, name: str) -> Hauled:
+        """The rope of that name. Raises Faults."""
+        able: dict[str, Any] = {j.name: j for j in self.joints if hasattr(j, "haul")}
+        if name not in able:
+            raise fault((), f"unknown rope {name!r}", nearest(name, able))
+        found: Hauled = able[name]
+        return found
+
+    @cached_property
+    def drawn(self) -> Poses:
+        """All members in the drawing pose."""
+        x, y = zip(*self.origins, strict=True)
+        count = len(self.members)
+        return Poses(x, y, [1.0] * count, [0.0] * count)
 
     # what the engine asks
 

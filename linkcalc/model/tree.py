@@ -157,6 +157,22 @@ def _table(raw: Any, meta: Meta, item: Item, gather: Gather) -> Any:
     return read_table(meta["of"], raw, item, gather)
 
 
+def _parts(raw: Any, meta: Meta, item: Item, gather: Gather) -> Any:
+    """Parts of a family in order; a name alone stands for the kind with a short form."""
+    if not isinstance(raw, (list, tuple)) or len(raw) < meta["least"]:
+        what = f"a list of {len(raw)}" if isinstance(raw, (list, tuple)) else f"{shown(raw)} is no list"
+        gather.add(item, what, meta["wanted"])
+        return BROKEN
+    short = next(kind for kind in kinds(meta["family"]).values() if hasattr(kind, "short"))
+    found = [
+        read_table(short, one, (*item, str(k)), gather)
+        if isinstance(one, str)
+        else _part(one, {"family": meta["family"]}, (*item, str(k)), gather)
+        for k, one in enumerate(raw, 1)
+    ]
+    return BROKEN if any(one is BROKEN for one in found) else tuple(found)
+
+
 def _text(raw: Any, meta: Meta, item: Item, gather: Gather) -> Any:
     return gather.attempt(item, lambda: SHAPES["text"](raw, meta), BROKEN)
 
@@ -232,6 +248,7 @@ class _Joints:
 _NESTED: dict[str, Callable[[Any, Meta, Item, Gather], Any]] = {
     "table": _table,
     "part": _part,
+    "parts": _parts,
     "named tables": _named(_table),
     "named parts": _named(_part),
     "named texts": _named(_text),

@@ -19,11 +19,15 @@ class Part(NamedTuple):
     part: Any
 
     def fields(self) -> Iterator[tuple[Item, Field[Any], Any]]:
-        """Its fields that are given: place, field, value."""
+        """Its fields that are given, those of parts within it too: place, field, value."""
         for entry in part_fields(self.part):
             value = getattr(self.part, entry.name)
-            if value is not None:
-                yield (*self.item, key_of(type(self.part), entry)), entry, value
+            item = (*self.item, key_of(type(self.part), entry))
+            if entry.metadata["kind"] == "parts":
+                for k, one in enumerate(value, 1):
+                    yield from Part((*item, str(k)), one).fields()
+            elif value is not None:
+                yield item, entry, value
 
 
 def joints(mechanism: Mechanism) -> Iterator[Part]:

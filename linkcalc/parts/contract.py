@@ -17,8 +17,8 @@ from typing import Protocol
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
-    "TURN", "Array", "Coordinate", "Drive", "Entry", "Joint", "Mark", "Poses", "Push", "Pusher", "Row", "Rub", "Site",
-    "Size", "Sketch", "Travelled", "Value", "X", "Y",
+    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Hauled", "Joint", "Mark", "Poses", "Push", "Pusher",
+    "Row", "Rub", "Site", "Size", "Sketch", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -38,16 +38,43 @@ class Mark:
     spots   places in ground axes [m], one pose: ((x, y), ...)
     along   direction of the line or arrow (x, y), (0, 0) if it has none
     name    what to write beside it
+    line    its own line, if it has one that is neither straight nor a member's: ((x, y), ...)
+    rounds  circles that belong to it: ((x, y, radius), ...)
     """
 
     shape: str
     spots: tuple[tuple[float, float], ...]
     along: tuple[float, float] = (0.0, 0.0)
     name: str = ""
+    line: tuple[tuple[float, float], ...] = ()
+    rounds: tuple[tuple[float, float, float], ...] = ()
+
+
+@dataclass(frozen=True, eq=False)
+class Contact:
+    """One of the places where a joint acts, if it acts at more than one.
+
+    name    what this side of the joint is called: "hoist at P"
+    site    the place, and the member that feels it there
+    on_pin  name of the pin that it acts on itself, "" if it acts on that member
+    fx, fy  [-] force there for a multiplier of 1, ground axes
+    moment  [m] moment about that place for a multiplier of 1; the float 0.0 where there can be none
+    """
+
+    name: str
+    site: Site
+    on_pin: str
+    fx: Value
+    fy: Value
+    moment: Value
 
 
 class Sketch(Protocol):
     """What a part may ask of the mechanism as drawn. Everything in SI; batches are (1, variant, 1)."""
+
+    @property
+    def drawn(self) -> Poses:
+        """all members in the drawing pose"""
 
     @property
     def size(self) -> float:
@@ -81,7 +108,10 @@ class Sketch(Protocol):
         """[-] coefficient of friction: a joint's own, else that of its kind ("pins", "slots", "slides"), else 0.0"""
 
     def travelled(self, name: str) -> Travelled:
-        """the slot or slide of that name, for a stroke along it"""
+        """the slot, slide or track of that name, for a stroke along it"""
+
+    def hauled(self, name: str) -> Hauled:
+        """the rope of that name, to draw it in at its hauling end"""
 
 
 @dataclass(frozen=True, eq=False)
@@ -102,6 +132,9 @@ class Rub:
 
 class Joint(Protocol):
     """Something that holds members together: rows of constraint equations.
+
+    One that acts at several places has, besides, ``contacts(at)``: a Contact for each of them. It has one row, whose
+    multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).
 
     name, word   what the file calls it, and its kind
     members      indices of the members it joins; the first is the one its force acts on
@@ -144,8 +177,31 @@ class Travelled(Protocol):
     def travel_slope(self, at: Poses) -> Row: ...
 
 
+class Hauled(Protocol):
+    """A joint that can be drawn in at one end (rope)."""
+
+    @property
+    def name(self) -> str: ...
+    @property
+    def hauled(self) -> bool:
+        """True if it has such an end"""
+
+    @property
+    def pins(self) -> tuple[str, ...]:
+        """for each of its contacts the name of the pin that takes it, "" if a member does"""
+
+    def haul(self, at: Poses) -> Value:
+        """[m] how much has been drawn in since the drawing pose"""
+
+    def haul_slope(self, at: Poses) -> Row: ...
+    def contacts(self, at: Poses) -> tuple[Contact, ...]: ...
+    def mark(self, at: Poses) -> Mark: ...
+
+
 class Pusher(Protocol):
     """Something that pushes: a force, torque, weight or pair.
+
+    One whose push comes through a joint has, besides, ``through``: the name of the joint, whose contacts tell it.
 
     name, word   what the file calls it, and its kind
     kind         kind of its strength: "force" or "moment"

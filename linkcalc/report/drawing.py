@@ -43,11 +43,12 @@ def draw_mechanism(
     for pose in poses[1:]:
         items += _bodies(scene, scene.at(pose, case), "ghost")
     items += _bodies(scene, main, "plain")
-    outside = [*scene.acting(poses[0], case), *_ground(scene, poses[0], case)] if forces else []
+    outside = _outside(scene, poses[0], case) if forces else []
     shown = arrows(outside, edge)
     joints = scene.joints(main)
     # what the ground carries stands at its arrow already
-    sized = [j.name for j, _ in joints if joint_sizes and not (forces and 0 in j.members)]
+    told = {b.joint for b in answer.bearings}
+    sized = [j.name for j, _ in joints if joint_sizes and j.name in told and not (forces and 0 in j.members)]
     sizes = {j: edge.text(float(answer.joint_force(j)[case, 0, poses[0]]), "force") for j in sized}
     named = {a.name for a in outside if any(a.force)}
     for joint, mark in joints:
@@ -150,12 +151,29 @@ def _joint(scene: Scene, at: Poses, joint: Joint, mark: Mark, sizes: Mapping[str
     grounded = "ground" if 0 in joint.members else "plain"
     # a pin is named by its point, and written there; a name at an arrow need not be written twice
     name = "" if told or mark.name in scene.sketch.points else _with_size(mark.name, sizes)
-    items = [Item(mark.shape, mark.spots, mark.along, name, grounded)]
-    if any(mark.along):
+    items = [Item("wheel", _ring(x, y, r)) for x, y, r in mark.rounds]
+    if mark.line:
+        items.append(Item(f"line of {mark.shape}", mark.line, tone=grounded))
+    items.append(Item(mark.shape, mark.spots, mark.along, name, grounded))
+    if hasattr(joint, "contacts"):
+        ends = (c for c in joint.contacts(at) if c.site.member == 0)
+        items[:0] = [Item("footing", (scene.place(at, c.site),)) for c in ends]
+    elif mark.line:
+        pass  # it stands on its own line
+    elif any(mark.along):
         items.insert(0, Item("guide", _reach(scene, joint, mark, at), mark.along, tone=grounded))
     elif 0 in joint.members:
         items.insert(0, Item("footing", mark.spots))
     return items
+
+
+def _ring(x: float, y: float, r: float) -> tuple[Spot, ...]:
+    """A circle by its centre and four places on it."""
+    return (x, y), (x + r, y), (x, y + r), (x - r, y), (x, y - r)
+
+
+def _outside(scene: Scene, pose: int, case: int) -> list[Acts]:
+    return [*scene.acting(pose, case), *scene.hauling(pose, case), *_ground(scene, pose, case)]
 
 
 def _reach(scene: Scene, joint: Joint, mark: Mark, here: Poses) -> tuple[Spot, Spot]:

@@ -58,6 +58,9 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "two-force members": [
             {"member": m, "axial": _array(edge, answer.axial_in(m), "force", _BATCH)} for m in answer.two_force
         ],
+        "ropes": [
+            {"rope": r, "tension": _array(edge, answer.tension_of(r), "force", _BATCH)} for r in answer.ropes
+        ],
         "members": [
             {
                 "member": member,

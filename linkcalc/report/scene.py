@@ -11,7 +11,7 @@ import numpy as np
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.parts_list import EFFORT, LOAD, CaseLoads
 from linkcalc.model.sketch import drawn
-from linkcalc.parts.contract import Joint, Mark, Pusher
+from linkcalc.parts.contract import Joint, Mark, Pusher, Site
 from linkcalc.parts.pose import Poses
 
 Spot = tuple[float, float]
@@ -70,6 +70,10 @@ class Scene:
         """[m] a point as a member carries it."""
         return _spot(at.spot(self.sketch.site(point, member)))
 
+    def place(self, at: Poses, site: Site) -> Spot:
+        """[m] where a site is."""
+        return _spot(at.spot(site))
+
     def body(self, at: Poses, member: str) -> tuple[Spot, ...]:
         """[m] the line of a member's body."""
         entry = self.answer.mechanism.members[member]
@@ -98,6 +102,8 @@ class Scene:
         at, found = self.at(pose, case), []
         answered = {EFFORT: self.answer.effort, LOAD: self.answer.load}
         for pusher, tone, factor in self.pushers(case):
+            if hasattr(pusher, "through"):
+                continue  # a joint tells it
             size = answered[tone][case, 0, pose] if tone in answered else factor * _number(pusher.strength(at))
             spots = pusher.mark(at).spots
             for k, push in enumerate(pusher.push(at)):
@@ -112,10 +118,29 @@ class Scene:
                 found.append(Acts(pusher.name, tone, member, pin, (x, y), (fx, fy), moment))
         return found
 
+    def hauling(self, pose: int, case: int) -> list[Acts]:
+        """What pulls at the hauling ends of ropes, each on its end and along it; what it does is told by the rope."""
+        at, found = self.at(pose, case), []
+        answered = {EFFORT: self.answer.effort, LOAD: self.answer.load}
+        for pusher, tone, factor in self.pushers(case):
+            if not hasattr(pusher, "through"):
+                continue
+            size = answered[tone][case, 0, pose] if tone in answered else factor * _number(pusher.strength(at))
+            (ax, ay), (bx, by) = self.sketch.hauled(pusher.through).mark(at).line[-2:]
+            long = float(np.hypot(bx - ax, by - ay))
+            force = float(size) * (bx - ax) / long, float(size) * (by - ay) / long
+            found.append(Acts(pusher.name, tone, -1, "", (bx, by), force, 0.0))
+        return found
+
     def bearings(self, pose: int, case: int) -> list[Acts]:
         """What each member feels of each joint; what a pin itself feels of a slot is between them, and left out."""
         at = self.at(pose, case)
         places = {mark.name: mark.spots[0] for _, mark in self.joints(at)}
+        places |= {
+            contact.name: _spot(at.spot(contact.site))
+            for joint in self.sketch.joints
+            for contact in (joint.contacts(at) if hasattr(joint, "contacts") else ())
+        }
         return [
             Acts(
                 b.joint, "joint", self.sketch.member(b.member), "", places[b.joint],

@@ -160,6 +160,27 @@ def _point(pen: Pen, item: Item) -> None:
     pen.words(item.name, spot, style.BAR * 0.8, pen.away(spot))
 
 
+def _wheel(pen: Pen, item: Item) -> None:
+    """A pulley, drum or gear by its pitch circle: centre, and four places on it."""
+    (x, y), (rim, _) = item.spots[0], item.spots[1]
+    turns = np.linspace(0.0, 2 * np.pi, 73)
+    ring = [(x + (rim - x) * float(np.cos(t)), y + (rim - x) * float(np.sin(t))) for t in turns]
+    pen.shape(ring, facecolor=style.PAPER, edgecolor=style.SOFT, lw=style.OUTLINE, zorder=2.2, alpha=0.85)
+    pen.keep_clear(ring, weight=0.5)
+
+
+def _rope(pen: Pen, item: Item) -> None:
+    if item.name:
+        (ax, ay), (bx, by) = item.spots[0], item.spots[1]
+        middle = ((ax + bx) / 2, (ay + by) / 2)
+        pen.words(item.name, middle, style.BAR, pen.away(middle), fontsize=style.SMALL)
+
+
+def _line_of_rope(pen: Pen, item: Item) -> None:
+    pen.line(item.spots, style.ROPE, style.INK, zorder=4.8)
+    pen.keep_clear(item.spots, style.ROPE)
+
+
 def _told_by_arrow(pen: Pen, item: Item) -> None:
     """Forces and torques have no body of their own."""
 
@@ -235,4 +256,8 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "torque": _told_by_arrow,
     "pair": _pair,
     "weight": _weight,
+    "wheel": _wheel,
+    "rope": _rope,
+    "line of rope": _line_of_rope,
+    "haul": _told_by_arrow,
 }

@@ -54,6 +54,8 @@ def stroke_table(answer: StrokeAnswer) -> Table:
             add(f"{on} moment", answer.moment[i], "moment")
     for member in answer.two_force:
         add(f"axial in {member}", answer.axial_in(member), "force")
+    for rope in answer.ropes:
+        add(f"tension of {rope}", answer.tension_of(rope), "force")
     columns.append(Column("status"))
     cells.append([Status(int(s)).text for s in answer.status.ravel()])
     return Table(tuple(columns), tuple(zip(*cells, strict=True)), keys=2)

@@ -51,6 +51,7 @@ OUTLINE = 0.9
 ARROW = 1.4
 # points
 BAR = 8.0  # across a member
+ROPE = 1.7
 PIN = 5.0
 BLOCK = 10.0
 SHORTEST_ARROW, LONGEST_ARROW = 20.0, 44.0

@@ -41,7 +41,9 @@ BAD = [
         'squareto = ["grip", "A"]',
         "effort.squareto: unknown key 'squareto'; did you mean 'square_to'?",
     ),
-    _changed("unknown table", "[stroke]", "[strokes]", "strokes: unknown key 'strokes'; did you mean 'stroke'?"),
+    _changed(
+        "unknown table", "[stroke]", "[strokes]", "strokes: unknown key 'strokes'; did you mean 'stroke' or 'ropes'?"
+    ),
     _changed(
         "wrong kind of unit",
         "size = 500",

@@ -5,15 +5,15 @@ from __future__ import annotations
 from typing import Any
 
 TOP = [
-    "schema", "answer", "title", "note", "drive", "axes", "quantities", "joints", "two-force members", "members",
-    "events", "requirements", "holds", "warnings", "checks", "status",
+    "schema", "answer", "title", "note", "drive", "axes", "quantities", "joints", "two-force members", "ropes",
+    "members", "events", "requirements", "holds", "warnings", "checks", "status",
 ]  # fmt: skip
 QUANTITIES = ["drive", "effort", "load", "tare effort", "force ratio", "ideal ratio"]
 JOINT = {
     "x": "force", "y": "force", "resultant": "force", "direction": "angle", "direction from own axis": "angle",
     "moment": "moment",
 }  # fmt: skip
-EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point"}
+EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack"}
 BATCH = ["case", "variant", "pose"]
 STILL = ["one", "variant", "pose"]
 
@@ -46,6 +46,9 @@ class Schema:
         for entry in tree["two-force members"]:
             assert entry["member"] in tree["axes"]["member"]
             self.array(entry["axial"], "force", BATCH)
+        for entry in tree["ropes"]:
+            assert list(entry) == ["rope", "tension"]
+            self.array(entry["tension"], "force", BATCH)
         assert [entry["member"] for entry in tree["members"]] == tree["axes"]["member"]
         for entry in tree["members"]:
             for key, kind in (("x", "length"), ("y", "length"), ("turn", "angle")):

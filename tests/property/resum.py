@@ -16,6 +16,7 @@ from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.mechanism import GROUND, Case, Member
 from linkcalc.model.sketch import Drawing
 from linkcalc.parts.loads.force import Force
+from linkcalc.parts.loads.haul import HaulForce
 from linkcalc.parts.loads.pair import Pair
 from linkcalc.parts.loads.torque import Torque
 from linkcalc.parts.loads.weight import Weight
@@ -64,6 +65,10 @@ class Resum:
     def joint_place(self, joint: str, word: str) -> tuple[np.ndarray, np.ndarray]:
         if word == "pin":
             return self.somewhere(joint)
+        if word == "rope":  # a side of it is called by the place: "hoist at P"
+            rope, _, point = joint.partition(" at ")
+            step = next(s for s in self.mechanism.joints[word][rope].path if s.point == point)
+            return self.place(point, step.on) if step.on else self.somewhere(point)
         part = self.mechanism.joints[word][joint]
         match word:
             case "slot":
@@ -138,6 +143,8 @@ class Resum:
             case Force():
                 ux, uy = self._direction(load)
                 yield self.bearer(load.at, load.on), *self.somewhere(load.at), size * ux, size * uy, none
+            case HaulForce():
+                return  # the rope tells what it does
             case Torque():
                 for who, sign in ((load.torque_on, 1.0), (load.against, -1.0)):
                     yield who, none, none, none, none, sign * size

@@ -61,7 +61,7 @@ def test_every_array_has_the_axes_that_it_says() -> None:
         )
     )
     sizes = {"one": 1, "case": 2, "variant": 1, "pose": 5, "xy": 2, "bearing": len(answer.bearings),
-             "two-force member": len(answer.two_force), "member": 3}  # fmt: skip
+             "two-force member": len(answer.two_force), "rope": len(answer.ropes), "member": 3}  # fmt: skip
     for name, meta in quantities(answer).items():
         known = [axis for axis in meta["axes"] if axis in sizes]
         assert len(known) == len(meta["axes"]), f"{name} has an axis of an unknown name"

@@ -35,6 +35,7 @@ FIELDS = {
     "factors": lambda _: st.dictionaries(NAMES, st.floats(-1e9, 1e9), max_size=2),
     "text": lambda _: TEXTS,
     "part": lambda m: part(m),
+    "parts": lambda m: st.lists(part(m), min_size=m["least"], max_size=4).map(tuple),
     "table": lambda m: filled(m["of"]),
     "coordinate": lambda _: part({"family": "coordinate"}),
     "named tables": lambda m: st.dictionaries(NAMES, filled(m["of"]), max_size=3),

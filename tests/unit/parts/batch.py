@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from typing import Any
 
 import numpy as np
@@ -13,9 +13,10 @@ from linkcalc.parts.pose import Poses, Value
 SHAPE = (1, 3, 5)
 """(case, variant, pose) of the batches"""
 STEP = 1e-5
-"""[m] and [rad] of a central difference: its error is of the order of the step squared, 1e-10"""
+"""[m] and [rad] of a central difference"""
 SLOPE_TOLERANCE = 1e-8
-"""Truncation 1e-10 and rounding 1e-16 / STEP = 1e-11, with two figures to spare."""
+"""Truncation is of the order of the step to the fourth over a length to the fourth, of some mm at the least: 1e-11;
+rounding 1e-16 / STEP = 1e-11; with three figures to spare."""
 ROUNDING = 1e-12
 """Sums of a few dozen products of sizes near 1."""
 
@@ -40,6 +41,13 @@ def nudged(at: Poses, member: int, which: int, by: float) -> Poses:
     else:
         (x, y)[which][member] = (at.x, at.y)[which][member] + by
     return Poses(x, y, c, s, at.down, at.field)
+
+
+def difference(f: Callable[[Poses], Any], at: Poses, member: int, which: int) -> Any:
+    """Derivative of a value by one coordinate of one member, from two central differences."""
+    near, far = (np.subtract(f(nudged(at, member, which, n * STEP)), f(nudged(at, member, which, -n * STEP)))
+                 for n in (1, 2))  # fmt: skip
+    return (8 * near - far) / (12 * STEP)
 
 
 def closed(joint: Joint, at: Poses) -> Poses:

@@ -5,9 +5,9 @@ from __future__ import annotations
 import numpy as np
 import pytest
 
-from linkcalc.parts.contract import Coordinate
+from linkcalc.parts.contract import Coordinate, Poses, Value
 from tests.samples import RAM, SLOTTED, Sample, samples
-from tests.unit.parts.batch import ROUNDING, SHAPE, SLOPE_TOLERANCE, STEP, dense, nudged, one, random_poses
+from tests.unit.parts.batch import ROUNDING, SHAPE, SLOPE_TOLERANCE, STEP, dense, difference, one, random_poses
 
 
 def coordinates() -> list[tuple[str, Coordinate, int]]:
@@ -49,13 +49,15 @@ def test_slope_is_the_derivative_of_the_gap_and_of_the_value(coordinate: Coordin
     slope = dense([held.slope(at)], members, SHAPE)[0]
     assert held.angular == (coordinate.kind == "angle")
     for k in range(3, 3 * members):
-        ahead, behind = (nudged(at, k // 3, k % 3, by) for by in (STEP, -STEP))
-        by_gap = (held.gap(ahead) - held.gap(behind)) / (2 * STEP)
-        by_value = coordinate.value(ahead) - coordinate.value(behind)
-        if held.angular:
-            by_value = (by_value + np.pi) % (2 * np.pi) - np.pi
-        np.testing.assert_allclose(slope[k], np.broadcast_to(by_gap, SHAPE), atol=SLOPE_TOLERANCE)
-        np.testing.assert_allclose(slope[k], np.broadcast_to(by_value / (2 * STEP), SHAPE), atol=SLOPE_TOLERANCE)
+        start = coordinate.value(at)
+
+        def moved(there: Poses, start: Value = start) -> Value:
+            by = coordinate.value(there) - start
+            return (by + np.pi) % (2 * np.pi) - np.pi if held.angular else by
+
+        for f in (held.gap, moved):
+            by = difference(f, at, k // 3, k % 3)
+            np.testing.assert_allclose(slope[k], np.broadcast_to(by, SHAPE), atol=SLOPE_TOLERANCE)
 
 
 @every_coordinate
@@ -115,6 +117,7 @@ def test_in_the_drawing_pose_a_coordinate_is_what_the_drawing_shows() -> None:
             return float(np.arctan2(*(p[b] - p[a])[::-1]))
 
         shown = {
+            "haul": lambda: 0.0,
             "distance": lambda p=p: np.hypot(*(p["low"] - p["A"])),
             "turn": lambda d=direction: d("O", "grip") - d("A", "B"),
             "travel": lambda p=p: (p["nose"] - p["A"]) @ (p["C"] - p["A"]) / np.hypot(*(p["C"] - p["A"])),

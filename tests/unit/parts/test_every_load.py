@@ -56,7 +56,9 @@ def test_turning_the_drawing_turns_the_push(sample: Sample) -> None:
 @every_load
 def test_a_force_of_one_newton_is_one_newton(sample: Sample) -> None:
     part, members = pusher(sample)
-    for _, fx, fy, moment in part.push(random_poses(members)):
+    pushes = part.push(random_poses(members))
+    # of a rope only the ends feel the pull itself
+    for _, fx, fy, moment in (pushes[0], pushes[-1]) if hasattr(part, "through") else pushes:
         size = np.hypot(fx, fy)
         np.testing.assert_allclose(size if part.kind == "force" else np.abs(moment), 1.0, atol=ROUNDING)
 

@@ -11,8 +11,18 @@ from linkcalc.parts.joints.pin import PinJoint
 from linkcalc.parts.pose import Site
 from linkcalc.words import kinds
 from tests.property.resum import unbalanced
-from tests.samples import BRACKET, COLLAR, RAM, SAMPLES, SLOTTED, Sample, samples
-from tests.unit.parts.batch import ROUNDING, SHAPE, SLOPE_TOLERANCE, STEP, closed, dense, nudged, one, random_poses
+from tests.samples import SAMPLES, Sample, samples
+from tests.unit.parts.batch import (
+    ROUNDING,
+    SHAPE,
+    SLOPE_TOLERANCE,
+    closed,
+    dense,
+    difference,
+    nudged,
+    one,
+    random_poses,
+)
 
 FAMILIES = ("joint", "load", "coordinate", "construction")
 
@@ -34,7 +44,7 @@ def test_a_sample_is_of_the_word_it_is_for(sample: Sample) -> None:
     assert type(found[sample.family]()) is kinds(sample.family)[sample.word]
 
 
-@pytest.mark.parametrize("text", [RAM, COLLAR, SLOTTED, BRACKET], ids=["ram", "collar", "slotted", "bracket"])
+@pytest.mark.parametrize("text", list(dict.fromkeys(sample.text for sample in SAMPLES)))
 def test_a_sample_is_in_equilibrium(text: str) -> None:
     answer = stroke(Sample("", "", "", text).mechanism)
     assert not answer.status.any()
@@ -61,10 +71,9 @@ def test_slope_is_the_derivative_of_the_gap(joint: Joint, members: int) -> None:
     at = closed(joint, random_poses(members, still=False))
     slope = dense(joint.slope(at), members, SHAPE)
     for k in range(3 * members):
-        ahead, behind = (joint.gap(nudged(at, k // 3, k % 3, by)) for by in (STEP, -STEP))
-        for row, (a, b) in enumerate(zip(ahead, behind, strict=True)):
-            np.testing.assert_allclose(slope[row, k], np.broadcast_to((a - b) / (2 * STEP), SHAPE),
-                                       atol=SLOPE_TOLERANCE)  # fmt: skip
+        for row in range(len(joint.angular)):
+            by = difference(lambda there, row=row: joint.gap(there)[row], at, k // 3, k % 3)
+            np.testing.assert_allclose(slope[row, k], np.broadcast_to(by, SHAPE), atol=SLOPE_TOLERANCE)
 
 
 @every_joint
@@ -128,9 +137,8 @@ def test_travel_is_the_way_along_the_line(joint: Joint, members: int) -> None:
     at = closed(joint, random_poses(members))
     slope = dense([joint.travel_slope(at)], members, SHAPE)[0]
     for k in range(3, 3 * members):
-        ahead, behind = (joint.travel(nudged(at, k // 3, k % 3, by)) for by in (STEP, -STEP))
-        np.testing.assert_allclose(slope[k], np.broadcast_to((ahead - behind) / (2 * STEP), SHAPE),
-                                   atol=SLOPE_TOLERANCE)  # fmt: skip
+        by = difference(joint.travel, at, k // 3, k % 3)
+        np.testing.assert_allclose(slope[k], np.broadcast_to(by, SHAPE), atol=SLOPE_TOLERANCE)
     tx, ty = at.turned(joint.line.member, joint.line.tx, joint.line.ty)
     far = nudged(nudged(at, joint.site.member, 0, 0.05 * tx), joint.site.member, 1, 0.05 * ty)
     np.testing.assert_allclose(joint.travel(far) - joint.travel(at), 0.05, atol=ROUNDING)

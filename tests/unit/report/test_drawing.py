@@ -131,8 +131,8 @@ def test_what_is_not_there_is_a_clear_fault(ask, message):
         ask()
 
 
-TWO_SPOTS = ("bar", "stem", "path", "guide", "pair")
-NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple")
+TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "wheel", "rope", "line of rope")
+NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope")
 STEM = """
 [points]
 A = [0, 0]
@@ -156,13 +156,16 @@ B = [100, 0]
 C = [200, 0]
 D = [200, 100]
 E = [300, 0]
+F = [50, 90]
 [members]
-ground = ["A", "D"]
+ground = ["A", "D", "F"]
 arm = { points = ["A", "B", "C"], mass = 1 }
 rod = ["C", "E"]
 stub = ["E", "D"]
 [slots]
 peg = { point = "B", along = 90, of = "arm" }
+[ropes]
+cord = { path = ["C", { pulley = "D", radius = 8, wrap = "right" }, "F"], end = "hauling" }
 [slides]
 ram = { member = "rod", along = 0 }
 [welds]
@@ -176,6 +179,9 @@ mass = 2
 [loads.twist]
 torque_on = "arm"
 size = 3
+[loads.hand]
+haul = "cord"
+size = 4
 [loads.spread]
 between = ["A", "E"]
 size = 5
@@ -205,8 +211,8 @@ def test_every_shape_leaves_ink_and_its_name_on_the_page(shape):
     bare = drawing_figure(Sheet("sheet", "mm", (frame,)))
     full = drawing_figure(Sheet("sheet", "mm", (frame, Item(shape, spots, (1.0, 0.0), "name"))))
     inked = [sum(map(len, (ax.lines, ax.patches, ax.texts))) for ax in (bare.axes[0], full.axes[0])]
-    # a force and a torque are their arrow and have no body besides
-    assert (inked[1] > inked[0]) == (shape not in ("force", "torque"))
+    # a force, a torque and a haul are their arrow and have no body besides
+    assert (inked[1] > inked[0]) == (shape not in ("force", "torque", "haul"))
     named = "name" in [t.get_text() for t in full.axes[0].texts]
     assert named == (shape in NAMED)
 

@@ -55,6 +55,8 @@ def test_every_array_of_the_answer_has_its_place():
     told = {name.replace(" ", "_") for name in tree["quantities"]}
     told |= {"force", "moment"} if tree["joints"] else set()
     told |= {"axial"} if "axial" in tree["two-force members"][0] else set()
+    assert tree["ropes"] == []  # it has none, so no tensions either
+    told |= {"tension"}
     told |= set(tree["members"][0]) - {"member"}
     assert told == set(quantities(answer))
     assert [m["member"] for m in tree["members"]] == ["ground", "crank", "link", "ram"]
