@@ -125,10 +125,13 @@ class StrokeAnswer:
     ropes: tuple[str, ...]  # names of the ropes, in the order of `tension`
     status: Codes  # (case, variant, pose) mechanics.state.Status
     checks: Checks
+    rubs: bool  # True if joints have friction: each case then comes twice, moving along the stroke and moving back
     drive: Array = quantity("drive", axes=("one", "variant", "pose"), text="stepped coordinate")
     effort: Array = quantity("effort", axes=BATCH, text="effort")
     load: Array = quantity("load", axes=BATCH, text="load")
     tare_effort: Array = quantity("effort", axes=BATCH, text="tare effort")
+    frictionless_effort: Array = quantity("effort", axes=BATCH, text="effort without friction")
+    efficiency: Array = quantity("number", axes=BATCH, text="efficiency")
     force_ratio: Array = quantity("number", axes=BATCH, text="force ratio")
     ideal_ratio: Array = quantity("number", axes=BATCH, text="ideal ratio")
     force: Array = quantity("force", axes=("bearing", "xy", *BATCH), text="force of the joint on the member")

@@ -13,7 +13,7 @@ from linkcalc.mechanics.balance import part_of_motion
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.state import Status
 from linkcalc.model.units import show
-from linkcalc.parts.pose import Array
+from linkcalc.parts.pose import Array, Mask
 
 _NOTHING = 1e-9  # of the largest force: no push, but rounding
 _AT = 1e-8  # speed of load or effort over the fastest in the mechanism: a dead point
@@ -23,7 +23,13 @@ _REACH = 0.1  # of the stroke: a dead point no farther than this beyond an end c
 
 def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple[Caveat, ...]:
     """All warnings of a solved stroke."""
-    return (*_dead(curves, events), *_slack(curves, events), *_passed(curves, path), *_failed(curves))
+    return (
+        *_dead(curves, events),
+        *_slack(curves, events),
+        *_passed(curves, path),
+        *_held(curves, events),
+        *_failed(curves),
+    )
 
 
 def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
@@ -84,6 +90,45 @@ def _passed(curves: Curves, path: Path | None) -> Iterator[Caveat]:
             "stroke",
             f"between {where} the stroke passes a change point: the mechanism could also go on another way from there",
         )
+
+
+def _held(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
+    """Where friction holds the mechanism without any effort: none moves it on and none lets it back."""
+    pushing = curves.survey.ready.pushing
+    if not curves.survey.ready.chain.rubs or not pushing.effort_asked:
+        return
+    effort = curves.samples("effort")
+    for case in range(0, len(pushing.cases), 2):
+        with np.errstate(invalid="ignore"):
+            holds = effort[case] * effort[case + 1] < 0
+        names = pushing.cases[case : case + 2]
+        edges = [e.drive for e in events if e.kind == "self-locking edge" and e.case in ("", *names)]
+        of = f", case {names[0]}" if len(pushing.cases) > 2 else ""
+        for start, stop in _runs(holds):
+            ends = [_edge(curves, edges, k, step) for k, step in ((start, -1), (stop, 1))]
+            where = "in the drawing pose"
+            if curves.survey.ready.steps:
+                where = f"from {_drive(curves, ends[0])} to {_drive(curves, ends[1])}"
+            yield Caveat(
+                "effort",
+                f"holds by itself {where}{of}: friction alone keeps the load; an effort the other way lets it back",
+            )
+
+
+def _runs(holds: Mask) -> list[tuple[int, int]]:
+    """First and last of each row of neighbours that are True."""
+    change = np.flatnonzero(np.diff(np.concatenate([[False], holds, [False]]).astype(int)))
+    return [(int(a), int(b) - 1) for a, b in zip(change[::2], change[1::2], strict=True)]
+
+
+def _edge(curves: Curves, edges: Sequence[float], k: int, step: int) -> float:
+    """The exact edge between a pose and its neighbour, or the pose where the stroke ends there."""
+    if 0 <= k + step < curves.drive.size:
+        low, high = sorted((curves.drive[k], curves.drive[k + step]))
+        inside = [e for e in edges if low <= e <= high]
+        if inside:
+            return inside[0]
+    return float(curves.drive[k])
 
 
 def _failed(curves: Curves) -> Iterator[Caveat]:

@@ -15,6 +15,7 @@ from linkcalc.parts.pose import Array
 SLACK = "slack"
 """Kind of the event where the tension of a rope passes through nothing."""
 _BOTH_WAYS = ("effort", "load", "force ratio", "ideal ratio")
+
 _POLE = 1e-7  # of the stroke: how near a dead point is looked at to see whether a curve has a bound there
 _RISE = 1e3  # times the largest of its usual values: without bound
 _NOTHING = 1e-9  # of the largest force: a joint that carries nothing has no extremes to tell
@@ -52,6 +53,7 @@ def _turning(curves: Curves) -> list[str]:
     return [
         *(name for name in _SPEEDS if name in curves.survey.quantities),
         *(name for name in axial if not _carries_nothing(curves, name)),
+        *(["effort"] if curves.survey.ready.chain.rubs else []),
         *(name for name in _tensions(curves) if not _carries_nothing(curves, name)),
     ]
 
@@ -62,6 +64,9 @@ def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
         of = "" if name in zeros.alike else _case(curves, case)
         if name in _SPEEDS:
             yield Event("dead point", _SPEEDS[name], of, drive, np.nan, "number")
+        elif name == "effort":
+            # no effort is on the edge of the band between moving on and moving back
+            yield Event("self-locking edge", "effort", of, drive, 0.0, curves.survey.quantities[name].kind)
         elif name in _tensions(curves):
             rope = name.removeprefix("tension of ")
             yield Event(SLACK, rope, _case(curves, case), drive, 0.0, "force")
@@ -89,6 +94,9 @@ def _wanted(curves: Curves) -> Iterator[Wanted]:
             if name in curves.survey.quantities and name not in given:
                 yield Wanted(name, case, 1, True)
                 yield Wanted(name, case, -1, True)
+        if "efficiency" in curves.survey.quantities:
+            yield Wanted("efficiency", case, 1)
+            yield Wanted("efficiency", case, -1)
         for joint in joints:
             yield Wanted(f"force at {joint}", case, 1)
             yield Wanted(f"force at {joint}", case, -1)

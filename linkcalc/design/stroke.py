@@ -11,7 +11,7 @@ from linkcalc.design.caveats import caveats
 from linkcalc.design.curves import Curves
 from linkcalc.design.events import events
 from linkcalc.design.reach import located
-from linkcalc.design.survey import Shown, Survey, bounded
+from linkcalc.design.survey import Shown, Survey, bounded, efficiency
 from linkcalc.design.verdicts import verdicts
 from linkcalc.mechanics.motion import alone
 from linkcalc.mechanics.path import Path
@@ -120,6 +120,8 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         effort=_full(b.effort, shape),
         load=_full(b.load, shape),
         tare_effort=_full(b.tare, shape),
+        frictionless_effort=_full(b.frictionless, shape),
+        efficiency=_full(efficiency(b, p), shape),
         force_ratio=_full(bounded(b.force_ratio), shape),
         ideal_ratio=_full(bounded(b.ideal_ratio), shape),
         force=_solved(_stacked([f for s in shown.sides for f in (s.fx, s.fy)], shape), b.status).reshape(-1, 2, *shape),
@@ -130,6 +132,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         y=_placed(_stacked(at.y, still), b.status),
         turn=_placed(np.arctan2(_stacked(at.s, still), _stacked(at.c, still)), b.status),
         status=b.status,
+        rubs=bool(ready.chain.rubs),
         checks=checks,
         events=found,
         verdicts=judged,

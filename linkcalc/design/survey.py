@@ -8,8 +8,10 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
+from linkcalc.mechanics.balance import Balance
 from linkcalc.mechanics.pipeline import Solved, sides
 from linkcalc.mechanics.prepare import Ready
+from linkcalc.mechanics.pushing import Pushing
 from linkcalc.mechanics.reactions import Side
 from linkcalc.parts.pose import Array, Value
 
@@ -87,6 +89,11 @@ class Survey:
             out.append(Quantity(EFFORT_SPEED, "number", lambda s: s.solved.balance.effort_speed))
         if p.load and self.ready.chain.coordinate is not None:
             out.append(Quantity(LOAD_SPEED, "number", lambda s: s.solved.balance.load_speed))
+        if self.ready.chain.rubs and p.effort_asked:
+            out.append(
+                Quantity("frictionless effort", p.effort[0].pusher.kind, lambda s: s.solved.balance.frictionless)
+            )
+            out.append(Quantity("efficiency", "number", lambda s: efficiency(s.solved.balance, p)))
         joints: dict[str, list[int]] = {}
         for k, side in enumerate(self.sides):
             joints.setdefault(side.joint, []).append(k)
@@ -108,6 +115,13 @@ class Survey:
             name = self.ready.drawing.members[two.member]
             out.append(Quantity(f"axial force in {name}", "force", _axial(two)))
         return out
+
+
+def efficiency(b: Balance, pushing: Pushing) -> Value:
+    """What friction leaves of the work: of the effort's where it drives, of the load's where that drives the effort."""
+    driving = np.sign(b.effort_speed) * pushing.sense * (pushing.forward or np.sign(b.effort_speed)) * b.frictionless
+    with np.errstate(all="ignore"):
+        return np.where(driving > 0, np.divide(b.frictionless, b.effort), np.divide(b.effort, b.frictionless))
 
 
 def bounded(ratio: Value) -> Value:

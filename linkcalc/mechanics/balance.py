@@ -10,12 +10,14 @@ from __future__ import annotations
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass, replace
+from dataclasses import dataclass, field, replace
+from typing import Any
 
 import numpy as np
 
 from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.chain import Chain
+from linkcalc.mechanics.friction import rub
 from linkcalc.mechanics.motion import Closed, fastest
 from linkcalc.mechanics.pushing import Column, Pushing, column, strength
 from linkcalc.mechanics.state import Status
@@ -34,6 +36,8 @@ class Balance:
     unbalance     largest generalised force left over, over the largest force that acts
     disagreement  of equilibrium and virtual work, over the size of the effort
     status        Status of each entry
+    frictionless  what the effort would be without friction
+    friction      friction of each of the chain's rubs, along its push [N] or [N m]
     """
 
     effort: Value
@@ -45,6 +49,8 @@ class Balance:
     unbalance: Array
     disagreement: Array
     status: Codes
+    frictionless: Value = np.nan
+    friction: list[Value] = field(default_factory=list)
 
     @property
     def force_ratio(self) -> Value:
@@ -72,6 +78,7 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
     load: Value = np.nan
     tare: Value = np.nan
     dead: Mask | None = None
+    jammed: Mask | None = None
     with np.errstate(all="ignore"):
         if pushing.load and not pushing.load_asked:
             load = strength(pushing.load, at)
@@ -93,12 +100,37 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             rest, (load, load_unit) if pushing.load else None, (effort, effort_unit) if pushing.effort else None
         )
         negative = closed.factored.solve(total, transposed=True)
+        frictionless = effort
+        friction: list[Value] = []
+        if chain.rubs and speed:
+            asked = load_unit if pushing.load_asked else effort_unit
+            asked_speed = load_speed if pushing.load_asked else effort_speed
+            sense = pushing.sense * (pushing.forward or np.sign(effort_speed))
+            found = rub(chain, closed, sense, asked, asked_speed, load if pushing.load_asked else effort, negative)
+            more = found.unknown - (load if pushing.load_asked else effort)
+            total = _sum(total, (more, asked), *zip(found.amounts, found.columns, strict=True))
+            effort, load = (effort, found.unknown) if pushing.load_asked else (found.unknown, load)
+            negative, friction, jammed = found.negative, found.amounts, found.jammed
         unbalance = disagreement = _UNCHECKED
         if checked:
             unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
     multipliers = [-v if lost is None else np.where(lost, np.nan, -v) for v in negative]
     status = _status(closed, multipliers, dead, len(pushing.cases))
-    return Balance(effort, load, tare, effort_speed, load_speed, multipliers, unbalance, disagreement, status)
+    if jammed is not None:
+        status = np.where(jammed & (status == Status.SINGULAR), np.int8(Status.JAMMED), status)
+    return Balance(
+        effort,
+        load,
+        tare,
+        effort_speed,
+        load_speed,
+        multipliers,
+        unbalance,
+        disagreement,
+        status,
+        frictionless,
+        friction,
+    )
 
 
 def _lost(closed: Closed) -> Mask | None:
@@ -112,11 +144,12 @@ def _lost(closed: Closed) -> Mask | None:
 def failed(told: Balance, where: Mask, status: Status) -> Balance:
     """The same with some entries failed: not a number, and a status that says why."""
     shape = told.status.shape
-    names = ("effort", "load", "tare", "effort_speed", "load_speed")
-    masked = {name: np.where(where, np.nan, getattr(told, name)) for name in names}
+    names = ("effort", "load", "tare", "effort_speed", "load_speed", "frictionless")
+    masked: Any = {name: np.where(where, np.nan, getattr(told, name)) for name in names}
     multipliers: list[Value] = [np.where(where, np.nan, m) for m in told.multipliers]
+    friction: list[Value] = [np.where(where, np.nan, f) for f in told.friction]
     codes = np.where(np.broadcast_to(where, shape), np.int8(status), told.status)
-    return replace(told, **masked, multipliers=multipliers, status=codes)
+    return replace(told, **masked, multipliers=multipliers, friction=friction, status=codes)
 
 
 def _power(speed: Sequence[Value], push: Column) -> Value:

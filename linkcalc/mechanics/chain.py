@@ -31,6 +31,7 @@ class Chain:
     """Joints between moving members, and at most one coordinate that is driven.
 
     moving  number of moving members
+    rubs    (number of the joint, its friction) of every joint that rubs
     size    [m] size of the mechanism: what lengths are compared with
     """
 
@@ -43,6 +44,7 @@ class Chain:
             self.first_row.append(len(angular))
             angular.extend(joint.angular)
         self.joint_rows = len(angular)
+        self.rubs = tuple((k, rub) for k, joint in enumerate(self.joints) for rub in joint.rubs())
         if coordinate is not None:
             angular.append(coordinate.kind == "angle")
         self.rows = len(angular)

@@ -113,5 +113,7 @@ def _joined(poses: list[Solved]) -> Solved:
         unbalance=np.asarray(join(lambda p: p.balance.unbalance)),
         disagreement=np.asarray(join(lambda p: p.balance.disagreement)),
         status=np.concatenate([p.balance.status for p in poses], axis=2),
+        frictionless=join(lambda p: p.balance.frictionless),
+        friction=[join(lambda p, k=k: p.balance.friction[k]) for k in range(len(first.friction))],
     )
     return Solved(np.concatenate([p.drive for p in poses], axis=2), whole, told)

@@ -55,4 +55,4 @@ def solve_drawn(ready: Ready) -> Solved:
 def sides(ready: Ready, solved: Solved) -> list[Side]:
     """What every joint does to every member in a solved batch."""
     b = solved.balance
-    return reactions(ready.chain, solved.closed.at, b.multipliers, ready.pushing, b.effort, b.load)
+    return reactions(ready.chain, solved.closed.at, b.multipliers, b.friction, ready.pushing, b.effort, b.load)

@@ -14,6 +14,7 @@ from linkcalc.mechanics.limit import Place
 from linkcalc.mechanics.motion import Closed, alone, close
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.pushing import Pushing, pushing
+from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
 from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.pose import Mask, Poses, Value
 
@@ -43,7 +44,8 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     like  the same mechanism with other sizes, made ready before: its plans of elimination are used again
     """
     mechanism = drawing.mechanism
-    loads = pushing(drawing.assembly())
+    rubbing = any(joint.rubs() for joint in drawing.joints) and mechanism.effort is not None
+    loads = pushing(drawing.assembly(), rubbing=rubbing, forward=_forward(drawing))
     at = _drawn(drawing, loads)
     moving = len(drawing.members) - 1
     if moving == 0:
@@ -83,13 +85,28 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     return Ready(drawing, chain, start, loads, mechanism.stroke is not None, _undrawn(drawing))
 
 
+def _forward(drawing: Drawing) -> float:
+    """Which way the drive moves along the stroke, +1 or -1; 0.0 without a stroke."""
+    stroke = drawing.mechanism.stroke
+    if stroke is None:
+        return 0.0
+    ends = {UPPER: np.inf, LOWER: -np.inf}
+    value = stroke.along.coordinate(drawing).value(_drawn(drawing, None))
+    start, stop = (
+        ends[size] if size in ends else value if size == DRAWN else drawing.value(size, stroke.along.kind)
+        for size in (stroke.start, stroke.stop)
+    )
+    way = np.ravel(np.subtract(stop, start))[0]
+    return 1.0 if way >= 0 else -1.0
+
+
 def _undrawn(drawing: Drawing) -> Mask | None:
     missing = [np.isnan(v) for place in drawing.points.values() for v in place if not isinstance(v, float)]
     undrawn = np.logical_or.reduce(np.broadcast_arrays(*missing)) if missing else np.zeros((1, 1, 1), bool)
     return undrawn if undrawn.any() else None
 
 
-def _drawn(drawing: Drawing, loads: Pushing) -> Poses:
+def _drawn(drawing: Drawing, loads: Pushing | None) -> Poses:
     x: list[Value] = [0.0]
     y: list[Value] = [0.0]
     c: list[Value] = [1.0]
@@ -99,7 +116,7 @@ def _drawn(drawing: Drawing, loads: Pushing) -> Poses:
         y.append(_shaped(oy))
         c.append(_shaped(1.0))
         s.append(_shaped(0.0))
-    return Poses(x, y, c, s, loads.down, loads.field)
+    return Poses(x, y, c, s, loads.down, loads.field) if loads else Poses(x, y, c, s)
 
 
 def _shaped(value: Value) -> Value:

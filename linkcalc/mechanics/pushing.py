@@ -8,7 +8,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.model.parts_list import EFFORT, LOAD, Assembly
-from linkcalc.parts.contract import Pusher
+from linkcalc.parts.contract import Push, Pusher
 from linkcalc.parts.pose import Poses, Value
 
 Column = list[Value]
@@ -31,6 +31,8 @@ class Pushing:
     load     the load; empty if there is none
     rest     all other loads and weights
     down, field  direction [-] and strength [m/s2] of gravity, float or (case, 1, 1)
+    sense    +1 in a case that moves along the stroke, -1 in one that moves back: float or (case, 1, 1)
+    forward  which way the drive moves along the stroke, +1 or -1; 0.0 without a stroke: the way the effort pushes
     """
 
     cases: tuple[str, ...]
@@ -39,6 +41,8 @@ class Pushing:
     rest: tuple[Acting, ...]
     down: tuple[Value, Value]
     field: Value
+    sense: Value = 1.0
+    forward: float = 1.0
 
     @property
     def effort_asked(self) -> bool:
@@ -55,9 +59,13 @@ class Pushing:
         return (*self.effort, *self.load, *self.rest)
 
 
-def pushing(assembly: Assembly) -> Pushing:
-    """Gather the pushers of all cases."""
-    cases = assembly.cases
+def pushing(assembly: Assembly, *, rubbing: bool, forward: float) -> Pushing:
+    """Gather the pushers of all cases.
+
+    rubbing  there is friction: every case comes twice, moving along the stroke and moving back
+    forward  see Pushing
+    """
+    cases = tuple(c for c in assembly.cases for _ in range(1 + rubbing))
     efforts: list[Acting] = []
     loads: list[Acting] = []
     rest: list[Acting] = []
@@ -72,7 +80,17 @@ def pushing(assembly: Assembly) -> Pushing:
     down = (_stacked([c.down[0] for c in cases]), _stacked([c.down[1] for c in cases]))
     field = _stacked([c.field for c in cases])
     used = [a for a in efforts if not (isinstance(a.factor, float) and a.factor == 0.0)]
-    return Pushing(tuple(c.name for c in cases), tuple(used), tuple(loads), tuple(rest), down, field)
+    names = tuple(c.name for c in cases)
+    sense: Value = 1.0
+    if rubbing:
+        names = tuple(_both_ways(n)[k % 2] for k, n in enumerate(names))
+        sense = _by_case([1.0 - 2.0 * (k % 2) for k in range(len(cases))])
+    return Pushing(names, tuple(used), tuple(loads), tuple(rest), down, field, sense, forward)
+
+
+def _both_ways(name: str) -> tuple[str, str]:
+    """What a case is called when it moves along the stroke, and when it moves back."""
+    return (name, f"{name} (back)") if name else ("forward", "back")
 
 
 def strength(acting: Sequence[Acting], at: Poses) -> Value:
@@ -92,15 +110,17 @@ def column(acting: Sequence[Acting], at: Poses, columns: int, *, unit: bool) -> 
     for a in acting:
         # of the factors of alternatives only "acts in this case or not" counts
         acts = _plain(np.sign(np.abs(a.factor))) if len(acting) > 1 else 1.0
-        size = acts if unit else a.factor * a.pusher.strength(at)
-        for member, *parts in a.pusher.push(at):
-            if not member:
-                continue
-            for which, part in enumerate(parts):
-                if not _zero(part) and not _zero(size):
-                    k = 3 * (member - 1) + which
-                    out[k] = out[k] + _product(size, part)
+        add_pushes(out, acts if unit else a.factor * a.pusher.strength(at), a.pusher.push(at))
     return out
+
+
+def add_pushes(out: Column, size: Value, pushes: Sequence[Push]) -> None:
+    """Add what some pushes of a size do to the coordinates."""
+    for member, *parts in pushes:
+        for which, part in enumerate(parts):
+            if member and not _zero(part) and not _zero(size):
+                k = 3 * (member - 1) + which
+                out[k] = out[k] + _product(size, part)
 
 
 def _product(a: Value, b: Value) -> Value:

@@ -14,7 +14,7 @@ import numpy as np
 
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.pushing import Acting, Pushing, strength
-from linkcalc.parts.contract import TURN, Joint, X, Y
+from linkcalc.parts.contract import TURN, Joint, Push, X, Y
 from linkcalc.parts.pose import Poses, Value
 
 
@@ -49,15 +49,21 @@ class Side:
 
 
 def reactions(
-    chain: Chain, at: Poses, multipliers: Sequence[Value], pushing: Pushing, effort: Value, load: Value
-) -> list[Side]:
-    """All sides of all joints, in the order of the joints."""
+    chain: Chain, at: Poses, multipliers: Sequence[Value], friction: Sequence[Value], pushing: Pushing,
+    effort: Value, load: Value,
+) -> list[Side]:  # fmt: skip
+    """All sides of all joints, in the order of the joints.
+
+    friction  of each of the chain's rubs, along its push; empty without friction
+    """
+    rubbed = _rubbed(chain, at, friction)
     sides: list[Side] = []
     on_pin: dict[str, list[tuple[Value, Value]]] = {}
     hubs: dict[str, tuple[int, Joint]] = {}
     pins = {joint.name for joint in chain.joints if joint.word == "pin"}
+    turning: dict[str, Value] = {}
     sized = list(_sized(pushing, at, effort, load))
-    for joint, first in zip(chain.joints, chain.first_row, strict=True):
+    for number, (joint, first) in enumerate(zip(chain.joints, chain.first_row, strict=True)):
         if hasattr(joint, "contacts"):
             if joint.angular:
                 carried = multipliers[first]
@@ -69,7 +75,8 @@ def reactions(
                 sides.append(side)
             continue
         x, y = at.spot(joint.site)
-        forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)])
+        pushes = rubbed.get(number, [])
+        forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)], pushes)
         hub = joint.word == "pin"
         for member in dict.fromkeys(joint.members):
             fx, fy, about_origin = forces.get(member, (0.0, 0.0, 0.0))
@@ -81,9 +88,11 @@ def reactions(
             elif hub and member == joint.members[1]:
                 hubs.setdefault(joint.name, (member, joint))
                 on_pin.setdefault(joint.name, []).append((fx, fy))
+                if pushes:
+                    turning[joint.name] = _sum(turning.get(joint.name, 0.0), pushes[-1][3])
             else:
                 turnable = not any(joint.angular)
-                moment: Value = 0.0
+                moment: Value = pushes[0][3] if hub and pushes else 0.0
                 if not turnable:
                     moment = about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
                 own = turnable and (hub or member == joint.members[0])
@@ -91,8 +100,7 @@ def reactions(
     for acting, size in sized:
         if hasattr(acting.pusher, "through"):
             continue  # the joint has told it
-        pushes = acting.pusher.push(at)
-        for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, pushes, strict=False):
+        for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, acting.pusher.push(at), strict=False):
             if name:
                 on_pin.setdefault(name, []).append((size * fx, size * fy))
     for name, (member, joint) in hubs.items():
@@ -101,8 +109,20 @@ def reactions(
         for gx, gy in on_pin[name]:
             fx, fy = _sum(fx, gx), _sum(fy, gy)
         last = max(k for k, s in enumerate(sides) if s.joint == name)
-        sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, 0.0, x, y, True))
+        moment = turning.get(name, 0.0)
+        sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, moment, x, y, True))
     return sides
+
+
+def _rubbed(chain: Chain, at: Poses, friction: Sequence[Value]) -> dict[int, list[Push]]:
+    """Number of a joint -> what its friction does to its members."""
+    out: dict[int, list[Push]] = {}
+    if friction:
+        for (number, rub), size in zip(chain.rubs, friction, strict=True):
+            for member, *parts in rub.push(at):
+                fx, fy, moment = (_times(p, size) if not isinstance(p, float) or p else 0.0 for p in parts)
+                out.setdefault(number, []).append((member, fx, fy, moment))
+    return out
 
 
 def _passed_on(joint: str, sized: Sequence[tuple[Acting, Value]]) -> Value:
@@ -126,7 +146,9 @@ def _spread(joint: Any, at: Poses, carried: Value, pins: set[str]) -> Iterator[S
                    not (pin or turned), joint.name, carried)  # fmt: skip
 
 
-def _on_members(joint: Joint, at: Poses, multipliers: Sequence[Value]) -> dict[int, tuple[Value, Value, Value]]:
+def _on_members(
+    joint: Joint, at: Poses, multipliers: Sequence[Value], pushes: Sequence[Push]
+) -> dict[int, tuple[Value, Value, Value]]:
     """Force and moment about its origin, on each member; the moment only where the joint can give one."""
     moments = any(joint.angular)
     out: dict[int, list[Value]] = {}
@@ -136,6 +158,10 @@ def _on_members(joint: Joint, at: Poses, multipliers: Sequence[Value]) -> dict[i
                 continue
             total = out.setdefault(member, [0.0, 0.0, 0.0])
             total[which] = _sum(total[which], _times(value, m))
+    for member, *parts in pushes:
+        total = out.setdefault(member, [0.0, 0.0, 0.0])
+        for which, part in enumerate(parts):
+            total[which] = _sum(total[which], part)
     return {member: (v[X], v[Y], v[TURN]) for member, v in out.items()}
 
 

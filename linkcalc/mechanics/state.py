@@ -14,6 +14,7 @@ class Status(IntEnum):
     BRANCH_LOST = 3
     DEAD_POINT = 4
     SINGULAR = 5
+    JAMMED = 6
 
     @property
     def text(self) -> str:
@@ -26,5 +27,6 @@ _TEXTS = {
     Status.OUT_OF_REACH: "the stroke's coordinate cannot be brought there: beyond the limit of motion",
     Status.BRANCH_LOST: "the way the mechanism is assembled would have to change on the way there",
     Status.DEAD_POINT: "dead point: no finite effort or load answers here",
+    Status.JAMMED: "jams: friction grows as fast as the effort, however large",
     Status.SINGULAR: "the joints do not hold the members in this pose",
 }

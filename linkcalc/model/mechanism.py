@@ -92,6 +92,27 @@ class Gravity:
 
 
 @dataclass(frozen=True)
+class Friction:
+    """Friction of all joints that say nothing of their own."""
+
+    pins: Size | None = fields.size("number", "coefficient of friction in pins", None, sign="not minus")
+    diameter: Size | None = fields.size("length", "diameter of the pins", None, sign="plus")
+    slots: Size | None = fields.size("number", "coefficient of friction in slots", None, sign="not minus")
+    slides: Size | None = fields.size("number", "coefficient of friction in slides", None, sign="not minus")
+
+
+@dataclass(frozen=True)
+class Pin:
+    """What one pin has of its own."""
+
+    friction: Size | None = fields.size("number", "its coefficient of friction", None, sign="not minus")
+    diameter: Size | None = fields.size("length", "its diameter", None, sign="plus")
+    friction_radius: Size | None = fields.size(
+        "length", "radius of its friction circle, instead of coefficient and diameter", None, sign="not minus"
+    )
+
+
+@dataclass(frozen=True)
 class Stroke:
     """The range of motion that is stepped through.
 
@@ -142,6 +163,8 @@ class Mechanism:
     points    name -> construction (Coordinates, Polar, Meets, OnLine, Mirror, Crossing)
     members   name -> Member; "ground" is the one that does not move
     joints    word of the kind -> name -> part: {"slot": {...}, "slide": {...}, "weld": {...}}
+    friction  of all joints that say nothing of their own
+    pins      point -> Pin: what single pins have of their own
     effort    the effort (Force, Torque or Pair); None for a frame
     load      the load whose ratio to the effort is asked; None if there is none
     loads     the other loads, by name
@@ -159,6 +182,8 @@ class Mechanism:
     points: Mapping[str, Any] = _entry("named parts", "where things are drawn", dict, family="construction")
     members: Mapping[str, Member] = _entry("named tables", "rigid parts", dict, of=Member)
     joints: Mapping[str, Mapping[str, Any]] = _entry("joints", "joints other than pins", dict)
+    friction: Friction = _entry("table", "friction of all joints", Friction(), of=Friction)
+    pins: Mapping[str, Pin] = _entry("named tables", "what single pins have of their own", dict, of=Pin)
     gravity: Gravity = _entry("table", "field of gravity", Gravity(), of=Gravity)
     effort: Any = _entry("part", "what goes in", family="load", asks="size")
     load: Any = _entry("part", "what comes out or is held", family="load")

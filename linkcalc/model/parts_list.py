@@ -41,9 +41,10 @@ class PinGroup:
 
     def joints(self, drawing: Drawing) -> Iterator[Joint]:
         """One joint for each of the others against the hub; its force is the one on the other."""
-        hub = drawing.site(self.point, self.hub)
+        hub, radius = drawing.site(self.point, self.hub), drawing.friction_radius(self.point)
         for other in self.others:
-            yield cast("Joint", PinJoint(self.point, drawing.site(self.point, other), hub))
+            site = drawing.site(self.point, other)
+            yield cast("Joint", PinJoint(self.point, site, hub, friction_radius=radius))
 
 
 @dataclass(frozen=True)

@@ -17,7 +17,7 @@ from linkcalc.faults import Fault, Faults, fault
 from linkcalc.model.dimensions import Overrides, evaluate
 from linkcalc.model.drafting import Place, draw, plain
 from linkcalc.model.formulas import to_si
-from linkcalc.model.mechanism import GROUND, Mechanism, Member
+from linkcalc.model.mechanism import GROUND, Mechanism, Member, Pin
 from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
 from linkcalc.model.units import show
 from linkcalc.parts.contract import Hauled, Joint, Poses, Pusher, Site, Size, Travelled, Value
@@ -77,6 +77,27 @@ class Drawing:
         if name not in self.points:
             raise fault((), f"unknown point {name!r}", nearest(name, self.mechanism.points))
         return self.points[name]
+
+    def coefficient(self, kind: str, own: Size | None) -> Value:
+        """[-] coefficient of friction: a joint's own, else the one for its kind, else 0.0. Raises Faults."""
+        size = own if own is not None else getattr(self.mechanism.friction, kind)
+        return 0.0 if size is None else self.value(size, "number")
+
+    def friction_radius(self, point: str) -> Value:
+        """[m] radius of the friction circle of a pin: its radius times the sine of the angle of friction.
+
+        Raises Faults: a pin that rubs, but has no diameter.
+        """
+        own = self.mechanism.pins.get(point, Pin())
+        if own.friction_radius is not None:
+            return self.value(own.friction_radius, "length")
+        mu = self.coefficient("pins", own.friction)
+        if isinstance(mu, float) and mu == 0.0:
+            return 0.0
+        diameter = own.diameter if own.diameter is not None else self.mechanism.friction.diameter
+        if diameter is None:
+            raise fault(("pins", point), "it rubs, but has no diameter", "give it one, or [friction] diameter for all")
+        return self.value(diameter, "length") / 2 * mu / np.hypot(1.0, mu)
 
     def shown(self, length: float) -> str:
         """A length [m] for a message, in the file's unit."""

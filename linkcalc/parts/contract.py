@@ -10,7 +10,7 @@ the engine leaves them out. A value that is a Python float never changes with th
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from typing import Protocol
 
@@ -18,7 +18,7 @@ from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
     "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Hauled", "Joint", "Mark", "Poses", "Push", "Pusher",
-    "Row", "Site", "Size", "Sketch", "Travelled", "Value", "X", "Y",
+    "Row", "Rub", "Site", "Size", "Sketch", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -104,11 +104,30 @@ class Sketch(Protocol):
     def own_axis(self, member: str) -> Value:
         """[rad] direction of the member's own x axis (first to last point) in the drawing pose"""
 
+    def coefficient(self, kind: str, own: Size | None) -> Value:
+        """[-] coefficient of friction: a joint's own, else that of its kind ("pins", "slots", "slides"), else 0.0"""
+
     def travelled(self, name: str) -> Travelled:
         """the slot, slide or track of that name, for a stroke along it"""
 
     def hauled(self, name: str) -> Hauled:
         """the rope of that name, to draw it in at its hauling end"""
+
+
+@dataclass(frozen=True, eq=False)
+class Rub:
+    """Friction at a joint: a law on the joint's own reaction, against the relative motion.
+
+    normals  the normal force is the sum of these parts; each is the size of a vector whose components are linear
+             forms of the joint's multipliers, one coefficient a row: ((1, 0), (0, 1)) is the resultant of a pin
+    factor   friction for a normal force of 1: a coefficient [-], or the radius of the friction circle [m]
+    push     (poses) -> what a friction of 1 would do to each member if it pushed along the relative motion; its power
+             tells which way that is
+    """
+
+    normals: tuple[tuple[tuple[Value, ...], ...], ...]
+    factor: Value
+    push: Callable[[Poses], tuple[Push, ...]]
 
 
 class Joint(Protocol):
@@ -141,6 +160,9 @@ class Joint(Protocol):
     def slope(self, at: Poses) -> tuple[Row, ...]:
         """Derivative of each gap by the coordinates of the members, sparse. A row's multiplier times its slope
         is the generalised force it puts on each member."""
+
+    def rubs(self) -> tuple[Rub, ...]:
+        """Its friction; empty if it has none."""
 
     def mark(self, at: Poses) -> Mark:
         """How to draw it in a single pose."""

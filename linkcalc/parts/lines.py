@@ -41,6 +41,11 @@ def guide(sketch: Sketch, line: Line, member: str, through: str) -> Guide:
     return Guide(start, exact(tx), exact(ty))
 
 
+def rubless(factor: Value) -> bool:
+    """True where there is no friction at all."""
+    return isinstance(factor, float) and factor == 0.0
+
+
 def exact(value: Value) -> Value:
     """A component that is 0 or 1 but for rounding is made so: straight guides then fold into constants."""
     if np.ndim(value):

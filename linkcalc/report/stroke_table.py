@@ -39,6 +39,9 @@ def stroke_table(answer: StrokeAnswer) -> Table:
             add(head, values, what)
     add("force ratio", answer.force_ratio, "number")
     add("ideal ratio", answer.ideal_ratio, "number")
+    if answer.rubs:
+        add("frictionless effort", answer.frictionless_effort, "effort")
+        add("efficiency", answer.efficiency, "number")
     size, points, own = resultant(answer), direction(answer), own_direction(answer)
     for i, b in enumerate(answer.bearings):
         on = f"{b.joint} on {b.member}"

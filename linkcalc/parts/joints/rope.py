@@ -13,7 +13,7 @@ from typing import Any
 import numpy as np
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import TURN, Contact, Entry, Mark, Poses, Row, Site, Size, Sketch, Value, X, Y
+from linkcalc.parts.contract import TURN, Contact, Entry, Mark, Poses, Row, Rub, Site, Size, Sketch, Value, X, Y
 from linkcalc.parts.paths.over_pulleys import OverPulleys, Wheel, over_pulleys
 from linkcalc.parts.paths.room import check_room
 from linkcalc.parts.paths.shape import line_of
@@ -181,6 +181,9 @@ class RopeJoint:
             fx, fy, moment = (sum((pulls[k][i] for k in place.wheels[1:]), pulls[place.wheels[0]][i]) for i in range(3))
             out.append(Contact(place.name, place.site, place.pin, fx, fy, moment))
         return tuple(out)
+
+    def rubs(self) -> tuple[Rub, ...]:
+        return ()
 
     def mark(self, at: Poses) -> Mark:
         spots = [at.spot(w.site) for w in self.path.wheels]

@@ -6,9 +6,9 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import TURN, Mark, Poses, Row, Site, Sketch, Value
+from linkcalc.parts.contract import TURN, Mark, Poses, Row, Rub, Site, Size, Sketch, Value
 from linkcalc.parts.joints.slot import SlotJoint
-from linkcalc.parts.lines import Guide, Line, guide
+from linkcalc.parts.lines import Guide, Line, guide, rubless
 from linkcalc.words import word
 
 
@@ -22,6 +22,13 @@ class Slide:
     on: str = fields.name("member", "the member that has the guide", "ground")
     at: str | None = fields.name("point", "where force and moment are told; else the member's first point", None)
 
+    friction: Size | None = fields.size(
+        "number", "coefficient of friction, if not the one for all slides", None, sign="not minus"
+    )
+    length: Size | None = fields.size(
+        "length", "length of the guide: its moment then presses at both ends, and rubs there", None, sign="plus"
+    )
+
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlideJoint]:
         site = sketch.site(self.at, self.member) if self.at else Site(sketch.member(self.member), 0.0, 0.0)
         through = self.at or sketch.first_point(self.member)
@@ -29,7 +36,9 @@ class Slide:
         line = guide(sketch, self.along, self.on, through)
         start = sketch.site(through, self.on)
         lead = line.start if isinstance(self.along, tuple) else start
-        yield SlideJoint(name, site, Guide(start, line.tx, line.ty), lead)
+        mu = sketch.coefficient("slides", self.friction)
+        length = None if self.length is None else sketch.value(self.length, "length")
+        yield SlideJoint(name, site, Guide(start, line.tx, line.ty), lead, friction=mu, length=length)
 
 
 @dataclass(frozen=True, eq=False)
@@ -44,6 +53,8 @@ class SlideJoint:
     line: Guide
     lead: Site
     on_pin: str = ""
+    friction: Value = 0.0
+    length: Value | None = None
     angular = (False, True)
     word = "slide"
 
@@ -69,6 +80,15 @@ class SlideJoint:
 
     def travel_slope(self, at: Poses) -> Row:
         return SlotJoint(self.name, self.site, Guide(self.lead, self.line.tx, self.line.ty)).travel_slope(at)
+
+    def rubs(self) -> tuple[Rub, ...]:
+        if rubless(self.friction):
+            return ()
+        if self.length is None:
+            return (Rub((((1.0, 0.0),),), self.friction, self._slot.along_line),)
+        # a force and a moment are two forces at the ends of the guide, half its length from the told point
+        lever = 1.0 / self.length
+        return (Rub((((0.5, lever),), ((0.5, -lever),)), self.friction, self._slot.along_line),)
 
     def mark(self, at: Poses) -> Mark:
         x, y = at.spot(self.site)

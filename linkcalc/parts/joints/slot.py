@@ -9,8 +9,8 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import TURN, Mark, Poses, Row, Site, Sketch, Value, X, Y
-from linkcalc.parts.lines import Guide, Line, guide
+from linkcalc.parts.contract import TURN, Mark, Poses, Push, Row, Rub, Site, Size, Sketch, Value, X, Y
+from linkcalc.parts.lines import Guide, Line, guide, rubless
 from linkcalc.words import word
 
 
@@ -24,10 +24,15 @@ class Slot:
     on: str = fields.name("member", "the member that has the slot", "ground")
     of: str | None = fields.name("member", "the member that the point belongs to, if several carry it", None)
 
+    friction: Size | None = fields.size(
+        "number", "coefficient of friction, if not the one for all slots", None, sign="not minus"
+    )
+
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlotJoint]:
         alone = self.of is not None or len(sketch.carriers(self.point)) < 2
         line = guide(sketch, self.along, self.on, self.point)
-        yield SlotJoint(name, sketch.site(self.point, self.of), line, "" if alone else self.point)
+        mu = sketch.coefficient("slots", self.friction)
+        yield SlotJoint(name, sketch.site(self.point, self.of), line, "" if alone else self.point, mu)
 
 
 @dataclass(frozen=True, eq=False)
@@ -38,6 +43,7 @@ class SlotJoint:
     site: Site
     line: Guide
     on_pin: str = ""
+    friction: Value = 0.0
     angular = (False,)
     word = "slot"
 
@@ -66,10 +72,27 @@ class SlotJoint:
         dx, dy, tx, ty = self._from_start(at)
         return _row(self, at, dx, dy, tx, ty)
 
+    def rubs(self) -> tuple[Rub, ...]:
+        if rubless(self.friction):
+            return ()
+        return (Rub((((1.0,),),), self.friction, self.along_line),)
+
+    def along_line(self, at: Poses) -> tuple[Push, ...]:
+        """A force along the line on the guided point, and back on the member of the line at the same place."""
+        dx, dy, tx, ty = self._from_start(at)
+        row = _row(self, at, dx, dy, tx, ty)
+        return _as_pushes(row)
+
     def mark(self, at: Poses) -> Mark:
         x, y = at.spot(self.site)
         tx, ty = at.turned(self.line.member, self.line.tx, self.line.ty)
         return Mark("slot", ((float(x), float(y)),), (float(tx), float(ty)), self.name)
+
+
+def _as_pushes(row: Row) -> tuple[Push, ...]:
+    """A row of six entries, x, y and turn of two members, as forces for a multiplier of 1."""
+    (a, _, ax), (_, _, ay), (_, _, at), (b, _, bx), (_, _, by), (_, _, bt) = row
+    return (a, ax, ay, at), (b, bx, by, bt)
 
 
 def _row(joint: SlotJoint, at: Poses, dx: Value, dy: Value, nx: Value, ny: Value) -> Row:

@@ -6,7 +6,7 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import TURN, Mark, Poses, Row, Site, Sketch, Value
+from linkcalc.parts.contract import TURN, Mark, Poses, Row, Rub, Site, Sketch, Value
 from linkcalc.parts.joints.pin import PinJoint
 from linkcalc.words import word
 
@@ -46,6 +46,9 @@ class WeldJoint:
     def slope(self, at: Poses) -> tuple[Row, Row, Row]:
         a, b = self.members
         return (*PinJoint(self.name, self.site, self.other).slope(at), ((a, TURN, 1.0), (b, TURN, -1.0)))
+
+    def rubs(self) -> tuple[Rub, ...]:
+        return ()
 
     def mark(self, at: Poses) -> Mark:
         x, y = at.spot(self.site)

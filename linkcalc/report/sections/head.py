@@ -37,6 +37,8 @@ def stroke_line(answer: StrokeAnswer) -> str:
 
 def case_line(answer: StrokeAnswer) -> str:
     """ "Load cases: clamp, pry." """
+    if answer.rubs:
+        return f"Load cases, each along the stroke and back, with friction: {', '.join(answer.cases)}."
     if not answer.mechanism.cases:
         return "One load case, the model as written."
     return f"Load case{'s' if len(answer.cases) > 1 else ''}: {', '.join(answer.cases)}."

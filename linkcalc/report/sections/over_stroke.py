@@ -64,6 +64,8 @@ def _columns(answer: StrokeAnswer, edge: Edge, all_joints: bool) -> tuple[tuple[
     add(answer.load, "load", "load", always="load" in answer.kinds)
     add(answer.force_ratio, "force ratio", "number")
     add(answer.ideal_ratio, "ideal ratio", "number")
+    if answer.rubs:
+        add(answer.efficiency, "efficiency", "number")
     if answer.joints:
         each = np.array([answer.joint_force(j) for j in answer.joints])
         top = np.max(each, axis=0)
