@@ -28,8 +28,11 @@ def check_drawing(mechanism: Mechanism, gather: Gather) -> Drawing | None:
         return None
     if _short_lines(drawing, gather):
         return None
-    with gather.at():
+    try:
         _joints(drawing, gather)
+    except Faults as found:  # what pushes through a joint, or is stepped along it, need not be told of it again
+        gather.faults += found.faults
+        return None
     with gather.at():
         drawing.assembly()
     if mechanism.stroke is not None:

@@ -9,7 +9,7 @@ from typing import Any
 from linkcalc.model import walk
 from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import GROUND, Mechanism
-from linkcalc.parts.joints.rope import DEAD, HAULING, Pulley, Rope
+from linkcalc.parts.joints.rope import HAULING, Pulley, Rope
 from linkcalc.parts.joints.slide import Slide
 from linkcalc.parts.joints.slot import Slot
 from linkcalc.parts.joints.weld import Weld
@@ -135,10 +135,6 @@ def _rope(joint: Rope, item: Item, carried: Carried, gather: Gather) -> None:
             gather.add((*item, "path"), f"{step.point} is an end in the middle of the rope", wanted)
     if joint.end == HAULING and joint.path[-1].fixed:
         gather.add((*item, "end"), "a drum is no hauling end: it winds by its turn", "a point is wanted there")
-    pulled = [getattr(load.part, "haul", "") for load in walk.loads(carried.mechanism)]
-    if joint.end == HAULING and item[-1] not in pulled:
-        cure = f'an effort or load with haul = "{item[-1]}" is wanted, or end = "{DEAD}"'
-        gather.add((*item, "end"), "nothing pulls at its hauling end", cure)
 
 
 @_check.register

@@ -12,7 +12,7 @@ from linkcalc.model.mechanism import GROUND, Mechanism, strength_kind
 from linkcalc.parts.coordinates.distance import Distance
 from linkcalc.parts.coordinates.haul import Haul
 from linkcalc.parts.coordinates.turn import Turn
-from linkcalc.parts.joints.rope import HAULING
+from linkcalc.parts.joints.rope import DEAD, HAULING
 from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.haul import HaulForce
 from linkcalc.parts.loads.pair import Pair
@@ -30,6 +30,11 @@ def check_loads(mechanism: Mechanism, gather: Gather) -> None:
     carried = Carried(mechanism)
     for item, load in walk.loads(mechanism):
         _check(load, item, carried, gather)
+    pulled = {getattr(load, "haul", "") for _, load in walk.loads(mechanism)}
+    for name, rope in mechanism.joints.get("rope", {}).items():
+        if rope.end == HAULING and name not in pulled:
+            cure = f'an effort or load with haul = "{name}" is wanted, or end = "{DEAD}"'
+            gather.add(("ropes", name, "end"), "nothing pulls at its hauling end", cure)
 
 
 def check_unknown(mechanism: Mechanism, gather: Gather) -> None:
