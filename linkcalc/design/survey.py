@@ -118,10 +118,10 @@ class Survey:
 
 
 def efficiency(b: Balance, pushing: Pushing) -> Value:
-    """What friction leaves of the work: of the effort's where it drives, of the load's where that drives the effort."""
+    """What friction leaves of the effort's work; NaN where the load drives the effort back."""
     driving = np.sign(b.effort_speed) * pushing.sense * (pushing.forward or np.sign(b.effort_speed)) * b.frictionless
     with np.errstate(all="ignore"):
-        return np.where(driving > 0, np.divide(b.frictionless, b.effort), np.divide(b.effort, b.frictionless))
+        return np.where(driving > 0, np.divide(b.frictionless, b.effort), np.nan)
 
 
 def bounded(ratio: Value) -> Value:

@@ -22,7 +22,7 @@ _HOLDS: dict[str, Callable[[float, float], bool]] = {
     "<": operator.lt,
     ">": operator.gt,
 }
-_SIZES = ("effort", "load", "tare effort", "force", "moment")
+_SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment")
 _ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
 
 

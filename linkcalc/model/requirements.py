@@ -40,6 +40,8 @@ MEASURES: dict[str, Measure] = {
     "effort": Measure("effort"),
     "load": Measure("load"),
     "tare effort": Measure("effort"),
+    "frictionless effort": Measure("effort"),
+    "efficiency": Measure("number"),
     "force ratio": Measure("number"),
     "ideal ratio": Measure("number"),
     "force": Measure("force", "at"),
@@ -55,7 +57,7 @@ class Requirement:
     """One thing that must hold.
 
     name        as the file names it
-    quantity    "effort", "load", "tare effort", "force ratio", "ideal ratio", "force", "moment", "tension",
+    quantity    "effort", "load", "tare effort", "frictionless effort", "efficiency", "force ratio", "ideal ratio", "force", "moment", "tension",
                 "compression", "travel"
     of          the joint, member or point it is told of, "" if of the whole
     on          the member that feels it, "" for the largest of all

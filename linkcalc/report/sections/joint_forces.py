@@ -71,7 +71,7 @@ def _moments(answer: StrokeAnswer) -> list[Block]:
         if worst and edge.one(worst.value, "moment") > edge.zero("moment"):
             rows.append((joint, *_worst_cells(answer, edge, worst, "moment")))
     columns = (Column("joint"), Column("largest moment", edge.unit("moment")), *_where(answer, edge))
-    return [Table(columns, tuple(rows), "Moments of guides and welds at their worst")] if rows else []
+    return [Table(columns, tuple(rows), "Moments at joints at their worst")] if rows else []
 
 
 def _two_force(answer: StrokeAnswer) -> list[Block]:

@@ -109,7 +109,7 @@ def test_friction_circle_of_a_lever(mu: float) -> None:
     assert answer.cases == ("forward", "back")
     assert both(answer) == pytest.approx(expected, rel=EXACT)
     assert answer.efficiency[0, 0, 0] == pytest.approx(1000 / 3 / expected[0], rel=EXACT)
-    assert answer.efficiency[1, 0, 0] == pytest.approx(expected[1] / (1000 / 3), rel=EXACT)
+    assert np.isnan(answer.efficiency[1, 0, 0])
 
 
 @pytest.mark.parametrize("angle", [30, 10, 5, 2, 1, 0.5])
@@ -230,7 +230,7 @@ def test_the_band_closes_as_friction_goes_to_nothing() -> None:
 def test_power_in_is_never_less_than_power_out() -> None:
     """Driving in, the effort gives more than the load takes; let back, the load gives more than the effort takes."""
     answer = stroke(parse(TOGGLE.format(angle=40) + STROKE))
-    assert (answer.efficiency[0] > 0).all() and (answer.efficiency <= 1).all()
+    assert (answer.efficiency[0] > 0).all() and (answer.efficiency[0] <= 1).all()
     assert (answer.effort[0] > answer.frictionless_effort[0]).all() and (answer.effort[1] < answer.effort[0]).all()
 
 
