@@ -8,6 +8,7 @@ from typing import TYPE_CHECKING, Any
 import numpy as np
 
 from linkcalc.report import style
+from linkcalc.parts.pose import Array
 from linkcalc.report.blocks import Chart, Curve, Panel
 from linkcalc.report.chart_labels import label_flags, label_lines
 from linkcalc.report.figure import new_figure, title_line
@@ -50,11 +51,12 @@ def chart_figure(chart: Chart) -> Figure:
 
 
 def _draw(ax: Axes, panel: Panel, chart: Chart) -> None:
+    low, high, clipped = visible(panel.curves)
     for curve in panel.curves:
         width = style.BROAD if curve.broad else style.CURVE
-        ax.plot(chart.drive, curve.values, color=style.hue(curve.hue), linestyle=style.dash(curve.case), lw=width)
+        drive, values = _torn(np.asarray(chart.drive), np.asarray(curve.values), low, high)
+        ax.plot(drive, values, color=style.hue(curve.hue), linestyle=style.dash(curve.case), lw=width)
     ax.set_ylabel(panel.axis.title)
-    low, high, clipped = visible(panel.curves)
     ax.set_ylim(low, high)
     if low < 0 < high:
         ax.axhline(0, color=style.SOFT, lw=style.THIN)
@@ -65,6 +67,15 @@ def _draw(ax: Axes, panel: Panel, chart: Chart) -> None:
     for line in chart.lines:
         ax.axvline(line.drive, color=style.SOFT, lw=style.THIN, linestyle=(0, (4, 3)))
     _panel_key(ax, panel, clipped)
+
+
+def _torn(drive: Array, values: Array, low: float, high: float) -> tuple[Array, Array]:
+    """A curve that runs off one side of the axis and comes back from the other does not pass through between."""
+    a, b = values[:-1], values[1:]
+    jump = np.flatnonzero(
+        (np.minimum(a, b) < 0) & (np.maximum(a, b) > 0) & ((np.minimum(a, b) < low) | (np.maximum(a, b) > high))
+    )
+    return np.insert(drive, jump + 1, np.nan), np.insert(values.astype(float), jump + 1, np.nan)
 
 
 def visible(curves: tuple[Curve, ...]) -> tuple[float, float, bool]:

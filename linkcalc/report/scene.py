@@ -52,7 +52,8 @@ class Scene:
 
     @cached_property
     def _cases(self) -> tuple[CaseLoads, ...]:
-        return self.sketch.assembly().cases
+        """In the order of the answer's: with friction each comes twice, along the stroke and back."""
+        return tuple(c for c in self.sketch.assembly().cases for _ in range(1 + self.answer.rubs))
 
     def at(self, pose: int, case: int = 0) -> Poses:
         """All members in one pose, as plain numbers; gravity as in that case."""
