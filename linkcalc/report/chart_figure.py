@@ -7,8 +7,8 @@ from typing import TYPE_CHECKING, Any
 
 import numpy as np
 
-from linkcalc.report import style
 from linkcalc.parts.pose import Array
+from linkcalc.report import style
 from linkcalc.report.blocks import Chart, Curve, Panel
 from linkcalc.report.chart_labels import label_flags, label_lines
 from linkcalc.report.figure import new_figure, title_line
