@@ -198,7 +198,10 @@ def _load(board: Board, plain: bool) -> Any:
                 if m != first and _apart(board.points[a], board.points[p])]  # fmt: skip
         if ends:
             second, b = board.one_of(*ends)
-            return Pair((a, b), on=(first, second) if plain or board.yes() else None, size=size)
+            # between two pins of the ground it would do nothing
+            grounded = {a, b} <= set(board.members["ground"])
+            on = (first, second) if plain or grounded or board.yes() else None
+            return Pair((a, b), on=on, size=size)
     return _force(board, size, plain)
 
 

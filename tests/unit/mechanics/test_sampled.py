@@ -179,3 +179,17 @@ def test_roots_come_curve_by_curve() -> None:
     place, curve = sampled_roots(watched, watched.samples)
     np.testing.assert_array_equal(curve, [0, 0, 0, 1])
     np.testing.assert_allclose(place, [np.pi / 2, 3 * np.pi / 2, 5 * np.pi / 2, 1.0], atol=1e-12)
+
+
+@pytest.mark.parametrize("count", [5, 61])
+@pytest.mark.parametrize("at", [-1.0, -0.3, 0.0, 1.0])
+def test_what_has_no_bound_is_the_largest(count: int, at: float) -> None:
+    """A ratio at a dead point, on a sample or between two: told as endless, not as the largest number that was met."""
+
+    def f(x: np.ndarray) -> np.ndarray:
+        with np.errstate(divide="ignore"):
+            ratio = np.abs(1 / (x - at))
+        return np.where(ratio > 1e9, np.inf, ratio)
+
+    place, value = Watched([f], -1.0, 1.0, count).peak()
+    assert value == np.inf and place == pytest.approx(at, abs=1e-8)
