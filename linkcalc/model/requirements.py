@@ -57,8 +57,7 @@ class Requirement:
     """One thing that must hold.
 
     name        as the file names it
-    quantity    "effort", "load", "tare effort", "frictionless effort", "efficiency", "force ratio", "ideal ratio", "force", "moment", "tension",
-                "compression", "travel"
+    quantity    one of MEASURES: "effort", "force ratio", "force", "tension", ...
     of          the joint, member or point it is told of, "" if of the whole
     on          the member that feels it, "" for the largest of all
     relation    "<=", ">=", "<", ">"
