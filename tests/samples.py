@@ -249,6 +249,69 @@ poses = 7
 """
 """A strap from a sector of a lever, crossed to a pulley on a pin of the linkage, to a weight in a shaft."""
 
+CAM = """
+[points]
+O = [0, 0]
+A = { from = "O", distance = 60, angle = 65 }
+G = [150, -10]
+groove_top = [40, 80]
+groove_in = { from = "O", distance = 60, angle = 65 }
+groove_low = [6, 30]
+groove_end = [-5, -5]
+[members]
+ground = ["O", "G"]
+crank = { points = ["O", "A"], mass = 0.4 }
+plate = ["G", "groove_top", "groove_end"]
+[tracks.groove]
+point = "A"
+through = ["groove_top", "groove_in", "groove_low", "groove_end"]
+on = "plate"
+[effort]
+torque_on = "crank"
+[load]
+torque_on = "plate"
+size = -8
+[stroke]
+travel = "groove"
+from = 25
+to = 45
+poses = 7
+"""
+"""A crank pin in the curved groove of a plate; the stroke is the travel along the groove."""
+
+RAIL = """
+[points]
+C = [0, 150]
+L = [-80, 0]
+M = [0, -20]
+R = [80, 0]
+foot = { from = "C", distance = 170, angle = -100 }
+H = [-20, 90]
+[members]
+ground = ["H"]
+arm = { points = ["H", "foot"], mass = 2 }
+carriage = { points = ["L", "M", "R"], mass = 5 }
+[slides.ways]
+member = "carriage"
+along = 10
+[tracks.rail]
+point = "foot"
+arc = ["L", "M", "R"]
+on = "carriage"
+[effort]
+at = "R"
+direction = 10
+[load]
+torque_on = "arm"
+size = 6
+[stroke]
+travel = "rail"
+from = "drawn"
+to = 60
+poses = 7
+"""
+"""The foot of a hanging arm on the round rail of a carriage; the stroke is the travel along the rail."""
+
 SAMPLES = (
     Sample("joint", "slide", "guide", RAM),
     Sample("joint", "slide", "collar_on_rocker", COLLAR),
@@ -256,6 +319,8 @@ SAMPLES = (
     Sample("joint", "slot", "level", SLOTTED),
     Sample("joint", "rope", "line", BOOM),
     Sample("joint", "rope", "strap", SECTOR),
+    Sample("joint", "track", "groove", CAM),
+    Sample("joint", "track", "rail", RAIL),
     Sample("joint", "weld", "corner", BRACKET),
     Sample("joint", "weld", "foot", BRACKET),
     Sample("load", "at", "load", RAM),

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
+from typing import Any
 
 import numpy as np
 
@@ -26,6 +27,7 @@ def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple
     return (
         *_dead(curves, events),
         *_slack(curves, events),
+        *_off_track(curves),
         *_passed(curves, path),
         *_held(curves, events),
         *_failed(curves),
@@ -72,6 +74,19 @@ def _slack(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
                 told = "slack throughout" if np.all(samples[k] < 0) else "slack at some poses"
             of_case = f" in case {case}" if case else ""
             yield Caveat(rope, f"the rope is {told}{of_case}: it cannot push; the answer there is not that of a rope")
+
+
+def _off_track(curves: Curves) -> Iterator[Caveat]:
+    """Points beyond the ends of the curve that guides them."""
+    chain = curves.survey.ready.chain
+    tracks: list[Any] = [joint for joint in chain.joints if hasattr(joint, "span")]
+    for joint in tracks:
+        travel = np.ravel(np.broadcast_to(joint.travel(curves.shown.solved.closed.at), (1, 1, curves.drive.size)))
+        long, slack = float(np.ravel(joint.span)[0]), 1e-9 * chain.size
+        off = np.nonzero((travel < -slack) | (travel > long + slack))[0]
+        if off.size:
+            where = " and ".join(dict.fromkeys(_drive(curves, float(curves.drive[k])) for k in (off[0], off[-1])))
+            yield Caveat(joint.name, f"its point is beyond an end of the track at {where}: the curve is only drawn on")
 
 
 def _ahead(part: Array, k: int) -> bool:

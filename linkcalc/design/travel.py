@@ -10,7 +10,7 @@ from linkcalc.parts.pose import Array
 
 
 def travel(curves: Curves, of: str) -> float:
-    """[m] the largest distance of a point from its start, or the range along a slot or slide."""
+    """[m] the largest distance of a point from its start, or the range along a slot, slide or track."""
     drawing = curves.survey.ready.drawing
     joints = {j.name: j for j in drawing.joints if hasattr(j, "travel")}
     if of in joints:

@@ -12,6 +12,7 @@ from linkcalc.model.mechanism import GROUND, Mechanism
 from linkcalc.parts.joints.rope import HAULING, Pulley, Rope
 from linkcalc.parts.joints.slide import Slide
 from linkcalc.parts.joints.slot import Slot
+from linkcalc.parts.joints.track import Track
 from linkcalc.parts.joints.weld import Weld
 
 
@@ -89,7 +90,7 @@ def _check(joint: Any, item: Item, carried: Carried, gather: Gather) -> None:
 
 
 @_check.register
-def _slot(joint: Slot, item: Item, carried: Carried, gather: Gather) -> None:
+def _slot(joint: Slot | Track, item: Item, carried: Carried, gather: Gather) -> None:
     carriers = carried.by(joint.point)
     if not carriers:
         gather.add((*item, "point"), f"no member carries {joint.point}", f"name {joint.point} in a member")
@@ -98,8 +99,10 @@ def _slot(joint: Slot, item: Item, carried: Carried, gather: Gather) -> None:
         gather.add((*item, "of"), f"{joint.of} does not carry {joint.point}", f"{wanted} is wanted")
     elif joint.on in carriers and joint.of in (None, joint.on):
         gather.add((*item, "on"), f"{joint.point} is a point of {joint.on} itself", "another member is wanted")
-    if isinstance(joint.along, tuple):
-        carried.check(joint.along, joint.on, (*item, "along"), gather)
+    for key in ("along", "arc", "through"):
+        line = getattr(joint, key, None)
+        if isinstance(line, tuple):
+            carried.check(line, joint.on, (*item, key), gather)
 
 
 @_check.register

@@ -82,7 +82,7 @@ def check_names(mechanism: Mechanism, known: Known, gather: Gather) -> None:
             for of, name in names(value, entry.metadata.get("of", "")) if names else ():
                 own = getattr(part.part, "add", {}) if of == "load" and entry.name == "scale" else {}
                 if name not in known.table(of) and name not in own:
-                    kind = "slot or slide" if of == "guide" else of
+                    kind = "slot, slide or track" if of == "guide" else of
                     gather.add(item, f"unknown {kind} {name!r}", nearest(name, known.table(of)))
 
 

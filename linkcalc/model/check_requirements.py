@@ -48,7 +48,7 @@ def _check_names(one: Requirement, known: Known, drawing: Drawing | None) -> Non
     pools = {"at": ("joint", joints), "in": ("member", known.members[1:])}
     if one.quantity == "tension" and known.ropes:
         pools["in"] = ("member or rope", known.members[1:] + known.ropes)
-    pools["of"] = ("point, slot or slide", known.joints + known.points)
+    pools["of"] = ("point, slot, slide or track", known.joints + known.points)
     word = MEASURES[one.quantity].word
     if word:
         what, pool = pools[word]
@@ -71,7 +71,7 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
         if one.on and one.on not in sides:
             raise fault((), f"{one.of!r} does not join {one.on!r}", f"it joins {', '.join(sorted(sides))}")
     if word == "of" and one.of not in drawing.points and not any(hasattr(joint, "travel") for joint in joints):
-        raise fault((), f"{one.of!r} has no travel", "a point, slot or slide is wanted")
+        raise fault((), f"{one.of!r} has no travel", "a point, slot, slide or track is wanted")
 
 
 def _sides(drawing: Drawing) -> dict[str, str]:

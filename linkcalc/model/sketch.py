@@ -145,7 +145,7 @@ class Drawing:
         """The slot or slide of that name. Raises Faults."""
         able: dict[str, Any] = {j.name: j for j in self.joints if hasattr(j, "travel")}
         if name not in able:
-            raise fault((), f"unknown slot or slide {name!r}", nearest(name, able))
+            raise fault((), f"unknown slot, slide or track {name!r}", nearest(name, able))
         found: Travelled = able[name]
         return found
 

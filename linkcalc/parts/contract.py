@@ -169,7 +169,10 @@ class Joint(Protocol):
 
 
 class Travelled(Protocol):
-    """A joint along which a travel can be measured (slot, slide)."""
+    """A joint along which a travel can be measured (slot, slide, track).
+
+    One whose line has ends has, besides, ``span``: its length [m], travel counting from its beginning.
+    """
 
     def travel(self, at: Poses) -> Value:
         """[m] how far along the line"""

@@ -12,7 +12,7 @@ def _made(kind: str, text: str, default: Any, **more: Any) -> Any:
 
 
 def name(of: str, text: str, default: Any = MISSING) -> Any:
-    """The name of one item: of = "point", "member", "guide" (a slot or slide)."""
+    """The name of one item: of = "point", "member", "guide" (a slot, slide or track), "rope"."""
     return _made("name", text, default, of=of)
 
 

@@ -181,6 +181,13 @@ def _line_of_rope(pen: Pen, item: Item) -> None:
     pen.keep_clear(item.spots, style.ROPE)
 
 
+def _line_of_track(pen: Pen, item: Item) -> None:
+    """A groove along a curve."""
+    pen.line(item.spots, style.BAR * 0.55, style.INK, zorder=3.6)
+    pen.line(item.spots, style.BAR * 0.55 - 2 * style.THIN, style.PAPER, zorder=3.6)
+    pen.keep_clear(item.spots, weight=0.5)
+
+
 def _told_by_arrow(pen: Pen, item: Item) -> None:
     """Forces and torques have no body of their own."""
 
@@ -259,5 +266,7 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "wheel": _wheel,
     "rope": _rope,
     "line of rope": _line_of_rope,
+    "track": _slot,
+    "line of track": _line_of_track,
     "haul": _told_by_arrow,
 }

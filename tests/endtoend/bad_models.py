@@ -220,7 +220,7 @@ BAD = [
         "stroke of a line that is not there",
         'travel = "ways"',
         'travel = "way"',
-        "stroke.travel: unknown slot or slide 'way'; did you mean 'ways'?",
+        "stroke.travel: unknown slot, slide or track 'way'; did you mean 'ways'?",
         model=GUIDED,
     ),
     _changed(

@@ -71,7 +71,7 @@ class Resum:
             return self.place(point, step.on) if step.on else self.somewhere(point)
         part = self.mechanism.joints[word][joint]
         match word:
-            case "slot":
+            case "slot" | "track":
                 return self.place(part.point, part.of or self.carriers(part.point)[0])
             case "slide":
                 return self.place(part.at or self.mechanism.members[part.member].points[0], part.member)

@@ -12,9 +12,9 @@ from linkcalc.words import word
 @word("coordinate", "travel")
 @dataclass(frozen=True)
 class Travel:
-    """Travel along a slot or slide: from the line's first point, or from the drawn place if the line is an angle."""
+    """Travel along a slot, slide or track: from its first point, or from the drawn place if the line is an angle."""
 
-    travel: str = fields.name("guide", "the slot or slide")
+    travel: str = fields.name("guide", "the slot, slide or track")
 
     kind = "length"
 

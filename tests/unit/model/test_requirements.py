@@ -96,7 +96,7 @@ FORM = '"force at C on arm <= 2 kN", "effort <= 150 N at start" or the like is w
         ("moment at A <= 1 N*m", "'A' takes no moment; there are none"),
         ("tension in strt <= 1 N", "unknown member 'strt'; did you mean 'strut'?"),
         ("tension in ground <= 1 N", "unknown member 'ground'; known: arm, handle, strut"),
-        ("travel of tp <= 1 mm", "unknown point, slot or slide 'tp'; did you mean 'tip'?"),
+        ("travel of tp <= 1 mm", "unknown point, slot, slide or track 'tp'; did you mean 'tip'?"),
     ],
 )
 def test_what_may_not_be_asked(text: str, message: str) -> None:
@@ -109,7 +109,7 @@ def test_what_may_not_be_asked(text: str, message: str) -> None:
     ("text", "message"),
     [
         ("moment at guide <= 1 N*m", "'guide' takes no moment; known: root, way"),
-        ("travel of root <= 1 mm", "'root' has no travel; a point, slot or slide is wanted"),
+        ("travel of root <= 1 mm", "'root' has no travel; a point, slot, slide or track is wanted"),
         ("force at way on bar <= 1 N", "'way' does not join 'bar'; it joins block, ground"),
     ],
 )

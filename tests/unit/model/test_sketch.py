@@ -120,7 +120,7 @@ def test_points_may_be_in_any_order_and_hang_on_long_chains() -> None:
 def test_travel_is_asked_of_slots_and_slides_only() -> None:
     drawing = Drawing(MODELS["everything"])
     assert drawing.travelled("guide").travel(drawn_poses(drawing)) == pytest.approx(0.0)
-    with pytest.raises(Faults, match=r"unknown slot or slide 'root'; known: guide, roll, way"):
+    with pytest.raises(Faults, match=r"unknown slot, slide or track 'root'; known: guide, roll, way"):
         drawing.travelled("root")
 
 

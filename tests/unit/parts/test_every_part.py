@@ -139,6 +139,8 @@ def test_travel_is_the_way_along_the_line(joint: Joint, members: int) -> None:
     for k in range(3, 3 * members):
         by = difference(joint.travel, at, k // 3, k % 3)
         np.testing.assert_allclose(slope[k], np.broadcast_to(by, SHAPE), atol=SLOPE_TOLERANCE)
+    if not hasattr(joint, "line"):
+        return  # a curve: its travel is held against its length in test_track.py
     tx, ty = at.turned(joint.line.member, joint.line.tx, joint.line.ty)
     far = nudged(nudged(at, joint.site.member, 0, 0.05 * tx), joint.site.member, 1, 0.05 * ty)
     np.testing.assert_allclose(joint.travel(far) - joint.travel(at), 0.05, atol=ROUNDING)

@@ -131,8 +131,8 @@ def test_what_is_not_there_is_a_clear_fault(ask, message):
         ask()
 
 
-TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "wheel", "rope", "line of rope")
-NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope")
+TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "wheel", "rope", "line of rope", "line of track")
+NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope", "track")
 STEM = """
 [points]
 A = [0, 0]
@@ -157,6 +157,7 @@ C = [200, 0]
 D = [200, 100]
 E = [300, 0]
 F = [50, 90]
+B2 = [100, 0]
 [members]
 ground = ["A", "D", "F"]
 arm = { points = ["A", "B", "C"], mass = 1 }
@@ -166,6 +167,8 @@ stub = ["E", "D"]
 peg = { point = "B", along = 90, of = "arm" }
 [ropes]
 cord = { path = ["C", { pulley = "D", radius = 8, wrap = "right" }, "F"], end = "hauling" }
+[tracks]
+cam = { point = "B", arc = ["A", "B2", "F"], of = "arm" }
 [slides]
 ram = { member = "rod", along = 0 }
 [welds]
