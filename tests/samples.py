@@ -312,6 +312,73 @@ poses = 7
 """
 """The foot of a hanging arm on the round rail of a carriage; the stroke is the travel along the rail."""
 
+SPRUNG = """
+[points]
+A = [0, 0]
+D = [200, 0]
+H = [-60, 130]
+K = [290, 160]
+B = { from = "A", distance = 60, angle = 70 }
+C = { meets = [["B", 180], ["D", 120]], side = "left" }
+tip = { from = "D", distance = 170, angle = 80 }
+[members]
+ground = ["A", "D", "H", "K"]
+crank = { points = ["A", "B"], mass = 0.4 }
+rod = ["B", "C"]
+rocker = { points = ["D", "C", "tip"], mass = 1.2 }
+[effort]
+cylinder = ["H", "C"]
+bore = 25
+rod = 10
+acts = "pull"
+[loads.return]
+spring = ["K", "tip"]
+rate = 1.5
+preload = -20
+[loads.buffer]
+spring = ["A", "C"]
+on = ["ground", "rod"]
+rate = 2
+free_length = 210
+acts = "compression"
+[loads.winder]
+torsion_spring = "rod"
+against = "crank"
+rate = "12 N*mm/deg"
+free_angle = -80
+[loads.lid]
+torsion_spring = "rocker"
+rate = "0.8 N*m/rad"
+preload = 1
+[loads.stay]
+gas_spring = ["H", "tip"]
+force = 90
+length = 340
+stroke = 120
+rise = 1.3
+[loads.strip]
+constant_spring = ["K", "B"]
+pull = 8
+[loads.magnet]
+force_over = ["H", "B"]
+table = [[40, -9], [110, -6], [150, 1], [260, 2]]
+[loads.cam]
+torque_over = "rod"
+against = "rocker"
+formula = "0.4 N*m*sin(2*angle)"
+[loads.jack]
+screw = ["B", "tip"]
+diameter = 12
+lead = 3
+friction = 0.12
+size = 15
+[stroke]
+turn = "crank"
+to = 95
+poses = 7
+"""
+"""A four-bar with something of every kind that pushes by a law; the unknown is the pressure of a drawing cylinder."""
+
 SAMPLES = (
     Sample("joint", "slide", "guide", RAM),
     Sample("joint", "slide", "collar_on_rocker", COLLAR),
@@ -336,6 +403,16 @@ SAMPLES = (
     Sample("load", "mass_at", "bob", SLOTTED),
     Sample("load", "haul", "effort", BOOM),
     Sample("coordinate", "haul", "", BOOM),
+    Sample("load", "spring", "return", SPRUNG),
+    Sample("load", "spring", "buffer", SPRUNG),
+    Sample("load", "torsion_spring", "winder", SPRUNG),
+    Sample("load", "torsion_spring", "lid", SPRUNG),
+    Sample("load", "gas_spring", "stay", SPRUNG),
+    Sample("load", "constant_spring", "strip", SPRUNG),
+    Sample("load", "force_over", "magnet", SPRUNG),
+    Sample("load", "torque_over", "cam", SPRUNG),
+    Sample("load", "cylinder", "effort", SPRUNG),
+    Sample("load", "screw", "jack", SPRUNG),
     Sample("coordinate", "travel", "", RAM),
     Sample("coordinate", "turn", "", COLLAR),
     Sample("coordinate", "distance", "", SLOTTED),

@@ -47,6 +47,27 @@ class Bearing:
 
 
 @dataclass(frozen=True)
+class Reading:
+    """What a load tells of itself over the stroke, beside its push.
+
+    load      its name, "effort" and "load" included
+    quantity  "force", "length", "pressure", ...
+    kind      kind of its size
+    values    (case, variant, pose) SI, nan in a case that is without it
+    """
+
+    load: str
+    quantity: str
+    kind: str
+    values: Array
+
+    @property
+    def name(self) -> str:
+        """As requirements call it: "length of return"."""
+        return f"{self.quantity} of {self.load}"
+
+
+@dataclass(frozen=True)
 class Event:
     """Something that happens at an exact pose.
 
@@ -144,6 +165,8 @@ class StrokeAnswer:
     events: tuple[Event, ...] = ()
     verdicts: tuple[Verdict, ...] = ()
     caveats: tuple[Caveat, ...] = ()
+    cautions: tuple[Caveat, ...] = ()  # what can hurt; item: the loads that it is so with
+    readings: tuple[Reading, ...] = ()  # what loads tell of themselves
     marks: tuple[Mark, ...] = ()  # joints and loads in the drawing pose
 
     # -- reading one thing out of the arrays ------------------------------------------------------------
@@ -184,6 +207,13 @@ class StrokeAnswer:
             raise KeyError(f"no rope {rope}; known: {', '.join(self.ropes) or 'none'}")
         tension: Array = self.tension[self.ropes.index(rope)]
         return tension
+
+    def reading(self, name: str) -> Array:
+        """(case, variant, pose) [SI] what a load tells of itself: "length of return"; KeyError with the known ones."""
+        for reading in self.readings:
+            if reading.name == name:
+                return reading.values
+        raise KeyError(f"no {name}; known: {', '.join(r.name for r in self.readings) or 'none'}")
 
     @property
     def joints(self) -> tuple[str, ...]:

@@ -10,10 +10,11 @@ import numpy as np
 from linkcalc.design.answer import Caveat, Event
 from linkcalc.design.curves import Curves
 from linkcalc.design.events import SLACK
+from linkcalc.design.limits import limits
+from linkcalc.design.places import place
 from linkcalc.mechanics.balance import part_of_motion
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.state import Status
-from linkcalc.model.units import show
 from linkcalc.parts.pose import Array, Mask
 
 _NOTHING = 1e-9  # of the largest force: no push, but rounding
@@ -30,6 +31,7 @@ def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple
         *_off_track(curves),
         *_passed(curves, path),
         *_held(curves, events),
+        *limits(curves),
         *_failed(curves),
     )
 
@@ -50,14 +52,14 @@ def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
         inside = [e.drive for e in events if e.kind == "dead point" and e.quantity == name]
         least = np.min(part, axis=(0, 1))
         if inside:
-            where = ", ".join(_drive(curves, d) for d in dict.fromkeys(inside))
+            where = ", ".join(place(curves.survey.ready, d) for d in dict.fromkeys(inside))
             yield Caveat(name, f"dead point of the {name} at {where}: {texts[name]}")
         for k in sorted({0, least.size - 1, int(np.argmin(least))}):
             told = any(abs(d - curves.drive[k]) <= 1e-6 * np.ptp(curves.drive) for d in inside)
             if not told and (least[k] < _AT or (least[k] < _NEAR and not inside and _ahead(least, k))):
-                place = f" at {_drive(curves, float(curves.drive[k]))}" if ready.steps else ""
+                where = f" at {place(curves.survey.ready, float(curves.drive[k]))}" if ready.steps else ""
                 much = "at" if least[k] < _AT else "close to"
-                yield Caveat(name, f"the pose{place} is {much} a dead point of the {name}: {texts[name]}")
+                yield Caveat(name, f"the pose{where} is {much} a dead point of the {name}: {texts[name]}")
 
 
 def _slack(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
@@ -68,7 +70,11 @@ def _slack(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
         for k, case in enumerate(cases):
             if not np.any(samples[k] < -_NOTHING * curves.largest_force):
                 continue
-            where = [_drive(curves, e.drive) for e in events if (e.kind, e.quantity, e.case) == (SLACK, rope, case)]
+            where = [
+                place(curves.survey.ready, e.drive)
+                for e in events
+                if (e.kind, e.quantity, e.case) == (SLACK, rope, case)
+            ]
             told = f"slack from {' and '.join(where)} on" if len(where) == 1 else f"slack between {' and '.join(where)}"
             if not where:
                 told = "slack throughout" if np.all(samples[k] < 0) else "slack at some poses"
@@ -85,7 +91,8 @@ def _off_track(curves: Curves) -> Iterator[Caveat]:
         long, slack = float(np.ravel(joint.span)[0]), 1e-9 * chain.size
         off = np.nonzero((travel < -slack) | (travel > long + slack))[0]
         if off.size:
-            where = " and ".join(dict.fromkeys(_drive(curves, float(curves.drive[k])) for k in (off[0], off[-1])))
+            ends = (place(curves.survey.ready, float(curves.drive[k])) for k in (off[0], off[-1]))
+            where = " and ".join(dict.fromkeys(ends))
             yield Caveat(joint.name, f"its point is beyond an end of the track at {where}: the curve is only drawn on")
 
 
@@ -100,7 +107,7 @@ def _ahead(part: Array, k: int) -> bool:
 
 def _passed(curves: Curves, path: Path | None) -> Iterator[Caveat]:
     for a, b in path.passed if path else ():
-        where = f"{_drive(curves, a)} and {_drive(curves, b)}"
+        where = f"{place(curves.survey.ready, a)} and {place(curves.survey.ready, b)}"
         yield Caveat(
             "stroke",
             f"between {where} the stroke passes a change point: the mechanism could also go on another way from there",
@@ -123,7 +130,7 @@ def _held(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
             ends = [_edge(curves, edges, k, step) for k, step in ((start, -1), (stop, 1))]
             where = "in the drawing pose"
             if curves.survey.ready.steps:
-                where = f"from {_drive(curves, ends[0])} to {_drive(curves, ends[1])}"
+                where = f"from {place(curves.survey.ready, ends[0])} to {place(curves.survey.ready, ends[1])}"
             yield Caveat(
                 "effort",
                 f"holds by itself {where}{of}: friction alone keeps the load; an effort the other way lets it back",
@@ -152,15 +159,8 @@ def _failed(curves: Curves) -> Iterator[Caveat]:
         if code == Status.FINE:
             continue
         poses = sorted({int(k) for k in np.nonzero(status == code)[2]})
-        where = ", ".join(_drive(curves, float(curves.drive[k])) for k in poses[:3]) + (
+        where = ", ".join(place(curves.survey.ready, float(curves.drive[k])) for k in poses[:3]) + (
             " ..." if len(poses) > 3 else ""
         )
         yield Caveat("stroke", f"{len(poses)} pose{'s' if len(poses) > 1 else ''} without an answer ({where}): "
                      + Status(code).text)  # fmt: skip
-
-
-def _drive(curves: Curves, value: float) -> str:
-    ready = curves.survey.ready
-    if not ready.steps or ready.chain.coordinate is None:
-        return "the drawing pose"
-    return show(value, ready.chain.coordinate.kind, ready.drawing.mechanism.units)

@@ -108,6 +108,12 @@ def _wanted(curves: Curves) -> Iterator[Wanted]:
         for member in _members(curves):
             yield Wanted(f"axial force in {member}", case, 1)
             yield Wanted(f"axial force in {member}", case, -1)
+        for one in curves.survey.spoken:
+            if _idle(curves, one.name):
+                continue
+            size = one.kind in ("force", "moment")
+            yield Wanted(one.name, case, 1, size)
+            yield Wanted(one.name, case, -1, size)
 
 
 def _at_passages(curves: Curves, wanted: Sequence[Wanted], dead: list[float], zero: list[float]) -> dict[Wanted, Found]:
@@ -146,6 +152,12 @@ def _usual(curves: Curves, w: Wanted) -> float:
     # the median, by sorting: numpy's own loads masked arrays when first called
     finite = np.sort(np.abs(samples[np.isfinite(samples)]))
     return float(finite[finite.size // 2]) if finite.size else 0.0
+
+
+def _idle(curves: Curves, name: str) -> bool:
+    """True for what a load tells and never changes: it has no extremes."""
+    samples = curves.samples(name)
+    return bool(np.all(np.abs(samples - samples[:, :1]) <= _NOTHING * curves.size(name)))
 
 
 def _carries_nothing(curves: Curves, name: str) -> bool:

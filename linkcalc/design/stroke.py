@@ -6,12 +6,13 @@ from collections.abc import Mapping, Sequence
 
 import numpy as np
 
-from linkcalc.design.answer import Bearing, Checks, StrokeAnswer
+from linkcalc.design.answer import Bearing, Caveat, Checks, Reading, StrokeAnswer
 from linkcalc.design.caveats import caveats
 from linkcalc.design.curves import Curves
 from linkcalc.design.events import events
 from linkcalc.design.reach import located
 from linkcalc.design.survey import Shown, Survey, bounded, efficiency
+from linkcalc.design.told import spoken
 from linkcalc.design.verdicts import verdicts
 from linkcalc.mechanics.motion import alone
 from linkcalc.mechanics.path import Path
@@ -22,6 +23,7 @@ from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.select import only_case
 from linkcalc.model.sketch import Drawing, drawn
+from linkcalc.model.told import cautions_of
 from linkcalc.parts.pose import Array, Codes, Value
 
 _WATCHED = 61
@@ -137,6 +139,8 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         events=found,
         verdicts=judged,
         caveats=warned,
+        cautions=_cautions(survey),
+        readings=tuple(Reading(s.load, s.quantity, s.kind, _full(s.of(solved, p), shape)) for s in spoken(p)),
         marks=tuple(j.mark(drawn) for j in nominal.chain.joints)
         + tuple(a.pusher.mark(drawn) for a in nominal.pushing.all),
     )
@@ -147,6 +151,11 @@ def drive_name(along: object) -> str:
     word: str = along.word  # type: ignore[attr-defined]
     of = getattr(along, word)
     return f"{word} of {of if isinstance(of, str) else ' and '.join(of)}"
+
+
+def _cautions(survey: Survey) -> tuple[Caveat, ...]:
+    found = cautions_of(a.pusher for a in survey.ready.pushing.all)
+    return tuple(Caveat(", ".join(names), text) for text, names in found.items())
 
 
 def _two_force(survey: Survey) -> list[str]:

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from linkcalc.design.told import Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
 from linkcalc.mechanics.pipeline import Solved, sides
@@ -49,6 +50,8 @@ class Survey:
     sides      the sides of its joints, as in every solved batch
     two_force  its two-force members
     ropes      names of its ropes
+    spoken     what its loads tell of themselves
+    watched    limits of its loads
     """
 
     def __init__(self, ready: Ready, first: Solved):
@@ -57,6 +60,8 @@ class Survey:
         self.sides = shown.sides
         self.two_force: tuple[TwoForce, ...] = two_force_members(shown.sides, first.closed.at, ready.pushing)
         self.ropes = tuple(dict.fromkeys(s.part_of for s in shown.sides if s.part_of))
+        self.spoken = spoken(ready.pushing)
+        self.watched = watched(ready.pushing)
         self.quantities: dict[str, Quantity] = {q.name: q for q in self._all()}
 
     def show(self, solved: Solved) -> Shown:
@@ -114,7 +119,12 @@ class Survey:
         for two in self.two_force:
             name = self.ready.drawing.members[two.member]
             out.append(Quantity(f"axial force in {name}", "force", _axial(two)))
+        out += [Quantity(one.name, one.kind, self._told(one)) for one in self.spoken]
+        out += [Quantity(one.name, "number", self._told(one.room)) for one in self.watched]
         return out
+
+    def _told(self, one: Spoken) -> Callable[[Shown], Value]:
+        return lambda shown: one.of(shown.solved, self.ready.pushing)
 
 
 def efficiency(b: Balance, pushing: Pushing) -> Value:

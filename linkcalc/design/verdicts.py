@@ -22,7 +22,7 @@ _HOLDS: dict[str, Callable[[float, float], bool]] = {
     "<": operator.lt,
     ">": operator.gt,
 }
-_SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment")
+_SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment", "torque")
 _ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
 
 
@@ -99,9 +99,7 @@ def _quantity(curves: Curves, requirement: Requirement) -> tuple[str, int]:
         return f"tension of {q.of}", 1
     if q.quantity in ("tension", "compression"):
         return f"axial force in {q.of}", 1 if q.quantity == "tension" else -1
-    if q.quantity in ("force", "moment"):
-        return f"{q.quantity} at {q.of}" + (f" on {q.on}" if q.on else ""), 1
-    return q.quantity, 1
+    return " ".join([q.quantity, *((q.word, q.of) if q.word else ()), *(("on", q.on) if q.on else ())]), 1
 
 
 def _asked(curves: Curves, requirement: Requirement) -> None:

@@ -19,7 +19,7 @@ from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.friction import rub
 from linkcalc.mechanics.motion import Closed, fastest
-from linkcalc.mechanics.pushing import Column, Pushing, column, strength
+from linkcalc.mechanics.pushing import Column, Pushing, column, strength, unknown
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Codes, Mask, Value
 
@@ -118,7 +118,7 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
     status = _status(closed, multipliers, dead, len(pushing.cases))
     if jammed is not None:
         status = np.where(jammed & (status == Status.SINGULAR), np.int8(Status.JAMMED), status)
-    return Balance(
+    whole = Balance(
         effort,
         load,
         tare,
@@ -131,6 +131,8 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
         frictionless,
         friction,
     )
+    without = unknown(pushing.all, at)
+    return whole if without is None else failed(whole, without & closed.fine, Status.NO_FORCE)
 
 
 def _lost(closed: Closed) -> Mask | None:

@@ -9,7 +9,7 @@ import numpy as np
 
 from linkcalc.model.parts_list import EFFORT, LOAD, Assembly
 from linkcalc.parts.contract import Push, Pusher
-from linkcalc.parts.pose import Poses, Value
+from linkcalc.parts.pose import Mask, Poses, Value
 
 Column = list[Value]
 
@@ -97,8 +97,26 @@ def strength(acting: Sequence[Acting], at: Poses) -> Value:
     """[N] or [N m] how strong the effort or load is in each case."""
     total: Value = 0.0
     for a in acting:
-        total = total + a.factor * a.pusher.strength(at)
+        total = total + _own(a, at)
     return total
+
+
+def unknown(acting: Sequence[Acting], at: Poses) -> Mask | None:
+    """Where something that acts has no strength at all, because it is not told there. None: nowhere."""
+    lost = [np.isnan(_own(a, at)) for a in acting if _partial(a) and a.pusher.size is not None]
+    lost = [mask for mask in lost if mask.any()]
+    return np.logical_or.reduce(np.broadcast_arrays(*lost)) if lost else None
+
+
+def _own(a: Acting, at: Poses) -> Value:
+    """Strength times factor; nothing in a case that it does not act in, even where it has none."""
+    strength = a.factor * a.pusher.strength(at)
+    return np.where(np.equal(a.factor, 0.0), 0.0, strength) if _partial(a) else strength
+
+
+def _partial(a: Acting) -> bool:
+    partial: bool = getattr(a.pusher, "partial", False)
+    return partial
 
 
 def column(acting: Sequence[Acting], at: Poses, columns: int, *, unit: bool) -> Column:
@@ -110,7 +128,7 @@ def column(acting: Sequence[Acting], at: Poses, columns: int, *, unit: bool) -> 
     for a in acting:
         # of the factors of alternatives only "acts in this case or not" counts
         acts = _plain(np.sign(np.abs(a.factor))) if len(acting) > 1 else 1.0
-        add_pushes(out, acts if unit else a.factor * a.pusher.strength(at), a.pusher.push(at))
+        add_pushes(out, acts if unit else _own(a, at), a.pusher.push(at))
     return out
 
 

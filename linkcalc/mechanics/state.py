@@ -15,6 +15,7 @@ class Status(IntEnum):
     DEAD_POINT = 4
     SINGULAR = 5
     JAMMED = 6
+    NO_FORCE = 7
 
     @property
     def text(self) -> str:
@@ -29,4 +30,5 @@ _TEXTS = {
     Status.DEAD_POINT: "dead point: no finite effort or load answers here",
     Status.JAMMED: "jams: friction grows as fast as the effort, however large",
     Status.SINGULAR: "the joints do not hold the members in this pose",
+    Status.NO_FORCE: "a load has no force there: it is outside the range that it is told for",
 }

@@ -8,7 +8,7 @@ from typing import Any
 from linkcalc.model import walk
 from linkcalc.model.check_joints import Carried
 from linkcalc.model.gather import Gather, Item
-from linkcalc.model.mechanism import GROUND, Mechanism, strength_kind
+from linkcalc.model.mechanism import GROUND, Mechanism, asked_by, strength_kind
 from linkcalc.parts.coordinates.distance import Distance
 from linkcalc.parts.coordinates.haul import Haul
 from linkcalc.parts.coordinates.turn import Turn
@@ -22,7 +22,7 @@ from linkcalc.parts.loads.weight import Weight
 
 def unsized(load: Any) -> bool:
     """True if the size of an effort or load is left out, so that it is asked for."""
-    return getattr(load, "size", 0) is None
+    return getattr(load, asked_by(load), 0) is None
 
 
 def check_loads(mechanism: Mechanism, gather: Gather) -> None:
@@ -42,7 +42,9 @@ def check_unknown(mechanism: Mechanism, gather: Gather) -> None:
     effort, load = mechanism.effort, mechanism.load
     for item, other in walk.loads(mechanism):
         if unsized(other) and item[-1:] != ("effort",) and item != ("load",):
-            gather.add(item, "'size' is missing", "only the size of the effort or of the load may be left out")
+            gather.add(
+                item, f"{asked_by(other)!r} is missing", "only the size of the effort or of the load may be left out"
+            )
     if effort is None:
         if unsized(load):
             gather.add(("load",), "it has no size and there is no effort", "give it a size, or give an effort")
@@ -93,7 +95,12 @@ def check_stroke(mechanism: Mechanism, gather: Gather) -> None:
 
 @singledispatch
 def _check(part: Any, item: Item, carried: Carried, gather: Gather) -> None:
-    """What a kind of load or coordinate asks of points and members; one without an entry here asks nothing."""
+    """What a kind of load or coordinate asks of points and members. One without an entry of its own may say that it
+    reaches from point to point (`ends`), or turns one member against another (`turned`); else it asks nothing."""
+    if hasattr(part, "ends"):
+        _ends(part.ends, part.on, part.word, item, carried, gather)
+    if hasattr(part, "turned"):
+        _turned(part.turned, part.word, item, gather)
 
 
 def _on(point: str, member: str | None, item: Item, carried: Carried, gather: Gather) -> None:
@@ -127,20 +134,31 @@ def _weight(load: Weight, item: Item, carried: Carried, gather: Gather) -> None:
 
 @_check.register
 def _torque(load: Torque, item: Item, carried: Carried, gather: Gather) -> None:  # noqa: ARG001
-    if load.torque_on == load.against:
-        gather.add(item, f"a torque of {load.torque_on} on itself does nothing", "two members are wanted")
+    _turned((load.torque_on, load.against), "torque", item, gather)
+
+
+def _turned(members: tuple[str, str], what: str, item: Item, gather: Gather) -> None:
+    if members[0] == members[1]:
+        gather.add(item, f"a {what.replace('_', ' ')} of {members[0]} on itself does nothing", "two members are wanted")
 
 
 @_check.register
 def _pair(load: Pair, item: Item, carried: Carried, gather: Gather) -> None:
-    first, second = load.between
+    _ends(load.between, load.on, "between", item, carried, gather)
+
+
+def _ends(
+    points: tuple[str, str], on: tuple[str, str] | None, key: str, item: Item, carried: Carried, gather: Gather
+) -> None:
+    """A load between two points, which must be able to come nearer or to part."""
+    first, second = points
     if first == second:
-        gather.add((*item, "between"), f"{first} to {second} is no line", "two points are wanted")
+        gather.add((*item, key), f"{first} to {second} is no line", "two points are wanted")
         return
-    ends = load.on or (None, None)
-    for point, member in zip(load.between, ends, strict=True):
+    ends = on or (None, None)
+    for point, member in zip(points, ends, strict=True):
         _on(point, member, item, carried, gather)
-    alone = [{member} if member else set(carried.by(point)) for point, member in zip(load.between, ends, strict=True)]
+    alone = [{member} if member else set(carried.by(point)) for point, member in zip(points, ends, strict=True)]
     if alone[0] == alone[1] and len(alone[0]) == 1:
         gather.add(item, f"both points are on {alone[0].pop()}: it does nothing", "points of two members are wanted")
 

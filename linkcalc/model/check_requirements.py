@@ -5,12 +5,14 @@ from __future__ import annotations
 from collections.abc import Iterable
 
 from linkcalc.faults import fault
+from linkcalc.model import walk
 from linkcalc.model.check_names import Known
 from linkcalc.model.dimensions import reckon
 from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Mechanism
-from linkcalc.model.requirements import MEASURES, Requirement, requirement
+from linkcalc.model.requirements import DRAWN, JOINT, LOADING, MEMBER, MOVER, Requirement, requirement
 from linkcalc.model.sketch import Drawing
+from linkcalc.model.told import told_by
 from linkcalc.words import nearest
 
 
@@ -23,7 +25,7 @@ def check_requirements(mechanism: Mechanism, known: Known, drawing: Drawing | No
             if any(gather.touches(table) for table in ("effort", "load", "stroke", "units", "dimensions")):
                 continue  # what it is judged by is not known
             _check_has(one, mechanism)
-            _check_names(one, known, drawing)
+            _check_names(one, mechanism, known, drawing)
             if drawing:
                 _check_told(one, drawing)
             one.limit(mechanism, sizes)
@@ -43,35 +45,40 @@ def _check_has(one: Requirement, mechanism: Mechanism) -> None:
         raise fault((), f"the model has no stroke for 'at {one.at}'", "give it a [stroke], or leave that out")
 
 
-def _check_names(one: Requirement, known: Known, drawing: Drawing | None) -> None:
+def _check_names(one: Requirement, mechanism: Mechanism, known: Known, drawing: Drawing | None) -> None:
     joints = tuple(_sides(drawing)) if drawing else known.joints + known.points
-    pools = {"at": ("joint", joints), "in": ("member", known.members[1:])}
-    if one.quantity == "tension" and known.ropes:
-        pools["in"] = ("member or rope", known.members[1:] + known.ropes)
-    pools["of"] = ("point, slot, slide or track", known.joints + known.points)
-    word = MEASURES[one.quantity].word
-    if word:
-        what, pool = pools[word]
-        _known(one.of, what, pool)
+    pools = {JOINT: joints, MEMBER: known.members[1:], MOVER: known.joints + known.points}
+    pools[DRAWN] = known.members[1:] + known.ropes
+    pools[LOADING] = tuple(item[-1] for item, _ in walk.loads(mechanism))
+    what = one.measure.of
+    if what == DRAWN and not known.ropes:
+        what = MEMBER
+    if what:
+        _known(one.of, what, pools[what])
     if one.on:
         _known(one.on, "member", known.members)
 
 
 def _check_told(one: Requirement, drawing: Drawing) -> None:
     """The joint must have that force, moment or travel, and the member that side of it."""
-    word = MEASURES[one.quantity].word
+    of = one.measure.of
     joints = [joint for joint in drawing.joints if joint.name == one.of]
-    if word == "at" and not joints:  # one side of a joint that acts at several places
+    if of == JOINT and not joints:  # one side of a joint that acts at several places
         _check_side(one, drawing)
-    elif word == "at":
-        if MEASURES[one.quantity].kind == "moment" and not any(any(joint.angular) for joint in joints):
+    elif of == JOINT:
+        if one.measure.kind == "moment" and not any(any(joint.angular) for joint in joints):
             able = [j.name for j in drawing.joints if any(j.angular)]
             raise fault((), f"{one.of!r} takes no moment", nearest(one.of, able))
         sides = {drawing.members[m] for joint in joints for m in joint.members}
         if one.on and one.on not in sides:
             raise fault((), f"{one.of!r} does not join {one.on!r}", f"it joins {', '.join(sorted(sides))}")
-    if word == "of" and one.of not in drawing.points and not any(hasattr(joint, "travel") for joint in joints):
+    if of == MOVER and one.of not in drawing.points and not any(hasattr(joint, "travel") for joint in joints):
         raise fault((), f"{one.of!r} has no travel", "a point, slot, slide or track is wanted")
+    if of == LOADING:
+        told = [t.name for (_, name), load in drawing.pushers().items() if name == one.of for t in told_by(load)]
+        if one.quantity not in told:
+            wanted = f"it tells {', '.join(dict.fromkeys(told))}" if told else "a spring, a cylinder or the like does"
+            raise fault((), f"{one.of!r} tells no {one.quantity}", wanted)
 
 
 def _sides(drawing: Drawing) -> dict[str, str]:
@@ -89,7 +96,7 @@ def _sides(drawing: Drawing) -> dict[str, str]:
 
 def _check_side(one: Requirement, drawing: Drawing) -> None:
     feels = _sides(drawing)[one.of]
-    if MEASURES[one.quantity].kind == "moment":
+    if one.measure.kind == "moment":
         raise fault((), f"{one.of!r} takes no moment", "a slide or weld is wanted")
     if one.on and one.on != feels:
         raise fault((), f"{one.of!r} does not join {one.on!r}", f"it acts on {feels}: leave 'on {one.on}' out")

@@ -16,6 +16,7 @@ from linkcalc.model.formulas import to_si
 from linkcalc.model.functions import Quantity
 from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.temperature import TEMPERATURE
 from linkcalc.model.tokens import names_in
 from linkcalc.model.units import show
 from linkcalc.parts.contract import Size
@@ -46,6 +47,10 @@ def _sizes(entry: Field[Any], value: Any, stepped: str) -> Iterator[tuple[Size, 
     elif meta["kind"] == "arcs":
         for _, radius in value:
             yield radius, "length", "plus"
+    elif meta["kind"] == "rows":
+        for row in value:
+            for one, kind in zip(row, meta["units"], strict=True):
+                yield one, kind, "any"
 
 
 def _check(
@@ -58,7 +63,7 @@ def _check(
     known: Known,
 ) -> None:
     words = entry.metadata.get("words", ())
-    if isinstance(size, str):
+    if isinstance(size, str) and kind != TEMPERATURE:
         if words and size.replace(" ", "").isalpha() and size not in known.dimensions:
             wanted = ", ".join(f"{word!r}" for word in words)
             raise fault((), f"unknown word {size!r}", f"a size is wanted, or one of {wanted}")

@@ -16,6 +16,7 @@ from linkcalc.faults import fault
 from linkcalc.model import units as u
 from linkcalc.model.functions import FUNCTIONS, Quantity, settled
 from linkcalc.model.mechanism import Units
+from linkcalc.model.temperature import TEMPERATURE, kelvin
 from linkcalc.model.tokens import END, Token, tokens_of
 from linkcalc.parts.contract import Size, Value
 from linkcalc.words import nearest
@@ -48,20 +49,22 @@ def to_si(size: Size, kind: str, units: Units, names: Mapping[str, Quantity] = _
 
     Raises Faults: wrong kind, unknown unit or name, not a formula, not finite.
     """
+    if kind == TEMPERATURE:
+        return kelvin(size, units)
     example = f"e.g. 12 {units.of(kind)}" if kind != "number" else "e.g. 0.5"
     if isinstance(size, str):
         found = evaluate(size, names)
         if found.dims != u.KINDS[kind]:
             example += f", or {size.strip()} without quotes" if found.dims == u.NUMBER and _BARE.fullmatch(size) else ""
-            raise fault((), f"{size} is {u.a(found.dims)}", f"{u.a(u.KINDS[kind])} is wanted ({example})")
+            raise fault((), f"{size} is {u.a(found.dims)}", f"{u.a_kind(kind)} is wanted ({example})")
         if np.ndim(found.value) == 0 and abs(float(found.value)) > _REACH:
-            raise fault((), f"{size} is beyond all measure", f"{u.a(u.KINDS[kind])} is wanted ({example})")
+            raise fault((), f"{size} is beyond all measure", f"{u.a_kind(kind)} is wanted ({example})")
         return found.value
     if isinstance(size, bool) or not isinstance(size, (int, float)):
-        raise fault((), f"{size!r} is no size", f"{u.a(u.KINDS[kind])} is wanted ({example})")
+        raise fault((), f"{size!r} is no size", f"{u.a_kind(kind)} is wanted ({example})")
     if not -_REACH < size < _REACH:
         what = f"{size} is no number" if size != size or abs(size) == np.inf else "a number beyond all measure"
-        raise fault((), what, f"{u.a(u.KINDS[kind])} is wanted ({example})")
+        raise fault((), what, f"{u.a_kind(kind)} is wanted ({example})")
     return float(size) * u.unit(units.of(kind)).factor
 
 

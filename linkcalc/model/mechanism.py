@@ -42,11 +42,15 @@ class Units:
     stress: str = _unit("stress", "MPa")
     stiffness: str = _unit("stiffness", "N/mm")
     acceleration: str = _unit("acceleration", "m/s^2")
+    torsion_stiffness: str = _unit("torsion stiffness", "N*m/deg")
+    pressure: str = _unit("pressure", "bar")
+    volume: str = _unit("volume", "cm^3")
+    temperature: str = fields.choice(("degC", "degF", "K"), "scale of a bare temperature", "degC")
     number = ""
 
     def of(self, kind: str) -> str:
         """The unit of a kind of size: "length" -> "mm"."""
-        unit: str = getattr(self, kind)
+        unit: str = getattr(self, kind.replace(" ", "_"))
         return unit
 
 
@@ -147,6 +151,7 @@ class Case:
     add           loads that only this case has, by name
     effort        an effort that stands in for the model's
     gravity       how the field of gravity is turned and scaled
+    temperature   of the surroundings in this case; None: as in the model
     """
 
     scale: Mapping[str, float] = _entry("factors", "factors on loads, by name", dict)
@@ -154,6 +159,7 @@ class Case:
     add: Mapping[str, Any] = _entry("named parts", "loads that only this case has", dict, family="load")
     effort: Any = _entry("part", "an effort in place of the model's", family="load", asks="size")
     gravity: GravityChange = _entry("table", "the field of gravity turned or scaled", GravityChange(), of=GravityChange)
+    temperature: Size | None = fields.size("temperature", "of the surroundings in this case", None)
 
 
 @dataclass(frozen=True)
@@ -177,6 +183,7 @@ class Mechanism:
 
     title: str = _entry("text", "shown in answers", "")
     note: str = _entry("text", "shown in answers", "")
+    temperature: Size = fields.size("temperature", "of the surroundings, for what hangs on it", "20 degC")
     units: Units = _entry("table", "what bare numbers mean, and what answers come in", Units(), of=Units)
     dimensions: Mapping[str, Dimension] = _entry("named tables", "named sizes", dict, of=Dimension)
     points: Mapping[str, Any] = _entry("named parts", "where things are drawn", dict, family="construction")
@@ -197,4 +204,12 @@ class Mechanism:
 
 def strength_kind(load: Any) -> str:
     """Kind of the strength of an effort or load: "force" or "moment"; a hung mass pulls with a force."""
-    return next((f.metadata["unit"] for f in fields.part_fields(load) if f.name == "size"), "force")
+    size = next((f.metadata["unit"] for f in fields.part_fields(load) if f.name == "size"), "force")
+    kind: str = getattr(load, "gives", size)
+    return kind
+
+
+def asked_by(load: Any) -> str:
+    """The key of an effort or load (or of its kind) that is left out when it is what is asked for."""
+    key: str = getattr(load, "asked", "size")
+    return key

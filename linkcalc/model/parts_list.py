@@ -126,14 +126,22 @@ def assemble(drawing: Drawing) -> Assembly:
 
 
 def _case(drawing: Drawing, name: str, case: Case, pushers: Mapping[Key, Pusher]) -> CaseLoads:
+    mechanism = drawing.mechanism
+    warm = drawing.value(mechanism.temperature if case.temperature is None else case.temperature, "temperature")
     factors = {
-        key: float(case.scale.get(key[1], 1.0))
-        for key in pushers
+        key: float(case.scale.get(key[1], 1.0)) * _warmth(pusher, float(warm))
+        for key, pusher in pushers.items()
         if key[0] in ("", name) and key[1] != EFFORT and not (key[0] == "" and key[1] in case.drop)
     }
     own: Key = (name, EFFORT) if (name, EFFORT) in pushers else ("", EFFORT)
-    gravity = drawing.mechanism.gravity
+    gravity = mechanism.gravity
     angle = drawing.value(gravity.direction, "angle") + drawing.value(case.gravity.turn, "angle")
     down = exact(np.cos(angle)), exact(np.sin(angle))
     field = drawing.value(gravity.size, "acceleration") * case.gravity.scale
     return CaseLoads(name, down, field, own if own in pushers else None, factors)
+
+
+def _warmth(pusher: Pusher, temperature: float) -> float:
+    """How much stronger it is at a temperature [K] than at the one at which it is told: the ideal gas keeps p/T."""
+    told: float | None = getattr(pusher, "temperature", None)
+    return 1.0 if told is None else temperature / told

@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Mapping
 from dataclasses import dataclass
+from functools import cache
 
 from linkcalc.faults import fault
 from linkcalc.model.formulas import to_si
@@ -12,7 +13,7 @@ from linkcalc.model.functions import Quantity
 from linkcalc.model.mechanism import Mechanism, strength_kind
 from linkcalc.model.shapes import shown
 from linkcalc.parts.contract import Size
-from linkcalc.words import nearest
+from linkcalc.words import kinds, nearest
 
 START, END = "start", "end"
 _LONGEST = 500
@@ -28,28 +29,43 @@ class Measure:
 
     kind  kind of its size; "effort" and "load": as the model's effort or load has it
     word  the word before the name it is told of: "at", "in", "of"; "" if it is of the whole
-    also  words that may stand in its place
+    of    what that name is the name of
     """
 
     kind: str
     word: str = ""
-    also: tuple[str, ...] = ()
+    of: str = ""
 
 
-MEASURES: dict[str, Measure] = {
-    "effort": Measure("effort"),
-    "load": Measure("load"),
-    "tare effort": Measure("effort"),
-    "frictionless effort": Measure("effort"),
-    "efficiency": Measure("number"),
-    "force ratio": Measure("number"),
-    "ideal ratio": Measure("number"),
-    "force": Measure("force", "at"),
-    "moment": Measure("moment", "at"),
-    "tension": Measure("force", "in", ("of",)),
-    "compression": Measure("force", "in"),
-    "travel": Measure("length", "of"),
+JOINT, MEMBER, DRAWN, MOVER, LOADING = "joint", "member", "member or rope", "point, slot, slide or track", "load"
+_WHOLE = {
+    "effort": "effort",
+    "load": "load",
+    "tare effort": "effort",
+    "frictionless effort": "effort",
+    "efficiency": "number",
+    "force ratio": "number",
+    "ideal ratio": "number",
 }
+_MEASURES = (
+    ("force", Measure("force", "at", JOINT)),
+    ("moment", Measure("moment", "at", JOINT)),
+    ("tension", Measure("force", "in", DRAWN)),
+    ("tension", Measure("force", "of", DRAWN)),
+    ("compression", Measure("force", "in", MEMBER)),
+    ("travel", Measure("length", "of", MOVER)),
+)
+
+
+@cache
+def measures() -> dict[tuple[str, str], Measure]:
+    """(quantity, word after it) -> what it is; those of the whole, of joints and members, and what loads tell."""
+    told = {name: kind for load in kinds("load").values() for name, kind in getattr(load, "tells", {}).items()}
+    return {
+        **{(name, ""): Measure(kind) for name, kind in _WHOLE.items()},
+        **{(name, one.word): one for name, one in _MEASURES},
+        **{(name, "of"): Measure(kind, "of", LOADING) for name, kind in told.items()},
+    }
 
 
 @dataclass(frozen=True)
@@ -57,8 +73,9 @@ class Requirement:
     """One thing that must hold.
 
     name        as the file names it
-    quantity    one of MEASURES: "effort", "force ratio", "force", "tension", ...
-    of          the joint, member or point it is told of, "" if of the whole
+    quantity    one of measures(): "effort", "force ratio", "force", "tension", "length", ...
+    word        the word before the name: "at", "in", "of", "" if it is of the whole
+    of          the joint, member, point or load it is told of, "" if of the whole
     on          the member that feels it, "" for the largest of all
     relation    "<=", ">=", "<", ">"
     value_text  the limit as written
@@ -67,15 +84,20 @@ class Requirement:
 
     name: str
     quantity: str
+    word: str
     of: str
     on: str
     relation: str
     value_text: str
     at: str
 
+    @property
+    def measure(self) -> Measure:
+        return measures()[self.quantity, self.word]
+
     def kind(self, mechanism: Mechanism) -> str:
         """Kind of the limit: "force", "moment", "length" or "number"."""
-        kind = MEASURES[self.quantity].kind
+        kind = self.measure.kind
         parts = {"effort": mechanism.effort, "load": mechanism.load}
         return strength_kind(parts[kind]) if kind in parts else kind
 
@@ -103,8 +125,8 @@ def requirements(mechanism: Mechanism) -> tuple[Requirement, ...]:
 def requirement(name: str, text: str) -> Requirement:
     """A requirement from its text.
 
-    >>> requirement("pin", "force at C on arm <= 2 kN at 30 deg")
-    Requirement(name='pin', quantity='force', of='C', on='arm', relation='<=', value_text='2 kN', at='30 deg')
+    >>> requirement("p", "force at C on arm <= 2 kN at 30 deg")
+    Requirement(name='p', quantity='force', word='at', of='C', on='arm', relation='<=', value_text='2 kN', at='30 deg')
 
     Raises Faults.
     """
@@ -112,31 +134,32 @@ def requirement(name: str, text: str) -> Requirement:
     if not match or not match["left"].strip():
         raise fault((), f"{shown(text)} is no requirement", _FORM)
     value, _, at = (part.strip() for part in re.sub(r"\s+", " ", match["right"]).partition(" at "))
-    quantity, of, on = _told_of(match["left"].split(), text)
+    quantity, word, of, on = _told_of(match["left"].split(), text)
     relation = _SAME.get(match["relation"], match["relation"])
-    return Requirement(name, quantity, of, on, relation, value, at)
+    return Requirement(name, quantity, word, of, on, relation, value, at)
 
 
-def _told_of(words: list[str], text: str) -> tuple[str, str, str]:
-    """Quantity, what it is of, and the member that feels it."""
+def _told_of(words: list[str], text: str) -> tuple[str, str, str, str]:
+    """Quantity, the word after it, what it is of, and the member that feels it."""
+    known = measures()
+    names = list(dict.fromkeys(name for name, _ in known))
     for count in (2, 1):
-        quantity = " ".join(words[:count])
-        measure = MEASURES.get(quantity)
-        if measure is None:
+        quantity, rest = " ".join(words[:count]), words[count:]
+        if quantity not in names:
             continue
-        rest = words[count:]
-        if not measure.word and not rest:
-            return quantity, "", ""
-        if measure.word and len(rest) >= 2 and rest[0] in (measure.word, *measure.also):
-            told, on = (rest[1:-2], rest[-1]) if rest[-2] == "on" and measure.word == "at" else (rest[1:], "")
+        word = rest[0] if rest else ""
+        if not rest and (quantity, word) in known:
+            return quantity, "", "", ""
+        if len(rest) >= 2 and (quantity, word) in known:
+            told, on = (rest[1:-2], rest[-1]) if rest[-2] == "on" and word == "at" else (rest[1:], "")
             # a side of a rope is told by the rope and its place: "hoist at P"
-            if len(told) == 1 or (len(told) == 3 and told[1] == "at" and measure.word == "at"):
-                return quantity, " ".join(told), on
-        form = f"'{quantity} {measure.word} NAME'" if measure.word else f"{quantity!r} alone"
-        form += f" or '{quantity} at NAME on MEMBER'" if measure.word == "at" else ""
-        raise fault((), f"{' '.join(words)!r} is no quantity", f"{form} is wanted")
+            if len(told) == 1 or (len(told) == 3 and told[1] == "at" and word == "at"):
+                return quantity, word, " ".join(told), on
+        forms = [f"'{quantity} {w} NAME'" if w else f"{quantity!r} alone" for name, w in known if name == quantity]
+        forms += [f"'{quantity} at NAME on MEMBER'"] if (quantity, "at") in known else []
+        raise fault((), f"{' '.join(words)!r} is no quantity", f"{' or '.join(forms)} is wanted")
     guess = " ".join(words[:2]) if len(words) > 1 and words[1] not in ("at", "in", "of") else words[0]
-    raise fault((), f"unknown quantity {guess!r} in {text!r}", nearest(guess, MEASURES))
+    raise fault((), f"unknown quantity {guess!r} in {text!r}", nearest(guess, names))
 
 
 def _size(text: str) -> Size:

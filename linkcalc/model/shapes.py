@@ -83,6 +83,25 @@ def _arcs(raw: Any, meta: Meta) -> tuple[tuple[str, Any], ...]:  # noqa: ARG001
     return tuple((centre, size(radius)) for centre, radius in pairs)
 
 
+def _rows(raw: Any, meta: Meta) -> tuple[tuple[Any, Any], ...]:
+    example = f"rows of {' and '.join(meta['units'])} are wanted, e.g. [[10, 200], [20, 350]]"
+    if not isinstance(raw, (list, tuple)) or not all(isinstance(row, (list, tuple)) and len(row) == 2 for row in raw):
+        raise fault(
+            (),
+            f"{shown(raw)} of another form" if isinstance(raw, (list, tuple)) else f"{shown(raw)} is no list",
+            example,
+        )
+    if len(raw) < 2:
+        raise fault((), f"a table of {len(raw)} row{'s' * (len(raw) != 1)}", f"two or more {example}")
+    return tuple((size(row[0]), size(row[1])) for row in raw)
+
+
+def _formula(raw: Any, meta: Meta) -> str:
+    if not isinstance(raw, str):
+        raise fault((), f"{shown(raw)} is no formula", f"a formula over {meta['of']!r} in quotes is wanted")
+    return raw
+
+
 def _pairs(raw: Any, meta: Meta) -> tuple[tuple[str, str], ...]:
     pairs = _twos(raw, '[["A", "B"], ["C", "D"]]')
     return tuple((_name(a, meta), _name(b, meta)) for a, b in pairs)
@@ -138,7 +157,7 @@ def _example(number: int) -> str:
 SHAPES: dict[str, Callable[[Any, Meta], Any]] = {
     "name": _name, "names": _names, "size": _size, "own size": _size, "line": _line, "choice": _choice,
     "count": _whole, "arcs": _arcs, "pairs": _pairs, "unit": _unit, "tol": _tol, "factor": _factor,
-    "factors": _factors, "text": _text,
+    "factors": _factors, "text": _text, "rows": _rows, "formula": _formula,
 }  # fmt: skip
 
 

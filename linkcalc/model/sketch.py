@@ -5,7 +5,7 @@ This is what parts ask (`parts.contract.Sketch`), and what the mechanics start f
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from functools import cached_property
 from itertools import pairwise
@@ -17,9 +17,10 @@ from linkcalc.faults import Fault, Faults, fault
 from linkcalc.model.dimensions import Overrides, evaluate
 from linkcalc.model.drafting import Place, draw, plain
 from linkcalc.model.formulas import to_si
+from linkcalc.model.functions import Quantity
 from linkcalc.model.mechanism import GROUND, Mechanism, Member, Pin
 from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
-from linkcalc.model.units import show
+from linkcalc.model.units import KINDS, show
 from linkcalc.parts.contract import Hauled, Joint, Poses, Pusher, Site, Size, Travelled, Value
 from linkcalc.words import nearest
 
@@ -99,9 +100,28 @@ class Drawing:
             raise fault(("pins", point), "it rubs, but has no diameter", "give it one, or [friction] diameter for all")
         return self.value(diameter, "length") / 2 * mu / np.hypot(1.0, mu)
 
-    def shown(self, length: float) -> str:
-        """A length [m] for a message, in the file's unit."""
-        return show(length, "length", self.mechanism.units)
+    def shown(self, size: float, kind: str = "length") -> str:
+        """A size [SI] for a message, in the file's unit."""
+        return show(size, kind, self.mechanism.units)
+
+    def formula(self, text: str, kind: str, of: str) -> Callable[[Value], Value]:
+        """A formula over one size more, named by its kind ("length", "angle"), and over the dimensions. Where it has no
+        value it gives NaN. Raises Faults when it is no formula of that kind at all."""
+        unit, names = KINDS[of], self._dimensions
+
+        def reckon(way: Value) -> Value:
+            return to_si(text, kind, self.mechanism.units, {**names, of: Quantity(way, unit)})
+
+        with _located("formula"):
+            reckon(1.0)
+
+        def force(way: Value) -> Value:
+            try:
+                return reckon(way)
+            except Faults:
+                return float("nan") if np.ndim(way) == 0 else np.full(np.shape(way), np.nan)
+
+        return force
 
     def site(self, point: str, member: str | None = None) -> Site:
         """A point as a member carries it, always the same object for the same two. Without a member: the pin

@@ -11,7 +11,7 @@ import numpy as np
 
 import linkcalc.parts  # noqa: F401  (enters every kind under its word)
 from linkcalc.model.gather import Gather, Item
-from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.mechanism import Mechanism, asked_by
 from linkcalc.model.shapes import SHAPES, Meta, shown, unknown_key
 from linkcalc.parts.fields import part_fields, required
 from linkcalc.words import kinds
@@ -126,7 +126,7 @@ def _part(raw: Any, meta: Meta, item: Item, gather: Gather) -> Any:
     """A part of a family, told by the one key that only its kind has."""
     family = kinds(meta["family"])
     if "asks" in meta:  # an effort must be able to be the unknown
-        family = {word: kind for word, kind in family.items() if meta["asks"] in (f.name for f in part_fields(kind))}
+        family = {word: kind for word, kind in family.items() if asked_by(kind) in (f.name for f in part_fields(kind))}
     listed = family.get(_LISTED.get(meta["family"], ""))
     if listed and isinstance(raw, (list, tuple)):
         names = [key_of(listed, entry) for entry in part_fields(listed)]

@@ -37,6 +37,9 @@ KINDS: dict[str, Dims] = {
     "stress": (-1, 1, -2, 0),
     "stiffness": (0, 1, -2, 0),
     "acceleration": (1, 0, -2, 0),
+    "torsion stiffness": (2, 1, -2, -1),
+    "pressure": (-1, 1, -2, 0),
+    "volume": (3, 0, 0, 0),
 }
 _TABLE = Path(__file__).with_name("units.json")
 _WORD = re.compile(r"[A-Za-z_]+")
@@ -149,6 +152,12 @@ def name(dims: Dims) -> str:
 def a(dims: Dims) -> str:
     """With its article: "a length", "an angle"."""
     text = name(dims)
+    return f"an {text}" if text[0] in "aeiou" else f"a {text}"
+
+
+def a_kind(kind: str) -> str:
+    """A kind of size with its article: "a length"; stress and pressure keep their own names."""
+    text = "plain number" if kind == "number" else kind
     return f"an {text}" if text[0] in "aeiou" else f"a {text}"
 
 

@@ -58,6 +58,7 @@ def everything(mechanism: Mechanism) -> Iterator[Part]:
     for name, member in mechanism.members.items():
         yield Part(("members", name), member)
     yield from joints(mechanism)
+    yield Part((), mechanism)
     yield Part(("gravity",), mechanism.gravity)
     yield from loads(mechanism)
     if mechanism.stroke is not None:

@@ -17,8 +17,8 @@ from typing import Protocol
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
-    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Hauled", "Joint", "Mark", "Poses", "Push", "Pusher",
-    "Row", "Rub", "Site", "Size", "Sketch", "Travelled", "Value", "X", "Y",
+    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Hauled", "Joint", "Limit", "Mark", "Poses", "Push",
+    "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Told", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -86,8 +86,11 @@ class Sketch(Protocol):
     def point(self, name: str) -> tuple[Value, Value]:
         """[m] the drawn place of a point"""
 
-    def shown(self, length: float) -> str:
-        """a length [m] for a message, in the file's unit"""
+    def shown(self, size: float, kind: str = "length") -> str:
+        """a size [SI] for a message, in the file's unit"""
+
+    def formula(self, text: str, kind: str, of: str) -> Callable[[Value], Value]:
+        """a formula over one size more, named by its kind ("length", "angle"), and over the dimensions [SI]"""
 
     def site(self, point: str, member: str | None = None) -> Site:
         """a point as a member carries it; without a member: the pin itself, by the member that stands for it"""
@@ -230,6 +233,49 @@ class Pusher(Protocol):
 
     def mark(self, at: Poses) -> Mark:
         """How to draw it in a single pose."""
+
+
+@dataclass(frozen=True, eq=False)
+class Told:
+    """Something that a load can say of itself in each pose, beside its push.
+
+    name   "force", "length", "pressure"; requirements and columns call it "length of NAME"
+    kind   kind of its size
+    value  from the poses and the strength it has in them [SI]
+    """
+
+    name: str
+    kind: str
+    value: Callable[[Poses, Value], Value]
+
+
+@dataclass(frozen=True, eq=False)
+class Limit:
+    """Something that should hold in every pose. Where it does not, the answer warns, and says from where to where.
+
+    text  what is so beyond it: "shorter than its shortest, 40 mm"
+    room  from the poses and the strength in them, [SI]; below nothing where the limit is passed
+    """
+
+    text: str
+    room: Callable[[Poses, Value], Value]
+
+
+class Telling(Protocol):
+    """What a pusher may have besides: see ``LawPush``. One that has not tells nothing and has no limits.
+
+    cautions     what can hurt
+    temperature  [K] at which its strength is what it says; the strength grows with the absolute temperature. None: it
+                 does not
+    partial      True if its strength is not a number in some poses, because there is none
+    """
+
+    cautions: tuple[str, ...]
+    temperature: float | None
+    partial: bool
+
+    def told(self) -> tuple[Told, ...]: ...
+    def limits(self) -> tuple[Limit, ...]: ...
 
 
 class Drive(Protocol):

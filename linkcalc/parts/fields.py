@@ -34,6 +34,16 @@ def line(text: str, default: Any = MISSING) -> Any:
     return _made("line", text, default)
 
 
+def rows(units: tuple[str, str], text: str, default: Any = MISSING) -> Any:
+    """Rows of two sizes, kept as a tuple of tuples; units = the kinds of both columns."""
+    return _made("rows", text, default, units=units)
+
+
+def formula(unit: str, of: str, text: str, default: Any = MISSING) -> Any:
+    """A formula over one more size than the dimensions: `of` is its kind and its name; unit = kind of the result."""
+    return _made("formula", text, default, unit=unit, of=of)
+
+
 def choice(options: tuple[str, ...], text: str, default: Any = MISSING) -> Any:
     """One word out of a few."""
     return _made("choice", text, default, options=options)

@@ -77,6 +77,6 @@ def check_json(answer: CheckAnswer) -> str:
         and {"coordinate": answer.stroke.drive_name, "unit": edge.unit("drive")}
         | {name: out(getattr(motion, name)) for name in names},
         "two-force members": list(answer.stroke.two_force),
-        **{key: shared[key] for key in ("requirements", "holds", "warnings", "checks")},
+        **{key: shared[key] for key in ("requirements", "holds", "warnings", "cautions", "checks")},
     }
     return json.dumps(tree, indent=1, ensure_ascii=False, allow_nan=False) + "\n"

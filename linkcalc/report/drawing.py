@@ -54,7 +54,9 @@ def draw_mechanism(
     for joint, mark in joints:
         items += _joint(scene, main, joint, mark, sizes, told=mark.name in named)
     items += [Item("footing", (a.spot,)) for a in outside if a.member == 0 and not a.pin and any(a.force)]
-    items += [Item(m.shape, m.spots, m.along) for m in (p.mark(main) for p, _, _ in scene.pushers(case)) if forces]
+    # a spring or a cylinder is there whether its force is shown or not
+    shown_pushers = [p for p, _, _ in scene.pushers(case) if forces or hasattr(p, "told")]
+    items += [Item(m.shape, m.spots, m.along) for m in (p.mark(main) for p in shown_pushers)]
     items += _points(scene, main, sizes, [a.spot for a in outside])
     items += shown
     return Drawing(

@@ -61,6 +61,9 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "ropes": [
             {"rope": r, "tension": _array(edge, answer.tension_of(r), "force", _BATCH)} for r in answer.ropes
         ],
+        "loads": [
+            {"load": r.load, "quantity": r.quantity, **_array(edge, r.values, r.kind, _BATCH)} for r in answer.readings
+        ],
         "members": [
             {
                 "member": member,
@@ -88,6 +91,7 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         ],
         "holds": answer.holds,
         "warnings": [{"item": c.item, "text": c.text} for c in answer.caveats],
+        "cautions": [{"item": c.item, "text": c.text} for c in answer.cautions],
         "checks": {
             "closure": _real(answer.checks.closure),
             "equilibrium": _real(answer.checks.equilibrium),

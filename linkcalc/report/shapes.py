@@ -14,6 +14,7 @@ import numpy as np
 from linkcalc.report import style
 from linkcalc.report.blocks import Item
 from linkcalc.report.pen import Pen, Spot
+from linkcalc.report.spring_shapes import SPRING_SHAPES
 
 
 def _bar(pen: Pen, item: Item) -> None:
@@ -269,4 +270,5 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "track": _slot,
     "line of track": _line_of_track,
     "haul": _told_by_arrow,
+    **SPRING_SHAPES,
 }

@@ -56,6 +56,8 @@ def stroke_table(answer: StrokeAnswer) -> Table:
         add(f"axial in {member}", answer.axial_in(member), "force")
     for rope in answer.ropes:
         add(f"tension of {rope}", answer.tension_of(rope), "force")
+    for reading in answer.readings:
+        add(reading.name, reading.values, reading.kind)
     columns.append(Column("status"))
     cells.append([Status(int(s)).text for s in answer.status.ravel()])
     return Table(tuple(columns), tuple(zip(*cells, strict=True)), keys=2)

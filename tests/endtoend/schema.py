@@ -5,13 +5,17 @@ from __future__ import annotations
 from typing import Any
 
 TOP = [
-    "schema", "answer", "title", "note", "drive", "axes", "quantities", "joints", "two-force members", "ropes",
-    "members", "events", "requirements", "holds", "warnings", "checks", "status",
+    "schema", "answer", "title", "note", "drive", "axes", "quantities", "joints", "two-force members", "ropes", "loads",
+    "members", "events", "requirements", "holds", "warnings", "cautions", "checks", "status",
 ]  # fmt: skip
 QUANTITIES = ["drive", "effort", "load", "tare effort", "force ratio", "ideal ratio"]
 JOINT = {
     "x": "force", "y": "force", "resultant": "force", "direction": "angle", "direction from own axis": "angle",
     "moment": "moment",
+}  # fmt: skip
+TOLD = {
+    "force": "force", "length": "length", "torque": "moment", "angle": "angle", "pressure": "pressure",
+    "raising torque": "moment", "lowering torque": "moment",
 }  # fmt: skip
 EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack"}
 BATCH = ["case", "variant", "pose"]
@@ -49,6 +53,9 @@ class Schema:
         for entry in tree["ropes"]:
             assert list(entry) == ["rope", "tension"]
             self.array(entry["tension"], "force", BATCH)
+        for entry in tree["loads"]:
+            array = {key: value for key, value in entry.items() if key not in ("load", "quantity")}
+            self.array(array, TOLD[entry["quantity"]], BATCH)
         assert [entry["member"] for entry in tree["members"]] == tree["axes"]["member"]
         for entry in tree["members"]:
             for key, kind in (("x", "length"), ("y", "length"), ("turn", "angle")):
@@ -81,7 +88,7 @@ class Schema:
             assert list(verdict) == ["name", "text", "holds", "case", "worst", "limit", "drive"]
             assert verdict["worst"]["unit"] == verdict["limit"]["unit"]
         assert self.tree["holds"] == all(v["holds"] for v in self.tree["requirements"])
-        assert all(list(w) == ["item", "text"] for w in self.tree["warnings"])
+        assert all(list(w) == ["item", "text"] for key in ("warnings", "cautions") for w in self.tree[key])
         assert list(self.tree["checks"]) == ["closure", "equilibrium", "virtual work"]
 
     def _status(self) -> None:

@@ -6,6 +6,7 @@ from pathlib import Path
 
 import pytest
 
+from tests.endtoend.bad_loads import BAD_LOADS
 from tests.endtoend.bad_models import BAD, Bad
 from tests.endtoend.models import CLAMP, linkcalc
 
@@ -17,7 +18,7 @@ def _in_a_folder(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
     monkeypatch.chdir(tmp_path)
 
 
-@pytest.mark.parametrize("bad", [pytest.param(b, id=b.name) for b in BAD])
+@pytest.mark.parametrize("bad", [pytest.param(b, id=b.name) for b in (*BAD, *BAD_LOADS)])
 def test_a_fault_is_told_with_its_line_and_cure(bad: Bad) -> None:
     Path("model.toml").write_text(bad.text, encoding="utf-8")
     for command, *options in COMMANDS:

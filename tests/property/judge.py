@@ -33,7 +33,8 @@ def linkage_of(mechanism: Mechanism) -> Linkage:
         return plain.Force(body, place, float(mass * g * np.cos(down)), float(mass * g * np.sin(down)))
 
     def load(part: Any) -> plain.Load:
-        size = drawing.value(part.size, "moment" if isinstance(part, Torque) else "force") if part.size else 1.0
+        kind = "moment" if isinstance(part, Torque) else "force"
+        size = 1.0 if part.size is None else float(drawing.value(part.size, kind))
         match part:
             case Torque():
                 return plain.Torque(part.torque_on, size, part.against)

@@ -95,12 +95,14 @@ class Resum:
         if m.load is not None:
             yield from self.wrenches(m.load, np.array(self.answer.load))
         for name, load in m.loads.items():
-            yield from self.wrenches(load, self._strength(load, [self._factor(c, name) for c in cases]))
+            factors = [self._factor(c, name) for c in cases]
+            yield from self.wrenches(load, self._told(load, name) if _tells(load) else self._strength(load, factors))
         for k, case in enumerate(cases):
             for name, load in case.add.items():
                 only = np.zeros(len(cases))
                 only[k] = case.scale.get(name, 1.0)
-                yield from self.wrenches(load, self._strength(load, list(only)))
+                told = _tells(load)
+                yield from self.wrenches(load, self._told(load, name) if told else self._strength(load, list(only)))
         for name, member in m.members.items():
             if member.mass is not None and name != GROUND:
                 mass = self.drawing.value(member.mass, "mass")
@@ -119,6 +121,10 @@ class Resum:
             return np.broadcast_to(each * size, self.shape)
         size = self.drawing.value(load.size, "moment" if isinstance(load, Torque) else "force")
         return np.broadcast_to(each * size, self.shape)
+
+    def _told(self, load: Any, name: str) -> np.ndarray:
+        """Strength of a spring or the like, as the answer gives it; nothing in a case that is without it."""
+        return np.nan_to_num(self.answer.reading(f"{'torque' if hasattr(load, 'turned') else 'force'} of {name}"))
 
     def _centre(self, member: Member) -> tuple[Any, Any]:
         if member.centre:
@@ -146,20 +152,31 @@ class Resum:
             case HaulForce():
                 return  # the rope tells what it does
             case Torque():
-                for who, sign in ((load.torque_on, 1.0), (load.against, -1.0)):
-                    yield who, none, none, none, none, sign * size
+                yield from self._couple((load.torque_on, load.against), size)
             case Pair():
-                (ax, ay), (bx, by) = (self.somewhere(p) for p in load.between)
-                far = np.hypot(bx - ax, by - ay)
-                fx, fy = size * (bx - ax) / far, size * (by - ay) / far
-                first, second = (self.bearer(p, m) for p, m in zip(load.between, load.on or (None, None), strict=True))
-                yield first, ax, ay, -fx, -fy, none
-                yield second, bx, by, fx, fy, none
+                yield from self._apart(load.between, load.on, size)
             case Weight():
                 ux, uy, _ = self._gravity()
                 yield self.bearer(load.mass_at, load.on), *self.somewhere(load.mass_at), size * ux, size * uy, none
+            case _ if hasattr(load, "ends"):
+                yield from self._apart(load.ends, load.on, -size if getattr(load, "acts", "") == "pull" else size)
+            case _ if hasattr(load, "turned"):
+                yield from self._couple(load.turned, size)
             case _:
                 raise TypeError(f"not a load: {load}")
+
+    def _couple(self, members: tuple[str, str], size: np.ndarray) -> Iterator[Wrench]:
+        none = np.zeros(self.shape)
+        for who, sign in zip(members, (1.0, -1.0), strict=True):
+            yield who, none, none, none, none, sign * size
+
+    def _apart(self, points: tuple[str, str], on: tuple[str, str] | None, size: np.ndarray) -> Iterator[Wrench]:
+        (ax, ay), (bx, by) = (self.somewhere(p) for p in points)
+        none, far = np.zeros(self.shape), np.hypot(bx - ax, by - ay)
+        fx, fy = size * (bx - ax) / far, size * (by - ay) / far
+        first, second = (self.bearer(p, m) for p, m in zip(points, on or (None, None), strict=True))
+        yield first, ax, ay, -fx, -fy, none
+        yield second, bx, by, fx, fy, none
 
     def _direction(self, load: Force) -> tuple[np.ndarray, np.ndarray]:
         if load.direction is not None:
@@ -170,6 +187,10 @@ class Resum:
         far = np.hypot(bx - ax, by - ay)
         ux, uy = (bx - ax) / far, (by - ay) / far
         return (ux, uy) if load.along else (-uy, ux)
+
+
+def _tells(load: Any) -> bool:
+    return hasattr(load, "tells")
 
 
 def unbalanced(answer: StrokeAnswer) -> dict[str, float]:

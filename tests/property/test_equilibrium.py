@@ -16,9 +16,9 @@ from tests.strategies import frames, machines
 BALANCE = 1e-9
 """Of the largest force: rounding is 1e-16 a product, amplified by angles of transmission down to 30 degrees in chains
 of three; three figures are left to spare."""
-WORK = 1e-6
-"""Of the power of all loads: central differences over STEP err by its square times the third derivative, some 1e-8."""
-STEP = 1e-4
+WORK = 1e-5
+"""Of the power of all loads: central differences over STEP err by its square times a third derivative up to 1e4."""
+STEP = 3e-5
 """[-] of the drive, relative to a radian or to the size of the drawing"""
 
 

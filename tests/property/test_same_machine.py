@@ -8,7 +8,7 @@ from random import Random
 from typing import Any
 
 import numpy as np
-from hypothesis import example, given
+from hypothesis import assume, example, given
 from hypothesis import strategies as st
 
 from linkcalc import dumps, parse, stroke
@@ -91,6 +91,9 @@ def test_units_of_the_file(machine: Mechanism) -> None:
 def test_order_of_members_and_points(machine: Mechanism, random: Random) -> None:
     """Which member stands for a pin changes with it, and the plan of the elimination."""
     machine = bearers_named(machine)
+    pins = Drawing(machine).pins
+    # which of two welded members a third is pinned to, where all three meet, is the order of the file by its own word
+    assume(not any(weld.at in pins for weld in machine.joints.get("weld", {}).values()))
     points, members = list(machine.points), list(machine.members)
     random.shuffle(points)
     random.shuffle(members)

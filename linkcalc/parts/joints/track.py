@@ -102,7 +102,8 @@ class TrackJoint:
         return (self._row(at, *at.turned(self.base.member, foot.nx, foot.ny)),)
 
     def travel(self, at: Poses) -> Value:
-        return self._foot(at).along
+        with np.errstate(all="ignore"):
+            return self.curve.along(self._foot(at))
 
     def travel_slope(self, at: Poses) -> Row:
         foot = self._foot(at)

@@ -24,5 +24,6 @@ def trust(answer: StrokeAnswer) -> list[Block]:
     return [
         *(Note(f"{c.item}: {c.text}" if c.item else c.text, "Warning") for c in answer.caveats),
         Note("; ".join(told) + ".", "Checks"),
+        *(Note(f"{c.item}: {c.text}.", "Caution") for c in answer.cautions),
         *(Note(text, "Caution") for text in CAUTIONS),
     ]

@@ -10,7 +10,7 @@ from typing import Any
 
 from hypothesis import strategies as st
 
-from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.mechanism import Mechanism, asked_by
 from linkcalc.parts.fields import part_fields, required
 from linkcalc.words import kinds
 
@@ -34,6 +34,8 @@ FIELDS = {
     "factor": lambda _: st.floats(-1e9, 1e9),
     "factors": lambda _: st.dictionaries(NAMES, st.floats(-1e9, 1e9), max_size=2),
     "text": lambda _: TEXTS,
+    "rows": lambda _: st.lists(st.tuples(SIZES, SIZES), min_size=2, max_size=4).map(tuple),
+    "formula": lambda _: TEXTS,
     "part": lambda m: part(m),
     "parts": lambda m: st.lists(part(m), min_size=m["least"], max_size=4).map(tuple),
     "table": lambda m: filled(m["of"]),
@@ -48,7 +50,8 @@ FIELDS = {
 UNITS = {
     "length": ["mm", "in", '"'], "angle": ["deg", "rad", "°"], "force": ["N", "lbf"], "mass": ["kg", "lb"],
     "moment": ["N*m", "in-lbf"], "stress": ["MPa", "psi"], "stiffness": ["N/mm", "lbf/in"],
-    "acceleration": ["m/s^2", "ft/s²"],
+    "acceleration": ["m/s^2", "ft/s²"], "torsion stiffness": ["N*mm/turn", "lbf*in/rad"], "pressure": ["bar", "psi"],
+    "volume": ["cm^3", "in^3"],
 }  # fmt: skip
 
 
@@ -56,7 +59,7 @@ def part(meta: Mapping[str, Any]) -> st.SearchStrategy[Any]:
     """Any kind of a family."""
     family = kinds(meta["family"]).values()
     if "asks" in meta:
-        family = [kind for kind in family if meta["asks"] in kind.__dataclass_fields__]
+        family = [kind for kind in family if asked_by(kind) in kind.__dataclass_fields__]
     return st.one_of([filled(kind) for kind in family])
 
 

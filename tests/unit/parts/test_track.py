@@ -90,7 +90,7 @@ def test_the_arc_through_three_points(side: int) -> None:
     assert (arc.sense, float(arc.length)) == (side, pytest.approx(5 * np.pi, rel=EXACT))
     foot = arc.foot(2.0, 1.0 + 4 * side)
     assert float(foot.left) == pytest.approx(side, abs=EXACT)  # 1 within the circle: left of it, going round leftward
-    assert float(foot.along) == pytest.approx(2.5 * np.pi, rel=EXACT)
+    assert float(arc.along(foot)) == pytest.approx(2.5 * np.pi, rel=EXACT)
 
 
 def test_a_spline_through_points_of_a_line_is_the_line() -> None:
@@ -98,7 +98,7 @@ def test_a_spline_through_points_of_a_line_is_the_line() -> None:
     assert float(curve.length) == pytest.approx(15.0, rel=EXACT)
     for along, left in ((7.0, 0.3), (-2.0, -0.1), (17.0, 0.2)):  # beyond its ends it goes straight on
         foot = curve.foot(0.6 * along - 0.8 * left, 0.8 * along + 0.6 * left)
-        assert (float(foot.along), float(foot.left)) == (
+        assert (float(curve.along(foot)), float(foot.left)) == (
             pytest.approx(along, abs=EXACT),
             pytest.approx(left, abs=EXACT),
         )
@@ -123,7 +123,7 @@ def test_a_spline_is_that_of_the_library() -> None:
     fine = np.linspace(0.0, chords[-1], 200_001)
     speed = np.hypot(*library(fine, 1).T)
     length = np.concatenate([[0.0], np.cumsum((speed[1:] + speed[:-1]) / 2 * np.diff(fine))])
-    np.testing.assert_allclose(foot.along[0, 0], np.interp(t, fine, length), atol=1e-8)
+    np.testing.assert_allclose(curve.along(foot)[0, 0], np.interp(t, fine, length), atol=1e-8)
 
 
 def test_copies_have_each_its_own_curve() -> None:

@@ -131,7 +131,8 @@ def test_what_is_not_there_is_a_clear_fault(ask, message):
         ask()
 
 
-TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "wheel", "rope", "line of rope", "line of track")
+TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "wheel", "rope", "line of rope", "line of track", "spring",
+             "gas spring", "constant spring", "cylinder", "screw", "force over length")  # fmt: skip
 NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope", "track")
 STEM = """
 [points]
@@ -192,6 +193,39 @@ size = 5
 at = "E"
 along = ["A", "E"]
 size = 5
+[loads.coil]
+spring = ["A", "E"]
+rate = 1
+preload = 2
+[loads.coiled]
+torsion_spring = "arm"
+rate = 1
+free_angle = 0
+[loads.gas]
+gas_spring = ["A", "E"]
+force = 9
+length = 400
+stroke = 200
+rise = 1.2
+[loads.strip]
+constant_spring = ["A", "E"]
+pull = 3
+[loads.press]
+cylinder = ["A", "E"]
+bore = 10
+pressure = 1
+[loads.spindle]
+screw = ["A", "E"]
+diameter = 10
+lead = 2
+friction = 0.1
+size = 4
+[loads.curve]
+force_over = ["A", "E"]
+formula = "1 N/mm*length"
+[loads.twisted]
+torque_over = "arm"
+formula = "1 N*m/deg*angle"
 """
 
 
@@ -215,7 +249,7 @@ def test_every_shape_leaves_ink_and_its_name_on_the_page(shape):
     full = drawing_figure(Sheet("sheet", "mm", (frame, Item(shape, spots, (1.0, 0.0), "name"))))
     inked = [sum(map(len, (ax.lines, ax.patches, ax.texts))) for ax in (bare.axes[0], full.axes[0])]
     # a force, a torque and a haul are their arrow and have no body besides
-    assert (inked[1] > inked[0]) == (shape not in ("force", "torque", "haul"))
+    assert (inked[1] > inked[0]) == (shape not in ("force", "torque", "haul", "torque over angle"))
     named = "name" in [t.get_text() for t in full.axes[0].texts]
     assert named == (shape in NAMED)
 
