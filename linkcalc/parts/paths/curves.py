@@ -9,6 +9,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from functools import cached_property
 from typing import Any
 
 import numpy as np
@@ -25,15 +26,15 @@ class Foot:
 
     left    [m] to the left of the line
     nx, ny  normal to the left
-    along   [m] from the beginning of the line
     rate    [-] how much further along a step of 1 parallel to the tangent leads; 1 on the line itself
+    place   where on the line: as the curve counts it
     """
 
     left: Value
     nx: Value
     ny: Value
-    along: Value
     rate: Value
+    place: Value
 
 
 @dataclass(frozen=True, eq=False)
@@ -53,7 +54,11 @@ class Arc:
         angle = np.arctan2(bu * dv - bv * du, bu * du + bv * dv)
         # counter-clockwise the centre lies to the left
         s = self.sense
-        return Foot(s * (self.radius - far), -s * du / far, -s * dv / far, s * self.radius * angle, self.radius / far)
+        return Foot(s * (self.radius - far), -s * du / far, -s * dv / far, self.radius / far, s * angle)
+
+    def along(self, foot: Foot) -> Value:
+        """[m] how far a foot is from the beginning of the line."""
+        return self.radius * foot.place
 
     def places(self) -> list[tuple[float, float]]:
         """[m] places along it, to draw it."""
@@ -113,7 +118,7 @@ class Smooth:
         nx, ny = -dv / speed, du / speed
         left = (u - su) * nx + (v - sv) * ny
         rate = speed * speed / (du * du + dv * dv - (u - su) * ddu - (v - sv) * ddv)
-        return Foot(left, nx, ny, self._along(t), rate)
+        return Foot(left, nx, ny, rate, t)
 
     def places(self) -> list[tuple[float, float]]:
         """[m] places along it, to draw it."""
@@ -144,8 +149,9 @@ class Smooth:
             out.append((a + w * (b + w * (c + w * d)) + beyond * slope, slope, (beyond == 0) * (2 * c + 6 * w * d)))
         return out
 
-    def _along(self, t: Value) -> Value:
-        """[m] length of the line up to t: twelve places of Gauss in its interval."""
+    def along(self, foot: Foot) -> Value:
+        """[m] how far a foot is from the beginning of the line: twelve places of Gauss in its interval."""
+        t = foot.place
         k = self._interval(t)
         start = self._one(self.knots, k)
         inside = np.clip(t, 0.0, self._one(self.knots, len(self.knots) - 1))
@@ -158,20 +164,23 @@ class Smooth:
         along: Value = self._one(self.before, k) + half * total + (t - inside) * np.hypot(du, dv)
         return along
 
+    @cached_property
+    def _spread(self) -> tuple[Array, Array, Array]:
+        """(places, 1, variant, 1) some places spread over the line, where they are looked for first: t, u, v."""
+        knots = self.knots
+        steps = [knots[k] + (knots[k + 1] - knots[k]) * n / _FINE for k in range(len(knots) - 1) for n in range(_FINE)]
+        t = np.stack([*steps, knots[-1]])
+        places = [self._at(float(one.flat[0]) if one.size == 1 else one) for one in t]
+        u, v = (np.stack([np.broadcast_to(p[axis][0], knots.shape[1:]) for p in places]) for axis in (0, 1))
+        return t, u, v
+
     def _nearest(self, u: Value, v: Value) -> Value:
         """The nearest of some places spread over the line."""
-        best, least = None, None
-        for k in range(len(self.knots) - 1):
-            first, second = self._one(self.knots, k), self._one(self.knots, k + 1)
-            for n in range(_FINE + 1):
-                t = first + (second - first) * n / _FINE
-                (su, _, _), (sv, _, _) = self._at(t)
-                far = np.hypot(u - su, v - sv)
-                closer = True if least is None else far < least
-                best = t + 0 * far if best is None else np.where(closer, t, best)
-                least = far if least is None else np.minimum(far, least)
-        assert best is not None
-        return float(best) if np.ndim(best) == 0 else best
+        t, su, sv = self._spread
+        shape = np.broadcast_shapes(t.shape[1:], np.shape(u), np.shape(v))
+        far = np.broadcast_to((u - su) ** 2 + (v - sv) ** 2, (len(t), *shape))
+        best = np.take_along_axis(np.broadcast_to(t, far.shape), np.argmin(far, axis=0)[None], axis=0)[0]
+        return float(best[0, 0, 0]) if np.ndim(u) == 0 and np.ndim(v) == 0 and best.size == 1 else best
 
 
 def smooth_through(points: Sequence[Place]) -> Smooth:
