@@ -59,7 +59,7 @@ def linkage_of(mechanism: Mechanism) -> Linkage:
     for part in (mechanism.load, *mechanism.loads.values()):
         if isinstance(part, Weight):
             loads.append(weight(part.on or "", part.mass_at, drawing.value(part.mass, "mass")))
-        elif part is not None:
+        elif part is not None and drawing.value(part.size, "moment" if isinstance(part, Torque) else "force"):
             loads.append(load(part))
     for name, member in mechanism.members.items():
         if member.mass is not None and name != GROUND:

@@ -7,11 +7,10 @@ from dataclasses import replace
 import numpy as np
 from hypothesis import given
 
-from linkcalc import stroke
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.mechanism import GROUND, Mechanism
 from tests.property.resum import Resum, unbalanced
-from tests.strategies import frames, machines
+from tests.strategies import frames, machines, solved
 
 BALANCE = 1e-9
 """Of the largest force: rounding is 1e-16 a product, amplified by angles of transmission down to 30 degrees in chains
@@ -24,14 +23,14 @@ STEP = 3e-5
 
 @given(machines())
 def test_every_member_and_every_pin_is_in_equilibrium(machine: Mechanism) -> None:
-    answer = stroke(machine)
+    answer = solved(machine)
     assert not answer.status.any()
     assert max(unbalanced(answer).values()) < BALANCE
 
 
 @given(frames())
 def test_every_member_of_a_frame_is_in_equilibrium(frame: Mechanism) -> None:
-    answer = stroke(frame)
+    answer = solved(frame)
     assert not answer.status.any()
     assert max(unbalanced(answer).values()) < BALANCE
 
@@ -39,7 +38,7 @@ def test_every_member_of_a_frame_is_in_equilibrium(frame: Mechanism) -> None:
 @given(machines())
 def test_action_is_reaction(machine: Mechanism) -> None:
     """What two members do to each other at a slot, slide or weld is opposite, and at a pin of two without a load."""
-    answer = stroke(machine)
+    answer = solved(machine)
     table = Resum(answer)
     largest = max(float(np.abs(answer.force).max()), 1e-300)
     loaded = {who for who, *_ in (*table.loads(), *table.joints()) if who.startswith("pin ")}
@@ -55,7 +54,7 @@ def test_action_is_reaction(machine: Mechanism) -> None:
 @given(machines())
 def test_the_ground_takes_what_all_loads_come_to(machine: Mechanism) -> None:
     """Cut free of the ground, the whole machine is one body."""
-    answer = stroke(machine)
+    answer = solved(machine)
     table = Resum(answer)
     on_ground = [wrench for wrench in table.joints() if wrench[0] == GROUND]
     from_outside = [wrench for wrench in table.loads() if wrench[0] != GROUND]
@@ -70,11 +69,11 @@ def test_the_ground_takes_what_all_loads_come_to(machine: Mechanism) -> None:
 @given(machines())
 def test_virtual_work_by_finite_differences(machine: Mechanism) -> None:
     """Effort, loads and weights do no work together in a small motion; the motion is taken from solved poses."""
-    usual = stroke(machine)
+    usual = solved(machine)
     length = Resum(usual).drawing.size
     rate = length if usual.kinds["drive"] == "angle" else 1.0  # [m] a usual way, per unit of the drive
     step, drive = STEP * length / rate, usual.drive[0, 0, [0, 3]]
-    before, there, after = (stroke(machine, at=drive + by) for by in (-step, 0.0, step))
+    before, there, after = (solved(machine, at=drive + by) for by in (-step, 0.0, step))
     table, behind, ahead = Resum(there), Resum(before), Resum(after)
     power = np.zeros(table.shape)
     size = np.full(table.shape, 1e-300)
@@ -106,7 +105,7 @@ def test_the_ideal_ratio_is_the_force_ratio_with_nothing_else(machine: Mechanism
         cases={},
         members={name: replace(member, mass=None) for name, member in machine.members.items()},
     )
-    full, answer = stroke(machine), stroke(bare)
+    full, answer = solved(machine), solved(bare)
     sound = np.isfinite(answer.ideal_ratio) & (np.abs(answer.ideal_ratio) < 1e6)
     np.testing.assert_allclose(answer.force_ratio[sound], answer.ideal_ratio[sound], rtol=1e-7)
     np.testing.assert_allclose(full.ideal_ratio[0][sound[0]], answer.ideal_ratio[0][sound[0]], rtol=1e-9)
@@ -114,7 +113,7 @@ def test_the_ideal_ratio_is_the_force_ratio_with_nothing_else(machine: Mechanism
 
 @given(machines())
 def test_the_answer_says_how_well_it_satisfies_its_equations(machine: Mechanism) -> None:
-    checks = stroke(machine).checks
+    checks = solved(machine).checks
     assert checks.closure < 1e-12
     assert checks.equilibrium < BALANCE
     assert checks.virtual_work < 1e-6

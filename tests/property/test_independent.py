@@ -7,11 +7,10 @@ from dataclasses import replace
 import numpy as np
 from hypothesis import given
 
-from linkcalc import stroke
 from linkcalc.model.mechanism import Mechanism
 from tests.property.judge import felt, linkage_of, places_of
 from tests.reference import plain
-from tests.strategies import machines
+from tests.strategies import machines, solved
 
 AGREE = 1e-7
 """Of the largest force: the root finder of the other solution stops at 1e-13 of its unknowns or at its own rounding,
@@ -21,7 +20,7 @@ some 1e-10, which angles of transmission of 30 degrees in chains of three amplif
 @given(machines(plain=True))
 def test_effort_and_every_joint_force(machine: Mechanism) -> None:
     machine = replace(machine, cases={})
-    answer = stroke(machine)
+    answer = solved(machine)
     other = plain.solve(linkage_of(machine), answer.drive[0, 0])
     largest = float(np.abs(answer.force).max())
     arm = 1.0 if answer.kinds["effort"] == "force" else answer_size(machine)

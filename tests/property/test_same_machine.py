@@ -11,7 +11,7 @@ import numpy as np
 from hypothesis import assume, example, given
 from hypothesis import strategies as st
 
-from linkcalc import dumps, parse, stroke
+from linkcalc import dumps, parse
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.sketch import Drawing
@@ -19,7 +19,7 @@ from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.pair import Pair
 from linkcalc.parts.loads.weight import Weight
 from tests.property.transform import INCH_POUND, in_units, moved, reordered, scaled, turned
-from tests.strategies import frames, machines
+from tests.strategies import frames, machines, solved
 
 SAME = 1e-9
 """Of the largest force: places written anew differ by 1e-16 of the size, amplified by angles of transmission down to
@@ -62,29 +62,29 @@ def alike(a: StrokeAnswer, b: StrokeAnswer, *, turn: float = 0.0, scale: float =
 
 @given(either, st.floats(-3.1, 3.1))
 def test_turning_the_drawing_with_its_gravity(machine: Mechanism, by: float) -> None:
-    alike(stroke(machine), stroke(turned(machine, by)), turn=by)
+    alike(solved(machine), solved(turned(machine, by)), turn=by)
 
 
 @given(either, st.floats(-2, 2), st.floats(-2, 2))
 def test_moving_the_drawing(machine: Mechanism, dx: float, dy: float) -> None:
-    alike(stroke(machine), stroke(moved(machine, dx, dy)))
+    alike(solved(machine), solved(moved(machine, dx, dy)))
 
 
 @given(either, st.floats(-3.1, 3.1), st.floats(-1, 1))
 def test_other_ground_axes(machine: Mechanism, by: float, dx: float) -> None:
-    alike(stroke(machine), stroke(turned(moved(machine, dx, -dx), by)), turn=by)
+    alike(solved(machine), solved(turned(moved(machine, dx, -dx), by)), turn=by)
 
 
 @given(either, st.sampled_from([0.001, 0.04, 0.5, 3.0, 1000.0]))
 def test_scaling_the_drawing(machine: Mechanism, by: float) -> None:
     """A model a thousand times as large, with torques in proportion: same forces, same ratios of like to like."""
-    alike(stroke(machine), stroke(scaled(machine, by)), scale=by)
+    alike(solved(machine), solved(scaled(machine, by)), scale=by)
 
 
 @given(either)
 def test_units_of_the_file(machine: Mechanism) -> None:
     """In inches, pounds and radians the same machine gives the same newtons."""
-    alike(stroke(machine), stroke(in_units(machine, INCH_POUND)))
+    alike(solved(machine), solved(in_units(machine, INCH_POUND)))
 
 
 @given(either, st.randoms(use_true_random=False))
@@ -97,7 +97,7 @@ def test_order_of_members_and_points(machine: Mechanism, random: Random) -> None
     points, members = list(machine.points), list(machine.members)
     random.shuffle(points)
     random.shuffle(members)
-    alike(stroke(machine), stroke(reordered(machine, points, members)))
+    alike(solved(machine), solved(reordered(machine, points, members)))
 
 
 def bearers_named(machine: Mechanism) -> Mechanism:
@@ -133,14 +133,14 @@ def test_order_of_joints_and_loads(machine: Mechanism) -> None:
         joints={word: dict(reversed(parts.items())) for word, parts in reversed(machine.joints.items())},
         loads=dict(reversed(machine.loads.items())),
     )
-    alike(stroke(machine), stroke(backwards))
+    alike(solved(machine), solved(backwards))
 
 
 @given(either)
 def test_cases_one_by_one(machine: Mechanism) -> None:
-    whole = stroke(machine)
+    whole = solved(machine)
     for k, case in enumerate(whole.cases if machine.cases else ()):
-        alone = stroke(machine, case=case)
+        alone = solved(machine, case=case)
         largest = max(float(np.abs(alone.force).max()), 1e-300)
         np.testing.assert_allclose(whole.effort[k], alone.effort[0], rtol=SAME, atol=SAME * largest)
         np.testing.assert_allclose(whole.force[:, :, k], alone.force[:, :, 0], atol=SAME * largest)
@@ -149,7 +149,7 @@ def test_cases_one_by_one(machine: Mechanism) -> None:
 @given(machines())
 def test_poses_in_any_number(machine: Mechanism) -> None:
     """Ends and middle of the stroke are what they are, whatever stands between."""
-    few, many = stroke(machine, poses=3), stroke(machine, poses=25)
+    few, many = solved(machine, poses=3), solved(machine, poses=25)
     largest = float(np.abs(many.force).max())
     np.testing.assert_allclose(few.force, many.force[..., ::12], atol=SAME * largest)
     np.testing.assert_allclose(few.effort, many.effort[..., ::12], rtol=SAME, atol=SAME * largest)
@@ -158,10 +158,10 @@ def test_poses_in_any_number(machine: Mechanism) -> None:
 @given(machines())
 def test_going_the_other_way(machine: Mechanism) -> None:
     """The same stroke from its end to its start."""
-    there = stroke(machine)
+    there = solved(machine)
     unit = "rad" if there.kinds["drive"] == "angle" else "m"
     start, stop = (f"{float(there.drive[0, 0, k])!r} {unit}" for k in (-1, 0))
-    again = stroke(replace(machine, stroke=replace(machine.stroke, start=start, stop=stop)))
+    again = solved(replace(machine, stroke=replace(machine.stroke, start=start, stop=stop)))
     largest = float(np.abs(there.force).max())
     np.testing.assert_allclose(again.force[..., ::-1], there.force, atol=SAME * largest)
     np.testing.assert_allclose(again.effort[..., ::-1], there.effort, rtol=SAME, atol=SAME * largest)
@@ -199,7 +199,7 @@ to = 20
 def test_written_and_read_again_it_is_the_same_machine(machine: Mechanism) -> None:
     again = parse(dumps(machine))
     assert again == machine
-    first, second = stroke(machine), stroke(again)
+    first, second = solved(machine), solved(again)
     for name in ("drive", "effort", "load", "force", "moment", "axial", "x", "y", "turn", "status"):
         np.testing.assert_array_equal(getattr(first, name), getattr(second, name), err_msg=name)
     assert first.events == second.events or str(first.events) == str(second.events)
