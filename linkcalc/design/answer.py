@@ -18,10 +18,10 @@ from linkcalc.parts.pose import Array, Codes
 SCHEMA = 1
 
 
-def quantity(kind: str, *, axes: tuple[str, ...], text: str) -> Any:
-    """A field that is an array. kind = "force", "moment", "angle", "length", "number", or "drive", "effort",
+def quantity(kind: str, *, axes: tuple[str, ...], text: str, when: str = "") -> Any:
+    """A field that is an array. kind = "force", "moment", "angle", "length", "number", "ratio", or "drive", "effort",
     "load" where the model decides; axes = names of its axes; text = the head of its column, its axis, its key."""
-    return field(metadata={"quantity": kind, "axes": axes, "text": text})
+    return field(metadata={"quantity": kind, "axes": axes, "text": text, "when": when})
 
 
 def quantities(answer: Any) -> dict[str, Mapping[str, Any]]:
@@ -151,10 +151,10 @@ class StrokeAnswer:
     effort: Array = quantity("effort", axes=BATCH, text="effort")
     load: Array = quantity("load", axes=BATCH, text="load")
     tare_effort: Array = quantity("effort", axes=BATCH, text="tare effort")
-    frictionless_effort: Array = quantity("effort", axes=BATCH, text="effort without friction")
-    efficiency: Array = quantity("number", axes=BATCH, text="efficiency")
-    force_ratio: Array = quantity("number", axes=BATCH, text="force ratio")
-    ideal_ratio: Array = quantity("number", axes=BATCH, text="ideal ratio")
+    frictionless_effort: Array = quantity("effort", axes=BATCH, text="effort without friction", when="rubs")
+    efficiency: Array = quantity("number", axes=BATCH, text="efficiency", when="rubs")
+    force_ratio: Array = quantity("ratio", axes=BATCH, text="force ratio")
+    ideal_ratio: Array = quantity("ratio", axes=BATCH, text="ideal ratio")
     force: Array = quantity("force", axes=("bearing", "xy", *BATCH), text="force of the joint on the member")
     moment: Array = quantity("moment", axes=("bearing", *BATCH), text="moment of the joint on the member")
     axial: Array = quantity("force", axes=("two-force member", *BATCH), text="axial force, tension plus")
@@ -222,5 +222,5 @@ class StrokeAnswer:
 
     @property
     def holds(self) -> bool:
-        """True if no requirement fails."""
-        return all(v.holds for v in self.verdicts)
+        """True if no requirement fails, and at least one pose has an answer."""
+        return all(v.holds for v in self.verdicts) and bool((self.status == 0).any())

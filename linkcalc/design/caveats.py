@@ -40,6 +40,9 @@ def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
     ready = curves.survey.ready
     if ready.chain.coordinate is None:
         return
+    p = ready.pushing
+    if p.effort_asked and not p.load and not p.rest:
+        yield Caveat("effort", "nothing loads this mechanism, so there is nothing for the effort to hold")
     effort, load = part_of_motion(ready.chain, curves.shown.solved.closed, ready.pushing)
     texts = {
         "effort": "no effort however large holds the load there, and forces grow without bound near it",
@@ -48,6 +51,12 @@ def _dead(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
     asked = {"effort": ready.pushing.effort_asked, "load": bool(ready.pushing.load)}
     for name, part in (("effort", effort), ("load", load)):
         if not asked[name]:
+            continue
+        if np.max(part) < _AT and ready.steps:
+            yield Caveat(
+                name,
+                f"the {name} has no lever arm anywhere in the stroke: it cannot move the mechanism, nor be moved by it",
+            )
             continue
         inside = [e.drive for e in events if e.kind == "dead point" and e.quantity == name]
         least = np.min(part, axis=(0, 1))

@@ -10,10 +10,12 @@ from typing import Any
 import numpy as np
 
 from linkcalc.design.survey import Shown, Survey
+from linkcalc.mechanics.balance import part_of_motion
 from linkcalc.mechanics.mesh import Mesh
 from linkcalc.mechanics.pipeline import Solved, solve_at
 from linkcalc.mechanics.sampled import Peaks, Roots, Samples
-from linkcalc.parts.pose import Array, Numbers
+from linkcalc.mechanics.state import Status
+from linkcalc.parts.pose import Array, Mask, Numbers
 
 
 @dataclass(frozen=True)
@@ -38,6 +40,11 @@ class Found:
     value: float
 
 
+_ASKED = ("effort", "tare effort", "load")
+_AT_LIMIT = 1e-3
+"""Speed of what is asked over the fastest, at the pose just short of a limit of motion: a dead point"""
+
+
 class Curves:
     """The quantities of a solved stroke as curves.
 
@@ -45,17 +52,39 @@ class Curves:
     shown    the samples, at even values of the drive
     """
 
-    def __init__(self, survey: Survey, shown: Shown):
+    def __init__(self, survey: Survey, shown: Shown, limits: Sequence[float] = ()):
+        """limits: limits of motion [rad or m] that the stroke begins or ends at."""
         self.survey, self.shown = survey, shown
         self.drive: Array = shown.solved.drive[0, 0]
         self._names = list(survey.quantities)
         self._row = {name: k for k, name in enumerate(self._names)}
         self._samples = survey.values(self._names, shown)[:, :, 0]
+        self.dead: list[float] = []  # dead points of effort and load, and
+        self.zero: list[float] = []  # these and all reversals, once they are found
+        self.nowhere = bool((shown.solved.balance.status != Status.FINE).all())
+        self._samples[self._row_of_sizes(limits)] = np.inf
         sizes = np.abs(self._samples)
         self._sizes = sizes.max(axis=(1, 2), initial=0.0, where=np.isfinite(sizes)).tolist()
         self._column: dict[float, int] = {}
         self._values: Array = np.zeros((len(self._names), len(survey.ready.pushing.cases), 0))
         self._mesh = Mesh(self.drive, [shown.solved.closed]) if self.drive.size > 1 else None
+
+    def _row_of_sizes(self, limits: Sequence[float]) -> Mask:
+        """(name, case, pose) where an effort or the size of a force has no bound: at a dead point of what is asked.
+
+        A stroke that ends at a limit of motion stands a little short of it, and of a dead point there.
+        """
+        b, ready = self.shown.solved.balance, self.survey.ready
+        dead = (b.status == Status.DEAD_POINT)[:, 0]
+        if limits and self.drive.size > 1:
+            parts = part_of_motion(ready.chain, self.shown.solved.closed, ready.pushing)
+            part = np.broadcast_to(parts[1 if ready.pushing.load_asked else 0][:, 0], dead.shape)
+            reach = np.ptp(self.drive)
+            at_limit = np.any([np.abs(self.drive - limit) <= 1e-8 * reach for limit in limits], axis=0)
+            dead = dead | (at_limit & (part < _AT_LIMIT))
+        known = self.survey.quantities
+        sized = np.array([n in _ASKED or (n.startswith("force at ") and known[n].kind == "force") for n in self._names])
+        return sized[:, None, None] & dead
 
     def samples(self, name: str) -> Array:
         """(case, pose) values at the stroke's poses."""

@@ -2,22 +2,20 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Iterator
 
 import numpy as np
 
 from linkcalc.design.answer import Event
-from linkcalc.design.curves import Curves, Extremes, Found, Wanted, Zeros
+from linkcalc.design.curves import Curves, Extremes, Wanted, Zeros
+from linkcalc.design.passages import at_passages, beside
 from linkcalc.design.survey import EFFORT_SPEED, LOAD_SPEED
 from linkcalc.mechanics.path import Path
-from linkcalc.parts.pose import Array
 
 SLACK = "slack"
 """Kind of the event where the tension of a rope passes through nothing."""
 _BOTH_WAYS = ("effort", "load", "force ratio", "ideal ratio")
 
-_POLE = 1e-7  # of the stroke: how near a dead point is looked at to see whether a curve has a bound there
-_RISE = 1e3  # times the largest of its usual values: without bound
 _NOTHING = 1e-9  # of the largest force: a joint that carries nothing has no extremes to tell
 
 
@@ -29,9 +27,9 @@ def events(curves: Curves, path: Path) -> tuple[Event, ...]:
     wanted = Extremes(curves, [w for w in _wanted(curves) if not _carries_nothing(curves, w.name)])
     _solve_ahead(curves, zeros, wanted)
     out += _passages(curves, zeros)
-    dead = {e.drive for e in out if e.kind == "dead point"}
-    zero = {e.drive for e in out if e.kind in ("dead point", "reversal", SLACK)}
-    out += _extremes(curves, wanted, sorted(dead), sorted(zero))
+    curves.dead = sorted({e.drive for e in out if e.kind == "dead point"})
+    curves.zero = sorted({e.drive for e in out if e.kind in ("dead point", "reversal", SLACK)})
+    out += _extremes(curves, wanted)
     return tuple(out)
 
 
@@ -40,7 +38,7 @@ def _solve_ahead(curves: Curves, zeros: Zeros, wanted: Extremes) -> None:
     if curves.drive.size < 2 or not wanted.wanted:
         return
     dead = [p for n, p in zip(zeros.names(), zeros.places, strict=True) if n in _SPEEDS]
-    places = [zeros.places, wanted.places, _beside(curves, dead)]
+    places = [zeros.places, wanted.places, beside(curves, dead)]
     curves.at([], np.concatenate(places))
 
 
@@ -48,7 +46,9 @@ _SPEEDS = {EFFORT_SPEED: "effort", LOAD_SPEED: "load"}
 
 
 def _turning(curves: Curves) -> list[str]:
-    """What is looked at for a change of sign."""
+    """What is looked at for a change of sign; nothing where no pose has an answer."""
+    if curves.nowhere:
+        return []
     axial = [f"axial force in {m}" for m in _members(curves)]
     return [
         *(name for name in _SPEEDS if name in curves.survey.quantities),
@@ -75,8 +75,8 @@ def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
             yield Event("reversal", member, of, drive, 0.0, "force")
 
 
-def _extremes(curves: Curves, wanted: Extremes, dead: list[float], zero: list[float]) -> Iterator[Event]:
-    found = _at_passages(curves, wanted.wanted, dead, zero)
+def _extremes(curves: Curves, wanted: Extremes) -> Iterator[Event]:
+    found = at_passages(curves, wanted.wanted)
     found |= wanted.found(besides=found)
     for w in wanted.wanted:
         if not np.isnan(found[w].value):
@@ -114,44 +114,6 @@ def _wanted(curves: Curves) -> Iterator[Wanted]:
             size = one.kind in ("force", "moment")
             yield Wanted(one.name, case, 1, size)
             yield Wanted(one.name, case, -1, size)
-
-
-def _at_passages(curves: Curves, wanted: Sequence[Wanted], dead: list[float], zero: list[float]) -> dict[Wanted, Found]:
-    """Extremes that stand where something passes through zero: at a dead point some curves have no bound, and where
-    a force turns round, its size (and that of others that hang on it) is nothing. Neither is a smooth peak."""
-    if not zero or curves.drive.size < 2 or not wanted:
-        return {}
-    names = list(dict.fromkeys(w.name for w in wanted))
-    beside = _beside(curves, dead)
-    values = curves.at(names, np.concatenate([beside, zero]))
-    sizes = np.abs(values)
-    largest = sizes[:, :, : beside.size].max(axis=2, initial=0.0)
-    smallest = sizes[:, :, beside.size :].min(axis=2)
-    out: dict[Wanted, Found] = {}
-    for w in wanted:
-        row, top = (names.index(w.name), w.case), curves.size(w.name)
-        at = int(np.argmax(sizes[row][: beside.size])) if beside.size else 0
-        rises = largest[row] > top and largest[row] > _RISE * _usual(curves, w)
-        # a size has no bound at its largest only; a force with a sign runs off one way
-        if rises and (w.sense > 0 if w.size else w.sense * values[row][at] > 0):
-            out[w] = Found(dead[at // 2], w.sense * np.inf)
-        elif w.sense < 0 and smallest[row] <= _NOTHING * top and (w.size or np.min(curves.samples(w.name)) >= 0):
-            out[w] = Found(zero[int(np.argmin(sizes[row][beside.size :]))], 0.0)
-    return out
-
-
-def _beside(curves: Curves, dead: list[float]) -> Array:
-    """Two places close to each dead point, one on either side."""
-    low, high = min(curves.drive[0], curves.drive[-1]), max(curves.drive[0], curves.drive[-1])
-    near = (high - low) * _POLE
-    return np.clip(np.add.outer(dead, [-near, near]).ravel(), low, high)
-
-
-def _usual(curves: Curves, w: Wanted) -> float:
-    samples = curves.samples(w.name)[w.case]
-    # the median, by sorting: numpy's own loads masked arrays when first called
-    finite = np.sort(np.abs(samples[np.isfinite(samples)]))
-    return float(finite[finite.size // 2]) if finite.size else 0.0
 
 
 def _idle(curves: Curves, name: str) -> bool:

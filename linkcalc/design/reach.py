@@ -13,6 +13,8 @@ from linkcalc.mechanics.prepare import Ready
 from linkcalc.model.mechanism import LOWER, UPPER
 from linkcalc.model.units import show
 
+_VERBS = {"from": "begin", "to": "end"}
+
 
 @contextmanager
 def located(ready: Ready) -> Iterator[None]:
@@ -35,4 +37,4 @@ def _fault(ready: Ready, stop: OutOfReach) -> Fault:
         )
     what += f"the limit of motion is {show(stop.limit, kind, units)}" + (f", where {stop.why}" if stop.why else "")
     word = UPPER if stop.wanted > stop.last else LOWER
-    return Fault(("stroke", stop.end), what, f'end the stroke before it, or write "{word}"')
+    return Fault(("stroke", stop.end), what, f'{_VERBS[stop.end]} the stroke before it, or write "{word}"')

@@ -59,7 +59,7 @@ def stroke(
             solved, path = solve_stroke(ready, max(poses, _WATCHED))
     survey = Survey(ready, solved)
     shown = survey.first
-    curves = Curves(survey, shown)
+    curves = Curves(survey, shown, path.limits if path else ())
     found = events(curves, path) if path is not None else ()
     judged = verdicts(curves)
     drive = _asked(path, poses, at, solved)

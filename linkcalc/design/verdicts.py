@@ -9,6 +9,7 @@ import numpy as np
 
 from linkcalc.design.answer import Verdict
 from linkcalc.design.curves import Curves, Wanted
+from linkcalc.design.passages import worst
 from linkcalc.design.travel import travel
 from linkcalc.faults import fault
 from linkcalc.model.dimensions import evaluate
@@ -23,6 +24,7 @@ _HOLDS: dict[str, Callable[[float, float], bool]] = {
     ">": operator.gt,
 }
 _SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment", "torque")
+_RATIOS = ("force ratio", "ideal ratio")
 _ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
 
 
@@ -42,13 +44,13 @@ def _judge(curves: Curves, requirement: Requirement, limit: float, place: float 
     text = mechanism.requirements[requirement.name]
     kind = requirement.kind(mechanism)
     if requirement.quantity == "travel":
-        worst, drive, case = travel(curves, requirement.of), float("nan"), ""
+        value, drive, case = travel(curves, requirement.of), float("nan"), ""
     else:
-        worst, drive, case = _worst(curves, requirement, place)
-    holds = _HOLDS[requirement.relation](worst, limit) and worst != float("-inf")
-    if requirement.relation in ("<=", ">=") and abs(worst - limit) <= _ROUNDING * abs(limit):
+        value, drive, case = _worst(curves, requirement, place)
+    holds = _HOLDS[requirement.relation](value, limit) and value != float("-inf")
+    if requirement.relation in ("<=", ">=") and abs(value - limit) <= _ROUNDING * abs(limit):
         holds = True
-    return Verdict(requirement.name, text, holds and not np.isnan(worst), worst, limit, kind, case, drive)
+    return Verdict(requirement.name, text, holds and not np.isnan(value), value, limit, kind, case, drive)
 
 
 def _worst(curves: Curves, requirement: Requirement, place: float | None) -> tuple[float, float, str]:
@@ -62,20 +64,30 @@ def _worst(curves: Curves, requirement: Requirement, place: float | None) -> tup
         assert drive is not None
         _inside(curves, requirement, drive)
         values = sign * curves.at([name], np.array([drive]))[0, :, 0]
+        if requirement.quantity in _RATIOS:
+            values = values * [_way(curves, name, c) for c in range(len(cases))]
         seen = np.abs(values) if size else values
         if np.isnan(seen).all():
             return float("nan"), float(drive), ""
         k = int(np.nanargmax(seen) if upward else np.nanargmin(seen))
         return float(seen[k]), float(drive), cases[k]
     sense = 1 if upward else -1
-    found = curves.extremes([Wanted(name, c, sense * sign, size) for c in range(len(cases))])
+    signs = [sign * (_way(curves, name, c) if requirement.quantity in _RATIOS else 1) for c in range(len(cases))]
+    found = worst(curves, [Wanted(name, c, sense * s, size) for c, s in enumerate(signs)])
     values = np.array([f.value for f in found])
-    seen = np.abs(values) if size else sign * values
+    seen = np.abs(values) if size else np.array(signs) * values
     if np.isnan(seen).all():
         return float("nan"), float("nan"), ""
     # a case without the load has no ratio, and is not judged by it
     k = int(np.nanargmax(seen) if upward else np.nanargmin(seen))
     return float(seen[k]), found[k].drive, cases[k]
+
+
+def _way(curves: Curves, name: str, case: int) -> int:
+    """The sign a ratio begins the stroke with: it counts as plus, for which way the arrows were drawn is no merit."""
+    samples = curves.samples(name)[case]
+    first = samples[np.isfinite(samples) & (samples != 0)]
+    return -1 if first.size and first[0] < 0 else 1
 
 
 def _inside(curves: Curves, requirement: Requirement, drive: float) -> None:

@@ -60,6 +60,9 @@ class Balance:
 
     @property
     def ideal_ratio(self) -> Value:
+        """Velocity ratio of the geometry alone; NaN without a load."""
+        if _zero(self.load_speed):
+            return np.nan
         with np.errstate(all="ignore"):
             return -np.divide(self.effort_speed, self.load_speed)
 

@@ -39,7 +39,11 @@ class Carried:
         """Points that a member is said to have, but others carry."""
         for point in points:
             if self.elsewhere(point, member):
-                gather.add(item, f"{point} is a point of {self.text(point)}, not of {member}", f"name it in {member}")
+                gather.add(
+                    item,
+                    f"{point} is a point of {self.text(point)}, not of {member}",
+                    f"take a point that {member} or no member carries",
+                )
 
 
 def check_members(mechanism: Mechanism, gather: Gather) -> None:

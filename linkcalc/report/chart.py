@@ -74,7 +74,7 @@ def _case_labels(answer: StrokeAnswer, edge: Edge) -> tuple[str, ...]:
     """Names of the cases, each with its load if that is steady, so that it needs no curve."""
     labels = []
     for i, case in enumerate(answer.cases):
-        name = [f"case {case}"] if len(answer.cases) > 1 else []
+        name = [f"case {case}"] if case else []
         if _steady(answer):
             name.append(f"load {edge.text(float(np.nanmax(answer.load[i, 0])), 'load')}")
         labels.append(", ".join(name))
@@ -126,7 +126,7 @@ def _ratios(answer: StrokeAnswer, edge: Edge) -> list[Panel]:
     else:
         curves = [replace(c, broad=True) for c in _curves(edge, "ideal ratio", answer.ideal_ratio, "number", 3)]
         curves += _curves(edge, "force ratio", answer.force_ratio, "number", 0)
-    return [Panel(Axis("force ratio"), tuple(curves))]
+    return [Panel(Axis("force ratio", plain(edge.unit("ratio"))), tuple(curves))]
 
 
 def _joints(answer: StrokeAnswer, edge: Edge) -> list[Panel]:

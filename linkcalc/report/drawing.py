@@ -89,7 +89,7 @@ def caption(answer: StrokeAnswer, poses: Sequence[int], case: int) -> str:
         words.append(f"{answer.drive_name} {drives[0]} {unit}")
         if drives[1:]:
             words[0] += f", lighter {' and '.join(drives[1:])} {unit}"
-    if len(answer.cases) > 1:
+    if answer.cases[case]:
         words.append(f"case {answer.cases[case]}")
     return "; ".join(words)
 

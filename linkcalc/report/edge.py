@@ -11,6 +11,8 @@ from linkcalc.model.units import from_si
 from linkcalc.parts.pose import Array
 from linkcalc.report.numbers import number, plain
 
+# unit of load over effort, where one is a force and the other a torque: a ratio keeps SI whatever the file's units
+_RATIOS = {("force", "moment"): "1/m", ("moment", "force"): "m"}
 # what rounding leaves of an exact nothing, as a part of the largest of its kind
 _NOISE = 1e-8
 
@@ -33,10 +35,12 @@ class Edge:
 
     def kind(self, what: str) -> str:
         """The kind of size behind "drive", "effort", "load"; any other is one already."""
-        return self._kinds.get(what, "number" if what in ("drive", "effort", "load") else what)
+        return self._kinds.get(what, "number" if what in ("drive", "effort", "load", "ratio") else what)
 
     def unit(self, what: str) -> str:
         """Its unit as the file writes it: "N*m"."""
+        if what == "ratio":
+            return _RATIOS.get((self._kinds.get("load", ""), self._kinds.get("effort", "")), "")
         return self._units.of(self.kind(what))
 
     def out(self, values: Array | float, what: str) -> Array:

@@ -4,6 +4,8 @@ from __future__ import annotations
 
 import math
 
+import numpy as np
+
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.faults import fault
 from linkcalc.model.mechanism import GROUND
@@ -65,6 +67,10 @@ def free_body_table(answer: StrokeAnswer, member: str, *, pose: int = 0, case: i
     sizes = [max(abs(float(row[k] or 0.0)) for row in rows) if rows else 0.0 for k in (1, 2, 3, 4, 5)]
     sizes[0] = sizes[1] = max(sizes[:2])
     sizes[2] = sizes[3] = max(sizes[2:4])
+    # of a two-force member every moment is nothing: its figures are those of the forces' arms
+    arm = float(np.hypot(*np.ptp([a.spot for a in acts], axis=0))) if acts else 0.0
+    force_size = max((float(np.hypot(*a.force)) for a in acts), default=0.0)
+    sizes[4] = max(sizes[4], 1e-3 * edge.one(force_size * arm, "moment"))
     columns = (
         Column(f"on {member}"),
         *(

@@ -109,6 +109,8 @@ def _quantities(answer: StrokeAnswer, edge: Edge) -> Tree:
     """The arrays that have no component but the batch: drive, effort, load, ratios."""
     tree: Tree = {}
     for name, meta in quantities(answer).items():
+        if meta["when"] and not getattr(answer, meta["when"]):
+            continue
         if meta["axes"] in (tuple(_BATCH), ("one", "variant", "pose")):
             array = _array(edge, getattr(answer, name), meta["quantity"], list(meta["axes"]))
             tree[name.replace("_", " ")] = {"text": meta["text"], **array}

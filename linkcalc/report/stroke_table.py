@@ -37,8 +37,8 @@ def stroke_table(answer: StrokeAnswer) -> Table:
     ):  # fmt: skip
         if what in answer.kinds:
             add(head, values, what)
-    add("force ratio", answer.force_ratio, "number")
-    add("ideal ratio", answer.ideal_ratio, "number")
+    add("force ratio", answer.force_ratio, "ratio")
+    add("ideal ratio", answer.ideal_ratio, "ratio")
     if answer.rubs:
         add("frictionless effort", answer.frictionless_effort, "effort")
         add("efficiency", answer.efficiency, "number")

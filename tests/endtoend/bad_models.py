@@ -80,7 +80,8 @@ BAD = [
         "centre off its member",
         'strut = ["B", "C"]',
         'strut = { points = ["B", "C"], mass = 1, centre = "D" }',
-        "members.strut.centre: D is a point of ground and arm, not of strut; name it in strut",
+        "members.strut.centre: D is a point of ground and arm, not of strut; "
+        "take a point that strut or no member carries",
     ),
     _changed(
         "arcs that do not meet",
@@ -158,7 +159,7 @@ BAD = [
         "from = 130",
         "from = 175",
         "stroke.from: 175 deg cannot be reached: the limit of motion is 164.6 deg, where strut and arm stand in line "
-        'at C; end the stroke before it, or write "upper limit"',
+        'at C; begin the stroke before it, or write "upper limit"',
     ),
     _changed(
         "drawn at a dead point of the drive",

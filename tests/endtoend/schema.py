@@ -9,6 +9,8 @@ TOP = [
     "members", "events", "requirements", "holds", "warnings", "cautions", "checks", "status",
 ]  # fmt: skip
 QUANTITIES = ["drive", "effort", "load", "tare effort", "force ratio", "ideal ratio"]
+RUBBING = ["frictionless effort", "efficiency"]
+RATIOS = {("force", "moment"): "1/m", ("moment", "force"): "m"}
 JOINT = {
     "x": "force", "y": "force", "resultant": "force", "direction": "angle", "direction from own axis": "angle",
     "moment": "moment",
@@ -17,7 +19,7 @@ TOLD = {
     "force": "force", "length": "length", "torque": "moment", "angle": "angle", "pressure": "pressure",
     "raising torque": "moment", "lowering torque": "moment",
 }  # fmt: skip
-EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack"}
+EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack", "self-locking edge"}
 BATCH = ["case", "variant", "pose"]
 STILL = ["one", "variant", "pose"]
 
@@ -33,14 +35,17 @@ class Schema:
     def check(self, kinds: dict[str, str]) -> None:
         """kinds  of drive, effort and load in this model"""
         tree = self.tree
+        self.units["ratio"] = RATIOS.get((kinds.get("load", ""), kinds.get("effort", "")), "")
         assert list(tree) == TOP
         assert (tree["schema"], tree["answer"]) == (1, "stroke")
         assert list(tree["axes"]) == ["case", "variant", "pose", "member", "joint"]
         for name, array in tree["quantities"].items():
             assert array["text"]
-            kind = {"tare effort": "effort"}.get(name, name)
-            self.array(array, kinds.get(kind, "number"), STILL if name == "drive" else BATCH, more=frozenset({"text"}))
-        assert sorted(tree["quantities"]) == sorted(QUANTITIES)
+            kind = {"tare effort": "effort", "frictionless effort": "effort"}.get(name, name)
+            kind = "ratio" if name.endswith("ratio") else kinds.get(kind, "number")
+            self.array(array, kind, STILL if name == "drive" else BATCH, more=frozenset({"text"}))
+        rubs = "efficiency" in tree["quantities"]
+        assert sorted(tree["quantities"]) == sorted(QUANTITIES + (RUBBING if rubs else []))
         for side in tree["joints"]:
             assert list(side) == ["joint", "kind", "member", *JOINT]
             assert side["joint"] in tree["axes"]["joint"]

@@ -62,8 +62,8 @@ def _columns(answer: StrokeAnswer, edge: Edge, all_joints: bool) -> tuple[tuple[
     add(answer.effort, "effort", "effort", always="effort" in answer.kinds)
     add(answer.tare_effort, "tare effort", "effort")
     add(answer.load, "load", "load", always="load" in answer.kinds)
-    add(answer.force_ratio, "force ratio", "number")
-    add(answer.ideal_ratio, "ideal ratio", "number")
+    add(answer.force_ratio, "force ratio", "ratio")
+    add(answer.ideal_ratio, "ideal ratio", "ratio")
     if answer.rubs:
         add(answer.efficiency, "efficiency", "number")
     if answer.joints:

@@ -148,7 +148,8 @@ def test_copies_have_each_its_own_curve() -> None:
          "tracks.arc: more than one of 'arc', 'through' is given; exactly one is needed"),
         ('arc = ["A", "m", "B2"]',
          "tracks.arc.arc: A, m, B2 stand in line; an arc is wanted, or a slot along a straight line"),
-        ('arc = ["u", "B", "w"]', "tracks.arc.arc: B is a point of crank and rod, not of ground; name it in ground"),
+        ('arc = ["u", "B", "w"]', "tracks.arc.arc: B is a point of crank and rod, not of ground; "
+         "take a point that ground or no member carries"),
         # u, x and w lie on a circle of 75.60 about (150, 0.60), and P = (140.43, -59.43) 60.79 from its centre
         ('arc = ["u", "x", "w"]', "tracks.arc: it does not hold as drawn, by 14.82 mm; draw its point on its line"),
     ],
