@@ -3,14 +3,18 @@
 from __future__ import annotations
 
 from dataclasses import replace
+from typing import Any
 
 import numpy as np
-from hypothesis import given
+from hypothesis import example, given
 
+from linkcalc import parse
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.mechanism import GROUND, Mechanism
 from tests.property.resum import Resum, unbalanced
+from tests.samples import BRACKET, COLLAR, RAM, SLOTTED
 from tests.strategies import frames, machines, solved
+from tests.unit.design.models import WELDED
 
 BALANCE = 1e-9
 """Of the largest force: rounding is 1e-16 a product, amplified by angles of transmission down to 30 degrees in chains
@@ -20,8 +24,18 @@ WORK = 1e-5
 STEP = 3e-5
 """[-] of the drive, relative to a radian or to the size of the drawing"""
 
+TILTED = "\n[cases.level]\n[cases.tilted]\ngravity = { turn = 35, scale = 2 }\n"
+
+
+def corners(test: Any) -> Any:
+    """The awkward ones: a guide beside its member, a slot on a pin itself, gravity that differs from case to case."""
+    for text in (RAM + TILTED, COLLAR + TILTED, SLOTTED + TILTED):
+        test = example(parse(text))(test)
+    return test
+
 
 @given(machines())
+@corners
 def test_every_member_and_every_pin_is_in_equilibrium(machine: Mechanism) -> None:
     answer = solved(machine)
     assert not answer.status.any()
@@ -29,6 +43,8 @@ def test_every_member_and_every_pin_is_in_equilibrium(machine: Mechanism) -> Non
 
 
 @given(frames())
+@example(parse(BRACKET))
+@example(parse(WELDED))
 def test_every_member_of_a_frame_is_in_equilibrium(frame: Mechanism) -> None:
     answer = solved(frame)
     assert not answer.status.any()
@@ -36,6 +52,7 @@ def test_every_member_of_a_frame_is_in_equilibrium(frame: Mechanism) -> None:
 
 
 @given(machines())
+@corners
 def test_action_is_reaction(machine: Mechanism) -> None:
     """What two members do to each other at a slot, slide or weld is opposite, and at a pin of two without a load."""
     answer = solved(machine)
@@ -52,6 +69,7 @@ def test_action_is_reaction(machine: Mechanism) -> None:
 
 
 @given(machines())
+@corners
 def test_the_ground_takes_what_all_loads_come_to(machine: Mechanism) -> None:
     """Cut free of the ground, the whole machine is one body."""
     answer = solved(machine)
@@ -67,6 +85,7 @@ def test_the_ground_takes_what_all_loads_come_to(machine: Mechanism) -> None:
 
 
 @given(machines())
+@corners
 def test_virtual_work_by_finite_differences(machine: Mechanism) -> None:
     """Effort, loads and weights do no work together in a small motion; the motion is taken from solved poses."""
     usual = solved(machine)

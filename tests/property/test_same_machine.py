@@ -19,6 +19,7 @@ from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.pair import Pair
 from linkcalc.parts.loads.weight import Weight
 from tests.property.transform import INCH_POUND, in_units, moved, reordered, scaled, turned
+from tests.samples import BRACKET, COLLAR, RAM, SLOTTED
 from tests.strategies import frames, machines, solved
 
 SAME = 1e-9
@@ -61,6 +62,10 @@ def alike(a: StrokeAnswer, b: StrokeAnswer, *, turn: float = 0.0, scale: float =
 
 
 @given(either, st.floats(-3.1, 3.1))
+@example(parse(COLLAR), 1.0)
+@example(parse(SLOTTED), -2.0)
+@example(parse(RAM), np.pi / 2)
+@example(parse(BRACKET), np.pi)
 def test_turning_the_drawing_with_its_gravity(machine: Mechanism, by: float) -> None:
     alike(solved(machine), solved(turned(machine, by)), turn=by)
 
@@ -82,6 +87,10 @@ def test_scaling_the_drawing(machine: Mechanism, by: float) -> None:
 
 
 @given(either)
+@example(parse(COLLAR))
+@example(parse(SLOTTED))
+@example(parse(RAM))
+@example(parse(BRACKET))
 def test_units_of_the_file(machine: Mechanism) -> None:
     """In inches, pounds and radians the same machine gives the same newtons."""
     alike(solved(machine), solved(in_units(machine, INCH_POUND)))

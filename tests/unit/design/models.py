@@ -102,6 +102,32 @@ poses = 61
 """
 """A crank rocks a lever with a load on its tip, once round: several humps in every curve."""
 
+WELDED = """
+[points]
+A = [0, 0]
+P = [100, 0]
+E = [150, 40]
+[members]
+ground = ["A"]
+post = ["A", "P"]
+arm = ["P", "E"]
+[welds.corner]
+members = ["arm", "post"]
+at = "P"
+[slots.roller]
+point = "P"
+along = 0
+[loads.end]
+at = "E"
+direction = -90
+size = 100
+[loads.corner_load]
+at = "P"
+direction = -90
+size = 10
+"""
+"""A post and an arm welded at a corner with a roller under it: no pin there, the roller bears on a member."""
+
 
 def degrees(event: Event) -> float:
     return float(np.degrees(event.drive))

@@ -7,7 +7,7 @@ import pytest
 
 from linkcalc.design.answer import StrokeAnswer
 from tests.property.resum import unbalanced
-from tests.unit.design.models import ask
+from tests.unit.design.models import WELDED, ask
 
 TINY = 1e-9
 """[N] on forces of some hundred newtons"""
@@ -118,32 +118,6 @@ def test_a_pin_in_the_ground_shows_what_the_ground_feels() -> None:
     np.testing.assert_allclose(after.force_on("A", "left"), before.force_on("A", "left"), atol=TINY)
     more = after.force_on("A", "ground") - before.force_on("A", "ground")
     np.testing.assert_allclose(more[:, 0, 0, 0], [50, 0], atol=TINY)
-
-
-WELDED = """
-[points]
-A = [0, 0]
-P = [100, 0]
-E = [150, 40]
-[members]
-ground = ["A"]
-post = ["A", "P"]
-arm = ["P", "E"]
-[welds.corner]
-members = ["arm", "post"]
-at = "P"
-[slots.roller]
-point = "P"
-along = 0
-[loads.end]
-at = "E"
-direction = -90
-size = 100
-[loads.corner_load]
-at = "P"
-direction = -90
-size = 10
-"""
 
 
 def test_where_all_are_welded_there_is_no_pin() -> None:
