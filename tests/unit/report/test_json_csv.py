@@ -57,6 +57,8 @@ def test_every_array_of_the_answer_has_its_place():
     told |= {"axial"} if "axial" in tree["two-force members"][0] else set()
     assert tree["ropes"] == []  # it has none, so no tensions either
     told |= {"tension"}
+    assert not answer.rubs  # nothing rubs, so what friction costs is not told
+    told |= {name for name, meta in quantities(answer).items() if meta["when"] == "rubs"}
     told |= set(tree["members"][0]) - {"member"}
     assert told == set(quantities(answer))
     assert [m["member"] for m in tree["members"]] == ["ground", "crank", "link", "ram"]
