@@ -103,6 +103,8 @@ class Factors(Protocol):
 
     negative  (1, variant, pose) True where the determinant is below zero: it changes on another branch
     singular  (1, variant, pose) True where rounding decides what is solved; None: nowhere
+    polar     the orthogonal part of a lone matrix, which jumps where the matrix passes through a singular one; of
+              a batch it is not worked out, and None
     """
 
     @property
@@ -110,6 +112,9 @@ class Factors(Protocol):
 
     @property
     def singular(self) -> Mask | None: ...
+
+    @property
+    def polar(self) -> Array | None: ...
 
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]: ...
 
@@ -129,6 +134,12 @@ class Single:
     def negative(self) -> Mask:
         return np.full((1, 1, 1), np.linalg.slogdet(self._scaled)[0] < 0)
 
+    @cached_property
+    def polar(self) -> Array | None:
+        """(size, size) the nearest orthogonal matrix."""
+        u, _, vt = np.linalg.svd(self._scaled)
+        return np.asarray(u @ vt)
+
     def solve(self, rhs: Sequence[Value], *, transposed: bool = False) -> list[Value]:
         b = np.array(rhs, float)
         try:
@@ -141,6 +152,8 @@ class Single:
 
 class Factored:
     """Factors of a batch, replayed from a plan; entries with a weak pivot are kept as dense matrices."""
+
+    polar = None
 
     def __init__(
         self,

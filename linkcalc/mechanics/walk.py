@@ -18,7 +18,8 @@ from linkcalc.mechanics.plan import NoPlan
 from linkcalc.parts.pose import Array
 
 _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its length
-_STRICT = 0.003  # the same where the determinant changes sign: only straight through a change point
+_STRICT = 0.003  # the same where a loop turns over: only straight through a change point
+_OVER = -0.9  # a direction that has turned over, and not merely far
 _SMALLEST = 1e-7  # of the whole way
 _FIRST = 1 / 6
 _GROWTH = 1.6
@@ -30,10 +31,15 @@ _STEPS = 5000
 
 @dataclass(frozen=True, eq=False)
 class Node:
-    """One closed pose of the walk; drive [rad or m]."""
+    """One closed pose of the walk.
+
+    drive  [rad or m]
+    over   -1 if a change point was passed on the last step, about +1 if none was near
+    """
 
     drive: float
     pose: Closed
+    over: float = 1.0
 
 
 @dataclass(frozen=True)
@@ -42,7 +48,7 @@ class Walk:
 
     stopped  "" if it came where it should; else why not: "limit" or "change point" or "stuck"
     limit    drive at the limit of motion, nan if none was met
-    passed   drives between which the determinant changed sign: change points that were passed straight through
+    passed   drives between which change points were passed straight through
     """
 
     nodes: tuple[Node, ...]
@@ -67,7 +73,7 @@ def walk(chain: Chain, start: Node, stop: float) -> Walk:
         last = abs(step) >= abs(left) * (1 - 1e-9)
         there = _step(chain, nodes, stop if last else here.drive + step)
         if there is not None:
-            if there.pose.factored.negative.flat[0] != here.pose.factored.negative.flat[0]:
+            if there.over < _OVER:
                 passed.append((here.drive, there.drive))
             nodes.append(there)
             step = _GROWTH * (there.drive - here.drive)
@@ -102,10 +108,26 @@ def _step(chain: Chain, nodes: list[Node], drive: float) -> Node | None:
         there = close(chain, there.at, chain.coordinate.hold(drive), steps=6)
         if not there.fine.all():
             return None
-    strict = there.factored.negative.flat[0] != here.pose.factored.negative.flat[0]
-    if _departure(chain, here.pose, there, step) > (_STRICT if strict else _SMOOTH):
+    over = _turned_over(chain, here.pose, there)
+    if _departure(chain, here.pose, there, step) > (_STRICT if over < 0.0 else _SMOOTH):
         return None
-    return Node(drive, there)
+    return Node(drive, there, over)
+
+
+def _turned_over(chain: Chain, a: Closed, b: Closed) -> float:
+    """-1 if the step goes through a change point, about +1 if it keeps clear of all.
+
+    Of one loop the sign of the determinant tells. Of several the signs could change together, as those of parallel
+    linkages one upon the other do; but with every one of them a direction of the polar factor turns over, and the
+    least cosine of a turn from one factor to the other shows it.
+    """
+    if a.factored.negative.flat[0] != b.factored.negative.flat[0]:
+        return -1.0
+    before, after = a.factored.polar, b.factored.polar
+    if len(chain.joints) - chain.moving < 2 or before is None or after is None:
+        return 1.0
+    turn = before.T @ after
+    return float(np.linalg.eigvalsh(turn + turn.T)[0]) / 2
 
 
 def _departure(chain: Chain, a: Closed, b: Closed, step: float) -> float:
