@@ -115,6 +115,48 @@ def test_no_answer_is_invented_at_the_change_point(poses: int) -> None:
     assert not [e for e in answer.events if e.kind == "dead point"]
 
 
+STACKED = """
+[points]
+A = [0, 0]
+D = [100, 0]
+B = { from = "A", distance = 200, angle = -40 }
+C = { from = "D", distance = 200, angle = -40 }
+E = { from = "B", distance = 150, angle = -40 }
+F = { from = "C", distance = 150, angle = -40 }
+[members]
+ground = ["A", "D"]
+arm = ["A", "B"]
+lower = ["D", "C"]
+plate = ["B", "C"]
+boom = ["B", "E"]
+upper = ["C", "F"]
+head = ["E", "F"]
+[welds.shoulder]
+members = ["arm", "boom"]
+at = "B"
+[effort]
+torque_on = "arm"
+[load]
+at = "F"
+direction = -90
+size = 10
+[stroke]
+turn = "arm"
+to = TO
+"""
+"""Two parallelograms one upon the other, flat together at 0 degrees: 10 N carried 350 mm out."""
+
+
+def test_change_points_that_two_loops_pass_together_are_told() -> None:
+    answer = ask(STACKED.replace("TO", "35.5"))
+    assert any("the stroke passes a change point" in c.text for c in answer.caveats)
+    told = answer.status[0, 0] == Status.FINE
+    np.testing.assert_allclose(
+        answer.effort[0, 0, told], 3.5 * np.cos(answer.drive[0, 0, told]), rtol=1e-6, err_msg="passed straight"
+    )
+    assert warned(STACKED.replace("TO", "-10")) == []
+
+
 def test_none_for_a_parallelogram_that_stays_clear() -> None:
     assert warned(PARALLEL.replace("TO", "-20")) == []
 

@@ -129,3 +129,10 @@ size = 100
         with np.errstate(invalid="ignore"):
             out = self.r * np.cos(angle) + np.sqrt(self.l**2 - (self.r * np.sin(angle) - self.h) ** 2)
         return np.asarray(out / 1000)
+
+
+def twice(linkage: FourBar, stroke: str) -> str:
+    """The linkage with its coupler and rocker doubled: two loops alike on one crank."""
+    knee = '{ meets = [["B", "coupler"], ["D", "rocker"]], side = "left" }'
+    text = linkage.text(stroke).replace("C = {", f"E = {knee}\nC = {{")
+    return text.replace('rocker = ["D", "C"]\n', 'rocker = ["D", "C"]\nsecond = ["B", "E"]\nfourth = ["D", "E"]\n')

@@ -138,7 +138,8 @@ def test_a_step_turns_by_its_arc_tangent_and_keeps_the_norm(count: int) -> None:
     rng = np.random.default_rng(3)
     turn = rng.uniform(-3, 3, (3, 1, 1, count))
     x, y = rng.normal(size=(2, 3, 1, 1, count))
-    at = Poses([0.0, *x], [0.0, *y], [1.0, *np.cos(turn)], [0.0, *np.sin(turn)])
+    down, field = (np.zeros((2, 1, 1)), np.ones((2, 1, 1))), np.array([[[1.0]], [[2.0]]])
+    at = Poses([0.0, *x], [0.0, *y], [1.0, *np.cos(turn)], [0.0, *np.sin(turn)], down, field)
     step = list(rng.normal(size=(9, 1, 1, count)))
     step[4] = 0.25  # a constant among the arrays
     there = moved(at, step)
@@ -149,6 +150,7 @@ def test_a_step_turns_by_its_arc_tangent_and_keeps_the_norm(count: int) -> None:
         np.testing.assert_allclose(there.c[k + 1], np.cos(angle), atol=1e-14)
         np.testing.assert_allclose(there.s[k + 1], np.sin(angle), atol=1e-14)
     assert (there.x[0], there.y[0], there.c[0], there.s[0]) == (0.0, 0.0, 1.0, 0.0)
+    assert there.down is down and there.field is field, "gravity is that of the case, wherever the members go"
 
 
 def test_the_fastest_motion_counts_turns_at_the_size_of_the_mechanism(model: Ready) -> None:

@@ -11,7 +11,7 @@ from linkcalc import Faults, stroke
 from linkcalc.mechanics.path import OutOfReach, lay_path, motion_range
 from linkcalc.mechanics.pipeline import solve_at
 from linkcalc.model.read import parse
-from tests.unit.mechanics.linkages import FourBar, SliderCrank, ready
+from tests.unit.mechanics.linkages import FourBar, SliderCrank, ready, twice
 
 LIMIT = 1e-9
 """[rad] and relative [m]: a limit is refined to rounding of its rate, and promised to a nanometre."""
@@ -90,6 +90,22 @@ def test_a_slider_crank_goes_round_without_turning_over(model: SliderCrank) -> N
     drawn = lean[0]
     turned = answer.turn[2, 0, 0] + drawn
     np.testing.assert_allclose(bx + model.l / 1000 * np.cos(turned), model.place(angle), atol=PLACE)
+
+
+@pytest.mark.parametrize("coupler", [90.0, 70.2, 70.02, 70.002])
+def test_two_loops_that_come_near_their_change_points_together(coupler: float) -> None:
+    """The sign of the determinant would not tell if both went over to the other branch at once."""
+    linkage = FourBar(30, coupler, 60, 100)
+    model = ready(twice(linkage, '[stroke]\nturn = "crank"\nfrom = 60\nto = 420'))
+    path = lay_path(model)
+    angles = path.poses(POSES)
+    solved = solve_at(model, path.mesh, angles)
+    assert solved.closed.fine.all() and not path.passed
+    drawn, knee, at = linkage.rocker_angle(np.radians(linkage.drawn)), linkage.knee(angles), solved.closed.at
+    for member in (3, 5):
+        u, v = linkage.c / 1000 * np.cos(drawn), linkage.c / 1000 * np.sin(drawn)
+        x, y = at.c[member] * u - at.s[member] * v, at.s[member] * u + at.c[member] * v
+        np.testing.assert_allclose([at.x[member] + x, at.y[member] + y], knee.reshape(2, 1, 1, -1), atol=1e3 * PLACE)
 
 
 # limits of motion

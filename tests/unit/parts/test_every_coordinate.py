@@ -14,6 +14,7 @@ def coordinates() -> list[tuple[str, Coordinate, int]]:
     found = []
     extra = [
         Sample("coordinate", "travel", "of a slot", SLOTTED.replace('distance = ["A", "low"]', 'travel = "in_arm"')),
+        Sample("coordinate", "distance", "of two members", SLOTTED.replace('["A", "low"]', '["tip", "low"]')),
         Sample("coordinate", "turn", "of a member", RAM.replace('travel = "guide"', 'turn = "rod"')),
     ]
     for sample in (*samples("coordinate"), *extra):
