@@ -117,6 +117,21 @@ def test_a_copy_that_cannot_come_along() -> None:
     np.testing.assert_allclose(answer.effort[:, [0, 2]], others.effort, rtol=ALONE)
 
 
+@pytest.mark.parametrize("poses", [5, 13, 25, 241])
+def test_a_copy_that_would_have_to_be_assembled_anew(poses: int) -> None:
+    """Its crank stops 1.4 degrees short of flat; a step over that gap would find it on the other branch."""
+    short = FourBar(30, 69.99, 60, 100)
+    (limit,) = short.crank_limits()
+    assert 178 < np.degrees(limit) < 179
+    text = FourBar(30, 75, 60, 100).text(f'[stroke]\nturn = "crank"\nfrom = 70\nto = 310\nposes = {poses}')
+    answer = stroke(parse(text), sizes={"coupler": np.array([0.075, 0.06999])})
+    reached = answer.drive[0, 1] < limit
+    np.testing.assert_array_equal(answer.status[0, 1] == Status.FINE, reached)
+    assert set(answer.status[0, 1, ~reached].tolist()) <= {Status.OUT_OF_REACH, Status.BRANCH_LOST}
+    ratio = short.velocity_ratio(answer.drive[0, 1, reached])
+    np.testing.assert_allclose(answer.effort[0, 1, reached], 10 * ratio, rtol=1e-6)
+
+
 def assert_alike_but_for(others: StrokeAnswer, answer: StrokeAnswer, copy: int, status: Status) -> None:
     assert (answer.status[:, copy] == status).all()
     np.testing.assert_array_equal(np.delete(answer.status, copy, axis=1), others.status)
