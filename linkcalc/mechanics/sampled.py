@@ -214,9 +214,3 @@ def _polynomial(samples: Samples, curve: Numbers, first: Numbers) -> tuple[Numbe
 def sampled_peaks(f: Curve, samples: Samples) -> tuple[Array, Array]:
     """The largest value of each curve and where it is: (places, values), each (curves)."""
     return Peaks(samples).confirmed(f, np.arange(len(samples.values)))
-
-
-def sampled_roots(f: Curve, samples: Samples) -> tuple[Array, Numbers]:
-    """All passages through zero between samples: (places, number of the curve), in the order of the curves."""
-    found = Roots(samples)
-    return found.confirmed(f), found.curve

@@ -8,6 +8,7 @@ import numpy as np
 
 from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Poses, Row, Site, Sketch, Value, X, Y
+from linkcalc.parts.held_length import HeldLength
 from linkcalc.words import word
 
 
@@ -37,23 +38,11 @@ class DistanceCoordinate:
         length: Value = np.hypot(bx - ax, by - ay)
         return length
 
-    def hold(self, target: Value) -> HeldDistance:
-        return HeldDistance(self, target)
-
-
-@dataclass(frozen=True, eq=False)
-class HeldDistance:
-    """gap = distance less target [m]."""
-
-    between: DistanceCoordinate
-    target: Value
-    angular = False
-
-    def gap(self, at: Poses) -> Value:
-        return self.between.value(at) - self.target
+    def hold(self, target: Value) -> HeldLength:
+        return HeldLength(self, target)
 
     def slope(self, at: Poses) -> Row:
-        first, second = self.between.first, self.between.second
+        first, second = self.first, self.second
         (ax, ay), (bx, by) = at.spot(first), at.spot(second)
         length = np.hypot(bx - ax, by - ay)
         nx, ny = (bx - ax) / length, (by - ay) / length

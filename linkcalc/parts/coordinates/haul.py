@@ -6,6 +6,7 @@ from dataclasses import dataclass
 
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Hauled, Poses, Row, Sketch, Value
+from linkcalc.parts.held_length import HeldLength
 from linkcalc.words import word
 
 
@@ -32,20 +33,8 @@ class HaulCoordinate:
     def value(self, at: Poses) -> Value:
         return self.rope.haul(at)
 
-    def hold(self, target: Value) -> HeldHaul:
-        return HeldHaul(self.rope, target)
-
-
-@dataclass(frozen=True, eq=False)
-class HeldHaul:
-    """gap = rope in hand less target [m]."""
-
-    rope: Hauled
-    target: Value
-    angular = False
-
-    def gap(self, at: Poses) -> Value:
-        return self.rope.haul(at) - self.target
+    def hold(self, target: Value) -> HeldLength:
+        return HeldLength(self, target)
 
     def slope(self, at: Poses) -> Row:
         return self.rope.haul_slope(at)

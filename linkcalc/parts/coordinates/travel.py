@@ -6,6 +6,7 @@ from dataclasses import dataclass
 
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Poses, Row, Sketch, Travelled, Value
+from linkcalc.parts.held_length import HeldLength
 from linkcalc.words import word
 
 
@@ -32,20 +33,8 @@ class TravelCoordinate:
     def value(self, at: Poses) -> Value:
         return self.joint.travel(at)
 
-    def hold(self, target: Value) -> HeldTravel:
-        return HeldTravel(self.joint, target)
-
-
-@dataclass(frozen=True, eq=False)
-class HeldTravel:
-    """gap = travel less target [m]."""
-
-    joint: Travelled
-    target: Value
-    angular = False
-
-    def gap(self, at: Poses) -> Value:
-        return self.joint.travel(at) - self.target
+    def hold(self, target: Value) -> HeldLength:
+        return HeldLength(self, target)
 
     def slope(self, at: Poses) -> Row:
         return self.joint.travel_slope(at)

@@ -9,7 +9,7 @@ import pytest
 from hypothesis import example, given
 from hypothesis import strategies as st
 
-from linkcalc.mechanics.sampled import Samples, sampled_peaks, sampled_roots
+from linkcalc.mechanics.sampled import Roots, Samples, sampled_peaks
 
 VALUE = 1e-12
 """Of the curve's size: a polynomial through seven samples foretells to 1e-9, and the value squares what is left."""
@@ -36,7 +36,7 @@ class Watched:
         return float(place[0]), float(value[0])
 
     def roots(self) -> np.ndarray:
-        return sampled_roots(self, self.samples)[0]
+        return Roots(self.samples).confirmed(self)
 
 
 SMOOTH: dict[str, tuple[Function, float, float]] = {
@@ -176,9 +176,9 @@ def test_roots_of_kinks_and_curves(count: int, at: float, bend: float) -> None:
 
 def test_roots_come_curve_by_curve() -> None:
     watched = Watched([np.cos, lambda x: x - 1.0, lambda x: x * 0 + 1], 0.0, 9.0, 61)
-    place, curve = sampled_roots(watched, watched.samples)
-    np.testing.assert_array_equal(curve, [0, 0, 0, 1])
-    np.testing.assert_allclose(place, [np.pi / 2, 3 * np.pi / 2, 5 * np.pi / 2, 1.0], atol=1e-12)
+    found = Roots(watched.samples)
+    np.testing.assert_array_equal(found.curve, [0, 0, 0, 1])
+    np.testing.assert_allclose(found.confirmed(watched), [np.pi / 2, 3 * np.pi / 2, 5 * np.pi / 2, 1.0], atol=1e-12)
 
 
 @pytest.mark.parametrize("count", [5, 61])
