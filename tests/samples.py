@@ -379,7 +379,51 @@ poses = 7
 """
 """A four-bar with something of every kind that pushes by a law; the unknown is the pressure of a drawing cylinder."""
 
+CLAMP = """
+[points]
+A = [0, 0]
+B = [90, 30]
+C = [180, 0]
+pad = [220, -5]
+face = [224, -20]
+face2 = [224, 20]
+stop = [90, -8]
+knee = [90, 120]
+[members]
+ground = ["A", "face", "face2", "knee", "stop"]
+lever = { points = ["A", "B"], stiffness = "18 kN/mm" }
+link = { points = ["B", "C"], stiffness = "12 kN/mm" }
+jaw = { points = ["C", "pad"], mass = 0.8 }
+[pins.A]
+stiffness = "90 kN/mm"
+[slides.guide]
+member = "jaw"
+along = 0
+[contacts.work]
+point = "pad"
+along = ["face", "face2"]
+stiffness = 6000
+gap = 1.5
+[contacts.rest]
+point = "B"
+of = "lever"
+along = 0
+stiffness = 900
+side = "left"
+gap = 34
+[effort]
+at = "B"
+direction = -90
+[stroke]
+distance = ["knee", "B"]
+to = 122
+poses = 9
+"""
+"""A toggle clamp: its links and one pin give, it presses a workpiece, goes over centre and comes down on a rest."""
+
 SAMPLES = (
+    Sample("joint", "contact", "work", CLAMP),
+    Sample("joint", "contact", "rest", CLAMP),
     Sample("joint", "slide", "guide", RAM),
     Sample("joint", "slide", "collar_on_rocker", COLLAR),
     Sample("joint", "slot", "in_arm", SLOTTED),

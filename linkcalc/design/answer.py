@@ -71,7 +71,8 @@ class Reading:
 class Event:
     """Something that happens at an exact pose.
 
-    kind      "largest", "smallest", "reversal", "dead point", "slack", "limit"
+    kind      "largest", "smallest", "reversal", "dead point", "slack", "limit", "contact made", "contact lost",
+              "snap-through"
     quantity  what it happens to, in the words of the requirements: "effort", "force ratio", "force at C", "strut"
     case      name of the load case, "" if it is the same for all
     drive     [rad or m] value of the stepped coordinate, found by root finding, not by sampling
@@ -85,6 +86,27 @@ class Event:
     drive: float
     value: float
     value_kind: str
+
+
+@dataclass(frozen=True)
+class Rest:
+    """A position in which the free members balance.
+
+    case    name of the load case
+    turns   member -> [rad] its turn from the drawing pose
+    steady  +1 stable: it comes back when it is moved a little; 0 neutral: it stays; -1 unstable: it falls away
+    """
+
+    case: str
+    turns: Mapping[str, float]
+    steady: int
+
+    @property
+    def text(self) -> str:
+        return STEADY[self.steady]
+
+
+STEADY = {1: "stable", 0: "neutral", -1: "unstable"}
 
 
 @dataclass(frozen=True)
@@ -147,6 +169,7 @@ class StrokeAnswer:
     status: Codes  # (case, variant, pose) mechanics.state.Status
     checks: Checks
     rubs: bool  # True if joints have friction: each case then comes twice, moving along the stroke and moving back
+    loose: bool  # True if free members settle: each case then has poses of its own
     drive: Array = quantity("drive", axes=("one", "variant", "pose"), text="stepped coordinate")
     effort: Array = quantity("effort", axes=BATCH, text="effort")
     load: Array = quantity("load", axes=BATCH, text="load")
@@ -159,14 +182,17 @@ class StrokeAnswer:
     moment: Array = quantity("moment", axes=("bearing", *BATCH), text="moment of the joint on the member")
     axial: Array = quantity("force", axes=("two-force member", *BATCH), text="axial force, tension plus")
     tension: Array = quantity("force", axes=("rope", *BATCH), text="tension of a rope, pull plus")
+    # axis "one" is that of the cases where free members settle
     x: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="x of the member's first point")
     y: Array = quantity("length", axes=("member", "one", "variant", "pose"), text="y of the member's first point")
     turn: Array = quantity("angle", axes=("member", "one", "variant", "pose"), text="turn from the drawing pose")
+    steady: Array = quantity("number", axes=BATCH, text="free members: 1 stable, 0 neutral, -1 unstable", when="loose")
     events: tuple[Event, ...] = ()
     verdicts: tuple[Verdict, ...] = ()
     caveats: tuple[Caveat, ...] = ()
     cautions: tuple[Caveat, ...] = ()  # what can hurt; item: the loads that it is so with
     readings: tuple[Reading, ...] = ()  # what loads tell of themselves
+    rests: tuple[Rest, ...] = ()  # where free members balance that nothing drives
     marks: tuple[Mark, ...] = ()  # joints and loads in the drawing pose
 
     # -- reading one thing out of the arrays ------------------------------------------------------------

@@ -31,6 +31,7 @@ def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple
         *_off_track(curves),
         *_passed(curves, path),
         *_held(curves, events),
+        *_free(curves, events),
         *limits(curves),
         *_failed(curves),
     )
@@ -160,6 +161,36 @@ def _edge(curves: Curves, edges: Sequence[float], k: int, step: int) -> float:
         if inside:
             return inside[0]
     return float(curves.drive[k])
+
+
+def _free(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
+    """Members that settle by themselves: which, and whether they would stay there."""
+    ready = curves.survey.ready
+    steady = curves.shown.solved.closed.steady
+    if steady is None:
+        return
+    cases, free = ready.pushing.cases, ready.drawing.mechanism.free
+    if free:
+        yield Caveat(", ".join(free), "nothing drives it: it is shown where it settles in balance" if len(free) == 1
+                     else "nothing drives them: they are shown where they settle in balance")  # fmt: skip
+    for value, text in ((-1, "unstable: the least push lets it fall to another"),
+                        (0, "neutral: it stays wherever it is put")):  # fmt: skip
+        for case, of in enumerate(cases):
+            poses = np.flatnonzero((steady[case] == value).any(axis=0))
+            if poses.size:
+                all_along = poses.size == steady.shape[2]
+                ends = dict.fromkeys(place(ready, float(curves.drive[k])) for k in (poses[0], poses[-1]))
+                where = (
+                    "" if all_along else f" from {' to '.join(ends)}" if len(ends) > 1 else f" at {next(iter(ends))}"
+                )
+                yield Caveat("stroke", f"the balance is {text}{where}{f' (case {of})' if of else ''}")
+    for e in events:
+        if e.kind == "snap-through":
+            of = f" (case {e.case})" if e.case else ""
+            yield Caveat(
+                "stroke", f"it snaps through at {place(ready, e.drive)}{of}: its balance ends there and {e.quantity} "
+                "jumps to another; what it hits, and the energy let loose, are not calculated",
+            )  # fmt: skip
 
 
 def _failed(curves: Curves) -> Iterator[Caveat]:

@@ -10,7 +10,7 @@ import numpy as np
 from linkcalc.design.answer import Caveat, StrokeAnswer, Verdict
 from linkcalc.design.stroke import stroke
 from linkcalc.mechanics.freedom import freedom
-from linkcalc.mechanics.path import motion_range
+from linkcalc.mechanics.pipeline import reach
 from linkcalc.mechanics.prepare import Ready, prepare
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.sketch import drawn
@@ -77,7 +77,7 @@ def check_model(mechanism: Mechanism, *, case: str | None = None) -> CheckAnswer
 def _range(ready: Ready, answer: StrokeAnswer) -> Range | None:
     if not ready.steps:
         return None
-    lower, drawn, upper = motion_range(ready)
+    lower, drawn, upper = reach(ready)
     ends = answer.drive[0, 0]
     # a turn is told in the winding that the stroke is written in
     shift = 2 * np.pi * round((ends[0] - drawn) / (2 * np.pi)) if answer.kinds["drive"] == "angle" else 0.0

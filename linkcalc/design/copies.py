@@ -11,9 +11,9 @@ from linkcalc.design.reach import located
 from linkcalc.faults import fault
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.copies import each_pose
-from linkcalc.mechanics.path import lay_path
-from linkcalc.mechanics.pipeline import Solved
+from linkcalc.mechanics.pipeline import path_of
 from linkcalc.mechanics.prepare import prepare
+from linkcalc.mechanics.solved import Solved
 from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.model.sketch import Drawing, drawn
@@ -63,7 +63,7 @@ def copies(
         raise fault("stroke", "the model has no stroke to walk through", "give it one, or use stroke(sizes=...)")
     nominal = prepare(drawn(mechanism))
     with located(nominal):
-        path = lay_path(nominal)
+        path = path_of(nominal)
     drive = path.poses(poses or mechanism.stroke.poses)
     for first in range(0, count, block):
         part = {name: np.reshape(size[first : first + block], (1, -1, 1)) for name, size in sizes.items()}

@@ -11,9 +11,9 @@ import numpy as np
 
 from linkcalc.design.survey import Shown, Survey
 from linkcalc.mechanics.balance import part_of_motion
-from linkcalc.mechanics.mesh import Mesh
-from linkcalc.mechanics.pipeline import Solved, solve_at
+from linkcalc.mechanics.pipeline import mesh_of, solve_at
 from linkcalc.mechanics.sampled import Peaks, Roots, Samples
+from linkcalc.mechanics.solved import Solved
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Mask, Numbers
 
@@ -67,7 +67,7 @@ class Curves:
         self._sizes = sizes.max(axis=(1, 2), initial=0.0, where=np.isfinite(sizes)).tolist()
         self._column: dict[float, int] = {}
         self._values: Array = np.zeros((len(self._names), len(survey.ready.pushing.cases), 0))
-        self._mesh = Mesh(self.drive, [shown.solved.closed]) if self.drive.size > 1 else None
+        self._mesh = mesh_of(survey.ready, shown.solved) if self.drive.size > 1 else None
 
     def _row_of_sizes(self, limits: Sequence[float]) -> Mask:
         """(name, case, pose) where an effort or the size of a force has no bound: at a dead point of what is asked.

@@ -16,6 +16,7 @@ SLACK = "slack"
 """Kind of the event where the tension of a rope passes through nothing."""
 _BOTH_WAYS = ("effort", "load", "force ratio", "ideal ratio")
 
+_POLE = 1e-6  # of the stroke: a change of sign as near to a dead point is that of the dead point
 _NOTHING = 1e-9  # of the largest force: a joint that carries nothing has no extremes to tell
 
 
@@ -23,6 +24,7 @@ def events(curves: Curves, path: Path) -> tuple[Event, ...]:
     """All events, limits and dead points first, then reversals, then extremes in the order of the quantities."""
     out = [Event("limit", "stroke", "", limit, np.nan, "number") for limit in path.limits]
     out += [Event("change point", "stroke", "", (a + b) / 2, np.nan, "number") for a, b in path.passed]
+    out += _snaps(curves, path)
     zeros = Zeros(curves, _turning(curves))
     wanted = Extremes(curves, [w for w in _wanted(curves) if not _carries_nothing(curves, w.name)])
     _solve_ahead(curves, zeros, wanted)
@@ -53,17 +55,28 @@ def _turning(curves: Curves) -> list[str]:
     return [
         *(name for name in _SPEEDS if name in curves.survey.quantities),
         *(name for name in axial if not _carries_nothing(curves, name)),
-        *(["effort"] if curves.survey.ready.chain.rubs else []),
+        *(["effort"] if curves.survey.ready.pushing.effort_asked else []),
+        *(f"room at {name}" for name in curves.survey.contacts),
         *(name for name in _tensions(curves) if not _carries_nothing(curves, name)),
     ]
 
 
 def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
     """Dead points, where the speed of effort or load passes through zero, and reversals of two-force members."""
+    dead: list[float] = []
+    near = _POLE * float(np.ptp(curves.drive))
     for name, case, drive in zeros.found():
         of = "" if name in zeros.alike else _case(curves, case)
         if name in _SPEEDS:
+            dead.append(drive)
             yield Event("dead point", _SPEEDS[name], of, drive, np.nan, "number")
+        elif name.startswith("room at "):
+            contact = name.removeprefix("room at ")
+            yield Event(_making(curves, name, case, drive), contact, of, drive, 0.0, "force")
+        elif name == "effort" and any(abs(drive - d) <= near for d in dead):
+            continue  # it changes sign without bound there, not through nothing
+        elif name == "effort" and not curves.survey.ready.chain.rubs:
+            yield Event("reversal", "effort", of, drive, 0.0, curves.survey.quantities[name].kind)
         elif name == "effort":
             # no effort is on the edge of the band between moving on and moving back
             yield Event("self-locking edge", "effort", of, drive, 0.0, curves.survey.quantities[name].kind)
@@ -73,6 +86,22 @@ def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
         else:
             member = name.removeprefix("axial force in ")
             yield Event("reversal", member, of, drive, 0.0, "force")
+
+
+def _snaps(curves: Curves, path: Path) -> Iterator[Event]:
+    """Where the balance of free members ends; the value is how far the member turns that turns or goes farthest."""
+    drawing = curves.survey.ready.drawing
+    for jump in getattr(path, "jumps", ()):
+        by_turn = abs(jump.turn) * drawing.size > jump.way
+        value, kind = (jump.turn, "angle") if by_turn else (jump.way, "length")
+        yield Event("snap-through", drawing.members[jump.member], _case(curves, jump.case), jump.drive, value, kind)
+
+
+def _making(curves: Curves, name: str, case: int, drive: float) -> str:
+    """Whether a contact is made or lost as the stroke goes on."""
+    samples, forward = curves.samples(name)[case], curves.drive[-1] > curves.drive[0]
+    after = np.searchsorted(curves.drive if forward else -curves.drive, drive if forward else -drive, side="right")
+    return "contact made" if samples[min(int(after), samples.size - 1)] < 0 else "contact lost"
 
 
 def _extremes(curves: Curves, wanted: Extremes) -> Iterator[Event]:

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 
-from linkcalc.mechanics.path import lay_path
+from linkcalc.mechanics.pipeline import path_of
 from linkcalc.mechanics.prepare import prepare
 from linkcalc.model.mechanism import DRAWN, Mechanism
 from linkcalc.model.sketch import drawn
@@ -18,7 +18,7 @@ def stroke_value(mechanism: Mechanism, text: str) -> float:
     drawing = drawn(mechanism)
     assert mechanism.stroke is not None
     if text == DRAWN:
-        return lay_path(prepare(drawing)).drawn
+        return path_of(prepare(drawing)).drawn
     try:
         size: float | str = float(text)
     except ValueError:

@@ -11,13 +11,15 @@ from linkcalc.design.caveats import caveats
 from linkcalc.design.curves import Curves
 from linkcalc.design.events import events
 from linkcalc.design.reach import located
+from linkcalc.design.rests import rests
 from linkcalc.design.survey import Shown, Survey, bounded, efficiency
 from linkcalc.design.told import spoken
 from linkcalc.design.verdicts import verdicts
 from linkcalc.mechanics.motion import alone
 from linkcalc.mechanics.path import Path
-from linkcalc.mechanics.pipeline import Solved, solve_at, solve_drawn, solve_stroke
+from linkcalc.mechanics.pipeline import solve_at, solve_drawn, solve_stroke
 from linkcalc.mechanics.prepare import Ready, prepare
+from linkcalc.mechanics.solved import Solved
 from linkcalc.mechanics.state import Status
 from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism
@@ -95,7 +97,8 @@ def _copies(mechanism: Mechanism, sizes: Mapping[str, Array], path: Path | None,
 def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged, warned) -> StrokeAnswer:  # type: ignore[no-untyped-def]
     solved, b, p = shown.solved, shown.solved.balance, ready.pushing
     shape = b.status.shape
-    still = (1, *shape[1:])
+    # free members settle in each case by themselves
+    still = (shape[0] if ready.loose else 1, *shape[1:])
     at = solved.closed.at
     nominal = survey.ready
     drawn = alone(nominal.start.at)
@@ -108,7 +111,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         kinds["load"] = p.load[0].pusher.kind
     axial = [survey.quantities[f"axial force in {name}"].of(shown) for name in _two_force(survey)]
     tension = [survey.quantities[f"tension of {rope}"].of(shown) for rope in survey.ropes]
-    drive = solved.drive if ready.steps else np.full(still, np.nan)
+    drive = solved.drive if ready.steps else np.full((1, *shape[1:]), np.nan)
     stroke_part = ready.drawing.mechanism.stroke
     return StrokeAnswer(
         mechanism=ready.drawing.mechanism,
@@ -134,6 +137,9 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         y=_placed(_stacked(at.y, still), b.status),
         turn=_placed(np.arctan2(_stacked(at.s, still), _stacked(at.c, still)), b.status),
         status=b.status,
+        loose=ready.loose is not None,
+        steady=_full(np.nan if solved.closed.steady is None else solved.closed.steady.astype(float), shape),
+        rests=rests(ready),
         rubs=bool(ready.chain.rubs),
         checks=checks,
         events=found,
@@ -178,7 +184,7 @@ def _solved(values: Array, status: Codes) -> Array:
 
 def _placed(values: Array, status: Codes) -> Array:
     """Coordinates of members, not a number where there is no pose that could have some."""
-    missing = np.isin(status[:1], [Status.NOT_DRAWN, Status.OUT_OF_REACH, Status.BRANCH_LOST])
+    missing = np.isin(status[: values.shape[1]], [Status.NOT_DRAWN, Status.OUT_OF_REACH, Status.BRANCH_LOST])
     return np.where(missing, np.nan, values) if missing.any() else values
 
 

@@ -10,10 +10,11 @@ import numpy as np
 from linkcalc.design.told import Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
-from linkcalc.mechanics.pipeline import Solved, sides
+from linkcalc.mechanics.pipeline import sides
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.pushing import Pushing
 from linkcalc.mechanics.reactions import Side
+from linkcalc.mechanics.solved import Solved
 from linkcalc.parts.pose import Array, Value
 
 EFFORT_SPEED, LOAD_SPEED = "speed of the effort", "speed of the load"
@@ -50,6 +51,7 @@ class Survey:
     sides      the sides of its joints, as in every solved batch
     two_force  its two-force members
     ropes      names of its ropes
+    contacts   names of its joints that push one way only
     spoken     what its loads tell of themselves
     watched    limits of its loads
     """
@@ -60,6 +62,7 @@ class Survey:
         self.sides = shown.sides
         self.two_force: tuple[TwoForce, ...] = two_force_members(shown.sides, first.closed.at, ready.pushing)
         self.ropes = tuple(dict.fromkeys(s.part_of for s in shown.sides if s.part_of))
+        self.contacts = tuple(ready.chain.joints[k].name for k, _, law in ready.chain.gives if law.one_sided)
         self.spoken = spoken(ready.pushing)
         self.watched = watched(ready.pushing)
         self.quantities: dict[str, Quantity] = {q.name: q for q in self._all()}
@@ -116,6 +119,9 @@ class Survey:
         for rope in self.ropes:
             first = next(k for k, side in enumerate(self.sides) if side.part_of == rope)
             out.append(Quantity(f"tension of {rope}", "force", _carried(first)))
+        for k, one in enumerate(self.ready.chain.joints):
+            if one.name in self.contacts:
+                out.append(Quantity(f"room at {one.name}", "length", _room(self.ready, k)))
         for two in self.two_force:
             name = self.ready.drawing.members[two.member]
             out.append(Quantity(f"axial force in {name}", "force", _axial(two)))
@@ -151,6 +157,10 @@ def _resultant(ks: Sequence[int]) -> Callable[[Shown], Value]:
 
 def _moment(k: int) -> Callable[[Shown], Value]:
     return lambda shown: shown.sides[k].moment
+
+
+def _room(ready: Ready, joint: int) -> Callable[[Shown], Value]:
+    return lambda shown: ready.chain.joints[joint].gap(shown.solved.closed.at)[0]
 
 
 def _carried(k: int) -> Callable[[Shown], Value]:

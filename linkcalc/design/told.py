@@ -7,8 +7,8 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from linkcalc.mechanics.pipeline import Solved
 from linkcalc.mechanics.pushing import Acting, Pushing, strength
+from linkcalc.mechanics.solved import Solved
 from linkcalc.model.told import limits_of, told_by
 from linkcalc.parts.contract import Limit
 from linkcalc.parts.pose import Poses, Value

@@ -19,7 +19,7 @@ from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.friction import rub
 from linkcalc.mechanics.motion import Closed, fastest
-from linkcalc.mechanics.pushing import Column, Pushing, column, strength, unknown
+from linkcalc.mechanics.pushing import Column, Pushing, add_pushes, column, strength, unknown
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Codes, Mask, Value
 
@@ -74,6 +74,8 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
     """
     at, speed, n = closed.at, closed.speed, chain.columns
     rest = column(pushing.rest, at, n, unit=False)
+    given, giving = chain.given(at, chain.floor) if chain.gives else ([], [])
+    add_pushes(rest, 1.0, giving)
     load_unit = column(pushing.load, at, n, unit=True)
     effort_unit = column(pushing.effort, at, n, unit=True)
     rest_power, load_speed, effort_speed = (_power(speed, q) for q in (rest, load_unit, effort_unit))
@@ -109,15 +111,18 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             asked = load_unit if pushing.load_asked else effort_unit
             asked_speed = load_speed if pushing.load_asked else effort_speed
             sense = pushing.sense * (pushing.forward or np.sign(effort_speed))
-            found = rub(chain, closed, sense, asked, asked_speed, load if pushing.load_asked else effort, negative)
-            more = found.unknown - (load if pushing.load_asked else effort)
+            answer = load if pushing.load_asked else effort
+            found = rub(chain, closed, sense, asked, asked_speed, answer, negative, [-g for g in given])
+            more = found.unknown - answer
             total = _sum(total, (more, asked), *zip(found.amounts, found.columns, strict=True))
             effort, load = (effort, found.unknown) if pushing.load_asked else (found.unknown, load)
             negative, friction, jammed = found.negative, found.amounts, found.jammed
+        if chain.floor and speed:
+            effort, frictionless, tare = (_cleared(chain, speed, e, effort_speed) for e in (effort, frictionless, tare))
         unbalance = disagreement = _UNCHECKED
         if checked:
             unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
-    multipliers = [-v if lost is None else np.where(lost, np.nan, -v) for v in negative]
+    multipliers = chain.whole([-v if lost is None else np.where(lost, np.nan, -v) for v in negative], given)
     status = _status(closed, multipliers, dead, len(pushing.cases))
     if jammed is not None:
         status = np.where(jammed & (status == Status.SINGULAR), np.int8(Status.JAMMED), status)
@@ -155,6 +160,11 @@ def failed(told: Balance, where: Mask, status: Status) -> Balance:
     friction: list[Value] = [np.where(where, np.nan, f) for f in told.friction]
     codes = np.where(np.broadcast_to(where, shape), np.int8(status), told.status)
     return replace(told, **masked, multipliers=multipliers, friction=friction, status=codes)
+
+
+def _cleared(chain: Chain, speed: Sequence[Value], effort: Value, effort_speed: Value) -> Value:
+    """What is nothing but rounding of forces that follow from how far something gives is nothing."""
+    return np.where(np.abs(effort * effort_speed) <= chain.floor * fastest(chain, speed), 0.0, effort)
 
 
 def _power(speed: Sequence[Value], push: Column) -> Value:
@@ -210,10 +220,11 @@ def _checks(
     effort_speed: Value,
     effort: Value,
 ) -> tuple[Array, Array]:
-    """What is left of the equations of equilibrium, and of the drive's multiplier."""
+    """What is left of the equations of equilibrium, and of the drive's multiplier; places that are held do not hold."""
+    held = range(chain.joint_rows, chain.joint_rows + len(chain.holds))
     left: Column = [-q if not _zero(q) else 0.0 for q in total]
     for (i, j), e in zip(chain.places, entries, strict=True):
-        if not _zero(negative[i]):
+        if not (_zero(negative[i]) or i in held):
             left[j] = left[j] + e * negative[i]
     most: Value = 1e-300
     for m, size in zip([*negative, *total], [*(1.0 / chain.row_size), *(1.0 / chain.column_size)], strict=True):

@@ -1,20 +1,25 @@
 """The kinematic chain: which row and column belongs to whom, and the stacked equations of all joints.
 
-Columns are x, y, turn of member 1, of member 2, ...; rows are those of the joints in order, then the one of the drive.
+Columns are x, y, turn of member 1, of member 2, ...; rows are those of the joints in order, then the places that are
+held while free members settle, then the one of the drive. A row that gives (an elastic link, a contact) is no
+constraint: its multiplier follows from its gap, and it is told at the same place among the multipliers.
 """
 
 from __future__ import annotations
 
 import math
 from collections.abc import Sequence
+from functools import cached_property
 from typing import Protocol
 
 import numpy as np
 
 from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.eliminate import Elimination, Factors
-from linkcalc.parts.contract import TURN, Drive, Joint, Row
+from linkcalc.parts.contract import TURN, Drive, Give, Joint, Push, Row
 from linkcalc.parts.pose import Array, Mask, Poses, Value
+
+_ROUNDING = 2e-15  # of the size of the mechanism
 
 
 class Holder(Protocol):
@@ -30,21 +35,43 @@ class Holder(Protocol):
 class Chain:
     """Joints between moving members, and at most one coordinate that is driven.
 
-    moving  number of moving members
-    rubs    (number of the joint, its friction) of every joint that rubs
-    size    [m] size of the mechanism: what lengths are compared with
+    moving      number of moving members
+    rubs        (number of the joint, its friction) of every joint that rubs
+    size        [m] size of the mechanism: what lengths are compared with
+    holds       coordinates that are held besides the drive, while free members settle
+    first_row   number of the first multiplier of each joint
+    joint_rows  how many rows of joints are constraints
+    row_joint   number of the joint of each of those
+    gives       (number of the joint, number of its row, its law) of every row that gives
     """
 
-    def __init__(self, moving: int, joints: Sequence[Joint], coordinate: Holder | None, size: float):
+    def __init__(
+        self, moving: int, joints: Sequence[Joint], coordinate: Holder | None, size: float,
+        holds: Sequence[Holder] = (),
+    ):  # fmt: skip
         self.moving, self.joints, self.coordinate, self.size = moving, tuple(joints), coordinate, size
+        self.holds = tuple(holds)
         self.columns = 3 * moving
         self.first_row: list[int] = []
+        self.row_joint: list[int] = []
+        self._kept: list[bool] = []
+        gives: list[tuple[int, int, Give]] = []
         angular: list[bool] = []
-        for joint in self.joints:
-            self.first_row.append(len(angular))
-            angular.extend(joint.angular)
+        for k, joint in enumerate(self.joints):
+            self.first_row.append(len(self._kept))
+            laws = joint.gives if hasattr(joint, "gives") else (None,) * len(joint.angular)
+            for i, (law, turns) in enumerate(zip(laws, joint.angular, strict=True)):
+                self._kept.append(law is None)
+                if law is None:
+                    angular.append(turns)
+                    self.row_joint.append(k)
+                else:
+                    gives.append((k, i, law))
+        self.gives = tuple(gives)
+        self._partly = {k for k, _, _ in gives}
         self.joint_rows = len(angular)
         self.rubs = tuple((k, rub) for k, joint in enumerate(self.joints) for rub in joint.rubs())
+        angular.extend(hold.kind == "angle" for hold in self.holds)
         if coordinate is not None:
             angular.append(coordinate.kind == "angle")
         self.rows = len(angular)
@@ -55,17 +82,53 @@ class Chain:
         self._gather: list[list[int]] | None = None
         self._elimination: Elimination | None = None
 
-    def equations(self, at: Poses, drive: Drive | None) -> tuple[list[Value], list[Value]]:
+    def equations(self, at: Poses, drive: Drive | None, held: Sequence[Drive] = ()) -> tuple[list[Value], list[Value]]:
         """Gaps, one a row, zero when it holds [m] or [rad]; and the entries of the Jacobian, at ``places``."""
         gaps: list[Value] = []
         rows: list[Row] = []
-        for joint in self.joints:
-            gaps.extend(joint.gap(at))
-            rows.extend(joint.slope(at))
-        if drive is not None:
-            gaps.append(drive.gap(at))
-            rows.append(drive.slope(at))
+        for k, joint in enumerate(self.joints):
+            if k in self._partly:
+                kept = self._kept[self.first_row[k] : self.first_row[k] + len(joint.angular)]
+                gaps.extend(gap for gap, keep in zip(joint.gap(at), kept, strict=True) if keep)
+                rows.extend(row for row, keep in zip(joint.slope(at), kept, strict=True) if keep)
+            else:
+                gaps.extend(joint.gap(at))
+                rows.extend(joint.slope(at))
+        for one in held if drive is None else (*held, drive):
+            gaps.append(one.gap(at))
+            rows.append(one.slope(at))
         return gaps, self._entries(rows)
+
+    def given(self, at: Poses, floor: float = 0.0) -> tuple[list[Value], list[Push]]:
+        """Multipliers of the rows that give, and what they do to the members.
+
+        floor  [N] what is no larger is nothing
+        """
+        multipliers: list[Value] = []
+        pushes: list[Push] = []
+        for k, i, law in self.gives:
+            joint = self.joints[k]
+            m = law.force(joint.gap(at)[i])
+            if floor:
+                m = np.where(np.abs(m) <= floor, 0.0, m)
+            multipliers.append(m)
+            for member, which, value in joint.slope(at)[i]:
+                parts: list[Value] = [0.0, 0.0, 0.0]
+                parts[which] = m * value
+                pushes.append((member, *parts))  # type: ignore[arg-type]
+        return multipliers, pushes
+
+    @cached_property
+    def floor(self) -> float:
+        """[N] what forces of rows that give are known to: rounding of the places times their stiffness."""
+        return max((_ROUNDING * float(np.max(law.stiffness)) * self.size for _, _, law in self.gives), default=0.0)
+
+    def whole(self, solved: Sequence[Value], given: Sequence[Value]) -> list[Value]:
+        """Multipliers of all rows of the joints, those that give among them; then those of holds and drive."""
+        if not self.gives:
+            return list(solved)
+        left, extra = iter(solved), iter(given)
+        return [next(left) if kept else next(extra) for kept in self._kept] + list(left)
 
     def _entries(self, rows: Sequence[Row]) -> list[Value]:
         flat = [value for row in rows for member, _, value in row if member]

@@ -11,18 +11,20 @@ from itertools import pairwise
 
 import numpy as np
 
-from linkcalc.mechanics.balance import Balance, balance, failed
+from linkcalc.mechanics.balance import balance, failed
+from linkcalc.mechanics.loose_copies import each_loose_pose
+from linkcalc.mechanics.loose_path import LoosePath
 from linkcalc.mechanics.motion import Closed, along, between, close
 from linkcalc.mechanics.path import Path
-from linkcalc.mechanics.pipeline import Solved
 from linkcalc.mechanics.prepare import Ready
+from linkcalc.mechanics.solved import Solved, joined
 from linkcalc.mechanics.state import Status
-from linkcalc.parts.pose import Array, Mask, Poses, Value
+from linkcalc.parts.pose import Array, Mask, Value
 
 
 def solve_copies(ready: Ready, path: Path, drive: Array) -> Solved:
     """All copies at some values of the drive (values), in the order of the stroke; arrays (case, variant, pose)."""
-    return _joined(list(each_pose(ready, path, drive, checked=True)))
+    return joined(list(each_pose(ready, path, drive, checked=True)))
 
 
 def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Iterator[Solved]:
@@ -30,6 +32,9 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
 
     checked  put the forces back into the equations (see ``balance``)
     """
+    if isinstance(path, LoosePath):
+        yield from each_loose_pose(ready, path, drive, checked=checked)
+        return
     coordinate = ready.chain.coordinate
     assert coordinate is not None
     here, before, span = ready.start, ready.start, 0.0
@@ -84,36 +89,3 @@ def _kept(path: Path, there: Closed, branch: Mask, live: Mask) -> Mask:
         return live
     same: Mask = there.factored.negative == branch
     return same
-
-
-def _joined(poses: list[Solved]) -> Solved:
-    """One batch out of single poses."""
-    closed, first = poses[0].closed, poses[0].balance
-
-    def join(pick) -> Value:  # type: ignore[no-untyped-def]
-        values = [pick(p) for p in poses]
-        if all(isinstance(v, float) and v == values[0] for v in values):
-            return float(values[0])
-        shape = np.broadcast_shapes((1, 1, 1), *(np.shape(v) for v in values))
-        return np.concatenate([np.broadcast_to(v, shape) for v in values], axis=2)
-
-    members = range(len(closed.at.x))
-    x, y, c, s = ([join(lambda p, m=m, n=n: getattr(p.closed.at, n)[m]) for m in members] for n in ("x", "y", "c", "s"))
-    at = Poses(x, y, c, s, closed.at.down, closed.at.field)
-    speed = [join(lambda p, k=k: p.closed.speed[k]) for k in range(len(closed.speed))]
-    fine = np.concatenate([p.closed.fine for p in poses], axis=2)
-    whole = Closed(at, [], fine, max(p.closed.worst for p in poses), closed.factored, speed)
-    told = Balance(
-        effort=join(lambda p: p.balance.effort),
-        load=join(lambda p: p.balance.load),
-        tare=join(lambda p: p.balance.tare),
-        effort_speed=join(lambda p: p.balance.effort_speed),
-        load_speed=join(lambda p: p.balance.load_speed),
-        multipliers=[join(lambda p, k=k: p.balance.multipliers[k]) for k in range(len(first.multipliers))],
-        unbalance=np.asarray(join(lambda p: p.balance.unbalance)),
-        disagreement=np.asarray(join(lambda p: p.balance.disagreement)),
-        status=np.concatenate([p.balance.status for p in poses], axis=2),
-        frictionless=join(lambda p: p.balance.frictionless),
-        friction=[join(lambda p, k=k: p.balance.friction[k]) for k in range(len(first.friction))],
-    )
-    return Solved(np.concatenate([p.drive for p in poses], axis=2), whole, told)

@@ -204,24 +204,27 @@ class Factored:
 
     def _mended(self, x: list[Value], rhs: Sequence[Value], transposed: bool) -> list[Value]:
         shape = np.broadcast_shapes(self._shape, *(np.shape(b) for b in rhs))
-        where: Any = (slice(None), *self._where[1:])
-        picked = [np.broadcast_to(b, shape)[where] for b in rhs]  # each (case, picked)
-        b = np.moveaxis(np.stack(picked), 2, 0)  # (picked, size, case)
+        # poses that are the same in all cases are solved for all at once; free members make each case its own poses
+        alike = self._shape[0] == 1
+        where: Any = (slice(None), *self._where[1:]) if alike else self._where
+        picked = [np.broadcast_to(b, shape)[where] for b in rhs]  # each (case, picked), or (picked)
+        b = np.moveaxis(np.stack(picked), 2, 0) if alike else np.stack(picked, axis=1)[:, :, None]
         a = np.swapaxes(self._matrices, 1, 2) if transposed else self._matrices
         row = self._owner.column_size if transposed else self._owner.row_size
         column = self._owner.row_size if transposed else self._owner.column_size
         if transposed:
             row, column = 1.0 / row, 1.0 / column
-        solved = _solve_each(a * row[:, None] / column, b * row[:, None]) / column[:, None]
+        solved = solve_each(a * row[:, None] / column, b * row[:, None]) / column[:, None]
         out: list[Value] = []
         for k in range(len(x)):
             full = np.array(np.broadcast_to(x[k], shape))
-            full[where] = solved[:, k, :].T
+            full[where] = solved[:, k, :].T if alike else solved[:, k, 0]
             out.append(full)
         return out
 
 
-def _solve_each(a: Array, b: Array) -> Array:
+def solve_each(a: Array, b: Array) -> Array:
+    """x of a x = b for many small matrices, (n, size, size) and (n, size, k); NaN where one is singular."""
     try:
         return np.asarray(np.linalg.solve(a, b), np.float64)
     except np.linalg.LinAlgError:

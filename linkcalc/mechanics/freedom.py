@@ -77,12 +77,7 @@ def _names(chain: Chain, amount: Sequence[float] | Array) -> tuple[str, ...]:
     if not len(amount):
         return ()
     top = float(np.max(amount))
-    ends = [*chain.first_row[1:], chain.joint_rows]
-    found = [
-        joint.name
-        for joint, first, end in zip(chain.joints, chain.first_row, ends, strict=True)
-        if end > first and np.max(amount[first:end]) > _TAKES_PART * top
-    ]
+    found = [chain.joints[k].name for k, a in zip(chain.row_joint, amount, strict=True) if a > _TAKES_PART * top]
     return tuple(dict.fromkeys(found))
 
 

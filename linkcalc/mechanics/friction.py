@@ -46,13 +46,14 @@ class Rubbed:
 
 def rub(
     chain: Chain, closed: Closed, sense: Value, unit: Column, unit_speed: Value,
-    unknown: Value, negative: Sequence[Value],
+    unknown: Value, negative: Sequence[Value], given: Sequence[Value],
 ) -> Rubbed:  # fmt: skip
     """Add friction to a frictionless answer.
 
     sense       which way the drive moves, +1 or -1: float or (case, 1, 1)
     unit        what the unknown does to the coordinates for a strength of 1; unit_speed its speed along itself
     unknown, negative  the frictionless answer
+    given       negative multipliers of the rows that give, which their gaps tell
     """
     columns, responses, weights = [], [], []
     for _, one in chain.rubs:
@@ -64,7 +65,9 @@ def rub(
         columns.append(push)
         responses.append((closed.factored.solve(whole, transposed=True), answer))
         weights.append(-one.factor * np.sign(sense * speed))
-    amounts, jammed = _amounts(chain, negative, [r for r, _ in responses], weights)
+    still = [0.0] * len(given)
+    whole_rows = chain.whole(negative, given)
+    amounts, jammed = _amounts(chain, whole_rows, [chain.whole(r, still) for r, _ in responses], weights)
     told, rows = unknown, list(negative)
     for amount, (response, answer) in zip(amounts, responses, strict=True):
         told = told + amount * answer

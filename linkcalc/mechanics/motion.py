@@ -18,7 +18,7 @@ from linkcalc.mechanics.batch import SHORT
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.eliminate import Factors
 from linkcalc.parts.contract import Drive
-from linkcalc.parts.pose import Array, Mask, Poses, Value
+from linkcalc.parts.pose import Array, Codes, Mask, Poses, Value
 
 CLOSED = 1e-12  # largest gap of a closed pose, over the size of the mechanism
 _AIM = 2e-15  # no use in iterating below this
@@ -45,6 +45,7 @@ class Closed:
     worst     largest gap of those, over the size of the mechanism
     factored  factors of the Jacobian there
     speed     dq/d(drive): x, y, turn of each member, in the order of the columns; empty without a drive
+    steady    (case, variant, pose) of free members: +1 stable, 0 neutral, -1 unstable; None: there are none
     """
 
     at: Poses
@@ -53,6 +54,7 @@ class Closed:
     worst: float
     factored: Factors
     speed: list[Value]
+    steady: Codes | None = None
 
 
 def close(
@@ -64,6 +66,7 @@ def close(
     sure: int = 0,
     within: float = CLOSED,
     live: Mask | None = None,
+    held: Sequence[Drive] = (),
 ) -> Closed:
     """Newton from a guess. Entries that do not arrive are told by ``fine``. Raises NoPlan where all are singular.
 
@@ -71,15 +74,16 @@ def close(
     sure   that many are made without asking whether they are needed
     within the largest gap of a closed pose, over the size of the mechanism
     live   (1, variant, pose) only these are waited for
+    held   rows of the chain's holds
     """
     at, last, worst = guess, math.inf, math.inf
     lone = isinstance(guess.c[-1], float)
     for k in range(steps + 1):
-        gaps, entries = chain.equations(at, drive)
+        gaps, entries = chain.equations(at, drive, held)
         if k >= sure:
             worst = chain.worst(gaps, live)
             # rounding sets the floor: stop where a further step gains nothing
-            if worst <= max(_AIM, within * _SPARE) or drive is None or k == steps:
+            if worst <= max(_AIM, within * _SPARE) or not (drive or held) or k == steps:
                 break
             if worst <= within / 10 and worst > 0.1 * last:
                 break

@@ -2,27 +2,18 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-
 import numpy as np
 
-from linkcalc.mechanics.balance import Balance, balance, failed
+from linkcalc.mechanics.balance import balance, failed
+from linkcalc.mechanics.loose_path import LooseMesh, lay_loose_path, loose_range, solve_loose
 from linkcalc.mechanics.mesh import Mesh
-from linkcalc.mechanics.motion import Closed, close
-from linkcalc.mechanics.path import Path, lay_path
+from linkcalc.mechanics.motion import close
+from linkcalc.mechanics.path import Path, lay_path, motion_range
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.reactions import Side, reactions
+from linkcalc.mechanics.solved import Solved
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array
-
-
-@dataclass(frozen=True, eq=False)
-class Solved:
-    """Closed poses with their statics; batch (case, variant, pose)."""
-
-    drive: Array  # (1, variant, pose) [rad or m]
-    closed: Closed
-    balance: Balance
 
 
 def solve_at(ready: Ready, mesh: Mesh, drive: Array, *, checked: bool = True) -> Solved:
@@ -30,6 +21,8 @@ def solve_at(ready: Ready, mesh: Mesh, drive: Array, *, checked: bool = True) ->
 
     checked  put the forces back into the equations (see ``balance``)
     """
+    if isinstance(mesh, LooseMesh):
+        return solve_loose(ready, mesh, drive, checked=checked)
     coordinate = ready.chain.coordinate
     assert coordinate is not None
     target = drive.reshape(1, 1, -1)
@@ -37,15 +30,34 @@ def solve_at(ready: Ready, mesh: Mesh, drive: Array, *, checked: bool = True) ->
     return Solved(target, closed, balance(ready.chain, closed, ready.pushing, checked=checked))
 
 
+def path_of(ready: Ready) -> Path:
+    """The way of one mechanism through its stroke. Raises Faults where it is out of reach."""
+    return lay_path(ready) if ready.loose is None else lay_loose_path(ready)
+
+
+def mesh_of(ready: Ready, solved: Solved) -> Mesh:
+    """A mesh of the poses of a solved batch of one mechanism."""
+    drive = solved.drive[0, 0]
+    if ready.loose is None:
+        return Mesh(drive, [solved.closed])
+    unknown = solved.balance.load if ready.pushing.load_asked else solved.balance.effort
+    return LooseMesh(drive, [solved.closed], np.broadcast_to(unknown, solved.balance.status.shape)[:, 0])
+
+
 def solve_stroke(ready: Ready, poses: int) -> tuple[Solved, Path]:
     """One mechanism over its whole stroke. Raises Faults where the stroke is out of reach."""
-    path = lay_path(ready)
+    path = path_of(ready)
     return solve_at(ready, path.mesh, path.poses(poses)), path
+
+
+def reach(ready: Ready) -> tuple[float, float, float]:
+    """Lower limit, drawn value and upper limit of the drive [rad or m]; nan for a limit that is not there."""
+    return motion_range(ready) if ready.loose is None else loose_range(ready)
 
 
 def solve_drawn(ready: Ready) -> Solved:
     """Statics in the drawing pose, of one mechanism or of many copies."""
-    nothing = np.full(ready.start.fine.shape, np.nan)
+    nothing = np.full((1, *ready.start.fine.shape[1:]), np.nan)
     solved = balance(ready.chain, ready.start, ready.pushing)
     if ready.undrawn is not None:
         solved = failed(solved, ready.undrawn, Status.NOT_DRAWN)

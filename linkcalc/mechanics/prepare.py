@@ -11,9 +11,11 @@ from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.eliminate import SMALL
 from linkcalc.mechanics.freedom import Freedom, freedom, motion_of
 from linkcalc.mechanics.limit import Place
-from linkcalc.mechanics.motion import Closed, alone, close
+from linkcalc.mechanics.loose import Loose
+from linkcalc.mechanics.motion import Closed, alone, close, single
 from linkcalc.mechanics.plan import NoPlan
-from linkcalc.mechanics.pushing import Pushing, pushing
+from linkcalc.mechanics.pushing import Pushing, column, pushing
+from linkcalc.mechanics.settle import acted_on, come_to_rest
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
 from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.pose import Mask, Poses, Value
@@ -24,6 +26,8 @@ class Ready:
     """A mechanism ready to be solved.
 
     chain     joints, with the coordinate that is stepped, or one that is held where there is no stroke
+    loose     of a mechanism with more freedoms than the drive takes; None: there are none
+    unknown   what effort or load is in the start of such a mechanism
     start     the drawing pose, closed; (1, variant, 1), or plain floats where a stroke is walked through from it
     pushing   loads of all cases
     steps     True if there is a stroke
@@ -36,6 +40,8 @@ class Ready:
     pushing: Pushing
     steps: bool
     undrawn: Mask | None = None
+    loose: Loose | None = None
+    unknown: Value = 0.0
 
 
 def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
@@ -55,6 +61,15 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     counted = chain.columns - chain.joint_rows
     asked = loads.effort_asked or loads.load_asked
     wanted = 1 if coordinate is not None or asked else 0
+    if mechanism.stroke and not asked:
+        # that effort and load both have a size is a fault of the model, found before it comes here
+        what = "nothing drives it: the model has no effort"
+        raise Faults(Fault(("stroke",), what, "give it an [effort] without a size"))
+    giving = len(chain.gives)
+    if counted > wanted and (mechanism.free or counted - giving <= wanted):
+        ready = _settled(drawing, chain, at, loads, wanted, like)
+        if ready is not None:
+            return ready
     if counted != wanted:
         raise Faults(_misfit(drawing, freedom(chain, at), wanted))
     if coordinate is None and wanted:
@@ -78,11 +93,42 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
         raise Faults(_misfit(drawing, found, wanted)) from None
     if not bool(np.any(start.fine)):
         raise Faults(Fault(("points",), "the drawing pose does not close", "check the points that slots guide"))
-    if mechanism.stroke and not asked:
-        # that effort and load both have a size is a fault of the model, found before it comes here
-        what = "nothing drives it: the model has no effort"
-        raise Faults(Fault(("stroke",), what, "give it an [effort] without a size"))
     return Ready(drawing, chain, start, loads, mechanism.stroke is not None, _undrawn(drawing))
+
+
+def _settled(
+    drawing: Drawing, chain: Chain, at: Poses, loads: Pushing, wanted: int, like: Ready | None
+) -> Ready | None:  # fmt: skip
+    """A mechanism with more freedoms than the drive takes, where they settle; None where nothing makes them."""
+    coordinate = chain.coordinate
+    if coordinate is None and wanted:
+        coordinate = _held(chain, at, loads)
+    loose = Loose(chain.moving, chain.joints, coordinate, chain.size)
+    if like is not None and like.loose is not None:
+        loose.share_plans(like.loose)
+    target = None if coordinate is None else coordinate.value(at)
+    try:
+        rest = come_to_rest(loose, at, target, loads, 0.0)
+    except NoPlan:
+        return None
+    if rest is None:
+        return None
+    found, places = rest
+    fine = found.closed.fine
+    if not fine.any() or not acted_on(loose, places, found, loads)[fine].all():
+        return None
+    return Ready(
+        drawing, loose.chain(places), found.closed, loads, drawing.mechanism.stroke is not None, _undrawn(drawing),
+        loose, found.unknown,
+    )  # fmt: skip
+
+
+def _held(chain: Chain, at: Poses, loads: Pushing) -> Place:
+    """Without a stroke the drawing pose is held by the coordinate that what is asked for pushes most."""
+    asked = loads.load if loads.load_asked else loads.effort
+    push = single(column(asked, at, chain.columns, unit=True)) / chain.column_size
+    k = int(np.argmax(np.abs(push)))
+    return Place(k // 3 + 1, k % 3)
 
 
 def _forward(drawing: Drawing) -> float:
@@ -143,6 +189,10 @@ def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
         what = f"{_number(found.free)}{takes}: {', '.join(movers)} can move"
         much = f"hold them by {spare} more: a slot holds 1, a pin or slide 2, a weld 3"
         cure = f"give the model an [effort], or {much}" if not wanted and spare == 1 else much
+        if drawing.mechanism.free:
+            what += ", and nothing that acts on them lets them settle"
+        else:
+            cure += "; or name in 'free' what settles where it balances"
         faults.append(Fault(("members", movers[0] if movers else "ground"), what, cure))
     if found.excess:
         what = f"held {found.excess} time{'s' if found.excess > 1 else ''} more than needed, among joints {joints}"

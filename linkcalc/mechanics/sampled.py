@@ -161,8 +161,8 @@ class Roots:
         slope = power[1:] * _POWERS
         t_low, t_high = (low - first) / _HALF - 1, (high - first) / _HALF - 1
         y_low, y_high = samples.values[curve, low], samples.values[curve, high]
-        t = t_low + (t_high - t_low) * y_low / (y_low - y_high)
         with np.errstate(all="ignore"):
+            t = t_low + (t_high - t_low) * y_low / (y_low - y_high)
             for _ in range(3):
                 step = horner(t, power) / horner(t, slope)
                 t = np.minimum(np.maximum(t - step, t_low), t_high)

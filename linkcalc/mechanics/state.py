@@ -16,6 +16,7 @@ class Status(IntEnum):
     SINGULAR = 5
     JAMMED = 6
     NO_FORCE = 7
+    UNSETTLED = 8
 
     @property
     def text(self) -> str:
@@ -30,5 +31,6 @@ _TEXTS = {
     Status.DEAD_POINT: "dead point: no finite effort or load answers here",
     Status.JAMMED: "jams: friction grows as fast as the effort, however large",
     Status.SINGULAR: "the joints do not hold the members in this pose",
+    Status.UNSETTLED: "the free members find no balance there",
     Status.NO_FORCE: "a load has no force there: it is outside the range that it is told for",
 }

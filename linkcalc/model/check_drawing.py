@@ -79,8 +79,9 @@ def _joints(drawing: Drawing, gather: Gather) -> None:
     at = drawn_poses(drawing)
     items = {item[-1]: item for item, _ in walk.joints(drawing.mechanism)}
     for joint in drawing.joints:
-        for gap, angular in zip(joint.gap(at), joint.angular, strict=True):
-            if not angular and abs(float(gap)) > _CLOSED * drawing.size:
+        gives = joint.gives if hasattr(joint, "gives") else [None] * len(joint.angular)
+        for gap, angular, law in zip(joint.gap(at), joint.angular, gives, strict=True):
+            if law is None and not angular and abs(float(gap)) > _CLOSED * drawing.size:
                 off = show(abs(float(gap)), "length", drawing.mechanism.units)
                 wanted = "draw its point on its line"
                 gather.add(items[joint.name], f"it does not hold as drawn, by {off}", wanted)

@@ -9,6 +9,7 @@ from typing import Any
 from linkcalc.model import walk
 from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import GROUND, Mechanism
+from linkcalc.parts.joints.contact import Contact
 from linkcalc.parts.joints.rope import HAULING, Pulley, Rope
 from linkcalc.parts.joints.slide import Slide
 from linkcalc.parts.joints.slot import Slot
@@ -94,7 +95,7 @@ def _check(joint: Any, item: Item, carried: Carried, gather: Gather) -> None:
 
 
 @_check.register
-def _slot(joint: Slot | Track, item: Item, carried: Carried, gather: Gather) -> None:
+def _slot(joint: Slot | Track | Contact, item: Item, carried: Carried, gather: Gather) -> None:
     carriers = carried.by(joint.point)
     if not carriers:
         gather.add((*item, "point"), f"no member carries {joint.point}", f"name {joint.point} in a member")

@@ -76,6 +76,7 @@ class Member:
     points  the points it carries, in order; its own x axis runs from the first to the last
     path    the line of its body through points, for drawing and inner forces; else the points in order
     mass    own mass; None is weightless
+    stiffness  force over stretch along the line of its two pins; None: it does not stretch
     centre  point of its centre of mass; else the middle of the path (mass spread evenly along it)
     """
 
@@ -83,6 +84,9 @@ class Member:
     path: tuple[str, ...] = fields.names("point", "the line of its body", (), least=2, most=None)
     mass: Size | None = fields.size("mass", "own mass", None, sign="not minus")
     centre: str | None = fields.name("point", "point at its centre of mass; else the middle of the path", None)
+    stiffness: Size | None = fields.size(
+        "stiffness", "force over stretch along the line of its two pins", None, sign="plus"
+    )
 
     short = "points"
 
@@ -114,6 +118,7 @@ class Pin:
     friction_radius: Size | None = fields.size(
         "length", "radius of its friction circle, instead of coefficient and diameter", None, sign="not minus"
     )
+    stiffness: Size | None = fields.size("stiffness", "of pin and bush, alike in all directions", None, sign="plus")
 
 
 @dataclass(frozen=True)
@@ -168,6 +173,7 @@ class Mechanism:
 
     points    name -> construction (Coordinates, Polar, Meets, OnLine, Mirror, Crossing)
     members   name -> Member; "ground" is the one that does not move
+    free      members that nothing drives or holds: they settle where they balance
     joints    word of the kind -> name -> part: {"slot": {...}, "slide": {...}, "weld": {...}}
     friction  of all joints that say nothing of their own
     pins      point -> Pin: what single pins have of their own
@@ -188,6 +194,7 @@ class Mechanism:
     dimensions: Mapping[str, Dimension] = _entry("named tables", "named sizes", dict, of=Dimension)
     points: Mapping[str, Any] = _entry("named parts", "where things are drawn", dict, family="construction")
     members: Mapping[str, Member] = _entry("named tables", "rigid parts", dict, of=Member)
+    free: tuple[str, ...] = fields.names("member", "members that settle where they balance", (), least=0, most=None)
     joints: Mapping[str, Mapping[str, Any]] = _entry("joints", "joints other than pins", dict)
     friction: Friction = _entry("table", "friction of all joints", Friction(), of=Friction)
     pins: Mapping[str, Pin] = _entry("named tables", "what single pins have of their own", dict, of=Pin)

@@ -3,15 +3,15 @@
 from __future__ import annotations
 
 from collections.abc import Iterator, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, field, replace
 from typing import TYPE_CHECKING, cast
 
 import numpy as np
 
-from linkcalc.faults import Fault, Faults
-from linkcalc.model.mechanism import GROUND, Case, Mechanism
-from linkcalc.parts.contract import Joint, Pusher, Value
-from linkcalc.parts.joints.pin import PinJoint
+from linkcalc.faults import Fault, Faults, fault
+from linkcalc.model.mechanism import GROUND, Case, Mechanism, Pin
+from linkcalc.parts.contract import Joint, Pusher, Site, Value
+from linkcalc.parts.joints.pin import PinJoint, StretchJoint
 from linkcalc.parts.lines import exact
 from linkcalc.parts.loads.weight import WeightPush
 
@@ -29,11 +29,13 @@ class PinGroup:
     point   name of the pin
     hub     the member that stands for the pin: the ground if it carries the point, else the first that names it
     others  the members pinned to it; of members welded together here only one is named
+    links   other -> the member that stretches at its joint with the hub
     """
 
     point: str
     hub: str
     others: tuple[str, ...]
+    links: Mapping[str, str] = field(default_factory=dict)
 
     @property
     def members(self) -> tuple[str, ...]:
@@ -42,9 +44,26 @@ class PinGroup:
     def joints(self, drawing: Drawing) -> Iterator[Joint]:
         """One joint for each of the others against the hub; its force is the one on the other."""
         hub, radius = drawing.site(self.point, self.hub), drawing.friction_radius(self.point)
+        own = drawing.mechanism.pins.get(self.point, Pin()).stiffness
+        stiffness = None if own is None else drawing.value(own, "stiffness")
         for other in self.others:
             site = drawing.site(self.point, other)
-            yield cast("Joint", PinJoint(self.point, site, hub, friction_radius=radius))
+            if other in self.links:
+                yield cast("Joint", self._stretching(drawing, site, hub, radius, self.links[other]))
+            else:
+                yield cast("Joint", PinJoint(self.point, site, hub, friction_radius=radius, stiffness=stiffness))
+
+    def _stretching(self, drawing: Drawing, a: Site, b: Site, radius: Value, link: str) -> StretchJoint:
+        member = drawing.mechanism.members[link]
+        far = next(p for p in member.points if p in drawing.pins and p != self.point)
+        (x0, y0), (x1, y1) = drawing.point(far), drawing.point(self.point)
+        length = np.hypot(x1 - x0, y1 - y0)
+        tx, ty = exact((x1 - x0) / length), exact((y1 - y0) / length)
+        assert member.stiffness is not None
+        stiffness = drawing.value(member.stiffness, "stiffness")
+        return StretchJoint(
+            self.point, a, b, friction_radius=radius, stiffness=stiffness, link=drawing.member(link), tx=tx, ty=ty
+        )
 
 
 @dataclass(frozen=True)
@@ -79,9 +98,62 @@ def pin_groups(mechanism: Mechanism, carriers: Mapping[str, tuple[str, ...]]) ->
     for point in mechanism.points:
         pinned = _unwelded(mechanism, point, carriers.get(point, ()))
         if len(pinned) > 1:
-            hub = GROUND if GROUND in pinned else pinned[0]
+            # a link that stretches stands for no pin if another can: the pin is where the others have it
+            firm = [m for m in pinned if not _stretches(mechanism, m)] or pinned
+            hub = GROUND if GROUND in pinned else firm[0]
             groups[point] = PinGroup(point, hub, tuple(m for m in pinned if m != hub))
-    return groups
+    return _linked(mechanism, groups)
+
+
+def _stretches(mechanism: Mechanism, member: str) -> bool:
+    return mechanism.members[member].stiffness is not None
+
+
+def _linked(mechanism: Mechanism, groups: dict[str, PinGroup]) -> dict[str, PinGroup]:
+    """Choose for each link that stretches the end where it gives: a joint gives for one link only.
+
+    Raises Faults: none is left, or the link is not held by two pins.
+    """
+    taken: dict[tuple[str, str], str] = {}
+    for link, member in mechanism.members.items():
+        if member.stiffness is None:
+            continue
+        ends = [p for p in member.points if p in groups and link in groups[p].members]
+        if len(ends) != 2:
+            what = f"it stretches along the line of two pins, and has {len(ends)}"
+            raise fault(("members", link, "stiffness"), what, "a member that two pins hold is wanted")
+        if not _placed(link, groups, ends, taken, set()):
+            wanted = "name one of the members there that do not stretch before them, or leave one stiff"
+            raise fault(("members", link, "stiffness"), "too many links that stretch meet at its pins", wanted)
+    return {
+        point: replace(group, links={other: link for (p, other), link in taken.items() if p == point})
+        for point, group in groups.items()
+    }
+
+
+def _placed(
+    link: str, groups: Mapping[str, PinGroup], ends: list[str], taken: dict[tuple[str, str], str], seen: set[str]
+) -> bool:  # fmt: skip
+    """Give a link a joint of its own, others moving to their other end if they must."""
+    seen.add(link)
+    for point in ends:
+        group = groups[point]
+        if group.hub == link and len(group.others) > 1:
+            continue  # several are joined to it there: none of those joints alone is its end
+        place = (point, group.others[0] if group.hub == link else link)
+        if place not in taken:
+            taken[place] = link
+            return True
+    for point in ends:
+        place = (point, groups[point].others[0] if groups[point].hub == link else link)
+        other = taken.get(place)
+        if other is None or other in seen:
+            continue
+        rest = [p for p in groups if other in groups[p].members and p != point]
+        if _placed(other, groups, rest, taken, seen):
+            taken[place] = link
+            return True
+    return False
 
 
 def _unwelded(mechanism: Mechanism, point: str, members: tuple[str, ...]) -> list[str]:

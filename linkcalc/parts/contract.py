@@ -17,8 +17,8 @@ from typing import Protocol
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
-    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Hauled", "Joint", "Limit", "Mark", "Poses", "Push",
-    "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Told", "Travelled", "Value", "X", "Y",
+    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Poses",
+    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Told", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -133,8 +133,26 @@ class Rub:
     push: Callable[[Poses], tuple[Push, ...]]
 
 
+class Give(Protocol):
+    """A law between the gap of a joint's row and its multiplier: what an elastic link, pin or contact does.
+
+    stiffness  [N/m] or [N m/rad]
+    one_sided  True if it pushes one way only and lets go the other way
+    """
+
+    @property
+    def stiffness(self) -> Value: ...
+    @property
+    def one_sided(self) -> bool: ...
+
+    def force(self, gap: Value) -> Value:
+        """[N] or [N m] the row's multiplier at a gap [m] or [rad], elementwise"""
+
+
 class Joint(Protocol):
     """Something that holds members together: rows of constraint equations.
+
+    One that gives has, besides, ``gives``: for each row a Give, or None where it holds without giving.
 
     One that acts at several places has, besides, ``contacts(at)``: a Contact for each of them. It has one row, whose
     multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).

@@ -68,7 +68,7 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
             {
                 "member": member,
                 **{
-                    key: _array(edge, getattr(answer, key)[i], what, ["one", "variant", "pose"])
+                    key: _array(edge, getattr(answer, key)[i], what, _placed_axes(answer))
                     for key, what in (("x", "length"), ("y", "length"), ("turn", "angle"))
                 },
             }
@@ -90,6 +90,13 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
             for v in answer.verdicts
         ],
         "holds": answer.holds,
+        "balances": [
+            {
+                "case": r.case or None, "balance": r.text,
+                "turns": [{"member": m, **_one(edge, turn, "angle")} for m, turn in r.turns.items()],
+            }
+            for r in answer.rests
+        ],
         "warnings": [{"item": c.item, "text": c.text} for c in answer.caveats],
         "cautions": [{"item": c.item, "text": c.text} for c in answer.cautions],
         "checks": {
@@ -103,6 +110,11 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
             "meaning": {str(int(s)): s.text for s in Status},
         },
     }  # fmt: skip
+
+
+def _placed_axes(answer: StrokeAnswer) -> list[str]:
+    """Free members stand elsewhere in each case; all others in the same place in all."""
+    return _BATCH if answer.loose else ["one", "variant", "pose"]
 
 
 def _quantities(answer: StrokeAnswer, edge: Edge) -> Tree:

@@ -58,7 +58,8 @@ class Scene:
     def at(self, pose: int, case: int = 0) -> Poses:
         """All members in one pose, as plain numbers; gravity as in that case."""
         a, loads = self.answer, self._cases[case]
-        x, y, turn = (q[:, 0, 0, pose] for q in (a.x, a.y, a.turn))
+        placed = min(case, a.turn.shape[1] - 1)  # only free members stand elsewhere in other cases
+        x, y, turn = (q[:, placed, 0, pose] for q in (a.x, a.y, a.turn))
         down = (_number(loads.down[0]), _number(loads.down[1]))
         c, s = [float(v) for v in np.cos(turn)], [float(v) for v in np.sin(turn)]
         return Poses([float(v) for v in x], [float(v) for v in y], c, s, down, _number(loads.field))

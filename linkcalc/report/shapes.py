@@ -247,6 +247,24 @@ def _weight(pen: Pen, item: Item) -> None:
     pen.ax.plot(*spot, "o", ms=style.PIN, mfc=style.tone("weight"), mec=style.PAPER, mew=0.5, zorder=5.5)
 
 
+def _contact(pen: Pen, item: Item) -> None:
+    """A small open square round the point that comes against the face."""
+    (spot,) = item.spots
+    pen.ax.plot(*spot, "s", ms=style.PIN * 0.8, mfc=style.PAPER, mec=style.INK, mew=style.OUTLINE, zorder=5.5)
+    pen.keep_clear(item.spots, style.PIN)
+    if item.name:
+        pen.words(item.name, spot, style.BAR, pen.away(spot), fontsize=style.SMALL)
+
+
+def _face(pen: Pen, item: Item) -> None:
+    """The face of a workpiece or stop, hatched on its solid side, to the right of the line."""
+    (ax, ay), (bx, by) = item.spots
+    length = float(np.hypot(bx - ax, by - ay)) or 1.0
+    pen.line(item.spots, style.OUTLINE * 1.5, style.INK, zorder=2.6)
+    _hatch(pen, (ax, ay), (bx, by), ((by - ay) / length, -(bx - ax) / length))
+    pen.keep_clear(item.spots, weight=0.5)
+
+
 SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "bar": _bar,
     "stem": _stem,
@@ -269,6 +287,8 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "line of rope": _line_of_rope,
     "track": _slot,
     "line of track": _line_of_track,
+    "contact": _contact,
+    "line of contact": _face,
     "haul": _told_by_arrow,
     **SPRING_SHAPES,
 }

@@ -10,6 +10,7 @@ from linkcalc.report.sections.joint_forces import joint_forces
 from linkcalc.report.sections.over_stroke import over_stroke
 from linkcalc.report.sections.pose_forces import pose_forces
 from linkcalc.report.sections.requirements import requirements
+from linkcalc.report.sections.rests import rests
 from linkcalc.report.sections.trust import trust
 
 
@@ -23,6 +24,7 @@ def stroke_blocks(answer: StrokeAnswer, *, all_joints: bool = False) -> list[Blo
         *head(answer),
         *over_stroke(answer, all_joints=all_joints and not single),
         *events(answer),
+        *rests(answer),
         *(pose_forces(answer, 0) if single else joint_forces(answer)),
         *requirements(answer),
         *trust(answer),

@@ -64,14 +64,16 @@ class Resum:
 
     def joint_place(self, joint: str, word: str) -> tuple[np.ndarray, np.ndarray]:
         if word == "pin":
-            return self.somewhere(joint)
+            # a link that stretches reaches for its pin; the others have it where they are drawn with it
+            firm = [m for m in self.carriers(joint) if self.mechanism.members[m].stiffness is None]
+            return self.place(joint, firm[0]) if firm else self.somewhere(joint)
         if word == "rope":  # a side of it is called by the place: "hoist at P"
             rope, _, point = joint.partition(" at ")
             step = next(s for s in self.mechanism.joints[word][rope].path if s.point == point)
             return self.place(point, step.on) if step.on else self.somewhere(point)
         part = self.mechanism.joints[word][joint]
         match word:
-            case "slot" | "track":
+            case "slot" | "track" | "contact":
                 return self.place(part.point, part.of or self.carriers(part.point)[0])
             case "slide":
                 return self.place(part.at or self.mechanism.members[part.member].points[0], part.member)

@@ -4,7 +4,8 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
-from linkcalc.parts.contract import TURN, Mark, Poses, Push, Row, Rub, Site, Value, X, Y
+from linkcalc.parts.contract import TURN, Give, Mark, Poses, Push, Row, Rub, Site, Value, X, Y
+from linkcalc.parts.gives import Elastic
 from linkcalc.parts.lines import rubless
 
 
@@ -13,6 +14,7 @@ class PinJoint:
     """The equations of a pin between two members; gap = place on the first less place on the second [m].
 
     friction_radius  [m] radius of the friction circle: pin radius times the sine of the angle of friction
+    stiffness        [N/m] of pin and bush, alike in all directions; None: they do not give
     """
 
     name: str
@@ -20,8 +22,14 @@ class PinJoint:
     b: Site
     on_pin: str = ""
     friction_radius: Value = 0.0
+    stiffness: Value | None = None
     angular = (False, False)
     word = "pin"
+
+    @property
+    def gives(self) -> tuple[Give | None, Give | None]:
+        law = None if self.stiffness is None else Elastic(self.stiffness)
+        return law, law
 
     @property
     def members(self) -> tuple[int, int]:
@@ -56,3 +64,50 @@ class PinJoint:
     def mark(self, at: Poses) -> Mark:
         x, y = at.spot(self.a)
         return Mark("pin", ((float(x), float(y)),), name=self.name)
+
+
+@dataclass(frozen=True, eq=False)
+class StretchJoint(PinJoint):
+    """A pin at the end of a link that stretches: along the link it gives as the link does, across it holds.
+
+    link   the elastic member, one of the two
+    tx, ty direction of the link in its own frame
+    """
+
+    link: int = 0
+    tx: Value = 1.0
+    ty: Value = 0.0
+
+    @property
+    def site(self) -> Site:
+        """The end that the link reaches for."""
+        return self.b if self.link == self.a.member else self.a
+
+    @property
+    def gives(self) -> tuple[Give | None, Give | None]:
+        assert self.stiffness is not None
+        return Elastic(self.stiffness), None
+
+    def _axes(self, at: Poses) -> tuple[tuple[Value, Value], tuple[Value, Value]]:
+        """Along the link and to the left of it."""
+        tx, ty = at.turned(self.link, self.tx, self.ty)
+        return (tx, ty), (-ty, tx)
+
+    def gap(self, at: Poses) -> tuple[Value, Value]:
+        dx, dy = PinJoint.gap(self, at)
+        along, across = (nx * dx + ny * dy for nx, ny in self._axes(at))
+        return along, across
+
+    def slope(self, at: Poses) -> tuple[Row, Row]:
+        a, b = self.a.member, self.b.member
+        (ua, va), (ub, vb) = at.arm(self.a), at.arm(self.b)
+        dx, dy = PinJoint.gap(self, at)
+        along, across = (
+            (
+                (a, X, nx), (a, Y, ny), (a, TURN, ua * ny - va * nx),
+                (b, X, -nx), (b, Y, -ny), (b, TURN, vb * nx - ub * ny),
+                (self.link, TURN, nx * dy - ny * dx),  # the direction turns with the link
+            )
+            for nx, ny in self._axes(at)
+        )  # fmt: skip
+        return along, across

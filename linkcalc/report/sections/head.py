@@ -24,7 +24,7 @@ def stroke_line(answer: StrokeAnswer) -> str:
     """ "Stroke: turn of handle from 150 to 120 deg, 61 poses." """
     drive = Edge(answer).out(answer.drive[0, 0], "drive")
     if not answer.drive_name:
-        return "Solved in the drawing pose only."
+        return "Nothing drives it: solved where it settles." if answer.loose else "Solved in the drawing pose only."
     unit = plain(Edge(answer).unit("drive"))
     poses = f"{drive.size} poses" if drive.size > 1 else "1 pose"
     real = drive[np.isfinite(drive)]

@@ -172,6 +172,8 @@ cord = { path = ["C", { pulley = "D", radius = 8, wrap = "right" }, "F"], end = 
 cam = { point = "B", arc = ["A", "B2", "F"], of = "arm" }
 [slides]
 ram = { member = "rod", along = 0 }
+[contacts]
+pad = { point = "C", along = 0, stiffness = 50, side = "left", of = "arm" }
 [welds]
 root = { members = ["stub", "ground"], at = "D" }
 [effort]

@@ -1,0 +1,114 @@
+"""All positions in which free members balance, of a mechanism that nothing drives: searched from many places at once.
+
+From each start the members come to rest where they would (stable balances), and Newton goes to the nearest balance of
+any kind. The starts are the same in every run. A search of many starts finds what a person would call all of them; it
+is no proof that there are no more.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.mechanics.plan import NoPlan
+from linkcalc.mechanics.prepare import Ready
+from linkcalc.mechanics.settle import Settled, come_to_rest, settle
+from linkcalc.parts.contract import TURN
+from linkcalc.parts.pose import Array, Poses
+
+_STARTS = 48
+_APART = 1e-6  # of a radian or the size: two balances are the same
+
+
+@dataclass(frozen=True)
+class BalancePlace:
+    """One balance of one case.
+
+    case    its number
+    turns   [rad] of each moving member from the drawing pose, within half a turn
+    x, y    [m] of each moving member's first point
+    steady  +1 stable, 0 neutral, -1 unstable
+    """
+
+    case: int
+    turns: tuple[float, ...]
+    x: tuple[float, ...]
+    y: tuple[float, ...]
+    steady: int
+
+
+def balance_places(ready: Ready) -> tuple[BalancePlace, ...]:
+    """All balances that were found, case by case, stable ones first."""
+    loose = ready.loose
+    assert loose is not None
+    places = loose.places(ready.start.at)
+    assert places is not None
+    found: list[BalancePlace] = []
+    for relax in (True, False):
+        try:
+            starts = _starts(ready, places)
+            if relax:
+                rest = come_to_rest(loose, starts, None, ready.pushing, 0.0)
+                assert rest is not None
+                settled = rest[0]
+            else:
+                settled = settle(loose, places, starts, None, ready.pushing, 0.0)
+        except NoPlan:
+            continue
+        for place in _told(settled):
+            if not any(p.case == place.case and _same(p, place, loose.bare.size) for p in found):
+                found.append(place)
+    return tuple(sorted(found, key=lambda p: (p.case, -p.steady, p.turns)))
+
+
+def _starts(ready: Ready, places: tuple[object, ...]) -> Poses:
+    """The settled pose, and others with the places shifted by up to half a turn or half the size: (1, 1, starts)."""
+    rng = np.random.default_rng(12)
+    chain, at = ready.chain, ready.start.at
+    way = np.zeros((chain.columns, _STARTS))
+    for k, place in enumerate(places):
+        reach = np.pi if place.which == TURN else chain.size / 2  # type: ignore[attr-defined]
+        speed = ready.start.factored.solve([1.0 if i == chain.joint_rows + k else 0.0 for i in range(chain.rows)])
+        shift = np.concatenate([[0.0], reach * rng.uniform(-1, 1, _STARTS - 1)])
+        for j, v in enumerate(speed):
+            value = float(np.ravel(v)[0])
+            way[j] += value * shift
+    start = _spread(at)
+    x = [start.x[0], *(start.x[m] + way[3 * m - 3] for m in range(1, len(start.x)))]
+    y = [start.y[0], *(start.y[m] + way[3 * m - 2] for m in range(1, len(start.y)))]
+    c, s = [start.c[0]], [start.s[0]]
+    for m in range(1, len(start.c)):
+        ct, st = np.cos(way[3 * m - 1]), np.sin(way[3 * m - 1])
+        c.append(start.c[m] * ct - start.s[m] * st)
+        s.append(start.s[m] * ct + start.c[m] * st)
+    return Poses(x, y, c, s, at.down, at.field)
+
+
+def _spread(at: Poses) -> Poses:
+    def first(values):  # type: ignore[no-untyped-def]
+        return [float(np.ravel(v)[0]) if k == 0 else np.full((1, 1, _STARTS), float(np.ravel(v)[0]))
+                for k, v in enumerate(values)]  # fmt: skip
+
+    return Poses(first(at.x), first(at.y), first(at.c), first(at.s), at.down, at.field)
+
+
+def _told(settled: Settled) -> Iterator[BalancePlace]:
+    closed = settled.closed
+    at, shape = closed.at, closed.fine.shape
+    members = range(1, len(at.x))
+    x, y, c, s = (np.array([np.broadcast_to(v[m], shape) for m in members]) for v in (at.x, at.y, at.c, at.s))
+    turn: Array = np.arctan2(s, c)
+    for case, _, pose in zip(*np.nonzero(closed.fine), strict=True):
+        where = (slice(None), case, 0, pose)
+        yield BalancePlace(
+            int(case), tuple(turn[where].tolist()), tuple(x[where].tolist()), tuple(y[where].tolist()),
+            int(settled.steady[case, 0, pose]),
+        )  # fmt: skip
+
+
+def _same(a: BalancePlace, b: BalancePlace, size: float) -> bool:
+    turns = max(abs((p - q + np.pi) % (2 * np.pi) - np.pi) for p, q in zip(a.turns, b.turns, strict=True))
+    ways = max(abs(p - q) for p, q in zip((*a.x, *a.y), (*b.x, *b.y), strict=True))
+    return turns <= _APART and ways <= _APART * size
