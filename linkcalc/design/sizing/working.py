@@ -19,6 +19,7 @@ from linkcalc.parts.contract import Value
 DIMS: Mapping[str, Dims] = MappingProxyType({
     **KINDS, "area": (2, 0, 0, 0), "section modulus": (3, 0, 0, 0), "second moment": (4, 0, 0, 0),
     "speed": (1, 0, -1, 0), "pressure speed": (0, 1, -3, 0), "rate": (0, 0, -1, 0),
+    "compliance": (1, -1, 2, 0), "time": (0, 0, 1, 0),
 })  # fmt: skip
 """Kind of a quantity -> exponents of length, mass, time, angle."""
 
@@ -154,6 +155,9 @@ class Sheet:
 
     def __contains__(self, symbol: object) -> bool:
         return symbol in self._names
+
+    def __getitem__(self, symbol: str) -> Value:
+        return self._names[symbol].value
 
     def given(self, symbol: str, value: Value, kind: str, text: str, source: str = "") -> None:
         """What goes in [SI]."""

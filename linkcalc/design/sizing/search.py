@@ -1,0 +1,76 @@
+"""The smallest size that passes, and the next size of a series."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Callable, Sequence
+
+import numpy as np
+
+from linkcalc.design.sizing.working import Choice, Working
+from linkcalc.faults import Faults, fault
+
+_LEAST, _MOST = 1e-5, 10.0  # [m] no machine part of this kind is smaller or larger
+_TRIES, _CLOSE, _FAR = 200, 1e-13, 100.0
+
+
+def smallest(check: Callable[[float], Working], least: float = _LEAST, most: float = _MOST) -> float:
+    """[m] the size at which a check comes out at a utilisation of 1; the utilisation must fall as the size grows.
+
+    least  where it passes already, it is the answer
+
+    Raises Faults: not even the largest passes.
+    """
+    low, high = math.log(least), math.log(most)
+    over, under = _excess(check, low), _excess(check, high)
+    if under > 0:
+        raise fault((), f"no size up to {most:g} m would do", "look at the load and at the factor")
+    if over <= 0:
+        return least
+    # the utilisation falls by a power of the size, so that in logarithms a chord hits it in a few steps; the middle
+    # is taken in turn, in case it does not
+    for k in range(_TRIES):
+        chord = (low * under - high * over) / (under - over)
+        at = chord if k % 3 and low < chord < high else (low + high) / 2
+        found = _excess(check, at)
+        if found > 0:
+            low, over = at, found
+        else:
+            high, under = at, found
+        if high - low < _CLOSE or under > -_CLOSE:
+            break
+    return math.exp(high)
+
+
+def _excess(check: Callable[[float], Working], size: float) -> float:
+    """Logarithm of the largest utilisation at exp(size), finite whatever it is; much more than all where there is no
+    value (a hole as wide as its plate)."""
+    try:
+        used = float(np.max(check(math.exp(size)).utilisation))
+    except Faults:
+        return _FAR
+    return min(max(math.log(used), -_FAR), _FAR) if used > 0 else -_FAR
+
+
+def from_series(
+    check: Callable[[float], Working],
+    series: Sequence[tuple[float, str]],
+    required: float | None = None,
+) -> Choice:
+    """The first of a series of sizes that passes, and why the one before it does not.
+
+    series    (size [m], what it is called), rising
+    required  [m] the smallest of any size, where that is known
+    """
+    tried = why = ""
+    for size, name in series:
+        working = check(size)
+        if working.passes:
+            return Choice(required, name, working, tried, why)
+        tried, why = name, told(working)
+    return Choice(required, "", working, "", f"the largest, {tried}, does not do: {why}")
+
+
+def told(working: Working) -> str:
+    """What governs a working that does not pass, in words: "bending of the pin at 131 %"."""
+    return f"{working.governs} at {100 * float(np.max(working.utilisation)):.0f} %"
