@@ -25,6 +25,7 @@ class Row:
     name   what it is called
     cells  key -> what stands there, text in a CSV file
     units  key -> unit in the head of its column, "" if none
+    head   line of the heads
     """
 
     file: str
@@ -33,6 +34,7 @@ class Row:
     name: str
     cells: dict[str, Any]
     units: dict[str, str]
+    head: int = 0
 
     def located(self, found: Fault) -> Fault:
         """A fault of this row, with file, line and row."""
@@ -49,15 +51,19 @@ def open_rows(path: str | Path, name: str, keys: Sequence[str], needed: Sequence
 
     Raises Faults: no file, no such list, columns that are missing or unknown, rows that are too short or too long.
     """
-    file = Path(path)
     try:
-        text = file.read_text(encoding="utf-8-sig")
+        text = Path(path).read_text(encoding="utf-8-sig")
     except (OSError, UnicodeDecodeError) as error:
         reason = "it is no UTF-8 text" if isinstance(error, UnicodeDecodeError) else (error.strerror or str(error)).lower()
         raise Faults(Fault((), f"cannot be read: {reason}", "", str(path))) from None
-    rows = _toml(text, str(path), name) if file.suffix.lower() == ".toml" else _csv(text, str(path), name, keys, needed)
+    return rows_of(text, str(path), name, keys, needed)
+
+
+def rows_of(text: str, file: str, name: str, keys: Sequence[str], needed: Sequence[str] = ()) -> list[Row]:
+    """The rows of a text, as ``open_rows`` gives them; its name tells the format. Raises Faults."""
+    rows = _toml(text, file) if file.lower().endswith(".toml") else _csv(text, file, name, keys, needed)
     if not rows:
-        raise Faults(Fault((), "an empty list", f"rows are wanted with the columns {', '.join((name, *keys))}", str(path)))
+        raise Faults(Fault((), "an empty list", f"rows are wanted with the columns {', '.join((name, *keys))}", file))
     faults = [row.located(f) for row in rows for f in _keys_of(row, keys, needed)]
     if faults:
         raise Faults(faults)
@@ -84,7 +90,7 @@ def _keys_of(row: Row, keys: Sequence[str], needed: Sequence[str]) -> list[Fault
     return unknown + [Fault((key,), "is missing") for key in needed if key not in row.cells]
 
 
-def _toml(text: str, file: str, name: str) -> list[Row]:  # noqa: ARG001
+def _toml(text: str, file: str) -> list[Row]:
     try:
         tree = tomllib.loads(text)
     except tomllib.TOMLDecodeError as error:
@@ -115,7 +121,7 @@ def _csv(text: str, file: str, name: str, keys: Sequence[str], needed: Sequence[
     for count, (line, cells) in enumerate(lines[1:], 1):
         told = cells[columns.index(name)].strip() if columns.index(name) < len(cells) else ""
         given = {key: cell.strip() for key, cell in zip(columns, cells, strict=False) if key != name}
-        row = Row(file, line, count, told, given, dict(heads))
+        row = Row(file, line, count, told, given, dict(heads), lines[0][0])
         if len(cells) != len(columns):
             faults.append(row.located(Fault((), f"{len(cells)} cells", f"{len(columns)} are wanted, as in the head")))
         elif not told:
