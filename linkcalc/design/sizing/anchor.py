@@ -8,6 +8,7 @@ import numpy as np
 
 from linkcalc.design.sizing.pin import LIFTING
 from linkcalc.design.sizing.working import Sheet, Working
+from linkcalc.faults import fault
 from linkcalc.parts.contract import Value
 from linkcalc.parts.pose import Array
 
@@ -37,13 +38,15 @@ def standing(forces: Array, places: Array, moments: Array, footing: Footing, fac
 
     Symbols: tip_left, tip_right (moments that tip it about a foot), hold_left, hold_right (of the weight), H, V, mu.
 
-    Raises Faults: no width between the feet, weight or factor not more than nothing.
+    Raises Faults: no width between the feet, a weight that is not between them, weight or factor not more than nothing.
     """
     force, place = np.asarray(forces, dtype=float), np.asarray(places, dtype=float)
     place = place.reshape(*place.shape, *[1] * (force.ndim - place.ndim))
     sheet = Sheet("frame that just stands")
     sheet.positive("width", footing.right - footing.left, "length", "between the feet")
     sheet.positive("G", footing.weight, "force", "weight that holds it down")
+    if not footing.left < footing.centre < footing.right:
+        raise fault("centre", "the weight does not stand between the feet", "a frame that stands by itself is wanted")
     sheet.given("xG", footing.centre - footing.left, "length", "left foot to the weight")
     sheet.positive("S", factor, "number", "factor against tipping")
 

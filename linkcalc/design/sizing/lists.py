@@ -54,7 +54,9 @@ def open_rows(path: str | Path, name: str, keys: Sequence[str], needed: Sequence
     try:
         text = Path(path).read_text(encoding="utf-8-sig")
     except (OSError, UnicodeDecodeError) as error:
-        reason = "it is no UTF-8 text" if isinstance(error, UnicodeDecodeError) else (error.strerror or str(error)).lower()
+        reason = (
+            "it is no UTF-8 text" if isinstance(error, UnicodeDecodeError) else (error.strerror or str(error)).lower()
+        )
         raise Faults(Fault((), f"cannot be read: {reason}", "", str(path))) from None
     return rows_of(text, str(path), name, keys, needed)
 
@@ -79,7 +81,9 @@ def number(item: tuple[str, ...] | str, raw: Any) -> float:
     except (TypeError, ValueError):
         comma = isinstance(raw, str) and "," in raw
         wanted = "write a decimal point, not a comma" if comma else "a number is wanted"
-        raise fault(item, f"{raw!r} is no number" if raw not in (None, "") else "nothing stands there", wanted) from None
+        raise fault(
+            item, f"{raw!r} is no number" if raw not in (None, "") else "nothing stands there", wanted
+        ) from None
     if not math.isfinite(value):
         raise fault(item, f"{raw!r} is no number", "a number is wanted")
     return value
@@ -105,7 +109,9 @@ def _csv(text: str, file: str, name: str, keys: Sequence[str], needed: Sequence[
     # a semicolon parts the columns where the comma is the decimal sign, and most spreadsheets write it there
     first = text.lstrip("\n").partition("\n")[0]
     reader = csv.reader(io.StringIO(text), delimiter=";" if first.count(";") > first.count(",") else ",")
-    lines = [(reader.line_num, cells) for cells in reader if any(c.strip() for c in cells) and not cells[0].startswith("#")]
+    lines = [
+        (reader.line_num, cells) for cells in reader if any(c.strip() for c in cells) and not cells[0].startswith("#")
+    ]
     if not lines:
         return []
     heads = [_head(cell) for cell in lines[0][1]]

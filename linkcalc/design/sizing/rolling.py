@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+from collections.abc import Callable, Iterable
 from dataclasses import dataclass
 
 import numpy as np
@@ -36,7 +36,7 @@ class Duty:
     """
 
     force: float
-    mean: object = None
+    mean: float | Callable[[float], float] | None = None
     swing: float = 0.0
     strokes: float | None = None
     operation: str = "normal"
@@ -166,10 +166,9 @@ def _life(sheet: Sheet, one: Bearing, duty: Duty) -> None:
                "equal rolled path: a stroke there and back rolls twice the swing")  # fmt: skip
     if duty.strokes is not None:
         sheet.positive("strokes_min", duty.strokes, "number", "strokes that it must last")
-        sheet.step("used", "(strokes_min/strokes)^(1/p)", "part of the load rating that is used",
-                   "the load that lasts just so long is that much larger")  # fmt: skip
-        sheet.given("one", 1.0, "number", "the whole of it")
-        sheet.at_most("life of the bearing", "used", "one")
+        sheet.step("C_needed", "P*(strokes_min*swing/(180 deg)/(a1*1000000))^(1/p)",
+                   "load rating that so many strokes ask for", "ISO 281")  # fmt: skip
+        sheet.at_most("life of the bearing", "C_needed", "C")
     if duty.swing < SMALL_SWING:
         sheet.caution("Swings below about 5 deg wear the raceways by fretting, whatever the reckoned life; a plain bush"
                       " is usual there.")  # fmt: skip

@@ -126,17 +126,17 @@ def stressed(section: Section, axial: Value, moment: Value, material: Material, 
     sheet.given("M", moment, "moment", "bending moment")
     material.allowed(sheet, factor)
     sheet.step("sigma_N", "abs(N)/A", "stress of the axial force")
-    bending = "abs(M)/W"
+    more = ""
     if radius is not None:
         sheet.positive("R", radius, "length", "radius of the middle line")
-        bending = _curve(sheet, section, radius)
-    sheet.step("sigma_M", bending, "largest bending stress")
+        more = _curve(sheet, section, radius)
+    sheet.step("sigma_M", f"{more}abs(M)/W", "largest bending stress")
     sheet.step("sigma", "sigma_N + sigma_M", "largest stress", "at the fibre where both act the same way")
     sheet.at_most("axial force and bending", "sigma", "sigma_allow")
     sheet.step("tau", "abs(V)/A", "mean shear stress")
     sheet.at_most("shear of the member", "tau", "tau_allow")
     if np.all(np.less(sheet["sigma_N"], sheet["sigma_allow"])):
-        sheet.step("W_needed", f"{bending}/(sigma_allow - sigma_N)*W", "section modulus that would do",
+        sheet.step("W_needed", f"{more}abs(M)/(sigma_allow - sigma_N)", "section modulus that would do",
                    "with the area as it is")  # fmt: skip
     sheet.note("Shear and bending are not combined: the one is largest where the other is nothing.")
     sheet.caution("Static strength only: no fatigue, no notches, no buckling sideways of deep flats.")
@@ -160,10 +160,10 @@ def least_size(make: Callable[[float], Section], axial: float, moment: float, ma
 
 
 def _curve(sheet: Sheet, section: Section, radius: float) -> str:
-    """The formula of the largest bending stress of a curved bar; writes what it needs."""
+    """What goes before the bending stress of a bent bar, "" if nothing does; writes what it needs."""
     if not section.depth:
         sheet.note("A section of this kind is reckoned as straight: where it is bent the inner fibre carries more.")
-        return "abs(M)/W"
+        return ""
     depth = sheet.step("h_R", section.depth, "depth of the section")
     if not radius > float(np.max(depth)) / 2:
         what = f"a middle line of radius {_mm(radius)} does not hold a section {_mm(float(np.max(depth)))} deep"
@@ -172,16 +172,16 @@ def _curve(sheet: Sheet, section: Section, radius: float) -> str:
         if radius / float(np.max(depth)) < SHARP:
             sheet.caution(f"Sharply bent: radius over depth is below {SHARP:g}; reckoned as straight, the inner fibre"
                           " carries more than this (Winkler and Bach).")  # fmt: skip
-        return "abs(M)/W"
+        return ""
     source = "Winkler and Bach; R. J. Roark, Formulas for Stress and Strain, curved beams"
     sheet.step("r_n", _NEUTRAL[section.curved], "radius of the neutral line", source)
     sheet.step("e_n", "R - r_n", "middle line to neutral line")
     sheet.step("k_i", "W*(r_n - R + h_R/2)/(A*e_n*(R - h_R/2))", "how much more the inner fibre carries", source)
-    return "k_i*abs(M)/W"
+    return "k_i*"
 
 
 _NEUTRAL = {
-    "flat": "h/log((R + h/2)/(R - h/2))",
+    "flat": "h/ln((R + h/2)/(R - h/2))",
     "round": "(D/2)^2/(2*(R - sqrt(R^2 - (D/2)^2)))",
 }
 
