@@ -13,7 +13,7 @@ from linkcalc.model.mechanism import Units
 from linkcalc.model.units import unit
 from linkcalc.words import nearest
 
-SAMPLE = "The bearings are a sample with rounded figures that stand for no maker: for trying out only. Take a list of your own."
+SAMPLE = "Sample bearings with rounded figures that stand for no maker: for trying out only. Take a list of your own."
 _SIZES = {"bore": "length", "outside": "length", "width": "length", "C": "force", "C0": "force"}
 _COLUMNS = (*_SIZES, "kind")
 

@@ -49,8 +49,8 @@ def bush(force: Value, bore: float, length: float, material: BushMaterial, *, sw
         sheet.at_most(text, symbol, f"{symbol}_allow")
         if limit[1] > limit[0] and np.any(np.greater(sheet[symbol], limit[0] / factor)):
             within = np.all(np.less_equal(sheet[symbol], limit[1] / factor))
-            sheet.note(f"The {text} is above the lower end of the range of {material.name}"
-                       + (", but within it: some makes bear it." if within else " and beyond its upper end."))  # fmt: skip
+            but = "but within it: some makes bear it" if within else "and beyond its upper end"
+            sheet.note(f"The {text} is above the lower end of the range of {material.name}, {but}.")
     if not NARROW <= length / bore <= BROAD:
         sheet.note(f"Length over bore is {length / bore:.2g}; usual are {NARROW:g} to {BROAD:g} (common practice).")
     if material.temperature is not None:
@@ -102,12 +102,14 @@ def choose_bush(force: float, material: BushMaterial, *, bore: float | None = No
 def _sizes(bore: float | None, length: float | None) -> list[tuple[tuple[float, float], str]]:
     """(bore, length) that come in question, rising, with what they are called."""
     outside: Mapping[float, float] = dict(bush_bores())
-    found = []
-    for d in [bore] if bore is not None else list(outside):
-        for b in [length] if length is not None else [size for size, _ in bush_lengths()]:
-            if length is not None or NARROW * d * (1 - 1e-9) <= b <= BROAD * d * (1 + 1e-9):
-                found.append(((d, b), _name(d, outside.get(d), b)))
-    return found
+    bores = list(outside) if bore is None else [bore]
+    lengths = [size for size, _ in bush_lengths()] if length is None else [length]
+    return [
+        ((d, b), _name(d, outside.get(d), b))
+        for d in bores
+        for b in lengths
+        if length is not None or NARROW * d * (1 - 1e-9) <= b <= BROAD * d * (1 + 1e-9)
+    ]
 
 
 def _name(bore: float, outside: float | None, length: float) -> str:

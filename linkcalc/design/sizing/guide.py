@@ -26,9 +26,7 @@ def guide(normal: Value, moment: Value, length: float, width: float, allowed: fl
     sheet.positive("l", length, "length", "length of the guided block")
     sheet.positive("b", width, "length", "width of the guide")
     sheet.step("p_mean", "N/(l*b)", "pressure in the middle")
-    sheet.step(
-        "p_moment", "6*M/(l^2*b)", "more at one end, less at the other", "straight pressure, stiff block; balance"
-    )
+    sheet.step("p_moment", "6*M/(l^2*b)", "more at one end, less at the other", "straight pressure; balance")
     sheet.step("p_edge", "p_mean + p_moment", "pressure at the edge")
     sheet.step("F_end", "N/2 + M/l", "force at the worse end", "if it bears at its two ends only; balance")
     if allowed is not None:

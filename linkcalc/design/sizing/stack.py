@@ -1,8 +1,8 @@
 """The pin as a beam across its plates: shear and bending moment along it, in two planes.
 
-The pin is taken as stiff against the plates, and all plates as equally yielding over their thickness. Then the plates of
-one member share its force by thickness, the pressure along each plate is even, and what would tip the pin is taken up by
-a pressure that rises evenly across each member's plates, by one slope for the whole pin. A fork that holds a rod in
+The pin is taken as stiff against the plates, and all plates as equally yielding over their thickness. Then the plates
+of one member share its force by thickness, the pressure along each plate is even, and what would tip the pin is taken up
+by a pressure that rises evenly across each member's plates, by one slope for the whole pin. A fork that holds a rod in
 its middle has no such slope, and its moment is the usual one of a clevis.
 
 With z along the pin, zm the middle of a member's plates by thickness, F the force of the member on the pin, T the whole
@@ -18,6 +18,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from itertools import pairwise
 
 import numpy as np
 
@@ -100,7 +101,7 @@ class PinStack:
     def stations(self, count: int = _STATIONS) -> Array:
         """[m] places along the pin for a diagram, (station,): every face, and `count` parts between faces."""
         faces = np.unique(np.concatenate([self.starts, self.stops]))
-        parts = [np.linspace(a, b, count, endpoint=False) for a, b in zip(faces[:-1], faces[1:], strict=True)]
+        parts = [np.linspace(a, b, count, endpoint=False) for a, b in pairwise(faces)]
         return np.concatenate([*parts, faces[-1:]])
 
     @property
