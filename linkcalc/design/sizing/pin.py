@@ -22,7 +22,7 @@ LIFTING = (
 )
 STATIC = "Static strength only: no fatigue, no wear, no shock."
 
-_MM = 1e-3
+_PLACE = "from the free face of the first plate"
 _BALANCE = "balance of the pin, see its diagrams"
 
 BENDING: dict[str, tuple[str, str]] = {
@@ -122,7 +122,7 @@ def stacked_pin(stack: PinStack, diameter: float, material: Material, factor: fl
 
     plate  material of the plates, for the pressure; the pin's if not given
 
-    Symbols: V, M, tau, sigma, combined, and F1, t1, p1, F2, ... for the plates in order.
+    Symbols: V, M, tau, sigma, combined, their places z_V, z_M, z_c [m], and F1, t1, p1, F2, ... for the plates in order.
 
     Raises Faults: sizes or factor not more than nothing.
     """
@@ -138,19 +138,16 @@ def stacked_pin(stack: PinStack, diameter: float, material: Material, factor: fl
         pressures[of] = (f"q{of}/d", f"plate {of}, {one.member}")
     material.allowed(sheet, factor)
     shear, moment, both = stack.peak_shear, stack.peak_moment, stack.equivalent(diameter)
-    sheet.found("V", _plain(shear.value), "force", "largest shear force", _where(shear.place), _BALANCE)
-    sheet.found("M", _plain(moment.value), "moment", "largest moment", _where(moment.place), _BALANCE)
+    sheet.found("V", _plain(shear.value), "force", "largest shear force", "along the pin", _BALANCE)
+    sheet.found("z_V", _plain(shear.place), "length", "where that is", _PLACE)
+    sheet.found("M", _plain(moment.value), "moment", "largest bending moment", "along the pin", _BALANCE)
+    sheet.found("z_M", _plain(moment.place), "length", "where that is", _PLACE)
     sheet.step("A", "pi*d^2/4", "section of the pin")
     sheet.step("tau", "V/A", "mean shear stress", "even over the section; at its middle it is 4/3 of that")
     _bending(sheet)
-    sheet.found("combined", _plain(both.value), "stress", "largest equivalent stress",
-                _where(both.place), "von Mises, of bending and mean shear of the same section")  # fmt: skip
-    _judged(sheet)
-    _pressure(sheet, pressures, plate or material)
-    sheet.note(
-        "The pin is stiff against the plates: even pressure on each, the plates of one member share by thickness, and"
-        " what would tip the pin is taken by a pressure that rises evenly across each member's plates."
-    )
+    sheet.found("combined", _plain(both.value), "stress", "largest equivalent stress", "along the pin",
+                "von Mises, of bending and mean shear of the same section")  # fmt: skip
+    sheet.found("z_c", _plain(both.place), "length", "where that is", _PLACE)
     return _closed(sheet)
 
 
@@ -198,8 +195,3 @@ def _closed(sheet: Sheet) -> Working:
 
 def _plain(value: Array) -> Value:
     return float(value) if np.ndim(value) == 0 else value
-
-
-def _where(place: Array) -> str:
-    """Where along the pin, if that is one place."""
-    return f"along the pin, at {float(place) / _MM:.4g} mm" if np.ndim(place) == 0 else "along the pin"

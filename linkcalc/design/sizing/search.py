@@ -73,4 +73,6 @@ def from_series(
 
 def told(working: Working) -> str:
     """What governs a working that does not pass, in words: "bending of the pin at 131 %"."""
-    return f"{working.governs} at {100 * float(np.max(working.utilisation)):.0f} %"
+    used = 100 * float(np.max(working.utilisation))
+    # near the limit a rounded 100 % would look as if it did
+    return f"{working.governs} at {used:.{1 if used < 110 else 0}f} %"

@@ -1,9 +1,9 @@
 """The pin as a beam across its plates: shear and bending moment along it, in two planes.
 
 The pin is taken as stiff against the plates, and all plates as equally yielding over their thickness. Then the plates
-of one member share its force by thickness, the pressure along each plate is even, and what would tip the pin is taken up
-by a pressure that rises evenly across each member's plates, by one slope for the whole pin. A fork that holds a rod in
-its middle has no such slope, and its moment is the usual one of a clevis.
+of one member share its force by thickness, the pressure along each plate is even, and what would tip the pin is taken
+up by a pressure that rises evenly across each member's plates, by one slope for the whole pin. A fork that holds a rod
+in its middle has no such slope, and its moment is the usual one of a clevis.
 
 With z along the pin, zm the middle of a member's plates by thickness, F the force of the member on the pin, T the whole
 thickness of its plates, s the one slope:
