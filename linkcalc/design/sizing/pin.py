@@ -122,7 +122,7 @@ def stacked_pin(stack: PinStack, diameter: float, material: Material, factor: fl
 
     plate  material of the plates, for the pressure; the pin's if not given
 
-    Symbols: V, M, tau, sigma, combined, their places z_V, z_M, z_c [m], and F1, t1, p1, F2, ... for the plates in order.
+    Symbols: V, M, tau, sigma, combined, places z_V, z_M, z_c [m], and F1, t1, q1, p1, F2, ... for the plates in order.
 
     Raises Faults: sizes or factor not more than nothing.
     """
@@ -148,6 +148,12 @@ def stacked_pin(stack: PinStack, diameter: float, material: Material, factor: fl
     sheet.found("combined", _plain(both.value), "stress", "largest equivalent stress", "along the pin",
                 "von Mises, of bending and mean shear of the same section")  # fmt: skip
     sheet.found("z_c", _plain(both.place), "length", "where that is", _PLACE)
+    _judged(sheet)
+    _pressure(sheet, pressures, plate or material)
+    sheet.note(
+        "The pin is stiff against the plates: even pressure on each, the plates of one member share by thickness, and"
+        " what would tip the pin is taken by a pressure that rises evenly across each member's plates."
+    )
     return _closed(sheet)
 
 
@@ -159,11 +165,11 @@ def least_diameter(check: Callable[[float], Working]) -> float:
 def choose_pin(check: Callable[[float], Working], *, inch: bool = False, series: Series | None = None) -> Choice:
     """The smallest pin of the series that passes: ISO 2340/2341 diameters, or inch sizes on request.
 
-    check  diameter [m] -> its working: ``lambda d: clevis_pin(force, d, clevis, steel, 2.0)``
+    check  diameter [m] -> its working: ``lambda d: clevis_pin(force, d, clevis, material("S355", thickness=d), 2.0)``
 
-    Raises Faults: not even a pin of 10 m would do.
+    Raises Faults: what ``check`` raises of the smallest.
     """
-    return from_series(check, series or clevis_pins(inch=inch), smallest(check))
+    return from_series(check, series or clevis_pins(inch=inch))
 
 
 def _bending(sheet: Sheet) -> None:

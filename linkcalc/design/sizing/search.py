@@ -11,7 +11,7 @@ from linkcalc.design.sizing.working import Choice, Working
 from linkcalc.faults import Faults, fault
 
 _LEAST, _MOST = 1e-5, 10.0  # [m] no machine part of this kind is smaller or larger
-_TRIES, _CLOSE, _FAR = 200, 1e-13, 100.0
+_TRIES, _CLOSE, _FAR, _STEP = 200, 1e-13, 100.0, 1.25
 
 
 def smallest(check: Callable[[float], Working], least: float = _LEAST, most: float = _MOST) -> float:
@@ -21,10 +21,10 @@ def smallest(check: Callable[[float], Working], least: float = _LEAST, most: flo
 
     Raises Faults: not even the largest passes.
     """
-    low, high = math.log(least), math.log(most)
+    low, high = math.log(least), math.log(_largest(check, least, most))
     over, under = _excess(check, low), _excess(check, high)
     if under > 0:
-        raise fault((), f"no size up to {most:g} m would do", "look at the load and at the factor")
+        raise fault((), f"no size up to {math.exp(high) * 1e3:.4g} mm would do", "look at the load and at the factor")
     if over <= 0:
         return least
     # the utilisation falls by a power of the size, so that in logarithms a chord hits it in a few steps; the middle
@@ -42,6 +42,19 @@ def smallest(check: Callable[[float], Working], least: float = _LEAST, most: flo
     return math.exp(high)
 
 
+def _largest(check: Callable[[float], Working], least: float, most: float) -> float:
+    """The largest size that can be checked at all: the table of a material ends at some thickness. Raises Faults."""
+    while True:
+        try:
+            check(most)
+        except Faults:
+            if most <= least:
+                raise
+            most = max(most / _STEP, least)
+        else:
+            return most
+
+
 def _excess(check: Callable[[float], Working], size: float) -> float:
     """Logarithm of the largest utilisation at exp(size), finite whatever it is; much more than all where there is no
     value (a hole as wide as its plate)."""
@@ -52,22 +65,32 @@ def _excess(check: Callable[[float], Working], size: float) -> float:
     return min(max(math.log(used), -_FAR), _FAR) if used > 0 else -_FAR
 
 
-def from_series(
-    check: Callable[[float], Working],
-    series: Sequence[tuple[float, str]],
-    required: float | None = None,
-) -> Choice:
-    """The first of a series of sizes that passes, and why the one before it does not.
+def from_series(check: Callable[[float], Working], series: Sequence[tuple[float, str]]) -> Choice:
+    """The first of a series of sizes that passes, why the one before it does not, and the smallest of any size.
 
-    series    (size [m], what it is called), rising
-    required  [m] the smallest of any size, where that is known
+    series  (size [m], what it is called), rising
+
+    Raises Faults: not even the first can be checked.
     """
-    tried = why = ""
+    below, tried, why = _LEAST, "", ""
+    working: Working | None = None
     for size, name in series:
-        working = check(size)
+        try:
+            working = check(size)
+        except Faults:
+            if working is None:
+                raise
+            break  # the table of a material ends here
         if working.passes:
-            return Choice(required, name, working, tried, why)
-        tried, why = name, told(working)
+            # looked for between these two: the yield stress of a material falls by steps as it gets thicker, so that a
+            # larger size may do less well
+            return Choice(smallest(check, below, size), name, working, tried, why)
+        below, tried, why = size, name, told(working)
+    assert working is not None
+    try:
+        required = smallest(check, below)
+    except Faults:
+        required = None
     return Choice(required, "", working, "", f"the largest, {tried}, does not do: {why}")
 
 
