@@ -55,11 +55,14 @@ def shown(value: Value, dims: Dims, units: Units) -> str:
 
     >>> shown(0.0125, (1, 0, 0, 0), Units())
     '12.5 mm'
+    >>> shown(0.5, (0, 0, -1, 0), Units())
+    '30/min'
     """
     found = out(value, dims, units)
     ends = [found] if isinstance(found, float) else [float(np.nanmin(found)), float(np.nanmax(found))]
     texts = list(dict.fromkeys(_trimmed(number(end, _DIGITS, trim=True)) for end in ends))
-    return f"{' to '.join(texts)} {plain(unit_of(dims, units)[0])}".strip()
+    unit_text = plain(unit_of(dims, units)[0])
+    return f"{' to '.join(texts)}{unit_text[1:] if unit_text.startswith('1/') else f' {unit_text}'}".strip()
 
 
 def _trimmed(text: str) -> str:
