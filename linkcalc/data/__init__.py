@@ -4,12 +4,13 @@ from __future__ import annotations
 
 import tomllib
 from functools import cache
-from importlib.resources import files
 from typing import Any
 
 
 def text(name: str) -> str:
     """A file of this folder."""
+    from importlib.resources import files  # slow to load, and most commands need no table
+
     return files(__name__).joinpath(name).read_text(encoding="utf-8")
 
 

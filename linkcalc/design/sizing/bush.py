@@ -8,7 +8,7 @@ import numpy as np
 
 from linkcalc.design.sizing.bush_materials import BushMaterial
 from linkcalc.design.sizing.search import told
-from linkcalc.design.sizing.series import bush_bores, bush_lengths
+from linkcalc.design.sizing.series import bush_bores, bush_lengths, source
 from linkcalc.design.sizing.working import Choice, Sheet, Working, must_be_positive
 from linkcalc.faults import fault
 from linkcalc.parts.contract import Value
@@ -92,7 +92,8 @@ def choose_bush(force: float, material: BushMaterial, *, bore: float | None = No
     for one, name in _sizes(bore, length):
         working = bush(force, one[0], one[1], material, **motion)
         if working.passes:
-            return Choice(None, name, working, best.chosen if best else "", best.why if best else "")
+            smaller, why = (best.chosen, best.why) if best else ("", "")
+            return Choice(None, name, working, smaller, why, f"{source('bushes')}, usual lengths")
         best = Choice(None, name, working, "", told(working))
     if best is None:
         raise fault((), "no bush of the series has these sizes", "look at bore and length")

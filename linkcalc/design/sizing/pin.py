@@ -9,7 +9,7 @@ import numpy as np
 
 from linkcalc.design.sizing.materials import Material
 from linkcalc.design.sizing.search import from_series, smallest
-from linkcalc.design.sizing.series import Series, clevis_pins
+from linkcalc.design.sizing.series import Series, clevis_pins, source
 from linkcalc.design.sizing.stack import PinStack
 from linkcalc.design.sizing.working import Choice, Sheet, Working
 from linkcalc.faults import fault
@@ -169,7 +169,8 @@ def choose_pin(check: Callable[[float], Working], *, inch: bool = False, series:
 
     Raises Faults: what ``check`` raises of the smallest.
     """
-    return from_series(check, series or clevis_pins(inch=inch))
+    of = "" if series else source("clevis_pins_inch" if inch else "clevis_pins")
+    return from_series(check, series or clevis_pins(inch=inch), of)
 
 
 def _bending(sheet: Sheet) -> None:

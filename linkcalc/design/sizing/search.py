@@ -65,10 +65,10 @@ def _excess(check: Callable[[float], Working], size: float) -> float:
     return min(max(math.log(used), -_FAR), _FAR) if used > 0 else -_FAR
 
 
-def from_series(check: Callable[[float], Working], series: Sequence[tuple[float, str]]) -> Choice:
+def from_series(check: Callable[[float], Working], series: Sequence[tuple[float, str]], of: str = "") -> Choice:
     """The first of a series of sizes that passes, why the one before it does not, and the smallest of any size.
 
-    series  (size [m], what it is called), rising
+    series  (size [m], what it is called), rising; of: whose series it is
 
     Raises Faults: not even the first can be checked.
     """
@@ -84,14 +84,14 @@ def from_series(check: Callable[[float], Working], series: Sequence[tuple[float,
         if working.passes:
             # looked for between these two: the yield stress of a material falls by steps as it gets thicker, so that a
             # larger size may do less well
-            return Choice(smallest(check, below, size), name, working, tried, why)
+            return Choice(smallest(check, below, size), name, working, tried, why, of)
         below, tried, why = size, name, told(working)
     assert working is not None
     try:
         required = smallest(check, below)
     except Faults:
         required = None
-    return Choice(required, "", working, "", f"the largest, {tried}, does not do: {why}")
+    return Choice(required, "", working, "", f"the largest, {tried}, does not do: {why}", of)
 
 
 def told(working: Working) -> str:

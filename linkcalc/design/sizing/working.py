@@ -133,6 +133,7 @@ class Choice:
     working   that of the chosen one; of the largest tried if none passes
     smaller   what the next smaller is called, "" if there is none
     why       why the next smaller does not do, or why none does
+    series    whose sizes it was chosen from, "" for a list
     """
 
     required: float | None
@@ -140,6 +141,7 @@ class Choice:
     working: Working
     smaller: str = ""
     why: str = ""
+    series: str = ""
 
 
 @dataclass

@@ -77,7 +77,7 @@ def choice_tree(choice: Choice, units: Units) -> Tree:
     unit, factor = unit_of((1, 0, 0, 0), units)
     needed = None if choice.required is None else choice.required / factor
     return {
-        "needed": {"unit": unit, "value": needed}, "chosen": choice.chosen or None,
+        "needed": {"unit": unit, "value": needed}, "chosen": choice.chosen or None, "series": choice.series or None,
         "next smaller": choice.smaller or None, "why not smaller" if choice.chosen else "why none": choice.why or None,
     }  # fmt: skip
 
@@ -88,7 +88,8 @@ def choice_text(choice: Choice, units: Units) -> str:
     if not choice.chosen:
         return f"{needed}None of the series will do: {choice.why}."
     smaller = f" The next smaller, {choice.smaller}, does not do: {choice.why}." if choice.smaller else ""
-    return f"{needed}Chosen: {choice.chosen}.{smaller}"
+    series = f" ({choice.series})" if choice.series else ""
+    return f"{needed}Chosen: {choice.chosen}{series}.{smaller}"
 
 
 def put_in(entry: Entry, working: Working, units: Units) -> str:
