@@ -11,9 +11,10 @@ from linkcalc.design.sizing.materials import Material
 from linkcalc.design.sizing.search import from_series, smallest
 from linkcalc.design.sizing.series import Series, clevis_pins, source
 from linkcalc.design.sizing.stack import PinStack
+from linkcalc.design.sizing.stack_sheet import PLACE, plain, write_forces, write_plates
 from linkcalc.design.sizing.working import Choice, Sheet, Working
 from linkcalc.faults import fault
-from linkcalc.parts.contract import Array, Value
+from linkcalc.parts.contract import Value
 from linkcalc.words import nearest
 
 LIFTING = (
@@ -22,8 +23,6 @@ LIFTING = (
 )
 STATIC = "Static strength only: no fatigue, no wear, no shock."
 
-_PLACE = "from the free face of the first plate"
-_BALANCE = "balance of the pin, see its diagrams"
 
 BENDING: dict[str, tuple[str, str]] = {
     "even pressure": (
@@ -122,34 +121,25 @@ def stacked_pin(stack: PinStack, diameter: float, material: Material, factor: fl
 
     plate  material of the plates, for the pressure; the pin's if not given
 
-    Symbols: V, M, tau, sigma, combined, places z_V, z_M, z_c [m], and F1, t1, q1, p1, F2, ... for the plates in order.
+    Symbols: V, M, tau, sigma, combined, places z_V, z_M, z_c [m], and F1x, F1y, t1, a1, q1, p1, F2x, ... of the plates.
 
     Raises Faults: sizes or factor not more than nothing.
     """
     sheet = Sheet("pin across a stack of plates")
     sheet.positive("d", diameter, "length", "diameter of the pin")
-    pressures = {}
-    for k, one in enumerate(stack.plates):
-        of, force = str(k + 1), np.hypot(*stack.forces[k])
-        sheet.given(f"F{of}", _plain(force), "force", f"force of plate {of}, {one.member}")
-        sheet.given(f"t{of}", one.thickness, "length", f"thickness of plate {of}")
-        sheet.found(f"q{of}", _plain(stack.line_load[k]), "stiffness", f"line load on plate {of}",
-                    "largest, at one of its faces", _BALANCE)  # fmt: skip
-        pressures[of] = (f"q{of}/d", f"plate {of}, {one.member}")
+    write_plates(sheet, stack)
     material.allowed(sheet, factor)
-    shear, moment, both = stack.peak_shear, stack.peak_moment, stack.equivalent(diameter)
-    sheet.found("V", _plain(shear.value), "force", "largest shear force", "along the pin", _BALANCE)
-    sheet.found("z_V", _plain(shear.place), "length", "where that is", _PLACE)
-    sheet.found("M", _plain(moment.value), "moment", "largest bending moment", "along the pin", _BALANCE)
-    sheet.found("z_M", _plain(moment.place), "length", "where that is", _PLACE)
+    write_forces(sheet, stack)
+    both = stack.equivalent(diameter)
     sheet.step("A", "pi*d^2/4", "section of the pin")
     sheet.step("tau", "V/A", "mean shear stress", "even over the section; at its middle it is 4/3 of that")
     _bending(sheet)
-    sheet.found("combined", _plain(both.value), "stress", "largest equivalent stress", "along the pin",
+    sheet.found("combined", plain(both.value), "stress", "largest equivalent stress", "along the pin",
                 "von Mises, of bending and mean shear of the same section")  # fmt: skip
-    sheet.found("z_c", _plain(both.place), "length", "where that is", _PLACE)
+    sheet.found("z_c", plain(both.place), "length", "where that is", PLACE)
     _judged(sheet)
-    _pressure(sheet, pressures, plate or material)
+    names = {str(k): one.member for k, one in enumerate(stack.plates, 1)}
+    _pressure(sheet, {n: (f"q{n}/d", f"plate {n}, {member}") for n, member in names.items()}, plate or material)
     sheet.note(
         "The pin is stiff against the plates: even pressure on each, the plates of one member share by thickness, and"
         " what would tip the pin is taken by a pressure that rises evenly across each member's plates."
@@ -198,7 +188,3 @@ def _closed(sheet: Sheet) -> Working:
     sheet.caution(STATIC)
     sheet.caution(LIFTING)
     return sheet.working()
-
-
-def _plain(value: Array) -> Value:
-    return float(value) if np.ndim(value) == 0 else value

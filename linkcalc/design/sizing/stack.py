@@ -18,6 +18,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from functools import cached_property
 from itertools import pairwise
 
 import numpy as np
@@ -104,12 +105,12 @@ class PinStack:
         parts = [np.linspace(a, b, count, endpoint=False) for a, b in pairwise(faces)]
         return np.concatenate([*parts, faces[-1:]])
 
-    @property
+    @cached_property
     def peak_shear(self) -> Peak:
         """Largest resultant shear."""
         return self._peak(0)
 
-    @property
+    @cached_property
     def peak_moment(self) -> Peak:
         """Largest resultant bending moment."""
         return self._peak(1)

@@ -19,7 +19,7 @@ from linkcalc.parts.contract import Value
 DIMS: Mapping[str, Dims] = MappingProxyType({
     **KINDS, "area": (2, 0, 0, 0), "section modulus": (3, 0, 0, 0), "second moment": (4, 0, 0, 0),
     "speed": (1, 0, -1, 0), "pressure speed": (0, 1, -3, 0), "rate": (0, 0, -1, 0),
-    "compliance": (1, -1, 2, 0), "time": (0, 0, 1, 0),
+    "pressure rise": (-1, 1, -2, 0), "compliance": (1, -1, 2, 0), "time": (0, 0, 1, 0),
 })  # fmt: skip
 """Kind of a quantity -> exponents of length, mass, time, angle."""
 

@@ -18,6 +18,7 @@ from linkcalc.report.json import Tree
 from linkcalc.report.quantities import out, shown, unit_of
 
 _WIDTH, _TEXT = 94, 34  # columns of a line, and of the text in it
+_TIGHT = "\N{NO-BREAK SPACE}"
 
 
 def working_blocks(working: Working, units: Units, choice: Choice | None = None) -> list[Block]:
@@ -131,8 +132,7 @@ def _step(entry: Entry, working: Working, units: Units) -> Iterator[str]:
     if np.ndim(entry.value) == 0:
         numbers = put_in(entry, working, units)
         if numbers != shown(entry.value, entry.dims, units):
-            yield from textwrap.wrap(lead + numbers, _WIDTH, subsequent_indent=" " * (len(lead) + 2),
-                                     break_long_words=False, drop_whitespace=True)  # fmt: skip
+            yield from _formula(lead + numbers, len(lead) + 2)
     yield lead + shown(entry.value, entry.dims, units)
 
 
@@ -144,8 +144,19 @@ def _fold(formula: str, text: str) -> Iterator[str]:
     if beside and lines:
         lines[0] = f"{formula:{_TEXT}}{lines[0].strip()}"
     else:
-        lines.insert(0, formula)
+        lines[:0] = _formula(formula, formula.index("=") + 4)
     yield from lines
+
+
+def _formula(text: str, indent: int) -> list[str]:
+    """A formula on as many lines as it takes, broken before a plus or minus only."""
+    whole = text.replace(" ", _TIGHT)
+    for sign in (" + ", " - "):
+        whole = whole.replace(sign.replace(" ", _TIGHT), f" {sign[1]}{_TIGHT}")
+    lead = len(whole) - len(whole.lstrip(_TIGHT))
+    lines = textwrap.wrap(whole[lead:], _WIDTH - lead, subsequent_indent=" " * (indent - lead), break_long_words=False,
+                          break_on_hyphens=False)  # fmt: skip
+    return [" " * lead + line.replace(_TIGHT, " ") for line in lines]
 
 
 def _check(check: Check, working: Working, units: Units) -> str:

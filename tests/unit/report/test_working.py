@@ -57,7 +57,9 @@ def test_the_numbers_put_in_come_to_the_result(working: Working, units: Units) -
             text = put_in(step, working, units).replace("(30/min)", "(0.5 s^-1)")
             found = evaluate(text)
             assert found.dims == step.dims, text
-            assert found.value == pytest.approx(step.value, rel=2e-3, abs=1e-9), f"{step.symbol} = {text}"
+            # what comes to nothing is left over of the largest of its kind
+            least = 1e-4 * max(abs(float(e.value)) for e in working.entries if e.dims == step.dims)
+            assert found.value == pytest.approx(step.value, rel=2e-3, abs=least), f"{step.symbol} = {text}"
 
 
 def test_a_sheet_by_hand() -> None:

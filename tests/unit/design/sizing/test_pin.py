@@ -107,6 +107,35 @@ def test_a_stack_of_fork_and_rod_is_a_clevis() -> None:
     assert across["z_M"] == pytest.approx(0.0165)
 
 
+def test_five_plates_by_hand() -> None:
+    """Two pairs of links and a rod between them, no gaps: plates of 6, 6, 12, 6, 6 mm. By symmetry no pressure slopes. In
+    the middle, 18 mm from the face, half of each pair acts at 3 and 9 mm and half the rod at 15 mm: M = U/2 15 + L/2 9
+    + R/2 3 mm, as vectors."""
+    upper, lower = np.array([2e3, 500.0]), np.array([-1.5e3, 800.0])
+    forces = {"upper": upper, "lower": lower, "rod": -upper - lower}
+    names = ("upper", "lower", "rod", "lower", "upper")
+    plates = [StackPlate(name, 0.012 if name == "rod" else 0.006) for name in names]
+    stack = pin_stack(plates, forces)
+    middle = (upper / 2 * 15 + lower / 2 * 9 + forces["rod"] / 2 * 3) * 1e-3
+    np.testing.assert_allclose(stack.moment(np.array([0.018]))[:, 0], middle)
+    found = stacked_pin(stack, 0.014, STEEL, 2.0)
+    assert found["M"] == pytest.approx(float(stack.peak_moment.value), rel=1e-12)
+    assert found["V"] == pytest.approx(float(stack.peak_shear.value), rel=1e-12)
+    assert found["q3"] == pytest.approx(np.hypot(*forces["rod"]) / 0.012)
+
+
+@given(st.integers(0, 10**6))
+def test_the_sheet_of_a_stack_gives_its_peaks(seed: int) -> None:
+    """V and M of the sheet come from the loads before their sections by written formulas, in every pose of a batch."""
+    rng = np.random.default_rng(seed)
+    a, b = rng.normal(size=(2, 2, 5)) * 1e3
+    plates = [StackPlate(m, *rng.uniform(0.002, 0.02, 2)) for m in ("a", "b", "a", "c")]
+    stack = pin_stack(plates, {"a": a, "b": b, "c": -a - b})
+    found = stacked_pin(stack, 0.014, STEEL, 2.0)
+    np.testing.assert_allclose(found["M"], stack.peak_moment.value, rtol=1e-9)
+    np.testing.assert_allclose(found["V"], stack.peak_shear.value, rtol=1e-9)
+
+
 def test_arrays_of_forces_give_arrays() -> None:
     forces = np.array([[1e3, -2e3], [5e3, 0.0]])
     found = clevis_pin(forces, 0.016, CLEVIS, STEEL, 2.0)
