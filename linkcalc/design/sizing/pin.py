@@ -11,7 +11,7 @@ from linkcalc.design.sizing.materials import Material
 from linkcalc.design.sizing.search import from_series, smallest
 from linkcalc.design.sizing.series import Series, clevis_pins, source
 from linkcalc.design.sizing.stack import PinStack
-from linkcalc.design.sizing.stack_sheet import PLACE, plain, write_forces, write_plates
+from linkcalc.design.sizing.stack_sheet import PLACE, plain, section_forces
 from linkcalc.design.sizing.working import Choice, Sheet, Working
 from linkcalc.faults import fault
 from linkcalc.parts.contract import Value
@@ -127,9 +127,8 @@ def stacked_pin(stack: PinStack, diameter: float, material: Material, factor: fl
     """
     sheet = Sheet("pin across a stack of plates")
     sheet.positive("d", diameter, "length", "diameter of the pin")
-    write_plates(sheet, stack)
+    sheet.take(section_forces(stack))
     material.allowed(sheet, factor)
-    write_forces(sheet, stack)
     both = stack.equivalent(diameter)
     sheet.step("A", "pi*d^2/4", "section of the pin")
     sheet.step("tau", "V/A", "mean shear stress", "even over the section; at its middle it is 4/3 of that")

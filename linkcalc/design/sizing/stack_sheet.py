@@ -3,11 +3,12 @@
 from __future__ import annotations
 
 from collections.abc import Callable
+from functools import lru_cache
 
 import numpy as np
 
 from linkcalc.design.sizing.stack import Peak, PinStack
-from linkcalc.design.sizing.working import Sheet
+from linkcalc.design.sizing.working import Sheet, Working
 from linkcalc.parts.contract import Value
 from linkcalc.parts.pose import Array
 
@@ -17,7 +18,20 @@ _EVEN = 1e-9
 _LONGEST = 480  # what the reader of formulas takes, with some room
 
 
-def write_plates(sheet: Sheet, stack: PinStack) -> None:
+@lru_cache(maxsize=16)
+def section_forces(stack: PinStack) -> Working:
+    """The plates and the largest shear and moment along the pin. None of it hangs on the diameter, so that a search for
+    that writes it once.
+
+    Symbols: t1, a1, F1x, F1y, q1, ... of the plates; z_V, V, z_M, M.
+    """
+    sheet = Sheet("pin across a stack of plates")
+    _write_plates(sheet, stack)
+    _write_forces(sheet, stack)
+    return sheet.working()
+
+
+def _write_plates(sheet: Sheet, stack: PinStack) -> None:
     """The plates: t and a (where each begins), its force (Fx, Fy), and the line load q at its worse face."""
     even = _even(stack)
     for k, one in enumerate(stack.plates):
@@ -33,7 +47,7 @@ def write_plates(sheet: Sheet, stack: PinStack) -> None:
             sheet.found(f"q{n}", plain(stack.line_load[k]), "stiffness", f"line load of plate {n}", how, _BALANCE)
 
 
-def write_forces(sheet: Sheet, stack: PinStack) -> None:
+def _write_forces(sheet: Sheet, stack: PinStack) -> None:
     """V at z_V and M at z_M: the largest along the pin, each from the loads of the plates before it."""
     even = _even(stack)
     if not even:

@@ -180,6 +180,11 @@ class Sheet:
         self._add(Entry(symbol, text, value, dims, formula=formula, source=source))
         return value
 
+    def take(self, part: Working) -> None:
+        """What another sheet has reckoned; its checks, notes and cautions are left."""
+        for entry in part.entries:
+            self._add(entry)
+
     def at_most(self, name: str, symbol: str, limit: str) -> None:
         """Hold the size of a quantity against what it must not pass."""
         used = np.abs(self._names[symbol].value) / self._names[limit].value

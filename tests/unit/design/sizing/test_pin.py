@@ -108,9 +108,9 @@ def test_a_stack_of_fork_and_rod_is_a_clevis() -> None:
 
 
 def test_five_plates_by_hand() -> None:
-    """Two pairs of links and a rod between them, no gaps: plates of 6, 6, 12, 6, 6 mm. By symmetry no pressure slopes. In
-    the middle, 18 mm from the face, half of each pair acts at 3 and 9 mm and half the rod at 15 mm: M = U/2 15 + L/2 9
-    + R/2 3 mm, as vectors."""
+    """Two pairs of links and a rod between them, no gaps: plates of 6, 6, 12, 6, 6 mm. By symmetry no pressure slopes.
+    In the middle, 18 mm from the face, half of each pair acts 15 and 9 mm away and half the rod 3 mm: as vectors
+    M = U/2 15 + L/2 9 + R/2 3 mm."""
     upper, lower = np.array([2e3, 500.0]), np.array([-1.5e3, 800.0])
     forces = {"upper": upper, "lower": lower, "rod": -upper - lower}
     names = ("upper", "lower", "rod", "lower", "upper")
