@@ -27,7 +27,7 @@ from linkcalc.faults import fault
 from linkcalc.parts.pose import Array
 from linkcalc.words import nearest
 
-_BALANCED = 1e-6
+_BALANCED, _NOTHING = 1e-6, 1e-13
 _STATIONS, _ZOOMS = 24, 4
 _LEVEL = 1e-9
 
@@ -198,7 +198,8 @@ def pin_stack(plates: Sequence[StackPlate], forces: Mapping[str, Array]) -> PinS
     stops = starts + thick
     of = np.array([order.index(p.member) for p in plates])
     each = np.stack(np.broadcast_arrays(*(np.asarray(forces[name], dtype=float) for name in order)))
-    _must_balance(each)
+    largest = _must_balance(each)
+    each = np.where(np.abs(each) > _NOTHING * largest, each, 0.0)  # what rounding leaves of an exact nothing
     whole = np.bincount(of, thick)
     middle = np.bincount(of, thick * (starts + stops) / 2) / whole
     centres = middle[of]
@@ -211,10 +212,12 @@ def pin_stack(plates: Sequence[StackPlate], forces: Mapping[str, Array]) -> PinS
     return PinStack(tuple(plates), starts, stops, on_plate, middles, tips, centres)
 
 
-def _must_balance(each: Array) -> None:
-    largest = np.nanmax(np.hypot(each[:, 0], each[:, 1]), axis=0, initial=0.0)
+def _must_balance(each: Array) -> Array:
+    """[N] the largest force, (...). Raises Faults."""
+    largest: Array = np.nanmax(np.hypot(each[:, 0], each[:, 1]), axis=0, initial=0.0)
     left = np.hypot(*np.sum(each, axis=0))
     if np.any(left > _BALANCED * largest):
         worst = float(np.nanmax(left))
         wanted = "the plates of all that pushes on the pin are wanted, loads and ropes too"
         raise fault("stack", f"the forces on the pin do not balance: {worst:.4g} N are left over", wanted)
+    return largest

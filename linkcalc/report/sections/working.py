@@ -104,7 +104,11 @@ def put_in(entry: Entry, working: Working, units: Units) -> str:
             one = names[text]
             text = shown(one.value, one.dims, units)
             divides, raised = k > 0 and tokens[k - 1].text == "/", tokens[k + 1].text == "^"
-            if (" " in text and (divides or raised)) or "/" in text or (text.startswith("-") and k > 0):
+            if (
+                (" " in text and (divides or raised))
+                or "/" in text
+                or (text.startswith("-") and k > 0 and tokens[k - 1].text not in ("(", ","))
+            ):
                 text = f"({text})"
         parts.append(f" {text} " if token.kind == "sign" and text in "+-" and k > 0 else text)
     return "".join(parts).replace(",", ", ")
