@@ -7,7 +7,7 @@ is no proof that there are no more.
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -16,7 +16,7 @@ from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.settle import Settled, come_to_rest, settle
 from linkcalc.parts.contract import TURN
-from linkcalc.parts.pose import Array, Poses
+from linkcalc.parts.pose import Array, Poses, Value
 
 _STARTS = 48
 _APART = 1e-6  # of a radian or the size: two balances are the same
@@ -87,7 +87,7 @@ def _starts(ready: Ready, places: tuple[object, ...]) -> Poses:
 
 
 def _spread(at: Poses) -> Poses:
-    def first(values):  # type: ignore[no-untyped-def]
+    def first(values: Sequence[Value]) -> list[Value]:
         return [float(np.ravel(v)[0]) if k == 0 else np.full((1, 1, _STARTS), float(np.ravel(v)[0]))
                 for k, v in enumerate(values)]  # fmt: skip
 

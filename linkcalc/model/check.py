@@ -13,6 +13,7 @@ from linkcalc.model.check_drawing import check_drawing
 from linkcalc.model.check_joints import check_joints, check_members
 from linkcalc.model.check_loads import check_cases, check_loads, check_stroke, check_unknown
 from linkcalc.model.check_names import Known, check_clashes, check_names
+from linkcalc.model.check_pins import check_pins
 from linkcalc.model.check_requirements import check_requirements
 from linkcalc.model.check_sizes import check_sizes
 from linkcalc.model.gather import Gather
@@ -60,6 +61,8 @@ def checked(tree: Mapping[str, Any], gather: Gather) -> Mechanism:
         check_clashes(mechanism, gather)
     if _clean(gather, *_SHAPE):
         check_joints(mechanism, gather)
+    if _clean(gather, *_SHAPE, "pins"):
+        check_pins(mechanism, gather)
     if _clean(gather, "effort", "load", "loads"):
         check_unknown(mechanism, gather)
         check_cases(mechanism, gather)
@@ -67,7 +70,7 @@ def checked(tree: Mapping[str, Any], gather: Gather) -> Mechanism:
         check_loads(mechanism, gather)
     if _clean(gather, *_SHAPE, "stroke"):
         check_stroke(mechanism, gather)
-    if _clean(gather, *_SHAPE, *_LOADS, "stroke", "gravity"):
+    if _clean(gather, *_SHAPE, *_LOADS, "stroke", "gravity", "pins"):
         drawing = check_drawing(mechanism, gather)
     check_requirements(mechanism, known, drawing, gather)
     return mechanism

@@ -8,6 +8,7 @@ from typing import Any
 
 from linkcalc.model import walk
 from linkcalc.model.gather import Gather
+from linkcalc.model.materials import material_names
 from linkcalc.model.mechanism import GROUND, Mechanism
 from linkcalc.words import kinds, nearest
 
@@ -25,6 +26,7 @@ class Known:
     loads: tuple[str, ...]
     dimensions: tuple[str, ...]
     ropes: tuple[str, ...] = ()
+    materials: tuple[str, ...] = ()
 
     @classmethod
     def of(cls, tree: Mapping[str, Any]) -> Known:
@@ -35,10 +37,13 @@ class Known:
         joints = tuple(name for word in kinds("joint") for name in names(f"{word}s"))
         loads = (*((_LOAD,) if "load" in tree else ()), *names("loads"))
         members = (GROUND, *(m for m in names("members") if m != GROUND))
-        return cls(names("points"), members, joints, loads, names("dimensions"), names("ropes"))
+        dimensions, ropes, own = names("dimensions"), names("ropes"), names("materials")
+        return cls(names("points"), members, joints, loads, dimensions, ropes, own)
 
     def table(self, of: str) -> tuple[str, ...]:
-        """The names that a field may give: of = "point", "member", "guide", "load", "rope"."""
+        """The names that a field may give: of = "point", "member", "guide", "load", "rope", "material"."""
+        if of == "material":
+            return material_names(self.materials)
         tables = {"point": self.points, "member": self.members, "guide": self.joints, "load": self.loads}
         return {**tables, "rope": self.ropes}[of]
 

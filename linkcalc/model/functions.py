@@ -93,6 +93,7 @@ FUNCTIONS: dict[str, Function] = {
     "abs": _function(np.abs, 1, 1, None, _same),
     "min": _function(_over(np.minimum), 2, _MANY, None, _same),
     "max": _function(_over(np.maximum), 2, _MANY, None, _same),
+    "ln": _function(np.log, 1, 1, u.NUMBER, _number),
     "sin": _function(np.sin, 1, 1, u.ANGLE, _number),
     "cos": _function(np.cos, 1, 1, u.ANGLE, _number),
     "tan": _function(np.tan, 1, 1, u.ANGLE, _number),

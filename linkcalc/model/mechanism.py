@@ -14,6 +14,7 @@ from linkcalc.parts import fields
 from linkcalc.parts.contract import Size
 
 GROUND = "ground"
+STACKED = 'plates are wanted in order, e.g. [["fork", 8], ["rod", 16, 0.5], ["fork", 8, 0.5]]'
 DISTRIBUTIONS = ("normal", "uniform", "triangular")
 DRAWN, LOWER, UPPER = "drawn", "lower limit", "upper limit"
 
@@ -110,8 +111,25 @@ class Friction:
 
 
 @dataclass(frozen=True)
+class MaterialEntry:
+    """A material of the user's own; it stands before one of the same name in the table of the package.
+
+    yield_  yield stress ("yield" in a file), or 0.2 % proof stress
+    """
+
+    yield_: Size = fields.size("stress", "yield or 0.2 % proof stress", sign="plus")
+    ultimate: Size | None = fields.size("stress", "tensile strength", None, sign="plus")
+    modulus: Size | None = fields.size("stress", "modulus of elasticity", None, sign="plus")
+
+    short = "yield"
+
+
+@dataclass(frozen=True)
 class Pin:
-    """What one pin has of its own."""
+    """What one pin has of its own.
+
+    stack  the plates across it in order (Plate), each as often as it comes; () if it is not told
+    """
 
     friction: Size | None = fields.size("number", "its coefficient of friction", None, sign="not minus")
     diameter: Size | None = fields.size("length", "its diameter", None, sign="plus")
@@ -119,6 +137,13 @@ class Pin:
         "length", "radius of its friction circle, instead of coefficient and diameter", None, sign="not minus"
     )
     stiffness: Size | None = fields.size("stiffness", "of pin and bush, alike in all directions", None, sign="plus")
+    material: str | None = fields.name("material", "what it is made of", None)
+    factor: Size | None = fields.size("number", "factor against yield", None, sign="plus")
+    stack: tuple[Any, ...] = fields.parts("layer", "the plates across it, in order", STACKED, ())
+    bush: str | None = _entry("text", "material of its plain bush", None)
+    length: Size | None = fields.size("length", "length of its bush; one of the series if left out", None, sign="plus")
+    bearing: str | None = _entry("text", "its rolling bearing: a designation of the list, or a kind", None)
+    life: Size | None = fields.size("number", "strokes, there and back, that its bearing must last", None, sign="plus")
 
 
 @dataclass(frozen=True)
@@ -177,6 +202,7 @@ class Mechanism:
     joints    word of the kind -> name -> part: {"slot": {...}, "slide": {...}, "weld": {...}}
     friction  of all joints that say nothing of their own
     pins      point -> Pin: what single pins have of their own
+    materials name -> MaterialEntry: the user's own, before those of the table
     effort    the effort (Force, Torque or Pair); None for a frame
     load      the load whose ratio to the effort is asked; None if there is none
     loads     the other loads, by name
@@ -198,6 +224,7 @@ class Mechanism:
     joints: Mapping[str, Mapping[str, Any]] = _entry("joints", "joints other than pins", dict)
     friction: Friction = _entry("table", "friction of all joints", Friction(), of=Friction)
     pins: Mapping[str, Pin] = _entry("named tables", "what single pins have of their own", dict, of=Pin)
+    materials: Mapping[str, MaterialEntry] = _entry("named tables", "the user's own materials", dict, of=MaterialEntry)
     gravity: Gravity = _entry("table", "field of gravity", Gravity(), of=Gravity)
     effort: Any = _entry("part", "what goes in", family="load", asks="size")
     load: Any = _entry("part", "what comes out or is held", family="load")

@@ -19,8 +19,8 @@ from linkcalc.words import kinds
 BROKEN: Any = object()
 """What stands for a value that cannot be read; what was wrong with it is gathered."""
 
-_LISTED = {"construction": "x"}
-"""Family -> the word of the kind that a plain list stands for: a point is [x, y]."""
+_LISTED = {"construction": "x", "layer": "plate"}
+"""Family -> the word of the kind that a plain list stands for: a point is [x, y], a plate [member, thickness, gap]."""
 
 
 def from_tree(tree: Mapping[str, Any], gather: Gather) -> Mechanism:
@@ -37,10 +37,15 @@ def to_tree(thing: Any) -> Any:
         if required(entry) or value != _default(entry):
             kind = entry.metadata["kind"]
             out |= _SPREAD[kind].write(value) if kind in _SPREAD else {key_of(type(thing), entry): _plain(value)}
-    if (getattr(thing, "family", ""), getattr(thing, "word", "")) in _LISTED.items():
+    if (getattr(thing, "family", ""), getattr(thing, "word", "")) in _LISTED.items() and _leads(thing, out):
         return list(out.values())
     short: str = getattr(thing, "short", "")
     return out[short] if set(out) == {short} else out
+
+
+def _leads(thing: Any, out: Mapping[str, Any]) -> bool:
+    """True if the keys are the first ones of the part, so that a list without names says the same."""
+    return list(out) == [key_of(type(thing), entry) for entry in part_fields(thing)][: len(out)]
 
 
 def key_of(cls: type, entry: Field[Any]) -> str:
@@ -130,10 +135,12 @@ def _part(raw: Any, meta: Meta, item: Item, gather: Gather) -> Any:
     listed = family.get(_LISTED.get(meta["family"], ""))
     if listed and isinstance(raw, (list, tuple)):
         names = [key_of(listed, entry) for entry in part_fields(listed)]
-        if len(raw) != len(names):
-            gather.add(item, f"a list of {len(raw)}", f"[{', '.join(names)}] is wanted")
+        least = sum(required(entry) for entry in part_fields(listed))
+        if not least <= len(raw) <= len(names):
+            wanted = ", ".join(names[:least]) + "".join(f"[, {name}" for name in names[least:])
+            gather.add(item, f"a list of {len(raw)}", f"[{wanted}{']' * (len(names) - least)}] is wanted")
             return BROKEN
-        raw = dict(zip(names, raw, strict=True))
+        raw = dict(zip(names, raw, strict=False))
     words = ", ".join(repr(word) for word in family)
     if not isinstance(raw, Mapping):
         gather.add(item, f"{shown(raw)} is no table", f"a table with one of the keys {words} is wanted")
@@ -163,10 +170,10 @@ def _parts(raw: Any, meta: Meta, item: Item, gather: Gather) -> Any:
         what = f"a list of {len(raw)}" if isinstance(raw, (list, tuple)) else f"{shown(raw)} is no list"
         gather.add(item, what, meta["wanted"])
         return BROKEN
-    short = next(kind for kind in kinds(meta["family"]).values() if hasattr(kind, "short"))
+    short = next((kind for kind in kinds(meta["family"]).values() if hasattr(kind, "short")), None)
     found = [
         read_table(short, one, (*item, str(k)), gather)
-        if isinstance(one, str)
+        if isinstance(one, str) and short
         else _part(one, {"family": meta["family"]}, (*item, str(k)), gather)
         for k, one in enumerate(raw, 1)
     ]

@@ -58,6 +58,10 @@ def everything(mechanism: Mechanism) -> Iterator[Part]:
     for name, member in mechanism.members.items():
         yield Part(("members", name), member)
     yield from joints(mechanism)
+    for point, pin in mechanism.pins.items():
+        yield Part(("pins", point), pin)
+    for name, material in mechanism.materials.items():
+        yield Part(("materials", name), material)
     yield Part((), mechanism)
     yield Part(("gravity",), mechanism.gravity)
     yield from loads(mechanism)

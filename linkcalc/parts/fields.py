@@ -59,12 +59,12 @@ def arcs(text: str, default: Any = MISSING) -> Any:
     return _made("arcs", text, default)
 
 
-def parts(family: str, text: str, wanted: str, *, least: int = 2) -> Any:
+def parts(family: str, text: str, wanted: str, default: Any = MISSING, *, least: int = 2) -> Any:
     """Parts of a family in order, kept as a tuple; a bare name is the kind of the family that has a short form.
 
     wanted  what a message says should stand there
     """
-    return _made("parts", text, MISSING, family=family, wanted=wanted, least=least)
+    return _made("parts", text, default, family=family, wanted=wanted, least=least)
 
 
 def pairs(of: str, text: str, default: Any = MISSING) -> Any:

@@ -28,6 +28,14 @@ class Note:
 
 
 @dataclass(frozen=True)
+class Lines:
+    """Lines that stay as they are, such as formulas, under a title."""
+
+    title: str
+    lines: tuple[str, ...]
+
+
+@dataclass(frozen=True)
 class Column:
     """A column of a table.
 
@@ -173,4 +181,4 @@ class Drawing:
     tables: tuple[Table, ...] = field(default=())
 
 
-Block = Heading | Note | Table | Chart | Drawing
+Block = Heading | Note | Lines | Table | Chart | Drawing

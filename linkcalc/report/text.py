@@ -6,7 +6,7 @@ import textwrap
 from collections.abc import Callable, Iterable
 from dataclasses import replace
 
-from linkcalc.report.blocks import Block, Cell, Chart, Column, Drawing, Heading, Note, Table
+from linkcalc.report.blocks import Block, Cell, Chart, Column, Drawing, Heading, Lines, Note, Table
 from linkcalc.report.numbers import GAP, number, plain
 
 WIDTH = 96
@@ -39,6 +39,10 @@ def _note(block: Note, width: int) -> str:
     return textwrap.fill(
         lead + block.text, width, subsequent_indent=" " * len(lead), break_long_words=False, break_on_hyphens=False
     )
+
+
+def _lines_as_they_are(block: Lines, _width: int) -> str:
+    return "\n".join([block.title, "", *(f"  {line}" for line in block.lines)])
 
 
 def _table(block: Table, width: int) -> str:
@@ -125,6 +129,7 @@ def _drawing(block: Drawing, width: int) -> str:
 _WRITERS: dict[type, Callable[..., str]] = {
     Heading: _heading,
     Note: _note,
+    Lines: _lines_as_they_are,
     Table: _table,
     Chart: _chart,
     Drawing: _drawing,

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from pathlib import Path
+from typing import Any
 
 from .ask import ask
+from .elements import ELEMENTS, printed_elements
 from .expected import SI, Printed, head, model_file, printed_values
 
 PAGE = Path(__file__).parents[2] / "docs" / "verification.md"
@@ -20,6 +22,12 @@ digits in `tests/outside/expected.toml`. A value agrees if it differs by no more
 printed digit. Where the given sizes lead to the printed digits without rounding (marked =), it must agree to 1 part
 in a million. A wider tolerance stands beside the digits. Bars mean that a source prints a size without its sense.
 What was not read in the source itself but is remembered of it says so.
+"""
+
+_ELEMENTS = """
+## Pins, bushes, bearings and members: sources
+
+Printed digits in `tests/outside/elements.toml`, what is asked in `tests/outside/elements.py`.
 """
 
 
@@ -65,11 +73,19 @@ def rows(case: str) -> list[Row]:
     return found
 
 
+def element_rows(case: str) -> list[Row]:
+    """The rows of one case of pins, bushes, bearings and the like."""
+    found = ELEMENTS[case]()
+    return [Row(case, entry, found[entry.ask] / SI[entry.unit]) for entry in printed_elements()[case]["printed"]]
+
+
 def render() -> str:
     """The whole page."""
     cases = list(printed_values())
     sources = [_source(case) for case in cases]
     values = [row.cells for case in cases for row in rows(case)]
+    elements = printed_elements()
+    sized = [row.cells for case in elements for row in element_rows(case)]
     return "\n".join(
         [
             _INTRODUCTION,
@@ -77,6 +93,10 @@ def render() -> str:
             *_table(("case", "source", "geometry from", "modelled"), sources),
             "\n## Values\n",
             *_table(("case", "quantity", "unit", "printed", *COMPUTED), values),
+            _ELEMENTS,
+            *_table(("case", "source", "given"), [_element_source(case, body) for case, body in elements.items()]),
+            "\n## Values of pins, bushes, bearings and members\n",
+            *_table(("case", "quantity", "unit", "printed", *COMPUTED), sized),
             "",
         ]
     )
@@ -84,10 +104,18 @@ def render() -> str:
 
 def _source(case: str) -> tuple[str, ...]:
     top = head(case)
+    return case, _origin(top), top["geometry"], top.get("model", "as drawn")
+
+
+def _element_source(case: str, body: Mapping[str, Any]) -> tuple[str, ...]:
+    return case, _origin(body).replace("|", "\\|"), body["inputs"]
+
+
+def _origin(top: Mapping[str, Any]) -> str:
     url = top["url"]
     link = f" <{url}>" if url.startswith("http") and " " not in url else f" {url}"
     seen = f" Seen: {top['seen']}." if "seen" in top else ""
-    return case, f"{top['source']}.{link}{seen}", top["geometry"], top.get("model", "as drawn")
+    return f"{top['source']}.{link}{seen}"
 
 
 def _table(names: Sequence[str], lines: Sequence[Sequence[str]]) -> list[str]:

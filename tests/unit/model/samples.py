@@ -90,6 +90,24 @@ at = "H"
 [welds.root]
 members = ["beam", "ground"]
 at = "K"
+[pins.A]
+friction = 0.1
+diameter = 0.5
+material = "own-steel"
+factor = 2
+stack = [["ground", 0.25], { plate = "bar", thickness = 0.5, width = 2 }, { plate = "ground", thickness = "6 mm" }]
+bush = "bronze, greased"
+length = "1/2 in"
+[pins.B]
+diameter = 0.5
+bearing = "ball"
+life = "1e6"
+[materials.own-steel]
+yield = 50
+ultimate = "500 MPa"
+modulus = 30000
+[materials.plain]
+yield = 36
 [gravity]
 size = "9.81 m/s^2"
 direction = "-100 deg"

@@ -249,6 +249,7 @@ def test_other_units_of_the_file_change_nothing(mechanism: Mechanism) -> None:
         effort=spelt_out(mechanism.effort, mechanism),
         load=spelt_out(mechanism.load, mechanism),
         loads=each(mechanism.loads),
+        pins=each(mechanism.pins),
         cases={
             name: replace(case, add=each(case.add), gravity=spelt_out(case.gravity, mechanism))
             for name, case in mechanism.cases.items()

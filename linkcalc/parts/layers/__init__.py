@@ -1,0 +1,1 @@
+"""What lies on a pin, plate by plate."""
