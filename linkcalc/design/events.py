@@ -53,7 +53,7 @@ def _turning(curves: Curves) -> list[str]:
     return [
         *(name for name in _SPEEDS if name in curves.survey.quantities),
         *(name for name in axial if not _carries_nothing(curves, name)),
-        *(["effort"] if curves.survey.ready.chain.rubs else []),
+        *(["effort"] if curves.survey.ready.chain.rubbing else []),
         *(name for name in _tensions(curves) if not _carries_nothing(curves, name)),
     ]
 

@@ -134,7 +134,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         y=_placed(_stacked(at.y, still), b.status),
         turn=_placed(np.arctan2(_stacked(at.s, still), _stacked(at.c, still)), b.status),
         status=b.status,
-        rubs=bool(ready.chain.rubs),
+        rubs=ready.chain.rubbing,
         checks=checks,
         events=found,
         verdicts=judged,

@@ -40,7 +40,7 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
     live: Mask = here.fine
     lost: Mask = np.zeros_like(live)
     last: Value = drawn
-    for target, wanted in _targets(path, drawn, drive):
+    for target, wanted in _targets(path, drawn, drive, toothed=ready.chain.toothed):
         step = target - last
         even = isinstance(step, float) and span
         guess = between(before, here, 1 + step / span, span) if even else along(here, step)
@@ -63,9 +63,10 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
             yield Solved(np.full(there.fine.shape, target), there, solved)
 
 
-def _targets(path: Path, drawn: Array, drive: Array) -> Iterator[tuple[Value, bool]]:
+def _targets(path: Path, drawn: Array, drive: Array, *, toothed: bool) -> Iterator[tuple[Value, bool]]:
     """Values of the drive to go to, and whether the answer wants them. On the way to the first each copy starts
-    from its own drawing pose; then all go together, with nodes of the walk between poses that lie far apart."""
+    from its own drawing pose; then all go together, with nodes of the walk between poses that lie far apart: every one
+    of them where a step too far would come out a tooth or a turn off."""
     whole = drive[0] - path.drawn
     for node in path.approach[1:-1]:
         yield drawn + (drive[0] - drawn) * ((node.drive - path.drawn) / whole), False
@@ -73,7 +74,7 @@ def _targets(path: Path, drawn: Array, drive: Array) -> Iterator[tuple[Value, bo
     nodes = np.array([n.drive for n in path.nodes])
     for a, b in pairwise(drive):
         inside = nodes[(nodes - a) * (nodes - b) < 0]
-        if inside.size > 1:
+        if inside.size > (0 if toothed else 1):
             yield from ((float(n), False) for n in (inside if b > a else np.sort(inside)[::-1]))
         yield float(b), True
 

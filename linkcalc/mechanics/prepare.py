@@ -44,8 +44,8 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     like  the same mechanism with other sizes, made ready before: its plans of elimination are used again
     """
     mechanism = drawing.mechanism
-    rubbing = any(joint.rubs() for joint in drawing.joints) and mechanism.effort is not None
-    loads = pushing(drawing.assembly(), rubbing=rubbing, forward=_forward(drawing))
+    friction = any(not rub.always for joint in drawing.joints for rub in joint.rubs())
+    loads = pushing(drawing.assembly(), rubbing=friction and mechanism.effort is not None, forward=_forward(drawing))
     at = _drawn(drawing, loads)
     moving = len(drawing.members) - 1
     if moving == 0:
