@@ -39,7 +39,7 @@ class Mark:
     along   direction of the line or arrow (x, y), (0, 0) if it has none
     name    what to write beside it
     line    its own line, if it has one that is neither straight nor a member's: ((x, y), ...)
-    rounds  circles that belong to it: ((x, y, radius), ...)
+    rounds  circles that belong to it: ((x, y, radius), ...); of teeth in mesh in the order of the members
     """
 
     shape: str

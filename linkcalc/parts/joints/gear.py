@@ -36,18 +36,19 @@ class Gear:
     def joints(self, name: str, sketch: Sketch) -> Iterator[GearJoint]:
         sites = tuple(sketch.site(c, m) for c, m in zip(self.centres, self.members, strict=True))
         first, second = (sketch.value(r, "length") for r in self.radii)
-        grain = pitch((first, second))
         if self.mesh == INTERNAL:  # the radius of a ring counts minus
             larger = np.less(first, second)
             first, second = np.where(larger, first, -first), np.where(larger, -second, second)
             if np.ndim(first) == 0:
                 first, second = float(first), float(second)
+        grain = pitch((abs(first), abs(second)))
         (ax, ay), (bx, by) = (sketch.point(c) for c in self.centres)
         self._check_touching(sketch, np.hypot(bx - ax, by - ay), np.abs(first + second))
-        common = [m for m in sketch.carriers(self.centres[0]) if m in sketch.carriers(self.centres[1])]
-        carrier = min((sketch.member(m) for m in common), default=None)
+        common = (m for m in sketch.carriers(self.centres[0]) if m in sketch.carriers(self.centres[1]))
+        carrier = min(common, key=sketch.member, default=None)
+        carried = None if carrier is None else tuple(sketch.site(c, carrier) for c in self.centres)
         yield GearJoint(name, sites[0], sites[1], (first, second), (bx - ax, by - ay), slant(sketch, self.pressure_angle),
-                        grain, carrier)  # fmt: skip
+                        grain, carried)  # fmt: skip
 
     def _check_touching(self, sketch: Sketch, apart: Value, wanted: Value) -> None:
         """Looked at with the mechanism's own sizes."""
@@ -69,7 +70,7 @@ class GearJoint:
     drawn    [m] from the first centre to the second in the drawing pose
     slant    [-] tangent of the pressure angle
     grain    [m] the gap is known but for multiples of this
-    carrier  index of a member that carries both centres, None if there is none
+    carried  both centres as a third member carries them, whose pins keep their distance; None if there is none
     """
 
     name: str
@@ -79,7 +80,7 @@ class GearJoint:
     drawn: tuple[Value, Value]
     slant: Value
     grain: Value
-    carrier: int | None = None
+    carried: tuple[Site, Site] | None = None
     on_pin: str = ""
     angular = (False,)
     word = "gear"
@@ -98,26 +99,29 @@ class GearJoint:
         return bx - ax, by - ay
 
     def _line_of_centres(self, at: Poses) -> tuple[Value, Value]:
-        """Its turn since the drawing: cosine and sine times some length."""
-        (dx, dy), (ux, uy) = self._apart(at), self.drawn
-        return dx * ux + dy * uy, ux * dy - uy * dx
+        """[m] from the first centre to the second, by the turn of the member that carries both if one does."""
+        if self.carried is None:
+            return self._apart(at)
+        (ax, ay), (bx, by) = (at.arm(site) for site in self.carried)
+        return bx - ax, by - ay
 
     def gap(self, at: Poses) -> tuple[Value]:
+        dx, dy = self._line_of_centres(at)
+        (ux, uy), (a, b) = self.drawn, self.members
+        c, s = dx * ux + dy * uy, ux * dy - uy * dx  # of the turn of the line of centres, times a length squared
         with np.errstate(all="ignore"):
-            c, s = line = self._line_of_centres(at)
-            # the turn of the carrier is that of the line of centres where its pins hold; unlike the line it is known
-            # well before they do, so it tells which tooth is in mesh
-            if self.carrier is not None:
-                c, s = at.c[self.carrier], at.s[self.carrier]
-            turns = (np.arctan2(at.s[m] * c - at.c[m] * s, at.c[m] * c + at.s[m] * s) for m in self.members)
-            gap = wound(sum(r * turn for r, turn in zip(self.radii, turns, strict=True)), self.grain)
-            if self.carrier is not None:
-                gap = gap - self._span * np.arctan2(line[1] * c - line[0] * s, line[0] * c + line[1] * s)
+            first, second = (np.arctan2(at.s[m] * c - at.c[m] * s, at.c[m] * c + at.s[m] * s) for m in (a, b))
+            gap = wound(self.radii[0] * first + self.radii[1] * second, self.grain)
+            if self.carried is not None:
+                # nothing where the pins of the carrier hold. Before they do this makes the turns go by turns alone:
+                # guesses of places are far off, and would lead to another tooth
+                px, py = self._apart(at)
+                gap = gap - self._span / (dx * dx + dy * dy) * (dx * py - dy * px)
         return (gap,)
 
     def slope(self, at: Poses) -> tuple[Row]:
         a, b = self.members
-        (ua, va), (ub, vb), (dx, dy) = at.arm(self.site), at.arm(self.other), self._apart(at)
+        (ua, va), (ub, vb), (dx, dy) = at.arm(self.site), at.arm(self.other), self._line_of_centres(at)
         with np.errstate(all="ignore"):
             part = self._span / (dx * dx + dy * dy)
             fx, fy = -part * dy, part * dx
@@ -128,7 +132,7 @@ class GearJoint:
 
     def place(self, at: Poses) -> tuple[Value, Value]:
         """[m] the pitch point: where the two move alike."""
-        (x, y), (dx, dy) = at.spot(self.site), self._apart(at)
+        (x, y), (dx, dy) = at.spot(self.site), self._line_of_centres(at)
         part = self.radii[0] / self._span
         return x + part * dx, y + part * dy
 
@@ -143,7 +147,7 @@ class GearJoint:
     def _push_apart(self, at: Poses) -> tuple[Push, ...]:
         """A force along the line of centres on each gear, away from the teeth of the other."""
         a, b = self.members
-        (ua, va), (ub, vb), (dx, dy) = at.arm(self.site), at.arm(self.other), self._apart(at)
+        (ua, va), (ub, vb), (dx, dy) = at.arm(self.site), at.arm(self.other), self._line_of_centres(at)
         with np.errstate(all="ignore"):
             part = self._span / (dx * dx + dy * dy)
             fx, fy = -part * dx, -part * dy
