@@ -460,7 +460,7 @@ against = "lever"
 to = 20
 poses = 7
 """
-"""A pinion on a block rolls along a rack on a lever that its own pin, in a fixed slot, swings; the stroke is its turn."""
+"""A pinion on a block rolls along a rack on a lever, and swings that by a pin in a fixed slot; stroke: its turn."""
 
 SAMPLES = (
     Sample("joint", "slide", "guide", RAM),

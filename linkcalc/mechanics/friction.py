@@ -5,8 +5,8 @@ friction of 1. So all that is left is one unknown a rubbing joint, its normal fo
 frictionless values the iteration N <- |reaction(N)| contracts by about the friction angle; where it does not (close to
 jamming), Newton goes on, with the friction raised step by step from nothing. What then finds no answer jams.
 
-What teeth push each other apart with is such an unknown too, but pushes the same way in either sense of motion: it is no
-friction, and belongs to the frictionless answer.
+What teeth push each other apart with is such an unknown too, but pushes the same way in either sense of motion: it
+is no friction, and belongs to the frictionless answer.
 """
 
 from __future__ import annotations

@@ -141,7 +141,7 @@ def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
         spare = found.free - wanted
         takes = f", of which {driven} takes one" if wanted else ""
         what = f"{_number(found.free)}{takes}: {', '.join(movers)} can move"
-        much = f"hold them by {spare} more: a slot holds 1, a pin or slide 2, a weld 3"
+        much = f"hold them by {spare} more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3"
         cure = f"give the model an [effort], or {much}" if not wanted and spare == 1 else much
         faults.append(Fault(("members", movers[0] if movers else "ground"), what, cure))
     if found.excess:

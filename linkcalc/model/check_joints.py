@@ -151,6 +151,7 @@ def _gear(joint: Gear, item: Item, carried: Carried, gather: Gather) -> None:
     first, second = joint.members
     if first == second:
         gather.add((*item, "members"), f"{first} cannot mesh with itself", "two members are wanted")
+        return
     for centre, member in zip(joint.centres, joint.members, strict=True):
         _check_centre(centre, member, (*item, "centres"), carried, gather)
 
@@ -160,6 +161,7 @@ def _rack(joint: Rack, item: Item, carried: Carried, gather: Gather) -> None:
     if joint.pinion == joint.on:
         wanted = "another member is wanted for 'pinion' or 'on'"
         gather.add(item, f"{joint.on} cannot roll along itself", wanted)
+        return
     _check_centre(joint.centre, joint.pinion, (*item, "centre"), carried, gather)
     carried.check(joint.along, joint.on, (*item, "along"), gather)
 

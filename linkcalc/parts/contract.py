@@ -141,8 +141,8 @@ class Joint(Protocol):
 
     One that acts at several places has, besides, ``contacts(at)``: a Contact for each of them. It has one row, whose
     multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).
-    One whose force is told at a place that moves on its members has ``place(at)`` -> (x, y) [m]. One with teeth has
-    ``grain`` (its gap is known but for multiples of that [m]) and ``astray(at)`` (centres farther apart than drawn [m]).
+    One with teeth has ``place(at)``, where its force is told, for that moves on its members: (x, y) [m]; ``grain``:
+    its gap is known but for multiples of that [m]; ``astray(at)``: how far its centres have moved apart [m].
 
     name, word   what the file calls it, and its kind
     members      indices of the members it joins; the first is the one its force acts on

@@ -80,10 +80,11 @@ class Resum:
                 first, second = (self.drawing.value(r, "length") for r in part.radii)
                 # of an inner mesh the circles touch on the far side of the smaller one
                 share = first / (first + second if part.mesh == "external" else first - second)
-                return spots[0][0] + share * (spots[1][0] - spots[0][0]), spots[0][1] + share * (spots[1][1] - spots[0][1])
+                (ax, ay), (bx, by) = spots
+                return ax + share * (bx - ax), ay + share * (by - ay)
             case "rack":
-                (px, py), (ax, ay), (bx, by) = (self.place(p, m) for p, m in
-                                                ((part.centre, part.pinion), *((q, part.on) for q in part.along)))  # fmt: skip
+                px, py = self.place(part.centre, part.pinion)
+                (ax, ay), (bx, by) = (self.place(point, part.on) for point in part.along)
                 way = ((px - ax) * (bx - ax) + (py - ay) * (by - ay)) / ((bx - ax) ** 2 + (by - ay) ** 2)
                 return ax + way * (bx - ax), ay + way * (by - ay)
             case "weld":

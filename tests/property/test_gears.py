@@ -127,7 +127,7 @@ poses = 13
        angles, st.floats(-700, 700))  # fmt: skip
 def test_a_geared_five_bar(crank: float, rocker: float, rod: float, link: float, ratio: int, alpha: float, beta: float,
                            way: float) -> None:  # fmt: skip
-    """Two cranks in mesh that carry a joint between them: places from the turns and two arcs, effort from virtual work."""
+    """Two cranks in mesh with a joint between them: places from turns and two arcs, effort from virtual work."""
     ground = 120.0
     text = FIVE_BAR.format(ground=ground, crank=crank, rocker=rocker, rod=rod, link=link, ratio=ratio, alpha=alpha,
                            beta=beta, to=alpha + (way if abs(way) > 1 else 1))  # fmt: skip
@@ -143,7 +143,7 @@ def test_a_geared_five_bar(crank: float, rocker: float, rod: float, link: float,
         along = (rod**2 - link**2 + far**2) / (2 * far)
         return b, b + (e - b) / far * (along + 1j * np.sqrt(rod**2 - along**2))
 
-    b, c = meet(theta)
+    _, c = meet(theta)
     table = Resum(answer)
     x, y = table.somewhere("C")
     np.testing.assert_allclose(np.ravel(x) * 1e3, c.real, atol=1e-8)

@@ -14,7 +14,7 @@ import numpy as np
 from linkcalc.faults import fault
 from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Mark, Poses, Push, Row, Rub, Site, Size, Sketch, Value, X, Y
-from linkcalc.parts.teeth import PRESSURE_ANGLE, TOUCHING, pitch, slant, wound
+from linkcalc.parts.teeth import PRESSURE_ANGLE, TEETH, TOUCHING, pitch, slant, wound
 from linkcalc.words import word
 
 EXTERNAL, INTERNAL = "external", "internal"
@@ -34,21 +34,27 @@ class Gear:
     pressure_angle: Size = fields.size("angle", "pressure angle of the teeth", PRESSURE_ANGLE)
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[GearJoint]:
-        sites = tuple(sketch.site(c, m) for c, m in zip(self.centres, self.members, strict=True))
-        first, second = (sketch.value(r, "length") for r in self.radii)
-        if self.mesh == INTERNAL:  # the radius of a ring counts minus
-            larger = np.less(first, second)
-            first, second = np.where(larger, first, -first), np.where(larger, -second, second)
-            if np.ndim(first) == 0:
-                first, second = float(first), float(second)
-        grain = pitch((abs(first), abs(second)))
+        p, q = self.centres
+        site, other = (sketch.site(c, m) for c, m in zip(self.centres, self.members, strict=True))
+        first, second = self._signed(*(sketch.value(r, "length") for r in self.radii))
         (ax, ay), (bx, by) = (sketch.point(c) for c in self.centres)
         self._check_touching(sketch, np.hypot(bx - ax, by - ay), np.abs(first + second))
         common = (m for m in sketch.carriers(self.centres[0]) if m in sketch.carriers(self.centres[1]))
         carrier = min(common, key=sketch.member, default=None)
-        carried = None if carrier is None else tuple(sketch.site(c, carrier) for c in self.centres)
-        yield GearJoint(name, sites[0], sites[1], (first, second), (bx - ax, by - ay), slant(sketch, self.pressure_angle),
-                        grain, carried)  # fmt: skip
+        carried = None if carrier is None else (sketch.site(p, carrier), sketch.site(q, carrier))
+        # without a carrier guesses of places tell where the line of centres is: too far off to count teeth by them
+        grain = pitch((first, second), TEETH if carried else 1)
+        lean = slant(sketch, self.pressure_angle)
+        yield GearJoint(name, site, other, (first, second), (bx - ax, by - ay), lean, grain, carried)
+
+    def _signed(self, first: Value, second: Value) -> tuple[Value, Value]:
+        """Both radii, that of a ring minus."""
+        if self.mesh == EXTERNAL:
+            return first, second
+        ring = np.where(np.less(first, second), 1.0, -1.0)
+        if np.ndim(ring) == 0:
+            return first * float(ring), second * -float(ring)
+        return first * ring, second * -ring
 
     def _check_touching(self, sketch: Sketch, apart: Value, wanted: Value) -> None:
         """Looked at with the mechanism's own sizes."""

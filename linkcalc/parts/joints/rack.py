@@ -35,14 +35,18 @@ class Rack:
         (px, py), (qx, qy) = sketch.point(self.centre), sketch.point(self.along[0])
         radius = sketch.value(self.radius, "length")
         off = line.tx * (py - qy) - line.ty * (px - qx)
-        if np.ndim(off) == 0 and np.ndim(radius) == 0 and abs(abs(float(off)) - radius) > TOUCHING * float(radius):
-            what = f"the pinion does not touch the rack: {self.centre} is drawn {sketch.shown(abs(float(off)))} from it"
-            raise fault(("centre",), what, f"{sketch.shown(float(radius))} is wanted, the pitch radius")
-        left = radius * np.sign(off)
-        left = left if np.ndim(left) else float(left)
+        if np.ndim(off) == 0 and np.ndim(radius) == 0:
+            self._check_touching(sketch, abs(float(off)), float(radius))
+        left: Value = radius * np.sign(off)
         begin = line.tx * (px - qx) + line.ty * (py - qy)
         yield RackJoint(name, sketch.site(self.centre, self.pinion), line, left, begin, off,
                         slant(sketch, self.pressure_angle))  # fmt: skip
+
+    def _check_touching(self, sketch: Sketch, off: float, radius: float) -> None:
+        """Looked at with the mechanism's own sizes."""
+        if abs(off - radius) > TOUCHING * radius:
+            what = f"the pinion does not touch the rack: {self.centre} is drawn {sketch.shown(off)} from it"
+            raise fault(("centre",), what, f"{sketch.shown(radius)} is wanted, the pitch radius")
 
 
 @dataclass(frozen=True, eq=False)

@@ -51,8 +51,8 @@ def difference(f: Callable[[Poses], Any], at: Poses, member: int, which: int) ->
 
 
 def closed(joint: Joint, at: Poses) -> Poses:
-    """The nearest poses in which the joint holds, by the shortest Newton steps on its own equations. Gears whose centres
-    a third member carries are put on it first, and then turned only."""
+    """The nearest poses in which the joint holds, by the shortest Newton steps on its own equations. Gears whose
+    centres a third member carries are put on it first, and then turned only."""
     carried = getattr(joint, "carried", None)
     for _ in range(60):
         for own, place in zip((joint.site, joint.other), carried, strict=True) if carried else ():

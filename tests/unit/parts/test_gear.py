@@ -134,7 +134,8 @@ def test_pins_rub_under_the_whole_force() -> None:
 
 def test_a_frame_feels_the_push_apart_too() -> None:
     """Without stroke and effort, a weight on one gear and a stop on the other: the teeth still push."""
-    answer = stroke(parse("""
+    answer = stroke(
+        parse("""
 [points]
 P = [0, 0]
 Q = [50, 0]
@@ -155,7 +156,8 @@ along = 90
 at = "a"
 direction = -90
 size = 100
-"""))
+""")
+    )
     x, y = answer.force_on("mesh", "first")[:, 0, 0, 0]
     assert (x, y) == pytest.approx((-300 * SLANT, -300.0), rel=EXACT)  # 100 N x 60 mm over 20 mm
     # 300 N x 30 mm on the second gear, against the slot 40 mm above Q
@@ -166,7 +168,8 @@ size = 100
 def test_a_planet_turns_by_willis() -> None:
     """Fixed ring 60, planet 20, sun 20: the sun makes 1 + 60/20 = 4 turns for one of the arm (R. Willis's relation
     of turns taken relative to the arm; common practice), the planet 1 - 60/20 = -2; here over one and a half turns."""
-    answer = stroke(parse("""
+    answer = stroke(
+        parse("""
 [points]
 O = [0, 0]
 P = [40, 0]
@@ -196,7 +199,8 @@ turn = "arm"
 from = 0
 to = 540
 poses = 73
-"""))
+""")
+    )
     assert not answer.status.any()
     arm, planet, sun = (rolled(answer, k) for k in (1, 2, 3))
     np.testing.assert_allclose(planet, -2 * arm, atol=1e-9)
