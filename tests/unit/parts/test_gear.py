@@ -291,6 +291,10 @@ def test_gears_that_come_out_of_mesh_are_warned_of() -> None:
     x, y = far * math.cos(math.radians(30)), far * math.sin(math.radians(30)) - 10
     assert f"{50 - math.hypot(x, y):.2f}" == "3.20"
     assert "into each other by 3.202 mm at 30 deg" in warned.text
+    # the push apart does work there: it counts in the effort, and is still no friction
+    assert max(unbalanced(answer).values()) < EXACT
+    assert answer.checks.virtual_work < EXACT
+    np.testing.assert_allclose(answer.frictionless_effort, answer.effort, rtol=EXACT)
     assert not [c for c in pair(20, 30).caveats if c.item == "mesh"]
 
 
