@@ -19,6 +19,9 @@ from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Mask, Poses, Value
 
+_SAME = 1e-9  # of the way between two poses
+_TOOTH = 0.15  # [rad] half the least tooth; the steps of the walk keep below
+
 
 def solve_copies(ready: Ready, path: Path, drive: Array) -> Solved:
     """All copies at some values of the drive (values), in the order of the stroke; arrays (case, variant, pose)."""
@@ -49,6 +52,8 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
         if not there.fine.all():
             live = live & there.fine
         kept = _kept(path, there, branch, live)
+        if ready.chain.toothed:
+            kept = kept & ~_slipped(here, there, step)
         if not kept.all():
             lost, live = lost | (live & ~kept), live & kept
         span = step if isinstance(step, float) else 0.0
@@ -73,7 +78,8 @@ def _targets(path: Path, drawn: Array, drive: Array, *, toothed: bool) -> Iterat
     yield np.full(drawn.shape, drive[0]), True
     nodes = np.array([n.drive for n in path.nodes])
     for a, b in pairwise(drive):
-        inside = nodes[(nodes - a) * (nodes - b) < 0]
+        # a node that is a pose but for rounding would make a step too short to foretell the next one by
+        inside = nodes[(nodes - a) * (nodes - b) < -_SAME * (b - a) ** 2]
         if inside.size > (0 if toothed else 1):
             yield from ((float(n), False) for n in (inside if b > a else np.sort(inside)[::-1]))
         yield float(b), True
@@ -85,6 +91,16 @@ def _kept(path: Path, there: Closed, branch: Mask, live: Mask) -> Mask:
         return live
     same: Mask = there.factored.negative == branch
     return same
+
+
+def _slipped(a: Closed, b: Closed, step: Value) -> Mask:
+    """(1, variant, 1) copies in which some member has not turned as the mean of its speeds says: a tooth was lost."""
+    slipped: Mask = np.zeros((1, 1, 1), bool)
+    for k in range(1, len(a.at.x)):
+        turn = np.arctan2(b.at.s[k] * a.at.c[k] - b.at.c[k] * a.at.s[k], b.at.c[k] * a.at.c[k] + b.at.s[k] * a.at.s[k])
+        off = turn - step * (a.speed[3 * k - 1] + b.speed[3 * k - 1]) / 2
+        slipped = slipped | (np.abs((off + np.pi) % (2 * np.pi) - np.pi) > _TOOTH)
+    return slipped
 
 
 def _joined(poses: list[Solved]) -> Solved:

@@ -156,3 +156,29 @@ def test_a_geared_five_bar(crank: float, rocker: float, rod: float, link: float,
     np.testing.assert_allclose(answer.effort[0, 0], -work / (2 * step) / 1e3, rtol=1e-6, atol=1e-6 * 15)
     assert max(unbalanced(answer).values()) < EXACT
     on_the_line_of_action(answer, math.radians(20))
+
+
+@given(teeth, st.integers(12, 80), teeth, angles, angles, st.floats(200, 2500), st.integers(2, 12))
+def test_copies_lose_no_tooth(z1: int, z2: int, z3: int, lean: float, turn: float, way: float, poses: int) -> None:
+    """Copies of other modules go from pose to pose, however far apart these are."""
+    text = TRAIN.format(r1=f'"m*{z1}/2"', r2=f'"m*{z2}/2"', r3=f'"m*{z3}/2"', lean=lean, turn=turn, slant=20, pull=30,
+                        to=lean + way, poses=9).replace("[dimensions]", "[dimensions]\nm = 1.5")  # fmt: skip
+    answer = stroke(parse(text), sizes={"m": np.array([0.0015, 0.0012, 0.002])}, poses=poses)
+    assert not answer.status.any()
+    gone = answer.drive[0, 0] - answer.drive[0, 0, 0]
+    got = answer.turn[3, 0]
+    np.testing.assert_allclose(np.angle(np.exp(1j * (got - got[:, :1] - gone * z1 / z3))), 0.0, atol=1e-9)
+
+
+def test_copies_step_over_a_node_that_is_a_pose() -> None:
+    """A node of the walk within rounding of a pose makes no step: the next one could not be foretold by it."""
+    rng = np.random.default_rng(2)
+    alpha, beta = rng.uniform(-180, 180, 2)
+    text = FIVE_BAR.format(ground=120, crank=rng.uniform(20, 40), rocker=30, rod=170, link=170, ratio=3, alpha=alpha,
+                           beta=beta, to=alpha + 212)  # fmt: skip
+    text = text.replace("[points]", "[dimensions]\nl = 170\n[points]", 1).replace('["B", 170]', '["B", "l"]')
+    answer = stroke(parse(text), sizes={"l": np.array([0.16, 0.17, 0.18])}, poses=13)
+    assert not answer.status.any()
+    gone = answer.drive[0, 0] - answer.drive[0, 0, 0]
+    second = np.angle(np.exp(1j * (answer.turn[2, 0] + gone / 3)))
+    np.testing.assert_allclose(second, 0.0, atol=1e-9)
