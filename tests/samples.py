@@ -420,6 +420,88 @@ to = 122
 poses = 9
 """
 """A toggle clamp: its links and one pin give, it presses a workpiece, goes over centre and comes down on a rest."""
+TRAIN = """
+[points]
+O = [0, 0]
+P = { from = "O", distance = 50, angle = 25 }
+R = { from = "O", distance = 100, angle = 100 }
+H = { from = "R", distance = 45, angle = 200 }
+tip = { from = "P", distance = 35, angle = 80 }
+grip = { from = "O", distance = 60, angle = 190 }
+[members]
+ground = ["O", "R"]
+arm = { points = ["O", "P"], mass = 0.5 }
+planet = { points = ["tip", "P"], mass = 0.8 }
+sun = ["O", "grip"]
+drum = ["R", "H"]
+[gears.inner]
+members = ["planet", "ground"]
+centres = ["P", "O"]
+radii = [15, 65]
+mesh = "internal"
+pressure_angle = 25
+[gears.outer]
+members = ["planet", "sun"]
+centres = ["P", "O"]
+radii = [15, 35]
+[gears.side]
+members = ["drum", "sun"]
+centres = ["R", "O"]
+radii = [40, 60]
+[effort]
+torque_on = "arm"
+[load]
+at = "H"
+direction = -30
+size = 60
+[stroke]
+turn = "arm"
+from = "drawn"
+to = 75
+poses = 7
+"""
+"""A planet on an arm between a fixed ring and a sun that drives a drum: gears inside and outside, centres that move."""
+
+WINDER = """
+[points]
+O = [0, 0]
+C = [60, 70]
+grip = [120, 100]
+near = [20, 45]
+far = { from = "near", distance = 100, angle = 0 }
+K = [-40, 40]
+[members]
+ground = ["O"]
+lever = { points = ["O", "near", "far"], mass = 1 }
+wheel = { points = ["grip", "C"], mass = 0.7 }
+block = ["C", "K"]
+[slides.ways]
+member = "block"
+along = 0
+on = "lever"
+at = "K"
+[racks.teeth]
+pinion = "wheel"
+centre = "C"
+radius = 25
+along = ["near", "far"]
+on = "lever"
+[slots.cam]
+point = "grip"
+along = 60
+[effort]
+torque_on = "wheel"
+[load]
+at = "K"
+direction = 200
+size = 40
+[stroke]
+turn = "wheel"
+against = "lever"
+to = 20
+poses = 7
+"""
+"""A pinion on a block rolls along a rack on a lever, and swings that by a pin in a fixed slot; stroke: its turn."""
 
 SAMPLES = (
     Sample("joint", "contact", "work", CLAMP),
@@ -432,6 +514,10 @@ SAMPLES = (
     Sample("joint", "rope", "strap", SECTOR),
     Sample("joint", "track", "groove", CAM),
     Sample("joint", "track", "rail", RAIL),
+    Sample("joint", "gear", "inner", TRAIN),
+    Sample("joint", "gear", "outer", TRAIN),
+    Sample("joint", "gear", "side", TRAIN),
+    Sample("joint", "rack", "teeth", WINDER),
     Sample("joint", "weld", "corner", BRACKET),
     Sample("joint", "weld", "foot", BRACKET),
     Sample("load", "at", "load", RAM),

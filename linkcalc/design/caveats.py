@@ -20,6 +20,7 @@ from linkcalc.parts.pose import Array, Mask
 _NOTHING = 1e-9  # of the largest force: no push, but rounding
 _AT = 1e-8  # speed of load or effort over the fastest in the mechanism: a dead point
 _NEAR = 0.05  # the same: the rigid answer is doubtful if, besides, the speed is falling to nothing
+_ROUNDING = 1e-9  # of the size of the mechanism: a distance that is kept
 _REACH = 0.1  # of the stroke: a dead point no farther than this beyond an end counts as close
 
 
@@ -29,6 +30,7 @@ def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple
         *_dead(curves, events),
         *_slack(curves, events),
         *_off_track(curves),
+        *_out_of_mesh(curves),
         *_passed(curves, path),
         *_held(curves, events),
         *_free(curves, events),
@@ -106,6 +108,21 @@ def _off_track(curves: Curves) -> Iterator[Caveat]:
             yield Caveat(joint.name, f"its point is beyond an end of the track at {where}: the curve is only drawn on")
 
 
+def _out_of_mesh(curves: Curves) -> Iterator[Caveat]:
+    """Gears whose centres do not keep their distance."""
+    chain = curves.survey.ready.chain
+    for joint in (joint for joint in chain.joints if hasattr(joint, "astray")):
+        off = np.ravel(np.broadcast_to(joint.astray(curves.shown.solved.closed.at), (1, 1, curves.drive.size)))
+        off = np.where(np.isfinite(off), off, 0.0)
+        k = int(np.argmax(np.abs(off)))
+        if abs(off[k]) > _ROUNDING * chain.size:
+            far = curves.survey.ready.drawing.shown(abs(float(off[k])))
+            way = "out of mesh" if off[k] > 0 else "into each other"
+            where = place(curves.survey.ready, float(curves.drive[k]))
+            much = f"by {far} at {where}, the most of its computed poses"
+            yield Caveat(joint.name, f"its teeth come {way} {much}: the centres do not keep their distance")
+
+
 def _ahead(part: Array, k: int) -> bool:
     """True if the speed runs to zero a little beyond the end of the stroke where it is least."""
     last = part.size - 1
@@ -127,7 +144,7 @@ def _passed(curves: Curves, path: Path | None) -> Iterator[Caveat]:
 def _held(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
     """Where friction holds the mechanism without any effort: none moves it on and none lets it back."""
     pushing = curves.survey.ready.pushing
-    if not curves.survey.ready.chain.rubs or not pushing.effort_asked:
+    if not curves.survey.ready.chain.rubbing or not pushing.effort_asked:
         return
     effort = curves.samples("effort")
     for case in range(0, len(pushing.cases), 2):

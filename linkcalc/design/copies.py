@@ -33,7 +33,8 @@ class CopiesPose:
     drive   [rad or m] value of the stroke's coordinate
     effort, load  (case, variant)
     joints  joint -> multipliers (rows, case, variant): of a pin its force on the first member, x and y; of a slot the
-            force square to the line; of a slide that and the moment; of a weld x, y and moment
+            force square to the line, of a gear or rack that along the pitch line; of a slide the force square to its
+            line and the moment; of a weld x, y and moment
     status  (case, variant) mechanics.state.Status; failed copies are NaN
     """
 

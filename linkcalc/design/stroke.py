@@ -140,7 +140,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         loose=ready.loose is not None,
         steady=_full(np.nan if solved.closed.steady is None else solved.closed.steady.astype(float), shape),
         rests=rests(ready),
-        rubs=bool(ready.chain.rubs),
+        rubs=ready.chain.rubbing,
         checks=checks,
         events=found,
         verdicts=judged,

@@ -97,7 +97,7 @@ class Survey:
             out.append(Quantity(EFFORT_SPEED, "number", lambda s: s.solved.balance.effort_speed))
         if p.load and self.ready.chain.coordinate is not None:
             out.append(Quantity(LOAD_SPEED, "number", lambda s: s.solved.balance.load_speed))
-        if self.ready.chain.rubs and p.effort_asked:
+        if self.ready.chain.rubbing and p.effort_asked:
             out.append(
                 Quantity("frictionless effort", p.effort[0].pusher.kind, lambda s: s.solved.balance.frictionless)
             )

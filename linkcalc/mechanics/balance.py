@@ -37,7 +37,7 @@ class Balance:
     disagreement  of equilibrium and virtual work, over the size of the effort
     status        Status of each entry
     frictionless  what the effort would be without friction
-    friction      friction of each of the chain's rubs, along its push [N] or [N m]
+    friction      friction (or the like) of each of the chain's rubs, along its push [N] or [N m]
     """
 
     effort: Value
@@ -107,7 +107,7 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
         negative = closed.factored.solve(total, transposed=True)
         frictionless = effort
         friction: list[Value] = []
-        if chain.rubs and speed:
+        if chain.rubs and (speed or any(one.always for _, one in chain.rubs)):
             asked = load_unit if pushing.load_asked else effort_unit
             asked_speed = load_speed if pushing.load_asked else effort_speed
             sense = pushing.sense * (pushing.forward or np.sign(effort_speed))
@@ -115,6 +115,7 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             found = rub(chain, closed, sense, asked, asked_speed, answer, negative, [-g for g in given])
             more = found.unknown - answer
             total = _sum(total, (more, asked), *zip(found.amounts, found.columns, strict=True))
+            frictionless = effort if pushing.load_asked else found.frictionless
             effort, load = (effort, found.unknown) if pushing.load_asked else (found.unknown, load)
             negative, friction, jammed = found.negative, found.amounts, found.jammed
         if chain.floor and speed:

@@ -36,7 +36,9 @@ class Chain:
     """Joints between moving members, and at most one coordinate that is driven.
 
     moving      number of moving members
-    rubs        (number of the joint, its friction) of every joint that rubs
+    rubs        (number of the joint, its friction or the like) of every joint that rubs
+    rubbing     True if some of that is friction
+    toothed     True if some joint is known but for whole teeth or turns
     size        [m] size of the mechanism: what lengths are compared with
     holds       coordinates that are held besides the drive, while free members settle
     first_row   number of the first multiplier of each joint
@@ -71,6 +73,8 @@ class Chain:
         self._partly = {k for k, _, _ in gives}
         self.joint_rows = len(angular)
         self.rubs = tuple((k, rub) for k, joint in enumerate(self.joints) for rub in joint.rubs())
+        self.rubbing = any(not rub.always for _, rub in self.rubs)
+        self.toothed = any(hasattr(joint, "grain") for joint in self.joints)
         angular.extend(hold.kind == "angle" for hold in self.holds)
         if coordinate is not None:
             angular.append(coordinate.kind == "angle")

@@ -21,6 +21,9 @@ from linkcalc.mechanics.solved import Solved, joined
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Mask, Value
 
+_SAME = 1e-9  # of the way between two poses
+_TOOTH = 0.15  # [rad] half the least tooth; the steps of the walk keep below
+
 
 def solve_copies(ready: Ready, path: Path, drive: Array) -> Solved:
     """All copies at some values of the drive (values), in the order of the stroke; arrays (case, variant, pose)."""
@@ -45,7 +48,7 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
     live: Mask = here.fine
     lost: Mask = np.zeros_like(live)
     last: Value = drawn
-    for target, wanted in _targets(path, drawn, drive):
+    for target, wanted in _targets(path, drawn, drive, toothed=ready.chain.toothed):
         step = target - last
         even = isinstance(step, float) and span
         guess = between(before, here, 1 + step / span, span) if even else along(here, step)
@@ -54,6 +57,8 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
         if not there.fine.all():
             live = live & there.fine
         kept = _kept(path, there, branch, live)
+        if ready.chain.toothed:
+            kept = kept & ~_slipped(here, there, step)
         if not kept.all():
             lost, live = lost | (live & ~kept), live & kept
         span = step if isinstance(step, float) else 0.0
@@ -68,17 +73,19 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
             yield Solved(np.full(there.fine.shape, target), there, solved)
 
 
-def _targets(path: Path, drawn: Array, drive: Array) -> Iterator[tuple[Value, bool]]:
+def _targets(path: Path, drawn: Array, drive: Array, *, toothed: bool) -> Iterator[tuple[Value, bool]]:
     """Values of the drive to go to, and whether the answer wants them. On the way to the first each copy starts
-    from its own drawing pose; then all go together, with nodes of the walk between poses that lie far apart."""
+    from its own drawing pose; then all go together, with nodes of the walk between poses that lie far apart: every one
+    of them where a step too far would come out a tooth or a turn off."""
     whole = drive[0] - path.drawn
     for node in path.approach[1:-1]:
         yield drawn + (drive[0] - drawn) * ((node.drive - path.drawn) / whole), False
     yield np.full(drawn.shape, drive[0]), True
     nodes = np.array([n.drive for n in path.nodes])
     for a, b in pairwise(drive):
-        inside = nodes[(nodes - a) * (nodes - b) < 0]
-        if inside.size > 1:
+        # a node that is a pose but for rounding would make a step too short to foretell the next one by
+        inside = nodes[(nodes - a) * (nodes - b) < -_SAME * (b - a) ** 2]
+        if inside.size > (0 if toothed else 1):
             yield from ((float(n), False) for n in (inside if b > a else np.sort(inside)[::-1]))
         yield float(b), True
 
@@ -89,3 +96,13 @@ def _kept(path: Path, there: Closed, branch: Mask, live: Mask) -> Mask:
         return live
     same: Mask = there.factored.negative == branch
     return same
+
+
+def _slipped(a: Closed, b: Closed, step: Value) -> Mask:
+    """(1, variant, 1) copies in which some member has not turned as the mean of its speeds says: a tooth was lost."""
+    slipped: Mask = np.zeros((1, 1, 1), bool)
+    for k in range(1, len(a.at.x)):
+        turn = np.arctan2(b.at.s[k] * a.at.c[k] - b.at.c[k] * a.at.s[k], b.at.c[k] * a.at.c[k] + b.at.s[k] * a.at.s[k])
+        off = turn - step * (a.speed[3 * k - 1] + b.speed[3 * k - 1]) / 2
+        slipped = slipped | (np.abs((off + np.pi) % (2 * np.pi) - np.pi) > _TOOTH)
+    return slipped

@@ -4,6 +4,9 @@ Statics is linear in the frictions: every multiplier, and the effort, is its fri
 friction of 1. So all that is left is one unknown a rubbing joint, its normal force N = |reaction(N)|. From the
 frictionless values the iteration N <- |reaction(N)| contracts by about the friction angle; where it does not (close to
 jamming), Newton goes on, with the friction raised step by step from nothing. What then finds no answer jams.
+
+What teeth push each other apart with is such an unknown too, but pushes the same way in either sense of motion: it
+is no friction, and belongs to the frictionless answer.
 """
 
 from __future__ import annotations
@@ -30,9 +33,10 @@ _NEWTON = 30
 class Rubbed:
     """Friction of a batch, (case, variant, pose).
 
-    amounts  friction force or couple of each rub, along its push, signed [N] or [N m]
+    amounts  force or couple of each rub, along its push, signed [N] or [N m]
     columns  what each does to the coordinates, for 1
     unknown  what the unknown (effort or load) becomes
+    frictionless  the same with only what always pushes
     negative the multipliers, negative, friction counted
     jammed   where there is no answer, None: nowhere
     """
@@ -40,6 +44,7 @@ class Rubbed:
     amounts: list[Value]
     columns: list[Column]
     unknown: Value
+    frictionless: Value
     negative: list[Value]
     jammed: Mask | None
 
@@ -48,31 +53,45 @@ def rub(
     chain: Chain, closed: Closed, sense: Value, unit: Column, unit_speed: Value,
     unknown: Value, negative: Sequence[Value], given: Sequence[Value],
 ) -> Rubbed:  # fmt: skip
-    """Add friction to a frictionless answer.
+    """Add friction and the like to an answer without. A chain that is not driven has no friction.
 
     sense       which way the drive moves, +1 or -1: float or (case, 1, 1)
     unit        what the unknown does to the coordinates for a strength of 1; unit_speed its speed along itself
-    unknown, negative  the frictionless answer
+    unknown, negative  the answer without
     given       negative multipliers of the rows that give, which their gaps tell
     """
     columns, responses, weights = [], [], []
     for _, one in chain.rubs:
         push: Column = [0.0] * chain.columns
         add_pushes(push, 1.0, one.push(closed.at))
-        speed = _power(closed.speed, push)
-        answer = -np.divide(speed, unit_speed)
+        speed = _power(closed.speed, push) if closed.speed else 0.0
+        answer = -np.divide(speed, unit_speed) if closed.speed else 0.0
         whole = [_sum(q, _times(answer, u)) for q, u in zip(push, unit, strict=True)]
         columns.append(push)
         responses.append((closed.factored.solve(whole, transposed=True), answer))
-        weights.append(-one.factor * np.sign(sense * speed))
+        weights.append(one.factor if one.always else -one.factor * np.sign(sense * speed))
     still = [0.0] * len(given)
-    whole_rows = chain.whole(negative, given)
-    amounts, jammed = _amounts(chain, whole_rows, [chain.whole(r, still) for r, _ in responses], weights)
-    told, rows = unknown, list(negative)
-    for amount, (response, answer) in zip(amounts, responses, strict=True):
-        told = told + amount * answer
+    before, gained = chain.whole(negative, given), [chain.whole(r, still) for r, _ in responses]
+    amounts, jammed = _amounts(chain, before, gained, weights)
+    rows = list(negative)
+    for amount, (response, _) in zip(amounts, responses, strict=True):
         rows = [_sum(z, _times(amount, r)) for z, r in zip(rows, response, strict=True)]
-    return Rubbed(amounts, columns, told, rows, jammed)
+    answers = [answer for _, answer in responses]
+    told = frictionless = _answered(unknown, amounts, answers)
+    if chain.rubbing:
+        always = [w if one.always else 0.0 for w, (_, one) in zip(weights, chain.rubs, strict=True)]
+        if any(one.always for _, one in chain.rubs):
+            without, _ = _amounts(chain, before, gained, always)
+            frictionless = _answered(unknown, without, answers)
+        else:
+            frictionless = unknown
+    return Rubbed(amounts, columns, told, frictionless, rows, jammed)
+
+
+def _answered(unknown: Value, amounts: Sequence[Value], answers: Sequence[Value]) -> Value:
+    for amount, answer in zip(amounts, answers, strict=True):
+        unknown = _sum(unknown, _times(amount, answer))
+    return unknown
 
 
 def _amounts(

@@ -66,7 +66,7 @@ class Work:
         """Everything that follows from the places."""
         closed = self.close(at, [p[..., k] for k in range(len(self.places))])
         known, unit = self.forces(closed.at)
-        if self.chain.rubs and self.asked and self.drive is not None:
+        if self.chain.toothed or (self.chain.rubs and self.asked and self.drive is not None):
             for amount, push in self._rubbed(closed):
                 known = plus(known, amount, push)
         return State(self, closed, self.rates(closed), known, unit, unknown)

@@ -50,8 +50,8 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     like  the same mechanism with other sizes, made ready before: its plans of elimination are used again
     """
     mechanism = drawing.mechanism
-    rubbing = any(joint.rubs() for joint in drawing.joints) and mechanism.effort is not None
-    loads = pushing(drawing.assembly(), rubbing=rubbing, forward=_forward(drawing))
+    friction = any(not rub.always for joint in drawing.joints for rub in joint.rubs())
+    loads = pushing(drawing.assembly(), rubbing=friction and mechanism.effort is not None, forward=_forward(drawing))
     at = _drawn(drawing, loads)
     moving = len(drawing.members) - 1
     if moving == 0:
@@ -187,7 +187,7 @@ def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
         spare = found.free - wanted
         takes = f", of which {driven} takes one" if wanted else ""
         what = f"{_number(found.free)}{takes}: {', '.join(movers)} can move"
-        much = f"hold them by {spare} more: a slot holds 1, a pin or slide 2, a weld 3"
+        much = f"hold them by {spare} more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3"
         cure = f"give the model an [effort], or {much}" if not wanted and spare == 1 else much
         if drawing.mechanism.free:
             what += ", and nothing that acts on them lets them settle"

@@ -74,7 +74,8 @@ def reactions(
                     on_pin.setdefault(side.pin, []).append((side.fx, side.fy))
                 sides.append(side)
             continue
-        x, y = at.spot(joint.site)
+        placed = getattr(joint, "place", None)
+        x, y = placed(at) if placed else at.spot(joint.site)
         pushes = rubbed.get(number, [])
         forces = _on_members(joint, at, multipliers[first : first + len(joint.angular)], pushes)
         hub = joint.word == "pin"
@@ -95,7 +96,7 @@ def reactions(
                 moment: Value = pushes[0][3] if hub and pushes else 0.0
                 if not turnable:
                     moment = about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
-                own = turnable and (hub or member == joint.members[0])
+                own = turnable and not placed and (hub or member == joint.members[0])
                 sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
     for acting, size in sized:
         if hasattr(acting.pusher, "through"):

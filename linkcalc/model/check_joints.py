@@ -10,6 +10,8 @@ from linkcalc.model import walk
 from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import GROUND, Mechanism
 from linkcalc.parts.joints.contact import Contact
+from linkcalc.parts.joints.gear import Gear
+from linkcalc.parts.joints.rack import Rack
 from linkcalc.parts.joints.rope import HAULING, Pulley, Rope
 from linkcalc.parts.joints.slide import Slide
 from linkcalc.parts.joints.slot import Slot
@@ -143,6 +145,32 @@ def _rope(joint: Rope, item: Item, carried: Carried, gather: Gather) -> None:
             gather.add((*item, "path"), f"{step.point} is an end in the middle of the rope", wanted)
     if joint.end == HAULING and joint.path[-1].fixed:
         gather.add((*item, "end"), "a drum is no hauling end: it winds by its turn", "a point is wanted there")
+
+
+@_check.register
+def _gear(joint: Gear, item: Item, carried: Carried, gather: Gather) -> None:
+    first, second = joint.members
+    if first == second:
+        gather.add((*item, "members"), f"{first} cannot mesh with itself", "two members are wanted")
+        return
+    for centre, member in zip(joint.centres, joint.members, strict=True):
+        _check_centre(centre, member, (*item, "centres"), carried, gather)
+
+
+@_check.register
+def _rack(joint: Rack, item: Item, carried: Carried, gather: Gather) -> None:
+    if joint.pinion == joint.on:
+        wanted = "another member is wanted for 'pinion' or 'on'"
+        gather.add(item, f"{joint.on} cannot roll along itself", wanted)
+        return
+    _check_centre(joint.centre, joint.pinion, (*item, "centre"), carried, gather)
+    carried.check(joint.along, joint.on, (*item, "along"), gather)
+
+
+def _check_centre(centre: str, member: str, item: Item, carried: Carried, gather: Gather) -> None:
+    """A pitch circle turns with its member, so that must carry the centre."""
+    if member in carried.mechanism.members and member not in carried.by(centre):
+        gather.add(item, f"{member} does not carry {centre}", f"name {centre} in {member}")
 
 
 @_check.register

@@ -42,6 +42,9 @@ def _sizes(entry: Field[Any], value: Any, stepped: str) -> Iterator[tuple[Size, 
     meta = entry.metadata
     if meta["kind"] == "size" and value not in meta["words"]:
         yield value, meta["unit"] or stepped, meta["sign"]
+    elif meta["kind"] == "sizes":
+        for one in value:
+            yield one, meta["unit"], meta["sign"]
     elif meta["kind"] == "line" and not isinstance(value, tuple):
         yield value, "angle", "any"
     elif meta["kind"] == "arcs":

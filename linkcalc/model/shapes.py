@@ -55,6 +55,13 @@ def _size(raw: Any, meta: Meta) -> Any:  # noqa: ARG001
     return size(raw)
 
 
+def _sizes(raw: Any, meta: Meta) -> tuple[Any, Any]:
+    if not isinstance(raw, (list, tuple)) or len(raw) != 2:
+        what = f"a list of {len(raw)}" if isinstance(raw, (list, tuple)) else f"{shown(raw)} is no list"
+        raise fault((), what, f"two sizes are wanted, each a {meta['unit']}: [20, 30]")
+    return size(raw[0]), size(raw[1])
+
+
 def _line(raw: Any, meta: Meta) -> Any:  # noqa: ARG001
     if not isinstance(raw, (list, tuple)):
         return size(raw)
@@ -155,7 +162,7 @@ def _example(number: int) -> str:
 
 
 SHAPES: dict[str, Callable[[Any, Meta], Any]] = {
-    "name": _name, "names": _names, "size": _size, "own size": _size, "line": _line, "choice": _choice,
+    "name": _name, "names": _names, "size": _size, "sizes": _sizes, "own size": _size, "line": _line, "choice": _choice,
     "count": _whole, "arcs": _arcs, "pairs": _pairs, "unit": _unit, "tol": _tol, "factor": _factor,
     "factors": _factors, "text": _text, "rows": _rows, "formula": _formula,
 }  # fmt: skip

@@ -39,7 +39,7 @@ class Mark:
     along   direction of the line or arrow (x, y), (0, 0) if it has none
     name    what to write beside it
     line    its own line, if it has one that is neither straight nor a member's: ((x, y), ...)
-    rounds  circles that belong to it: ((x, y, radius), ...)
+    rounds  circles that belong to it: ((x, y, radius), ...); of teeth in mesh in the order of the members
     """
 
     shape: str
@@ -119,18 +119,21 @@ class Sketch(Protocol):
 
 @dataclass(frozen=True, eq=False)
 class Rub:
-    """Friction at a joint: a law on the joint's own reaction, against the relative motion.
+    """Friction at a joint, or another push that grows with the joint's own reaction.
 
     normals  the normal force is the sum of these parts; each is the size of a vector whose components are linear
              forms of the joint's multipliers, one coefficient a row: ((1, 0), (0, 1)) is the resultant of a pin
     factor   friction for a normal force of 1: a coefficient [-], or the radius of the friction circle [m]
     push     (poses) -> what a friction of 1 would do to each member if it pushed along the relative motion; its power
              tells which way that is
+    always   True if it acts along its push whichever way the joint moves: no friction, but teeth pushing each other
+             apart. It is there without a motion too
     """
 
     normals: tuple[tuple[tuple[Value, ...], ...], ...]
     factor: Value
     push: Callable[[Poses], tuple[Push, ...]]
+    always: bool = False
 
 
 class Give(Protocol):
@@ -156,6 +159,8 @@ class Joint(Protocol):
 
     One that acts at several places has, besides, ``contacts(at)``: a Contact for each of them. It has one row, whose
     multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).
+    One with teeth has ``place(at)``, where its force is told, for that moves on its members: (x, y) [m]; ``grain``:
+    its gap is known but for multiples of that [m]; ``astray(at)``: how far its centres have moved apart [m].
 
     name, word   what the file calls it, and its kind
     members      indices of the members it joins; the first is the one its force acts on
@@ -183,7 +188,7 @@ class Joint(Protocol):
         is the generalised force it puts on each member."""
 
     def rubs(self) -> tuple[Rub, ...]:
-        """Its friction; empty if it has none."""
+        """Its friction and the like; empty if it has none."""
 
     def mark(self, at: Poses) -> Mark:
         """How to draw it in a single pose."""

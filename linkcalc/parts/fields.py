@@ -29,6 +29,11 @@ def size(unit: str, text: str, default: Any = MISSING, *, sign: str = "any", wor
     return _made("size", text, default, unit=unit, sign=sign, words=words)
 
 
+def sizes(unit: str, text: str, default: Any = MISSING, *, sign: str = "any") -> Any:
+    """Two sizes of one kind, kept as a tuple."""
+    return _made("sizes", text, default, unit=unit, sign=sign)
+
+
 def line(text: str, default: Any = MISSING) -> Any:
     """A line: two points, or an angle from the x axis as drawn."""
     return _made("line", text, default)

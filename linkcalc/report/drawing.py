@@ -15,6 +15,7 @@ from linkcalc.report.blocks import Drawing, Item
 from linkcalc.report.edge import Edge
 from linkcalc.report.numbers import number, plain
 from linkcalc.report.scene import Acts, Scene, Spot
+from linkcalc.report.toothed import toothed
 
 
 def draw_mechanism(
@@ -153,7 +154,8 @@ def _joint(scene: Scene, at: Poses, joint: Joint, mark: Mark, sizes: Mapping[str
     grounded = "ground" if 0 in joint.members else "plain"
     # a pin is named by its point, and written there; a name at an arrow need not be written twice
     name = "" if told or mark.name in scene.sketch.points else _with_size(mark.name, sizes)
-    items = [Item("wheel", _ring(x, y, r)) for x, y, r in mark.rounds]
+    items = list(toothed(scene, at, joint, mark)) if hasattr(joint, "place") else []
+    items += [Item(f"round of {mark.shape}", _ring(x, y, r)) for x, y, r in mark.rounds]
     if mark.line:
         items.append(Item(f"line of {mark.shape}", mark.line, tone=grounded))
     items.append(Item(mark.shape, mark.spots, mark.along, name, grounded))

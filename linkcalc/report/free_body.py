@@ -3,17 +3,21 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Iterator
 
 import numpy as np
 
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.faults import fault
 from linkcalc.model.mechanism import GROUND
+from linkcalc.parts.contract import Joint, Mark
+from linkcalc.parts.pose import Poses
 from linkcalc.report.blocks import Cell, Column, Drawing, Item, Table
 from linkcalc.report.drawing import arrows, caption, check_pose, scaled
 from linkcalc.report.edge import Edge
 from linkcalc.report.numbers import plain
 from linkcalc.report.scene import Acts, Scene
+from linkcalc.report.toothed import toothed
 from linkcalc.words import nearest
 
 
@@ -27,7 +31,8 @@ def free_body(answer: StrokeAnswer, member: str, *, pose: int = 0, case: int = 0
     check_pose(scene, (pose,), case)
     at = scene.at(pose, case)
     entry = answer.mechanism.members[member]
-    items = [Item("bar", scene.body(at, member), name=member, hue=list(answer.mechanism.members).index(member))]
+    items = [item for joint, mark in scene.joints(at) for item in _teeth(scene, at, member, joint, mark)]
+    items += [Item("bar", scene.body(at, member), name=member, hue=list(answer.mechanism.members).index(member))]
     items += [Item("point", (scene.point(at, p, member),), name=p) for p in dict.fromkeys(entry.points)]
     items += arrows(acting_on(scene, member, pose, case), edge)
     told = [caption(answer, (pose,), case)] + [
@@ -42,6 +47,14 @@ def free_body(answer: StrokeAnswer, member: str, *, pose: int = 0, case: int = 0
         caption="; ".join(t for t in told if t),
         tables=(free_body_table(answer, member, pose=pose, case=case),),
     )
+
+
+def _teeth(scene: Scene, at: Poses, member: str, joint: Joint, mark: Mark) -> Iterator[Item]:
+    """What the member has of a joint with teeth, and the place where it meets the other."""
+    index = scene.sketch.member(member)
+    if hasattr(joint, "place") and index in joint.members:
+        yield from toothed(scene, at, joint, mark, index)
+        yield Item(mark.shape, mark.spots)
 
 
 def free_body_table(answer: StrokeAnswer, member: str, *, pose: int = 0, case: int = 0) -> Table:

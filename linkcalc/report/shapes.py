@@ -13,6 +13,7 @@ import numpy as np
 
 from linkcalc.report import style
 from linkcalc.report.blocks import Item
+from linkcalc.report.gear_shapes import GEAR_SHAPES
 from linkcalc.report.pen import Pen, Spot
 from linkcalc.report.spring_shapes import SPRING_SHAPES
 
@@ -162,7 +163,7 @@ def _point(pen: Pen, item: Item) -> None:
 
 
 def _wheel(pen: Pen, item: Item) -> None:
-    """A pulley, drum or gear by its pitch circle: centre, and four places on it."""
+    """A pulley or drum by its pitch circle: centre, and four places on it."""
     (x, y), (rim, _) = item.spots[0], item.spots[1]
     turns = np.linspace(0.0, 2 * np.pi, 73)
     ring = [(x + (rim - x) * float(np.cos(t)), y + (rim - x) * float(np.sin(t))) for t in turns]
@@ -282,7 +283,7 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "torque": _told_by_arrow,
     "pair": _pair,
     "weight": _weight,
-    "wheel": _wheel,
+    "round of rope": _wheel,
     "rope": _rope,
     "line of rope": _line_of_rope,
     "track": _slot,
@@ -290,5 +291,6 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "contact": _contact,
     "line of contact": _face,
     "haul": _told_by_arrow,
+    **GEAR_SHAPES,
     **SPRING_SHAPES,
 }

@@ -125,7 +125,7 @@ BAD = [
         'ground = ["A", "D"]',
         'ground = ["A"]',
         "members.handle: 3 degrees of freedom, of which the stroke takes one: handle, strut, arm can move; "
-        "hold them by 2 more: a slot holds 1, a pin or slide 2, a weld 3",
+        "hold them by 2 more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3",
         blamed='handle = ["A", "B", "grip"]',
     ),
     _changed(
@@ -133,7 +133,7 @@ BAD = [
         'ground = ["A", "B"]',
         'ground = ["A"]',
         "members.bar: 2 degrees of freedom: bar, tie can move; "
-        "hold them by 2 more: a slot holds 1, a pin or slide 2, a weld 3",
+        "hold them by 2 more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3",
         blamed='bar = ["A", "C"]',
         model=FRAME,
     ),
@@ -279,5 +279,20 @@ BAD = [
         '[points]\nA = [0, 0]\n\n[members]\nground = ["A"]\n',
         "[members]",
         "members: there is no member but the ground; at least one is wanted",
+    ),
+    Bad(
+        "gears that do not touch",
+        CLAMP + '\n[gears.mesh]\nmembers = ["handle", "arm"]\ncentres = ["A", "D"]\nradii = [20, 30]\n',
+        'centres = ["A", "D"]',
+        "gears.mesh.centres: the gears do not touch: A and D are drawn 148.7 mm apart; "
+        "50 mm is wanted, the sum of the pitch radii",
+    ),
+    Bad(
+        "a pinion off its rack",
+        CLAMP + '\n[points.low]\nx = 0\ny = 0\n[racks.rack]\npinion = "handle"\n'
+        'centre = "A"\nradius = 20\nalong = ["D", "low"]\n',
+        'centre = "A"',
+        "racks.rack.centre: the pinion does not touch the rack: A is drawn 50 mm from it; "
+        "20 mm is wanted, the pitch radius",
     ),
 ]

@@ -6,7 +6,7 @@ from typing import Any
 
 TOP = [
     "schema", "answer", "title", "note", "drive", "axes", "quantities", "joints", "two-force members", "ropes", "loads",
-    "members", "events", "requirements", "holds", "warnings", "cautions", "checks", "status",
+    "members", "events", "requirements", "holds", "balances", "warnings", "cautions", "checks", "status",
 ]  # fmt: skip
 QUANTITIES = ["drive", "effort", "load", "tare effort", "force ratio", "ideal ratio"]
 RUBBING = ["frictionless effort", "efficiency"]
@@ -19,7 +19,8 @@ TOLD = {
     "force": "force", "length": "length", "torque": "moment", "angle": "angle", "pressure": "pressure",
     "raising torque": "moment", "lowering torque": "moment",
 }  # fmt: skip
-EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack", "self-locking edge"}
+EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack", "self-locking edge",
+          "contact made", "contact lost", "snap-through"}  # fmt: skip
 BATCH = ["case", "variant", "pose"]
 STILL = ["one", "variant", "pose"]
 
@@ -44,8 +45,10 @@ class Schema:
             kind = {"tare effort": "effort", "frictionless effort": "effort"}.get(name, name)
             kind = "ratio" if name.endswith("ratio") else kinds.get(kind, "number")
             self.array(array, kind, STILL if name == "drive" else BATCH, more=frozenset({"text"}))
-        rubs = "efficiency" in tree["quantities"]
-        assert sorted(tree["quantities"]) == sorted(QUANTITIES + (RUBBING if rubs else []))
+        rubs, loose = "efficiency" in tree["quantities"], "steady" in tree["quantities"]
+        assert sorted(tree["quantities"]) == sorted(
+            QUANTITIES + (RUBBING if rubs else []) + (["steady"] if loose else [])
+        )
         for side in tree["joints"]:
             assert list(side) == ["joint", "kind", "member", *JOINT]
             assert side["joint"] in tree["axes"]["joint"]
@@ -64,7 +67,7 @@ class Schema:
         assert [entry["member"] for entry in tree["members"]] == tree["axes"]["member"]
         for entry in tree["members"]:
             for key, kind in (("x", "length"), ("y", "length"), ("turn", "angle")):
-                self.array(entry[key], kind, STILL)
+                self.array(entry[key], kind, BATCH if loose else STILL)
         self._told(kinds)
         self._status()
 

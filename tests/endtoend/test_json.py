@@ -14,7 +14,7 @@ import pytest
 from tests.endtoend.models import CASES, CLAMP, EXAMPLES, REQUIREMENTS, linkcalc
 from tests.endtoend.schema import QUANTITIES, Schema
 
-DEFAULTS = {"length": "mm", "angle": "deg", "force": "N", "moment": "N*m"}
+DEFAULTS = {"length": "mm", "angle": "deg", "force": "N", "moment": "N*m", "pressure": "bar"}
 LOAD_KINDS = {"torque_on": "moment"}
 
 

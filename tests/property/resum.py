@@ -77,6 +77,18 @@ class Resum:
                 return self.place(part.point, part.of or self.carriers(part.point)[0])
             case "slide":
                 return self.place(part.at or self.mechanism.members[part.member].points[0], part.member)
+            case "gear":
+                spots = [self.place(c, m) for c, m in zip(part.centres, part.members, strict=True)]
+                first, second = (self.drawing.value(r, "length") for r in part.radii)
+                # of an inner mesh the circles touch on the far side of the smaller one
+                share = first / (first + second if part.mesh == "external" else first - second)
+                (ax, ay), (bx, by) = spots
+                return ax + share * (bx - ax), ay + share * (by - ay)
+            case "rack":
+                px, py = self.place(part.centre, part.pinion)
+                (ax, ay), (bx, by) = (self.place(point, part.on) for point in part.along)
+                way = ((px - ax) * (bx - ax) + (py - ay) * (by - ay)) / ((bx - ax) ** 2 + (by - ay) ** 2)
+                return ax + way * (bx - ax), ay + way * (by - ay)
             case "weld":
                 return self.place(part.at, part.members[0])
         raise TypeError(f"not a joint: {word}")

@@ -12,7 +12,7 @@ from linkcalc import parse
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.mechanism import GROUND, Mechanism
 from tests.property.resum import Resum, unbalanced
-from tests.samples import BRACKET, COLLAR, RAM, SLOTTED
+from tests.samples import BRACKET, COLLAR, RAM, SLOTTED, TRAIN, WINDER
 from tests.strategies import frames, machines, solved
 from tests.unit.design.models import WELDED
 
@@ -28,8 +28,9 @@ TILTED = "\n[cases.level]\n[cases.tilted]\ngravity = { turn = 35, scale = 2 }\n"
 
 
 def corners(test: Any) -> Any:
-    """The awkward ones: a guide beside its member, a slot on a pin itself, gravity that differs from case to case."""
-    for text in (RAM + TILTED, COLLAR + TILTED, SLOTTED + TILTED):
+    """The awkward ones: a guide beside its member, a slot on a pin itself, teeth, gravity that differs from case to
+    case."""
+    for text in (RAM + TILTED, COLLAR + TILTED, SLOTTED + TILTED, TRAIN + TILTED, WINDER + TILTED):
         test = example(parse(text))(test)
     return test
 

@@ -114,6 +114,8 @@ def in_units(mechanism: Mechanism, units: Units) -> Mechanism:
             if kind == "size":
                 unit = f.metadata["unit"] or (item.along.kind if isinstance(item, Stroke) else "")
                 new[f.name] = number(value, unit)
+            elif kind == "sizes":
+                new[f.name] = tuple(number(one, f.metadata["unit"]) for one in value)
             elif kind == "line":
                 new[f.name] = number(value, "angle")
             elif kind == "arcs":

@@ -23,6 +23,7 @@ FIELDS = {
     "name": lambda _: NAMES,
     "names": lambda m: st.lists(NAMES, min_size=m["least"], max_size=m["most"] or 4).map(tuple),
     "size": lambda m: st.one_of(SIZES, st.sampled_from(m["words"])) if m["words"] else SIZES,
+    "sizes": lambda _: st.tuples(SIZES, SIZES),
     "own size": lambda _: SIZES,
     "tol": lambda _: st.one_of(SIZES, st.tuples(SIZES, SIZES)),
     "line": lambda _: st.one_of(SIZES, st.tuples(NAMES, NAMES)),

@@ -222,6 +222,8 @@ def spelt_out(part: Any, mechanism: Mechanism) -> Any:
         value, kind = getattr(part, entry.name), entry.metadata["kind"]
         if kind == "arcs":
             given[entry.name] = tuple((centre, told(radius, "length")) for centre, radius in value)
+        elif kind == "sizes":
+            given[entry.name] = tuple(told(one, entry.metadata["unit"]) for one in value)
         elif kind in ("size", "line"):
             given[entry.name] = told(value, entry.metadata.get("unit", "angle"))
     return replace(part, **given)

@@ -51,12 +51,21 @@ def difference(f: Callable[[Poses], Any], at: Poses, member: int, which: int) ->
 
 
 def closed(joint: Joint, at: Poses) -> Poses:
-    """The nearest poses in which the joint holds, by the shortest Newton steps on its own equations."""
+    """The nearest poses in which the joint holds, by the shortest Newton steps on its own equations. Gears whose
+    centres a third member carries are put on it first, and then turned only."""
+    carried = getattr(joint, "carried", None)
     for _ in range(60):
+        for own, place in zip((joint.site, joint.other), carried, strict=True) if carried else ():
+            (px, py), (u, v) = at.spot(place), at.arm(own)
+            x, y = list(at.x), list(at.y)
+            x[own.member], y[own.member] = px - u, py - v
+            at = Poses(x, y, at.c, at.s, at.down, at.field)
         gaps = np.stack([np.broadcast_to(g, SHAPE) for g in joint.gap(at)], axis=-1)
         if np.abs(gaps).max() < 1e-15:
             return at
         jacobian = dense(joint.slope(at), len(at.x), SHAPE)
+        if carried:
+            jacobian[:, [k for k in range(jacobian.shape[1]) if k % 3 != TURN]] = 0.0
         step = np.einsum("...cr,...r->...c", np.linalg.pinv(np.moveaxis(jacobian, (0, 1), (-2, -1))), gaps)
         for k in range(step.shape[-1]):
             # no step beyond half a radian: far from closed the slope of an angle is not that of its gap

@@ -131,9 +131,10 @@ def test_what_is_not_there_is_a_clear_fault(ask, message):
         ask()
 
 
-TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "wheel", "rope", "line of rope", "line of track", "spring",
-             "gas spring", "constant spring", "cylinder", "screw", "force over length")  # fmt: skip
-NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope", "track")
+TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "round of rope", "rope", "line of rope", "line of track", "spring",
+             "gas spring", "constant spring", "cylinder", "screw", "force over length",
+             "round of gear", "round of rack", "line of gear", "line of rack", "line of contact", "segment", "rim")  # fmt: skip
+NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope", "track", "gear", "rack", "contact")
 STEM = """
 [points]
 A = [0, 0]
@@ -159,6 +160,8 @@ D = [200, 100]
 E = [300, 0]
 F = [50, 90]
 B2 = [100, 0]
+G = [250, 100]
+H = [350, 100]
 [members]
 ground = ["A", "D", "F"]
 arm = { points = ["A", "B", "C"], mass = 1 }
@@ -170,6 +173,10 @@ peg = { point = "B", along = 90, of = "arm" }
 cord = { path = ["C", { pulley = "D", radius = 8, wrap = "right" }, "F"], end = "hauling" }
 [tracks]
 cam = { point = "B", arc = ["A", "B2", "F"], of = "arm" }
+[gears]
+teeth = { members = ["arm", "stub"], centres = ["B", "D"], radii = [70.7107, 70.7107] }
+[racks]
+bar = { pinion = "rod", centre = "E", radius = 100, along = ["G", "H"] }
 [slides]
 ram = { member = "rod", along = 0 }
 [contacts]

@@ -58,7 +58,8 @@ def test_every_array_of_the_answer_has_its_place():
     assert tree["ropes"] == []  # it has none, so no tensions either
     told |= {"tension"}
     assert not answer.rubs  # nothing rubs, so what friction costs is not told
-    told |= {name for name, meta in quantities(answer).items() if meta["when"] == "rubs"}
+    assert not answer.loose  # nor does anything settle by itself
+    told |= {name for name, meta in quantities(answer).items() if meta["when"] in ("rubs", "loose")}
     told |= set(tree["members"][0]) - {"member"}
     assert told == set(quantities(answer))
     assert [m["member"] for m in tree["members"]] == ["ground", "crank", "link", "ram"]
