@@ -105,13 +105,15 @@ def _making(curves: Curves, name: str, case: int, drive: float) -> str:
 
 
 def _extremes(curves: Curves, wanted: Extremes) -> Iterator[Event]:
+    other = set(_other_way(curves))
     found = at_passages(curves, wanted.wanted)
     found |= wanted.found(besides=found)
     for w in wanted.wanted:
         if not np.isnan(found[w].value):
-            kind = "largest" if w.sense > 0 else "smallest"
+            kind = "largest" if w.sense > 0 or w in other else "smallest"
             value_kind = curves.survey.quantities[w.name].kind
-            yield Event(kind, w.name, _case(curves, w.case), found[w].drive, found[w].value, value_kind)
+            name = w.name if w not in other else f"{w.name} the other way"
+            yield Event(kind, name, _case(curves, w.case), found[w].drive, found[w].value, value_kind)
 
 
 def _wanted(curves: Curves) -> Iterator[Wanted]:
@@ -123,6 +125,7 @@ def _wanted(curves: Curves) -> Iterator[Wanted]:
             if name in curves.survey.quantities and name not in given:
                 yield Wanted(name, case, 1, True)
                 yield Wanted(name, case, -1, True)
+        yield from (w for w in _other_way(curves) if w.case == case)
         if "efficiency" in curves.survey.quantities:
             yield Wanted("efficiency", case, 1)
             yield Wanted("efficiency", case, -1)
@@ -143,6 +146,19 @@ def _wanted(curves: Curves) -> Iterator[Wanted]:
             size = one.kind in ("force", "moment")
             yield Wanted(one.name, case, 1, size)
             yield Wanted(one.name, case, -1, size)
+
+
+def _other_way(curves: Curves) -> list[Wanted]:
+    """Of an effort that changes its sense along the stroke the largest of the lesser sense, case by case."""
+    if "effort" not in curves.survey.quantities or not curves.survey.ready.pushing.effort_asked:
+        return []
+    out = []
+    for case, samples in enumerate(curves.samples("effort")):
+        sound = samples[np.isfinite(samples)]
+        low, high = (float(sound.min()), float(sound.max())) if sound.size == samples.size else (0.0, 0.0)
+        if low < -_NOTHING * high and high > -_NOTHING * low:
+            out.append(Wanted("effort", case, -1 if high > -low else 1))
+    return out
 
 
 def _idle(curves: Curves, name: str) -> bool:

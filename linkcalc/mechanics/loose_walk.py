@@ -69,6 +69,11 @@ class LooseWalk:
 
 def walk_loose(loose: Loose, pushing: Pushing, start: LooseNode, stop: float) -> LooseWalk:
     """From a settled pose to a value of the drive, or as far as all cases go."""
+    with np.errstate(all="ignore"):  # what finds no balance is not a number on the way, and told by its status
+        return _walked(loose, pushing, start, stop)
+
+
+def _walked(loose: Loose, pushing: Pushing, start: LooseNode, stop: float) -> LooseWalk:
     nodes, jumps = [start], list[Jump]()
     whole = stop - start.drive
     step = whole * _FIRST
