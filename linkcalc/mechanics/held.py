@@ -15,7 +15,7 @@ from linkcalc.mechanics.sums import dot, plus, zero
 from linkcalc.parts.contract import Drive
 from linkcalc.parts.pose import Array, Mask, Poses, Value
 
-STILL = 1e-12  # power of what is left over the largest force: in balance
+STILL = 1e-13  # power of what is left over the largest force: in balance
 
 
 class Work:

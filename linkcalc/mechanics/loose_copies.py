@@ -9,12 +9,12 @@ import numpy as np
 
 from linkcalc.mechanics.balance import failed
 from linkcalc.mechanics.loose_path import LoosePath, settled_balance
-from linkcalc.mechanics.motion import along
+from linkcalc.mechanics.motion import Closed, along, cubic, turned_between
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.settle import Settled, settle
 from linkcalc.mechanics.solved import Solved
 from linkcalc.mechanics.state import Status
-from linkcalc.parts.pose import Array, Value
+from linkcalc.parts.pose import Array, Poses, Value
 
 _BAD = 30.0  # times the speed of the places: others would tell the pose better
 
@@ -33,20 +33,45 @@ def each_loose_pose(ready: Ready, path: LoosePath, drive: Array, *, checked: boo
         drawn = drawn + 2 * np.pi * np.round((path.drawn - drawn) / (2 * np.pi))
     here: Settled = settle(loose, places, ready.start.at, drawn, ready.pushing, ready.unknown)
     last: Value = drawn
+    before, span = here, 0.0
     for target, wanted in _targets(path, drawn, drive):
-        guess = along(here.closed, target - last)
-        settled = settle(loose, places, guess, target, ready.pushing, here.unknown, along=here.closed.speed)
+        step = target - last
+        even = float(np.ptp(step)) == 0.0 and 2 * abs(span) >= abs(float(step.flat[0])) > 0.0
+        guess = (
+            onward(before.closed, here.closed, 1 + float(step.flat[0]) / span, span)
+            if even
+            else along(here.closed, step)
+        )
+        settled = settle(
+            loose, places, guess, target, ready.pushing, here.unknown, along=here.closed.speed, matrix=here.matrix
+        )
         if not settled.reach <= _BAD:
             better = loose.places(settled.closed.at)
             if better is not None and better != places:
                 places = better
                 settled = settle(loose, places, guess, target, ready.pushing, here.unknown, along=here.closed.speed)
-        here, last = settled, target
+        span = float(step.flat[0]) if float(np.ptp(step)) == 0.0 else 0.0
+        before, here, last = here, settled, target
         if wanted:
             told = settled_balance(ready, places, settled.closed, checked=checked)
             if ready.undrawn is not None:
                 told = failed(told, ready.undrawn, Status.NOT_DRAWN)
             yield Solved(np.broadcast_to(target, (1, *settled.closed.fine.shape[1:])), settled.closed, told)
+
+
+def onward(a: Closed, b: Closed, t: float, span: float) -> Poses:
+    """Poses on the cubic through two settled poses and their speeds, beyond the second: places as well as turns."""
+    h00, h10, h01, h11 = weights = cubic(t, span)
+    pa, pb = a.at, b.at
+    x, y, c, s = [pa.x[0]], [pa.y[0]], [pa.c[0]], [pa.s[0]]
+    for k in range(1, len(pa.x)):
+        (ua, va, wa), (ub, vb, wb) = a.speed[3 * k - 3 : 3 * k], b.speed[3 * k - 3 : 3 * k]
+        x.append(h00 * pa.x[k] + h10 * ua + h01 * pb.x[k] + h11 * ub)
+        y.append(h00 * pa.y[k] + h10 * va + h01 * pb.y[k] + h11 * vb)
+        turned = turned_between(weights, (pa.c[k], pa.s[k], wa), (pb.c[k], pb.s[k], wb))
+        c.append(turned[0])
+        s.append(turned[1])
+    return Poses(x, y, c, s, pa.down, pa.field)
 
 
 def _targets(path: LoosePath, drawn: Array, drive: Array) -> Iterator[tuple[Array, bool]]:

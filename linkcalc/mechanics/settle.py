@@ -27,7 +27,7 @@ from linkcalc.parts.pose import Array, Codes, Mask, Poses, Value
 
 _LAST = 1e-6  # no longer step is taken in a pose that is in balance already
 _SMALLEST = 1e-15  # a step as small changes nothing
-_ANEW = (4, 8)  # steps without gain after which the tangent is taken anew
+_ANEW = (2, 5, 8)  # steps without gain after which the tangent is taken anew
 _IDLE = 12  # steps without gain after which it is given up
 _LONGEST = 0.25  # of the size or a radian: the longest step
 _STEPS = 40
@@ -41,12 +41,14 @@ class Settled:
     closed     with the speeds of the settled motion per unit of the drive, free members following
     unknown    what the effort (or the load, if that is asked for) was found to be
     stiffness  (count, count, case, variant, pose) of the free freedoms at a held drive, in the places' coordinates
+    matrix     (case, variant, pose, count, count) how what is left changes with the places, the unknown following
     rates      speeds of the coordinates per unit of each place
     """
 
     closed: Closed
     unknown: Value
     stiffness: Array
+    matrix: Array
     rates: list[list[Value]]
 
     @property
@@ -63,13 +65,14 @@ class Settled:
 
 def settle(
     loose: Loose, places: Places, guess: Poses, target: Value | None, pushing: Pushing, unknown: Value,
-    *, relax: bool = False, steps: int = _STEPS, along: Sequence[Value] | None = None,
+    *, relax: bool = False, steps: int = _STEPS, along: Sequence[Value] | None = None, matrix: Array | None = None,
 ) -> Settled:  # fmt: skip
     """Settle a batch from a guess; entries that find no balance are told by ``closed.fine``. Raises NoPlan.
 
     target  [rad or m] value of the drive; None: there is none
     relax   go down to a stable balance, rather than to the nearest
     along   speeds of the settled motion near by, which tell friction its sense; None: those of the drive alone
+    matrix  that of a pose near by, with the same places, to begin with
     """
     work = Work(loose, places, pushing, target)
     work.sense = along
@@ -77,16 +80,17 @@ def settle(
     at = _filled(guess, shape)
     p = np.stack([_grown(place.value(guess), shape) for place in places], -1)
     done: Mask = np.zeros(shape, bool)
-    tangent, matrix, last, before = None, None, None, None
+    last, before = None, None
     best, idle = np.full(shape, np.inf), 0
     for _ in range(steps):
         state = work.state(at, p, unknown)
         unknown, done = state.unknown, done | state.still
+        if bool(np.all(done | ~np.isfinite(state.size))) and not relax:
+            break
         better = state.size < 0.7 * best
         best, idle = np.minimum(best, state.size), 0 if (better & ~done).any() else idle + 1
         if matrix is None or relax or idle in _ANEW:
-            tangent = tangent_of(work, state)
-            matrix = tangent.reduced
+            matrix = tangent_of(work, state).reduced
         elif last is not None and before is not None:
             matrix = _broyden(matrix, last, state.left - before)
         with np.errstate(all="ignore"):
@@ -99,14 +103,14 @@ def settle(
         at = state.moved(last)
         done = done | (long <= _SMALLEST)
         if bool(np.all(done | ~np.isfinite(long))) or (idle > _IDLE and not relax):
+            state = work.state(at, p, unknown)
             break
-    state = work.state(at, p, unknown)
     tangent = tangent_of(work, state)
     speed = settled_speed(work, tangent) if target is not None else []
     closed = replace(
         state.closed, speed=speed, fine=state.closed.fine & done & np.isfinite(state.size), steady=tangent.steady()
     )
-    return Settled(closed, state.unknown, -tangent.free, state.rates)
+    return Settled(closed, state.unknown, -tangent.free, tangent.reduced, state.rates)
 
 
 def _broyden(matrix: Array, step: Array, change: Array) -> Array:
