@@ -19,7 +19,7 @@ from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.pair import Pair
 from linkcalc.parts.loads.weight import Weight
 from tests.property.transform import INCH_POUND, in_units, moved, reordered, scaled, turned
-from tests.samples import BRACKET, COLLAR, RAM, SLOTTED
+from tests.samples import BRACKET, CLAMP, COLLAR, RAM, SLOTTED
 from tests.strategies import frames, machines, solved
 
 SAME = 1e-9
@@ -66,6 +66,7 @@ def alike(a: StrokeAnswer, b: StrokeAnswer, *, turn: float = 0.0, scale: float =
 @example(parse(SLOTTED), -2.0)
 @example(parse(RAM), np.pi / 2)
 @example(parse(BRACKET), np.pi)
+@example(parse(CLAMP), 1.0)
 def test_turning_the_drawing_with_its_gravity(machine: Mechanism, by: float) -> None:
     alike(solved(machine), solved(turned(machine, by)), turn=by)
 
@@ -91,6 +92,7 @@ def test_scaling_the_drawing(machine: Mechanism, by: float) -> None:
 @example(parse(SLOTTED))
 @example(parse(RAM))
 @example(parse(BRACKET))
+@example(parse(CLAMP))
 def test_units_of_the_file(machine: Mechanism) -> None:
     """In inches, pounds and radians the same machine gives the same newtons."""
     alike(solved(machine), solved(in_units(machine, INCH_POUND)))

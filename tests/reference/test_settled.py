@@ -106,8 +106,8 @@ def test_a_spring_loaded_four_bar() -> None:
 <body name="rocker" pos="0.28 0 0"><joint name="d" axis="0 0 1" damping="1"/>
 <inertial pos="0.01 0.1 0" mass="1" diaginertia="0.01 0.01 0.01"/></body></worldbody>
 <tendon><spatial stiffness="400" springlength="0.1"><site site="b"/><site site="hook"/></spatial></tendon>
-<equality><connect body1="coupler" body2="rocker" anchor="0.25 0.08 0" solref="0.002 1" solimp="0.9999 0.9999 0.001 0.5 2"/>
-</equality></mujoco>
+<equality><connect body1="coupler" body2="rocker" anchor="0.25 0.08 0" solref="0.002 1"
+solimp="0.9999 0.9999 0.001 0.5 2"/></equality></mujoco>
 """
     model, data = at_rest(xml, 20)
     assert answer.steady[0, 0, 0] == 1
