@@ -2,11 +2,12 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Iterator, Sequence
 from dataclasses import dataclass
 
 import numpy as np
 
+from linkcalc.design.inside import KINDS, Inside
 from linkcalc.design.told import Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
@@ -56,7 +57,8 @@ class Survey:
     watched    limits of its loads
     """
 
-    def __init__(self, ready: Ready, first: Solved):
+    def __init__(self, ready: Ready, first: Solved, *, inner: bool = False):
+        """inner: with the inner forces of every member, not only of those that a requirement asks about."""
         self.ready = ready
         self.first = shown = self.show(first)
         self.sides = shown.sides
@@ -65,7 +67,9 @@ class Survey:
         self.contacts = tuple(ready.chain.joints[k].name for k, _, law in ready.chain.gives if law.one_sided)
         self.spoken = spoken(ready.pushing)
         self.watched = watched(ready.pushing)
-        self.quantities: dict[str, Quantity] = {q.name: q for q in self._all()}
+        self.inside = Inside(ready)
+        members = self.inside.members if inner else self.inside.asked
+        self.quantities: dict[str, Quantity] = {q.name: q for q in [*self._all(), *self._inner(members)]}
 
     def show(self, solved: Solved) -> Shown:
         return Shown(solved, sides(self.ready, solved))
@@ -129,8 +133,18 @@ class Survey:
         out += [Quantity(one.name, "number", self._told(one.room)) for one in self.watched]
         return out
 
+    def _inner(self, members: Sequence[str]) -> Iterator[Quantity]:
+        for member in members:
+            for name, of in self.inside.of(member):
+                yield Quantity(inner(name, member), KINDS[name], of)
+
     def _told(self, one: Spoken) -> Callable[[Shown], Value]:
         return lambda shown: one.of(shown.solved, self.ready.pushing)
+
+
+def inner(quantity: str, member: str) -> str:
+    """Name of what goes on in a member at its worst place: "largest bending moment in arm"."""
+    return f"largest {quantity} in {member}"
 
 
 def efficiency(b: Balance, pushing: Pushing) -> Value:

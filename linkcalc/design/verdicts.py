@@ -10,10 +10,11 @@ import numpy as np
 from linkcalc.design.answer import Verdict
 from linkcalc.design.curves import Curves, Wanted
 from linkcalc.design.passages import worst
+from linkcalc.design.survey import inner
 from linkcalc.design.travel import travel
 from linkcalc.faults import fault
 from linkcalc.model.dimensions import evaluate
-from linkcalc.model.requirements import END, START, Requirement, requirements
+from linkcalc.model.requirements import END, INNER, START, Requirement, requirements
 from linkcalc.model.units import show
 from linkcalc.words import nearest
 
@@ -23,7 +24,7 @@ _HOLDS: dict[str, Callable[[float, float], bool]] = {
     "<": operator.lt,
     ">": operator.gt,
 }
-_SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment", "torque")
+_SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment", "torque", *INNER)
 _RATIOS = ("force ratio", "ideal ratio")
 _ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
 
@@ -107,6 +108,8 @@ def _inside(curves: Curves, requirement: Requirement, drive: float) -> None:
 def _quantity(curves: Curves, requirement: Requirement) -> tuple[str, int]:
     """Name of the quantity in the survey, and the sign it is told with."""
     q = requirement
+    if q.quantity in INNER:
+        return inner(q.quantity, q.of), 1
     if q.quantity == "tension" and f"tension of {q.of}" in curves.survey.quantities:
         return f"tension of {q.of}", 1
     if q.quantity in ("tension", "compression"):

@@ -54,7 +54,12 @@ _MEASURES = (
     ("tension", Measure("force", "of", DRAWN)),
     ("compression", Measure("force", "in", MEMBER)),
     ("travel", Measure("length", "of", MOVER)),
+    ("bending moment", Measure("moment", "in", MEMBER)),
+    ("shear force", Measure("force", "in", MEMBER)),
+    ("axial force", Measure("force", "in", MEMBER)),
 )
+INNER = ("bending moment", "shear force", "axial force")
+"""What goes on within a member, at its worst place."""
 
 
 @cache

@@ -154,6 +154,13 @@ class Drawing:
             raise fault((), f"member {member!r} has no points", "name the points it carries")
         return entry.points[0]
 
+    def shared_point(self, member: str, other: str) -> str | None:
+        """The first point of a member that another carries too, None if there is none. Raises Faults."""
+        for name in (member, other):
+            self.member(name)
+        carried = self.mechanism.members.get(member, Member()).points
+        return next((p for p in carried if other in self._carriers.get(p, ())), None)
+
     def own_axis(self, member: str) -> Value:
         """[rad] direction of the member's own x axis, first to last point as drawn; 0.0 for the ground."""
         if member == GROUND:
@@ -212,9 +219,15 @@ class Drawing:
         if entry.centre is not None:
             return self.site(entry.centre, member)
         if member not in self._centres:
-            place = _middle([self.point(p) for p in entry.path or entry.points])
+            place = _middle([(self.point(a), self.point(b)) for a, b in body_lines(entry)])
             self._centres[member] = self._local(self.member(member), place)
         return self._centres[member]
+
+    def mass_lines(self, member: str) -> tuple[tuple[Site, Site], ...]:
+        """The lines that a member's mass is spread along, evenly; empty if its centre is given. Raises Faults."""
+        entry = self._entry(member)
+        lines = () if entry.centre is not None else body_lines(entry)
+        return tuple((self.site(a, member), self.site(b, member)) for a, b in lines)
 
     def _entry(self, member: str) -> Member:
         self.first_point(member)
@@ -265,14 +278,24 @@ def _located(*item: str) -> Iterator[None]:
         raise Faults([Fault(item + f.item, f.what, f.wanted) for f in found.faults]) from None
 
 
-def _middle(places: list[Place]) -> Place:
-    """Centre of a line of even weight through the places; the first of them if it has no length."""
+def body_lines(entry: Member) -> list[tuple[str, str]]:
+    """The straight lines of a member's body, each by the names of its ends, none of them twice: a path may go back
+    the way it came, to where a branch leaves it. Of a member with one point it is that point twice."""
+    path = entry.path or entry.points
+    found: dict[frozenset[str], tuple[str, str]] = {}
+    for ends in pairwise(path):
+        found.setdefault(frozenset(ends), ends)
+    return list(found.values()) or [(path[0], path[0])]
+
+
+def _middle(lines: list[tuple[Place, Place]]) -> Place:
+    """Centre of lines of even weight; the first place of them if they have no length."""
     total: Value = 0.0
     sum_x: Value = 0.0
     sum_y: Value = 0.0
-    for (ax, ay), (bx, by) in pairwise(places):
+    for (ax, ay), (bx, by) in lines:
         length = np.hypot(bx - ax, by - ay)
         total, sum_x, sum_y = total + length, sum_x + length * (ax + bx) / 2, sum_y + length * (ay + by) / 2
     if np.ndim(total) == 0 and total == 0:
-        return places[0]
+        return lines[0][0]
     return sum_x / total, sum_y / total

@@ -1,0 +1,68 @@
+"""What acts on one member, place by place, in a batch of poses: joints, loads, weights, spread loads."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+
+from linkcalc.mechanics.pipeline import Solved
+from linkcalc.mechanics.prepare import Ready
+from linkcalc.mechanics.reactions import Side, sized
+from linkcalc.parts.contract import Spread
+from linkcalc.parts.pose import Poses, Value
+
+
+@dataclass(frozen=True, eq=False)
+class Act:
+    """A force or couple on a member, in the member's own axes; batch (case, variant, pose).
+
+    name    of the joint or load
+    tone    "joint", or the word of the load
+    u, v    [m] where
+    fu, fv  [N]
+    moment  [N m] about that place
+    spread  how it is spread along the member, None for one at its place
+    """
+
+    name: str
+    tone: str
+    u: Value
+    v: Value
+    fu: Value
+    fv: Value
+    moment: Value
+    spread: Spread | None = None
+
+
+def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[Act]]:
+    """Index of a moving member -> everything that acts on it: joints first, then loads and weights."""
+    at, pins = solved.closed.at, ready.drawing.pins
+    out: dict[int, list[Act]] = {k: [] for k in range(1, len(ready.drawing.members))}
+    for side in sides:
+        if side.member > 0:
+            x, y = side.x - at.x[side.member], side.y - at.y[side.member]
+            moment = 0.0 if side.own_point and isinstance(side.moment, float) else side.moment
+            out[side.member].append(_own(at, side.member, side.joint, "joint", x, y, side.fx, side.fy, moment))
+    for acting, size in sized(ready.pushing, at, solved.balance.effort, solved.balance.load):
+        pusher = acting.pusher
+        if hasattr(pusher, "through"):
+            continue  # the joint has told it
+        spreads = getattr(pusher, "spread", None) or (None,) * len(pusher.sites)
+        for push, site, pin, spread in zip(pusher.push(at), pusher.sites, pusher.on_pins, spreads, strict=True):
+            member, fx, fy, turning = push
+            if member == 0 or pin in pins:
+                continue
+            a, b = at.arm(site)
+            # a couple has no arm; what a force leaves of its moment about its own place is rounding
+            moment = 0.0 if pusher.kind == "force" else turning * size
+            out[member].append(_own(at, member, pusher.name, pusher.word, a, b, fx * size, fy * size, moment, spread))
+    return out
+
+
+def _own(
+    at: Poses, member: int, name: str, tone: str, x: Value, y: Value, fx: Value, fy: Value, moment: Value,
+    spread: Spread | None = None,
+) -> Act:  # fmt: skip
+    """From ground axes to the member's own."""
+    c, s = at.c[member], at.s[member]
+    return Act(name, tone, c * x + s * y, c * y - s * x, c * fx + s * fy, c * fy - s * fx, moment, spread)

@@ -1,0 +1,268 @@
+"""Inner forces of a member: what holds it together at every cut, piece by piece along its body, in a batch of poses.
+
+A cut parts the body in two. What acts on the branch beyond it is balanced by the force and moment in the cut:
+
+    N  along the body, tension plus
+    V  across it: slope of M; plus if the part before the cut pushes the part beyond it to the left
+    M  bending moment: plus stretches the right side, seen along the body from its first point
+
+which on a level member, walked from left to right, are the usual signs of a beam: sagging is plus. Between places
+where something acts V' = q_n, N' = -q_t and M' = V for a load of q per length to the left and along the body, so that
+M is at most a cubic of the way along a piece where the load changes evenly.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+
+import numpy as np
+
+from linkcalc.mechanics.acts import Act
+from linkcalc.mechanics.body import Body
+from linkcalc.parts.pose import Array, Mask, Numbers, Value
+
+POWERS = 4
+"""Of the polynomials along a piece: 1, x, x², x³."""
+
+
+@dataclass(frozen=True, eq=False)
+class Pieces:
+    """The body in pieces without a load at a point between: polynomials of the way x from the start of each.
+
+    edge     (piece, case or 1, variant, pose) number of the edge of the body
+    start    [m] way along that edge where the piece begins; long [m] how long it is
+    real     False for what is no piece here: one without length
+    axial, shear, bending  (power, piece, case, variant, pose)
+    spread   True if some load is spread along the member: else N and V are constant, M is straight
+    """
+
+    edge: Numbers
+    start: Array
+    long: Array
+    real: Mask
+    axial: Array
+    shear: Array
+    bending: Array
+    spread: bool
+
+
+@dataclass(frozen=True, eq=False)
+class Largest:
+    """The largest of something along a member: (case, variant, pose) each.
+
+    value  with the sign it has there
+    edge   number of the edge, -1 where there is no number
+    way    [m] along that edge
+    """
+
+    value: Array
+    edge: Numbers
+    way: Array
+
+
+def pieces(body: Body, acts: Sequence[Act], shape: tuple[int, ...]) -> Pieces:
+    """Cut a body at everything that acts on it.
+
+    shape  (case, variant, pose) of the batch
+    """
+    spread = [a for a in acts if a.spread is not None]
+    place = _stacked([(a.u, a.v) for a in acts], shape)  # (act, 2, ...)
+    force = _stacked([(a.fu, a.fv) for a in acts], shape)
+    moment = _stacked([(a.moment,) for a in acts], shape)[:, 0] + _cross(place, force)  # about the member's origin
+    single = np.array([a.spread is None for a in acts], bool)
+    place, force, moment = place[single], force[single], moment[single]
+    load = _along_edges(body, spread, shape)  # (edge, end, 2, ...) [N/m]
+    act_edge, act_way = _attached(body, place)
+    count = len(body.starts)
+    still = np.broadcast_shapes((1, 1, 1), act_way.shape[1:])
+    edge = np.concatenate([np.broadcast_to(np.arange(count)[:, None, None, None], (count, *still)), act_edge])
+    start = np.concatenate([np.zeros((count, *still)), act_way])
+    # the nearest place beyond on the same edge where something acts, or the end of the edge
+    later = (act_edge[None] == edge[:, None]) & (act_way[None] > start[:, None])
+    stop = np.min(np.where(later, act_way[None], np.inf), axis=1, initial=np.inf)
+    stop = np.minimum(stop, body.long[edge])
+    beyond = later | (body.beyond[edge[:, None], act_edge[None]])
+    total = np.einsum("ka...,ai...->ki...", beyond.astype(float), force)
+    about = np.einsum("ka...,a...->k...", beyond.astype(float), moment)
+    if spread:
+        more, turning = _loaded_beyond(body, load, edge, start)
+        total, about = total + more, about + turning
+    at = body.nodes[np.array(body.starts)][edge] + start[..., None] * body.along[edge]
+    at = np.moveaxis(at, -1, 1)
+    about = about - _cross(at, total)
+    t = np.moveaxis(body.along[edge], -1, 1)
+    axial, shear, bending = (np.zeros((POWERS, len(edge), *shape)) for _ in range(3))
+    axial[0] = (t * total).sum(axis=1)
+    shear[0] = -(t[:, 0] * total[:, 1] - t[:, 1] * total[:, 0])
+    bending[0], bending[1] = about, shear[0]
+    if spread:
+        first, rise = _load_at(body, load, edge, start)
+        for k, q in enumerate((first, rise), 1):
+            axial[k] = -(t * q).sum(axis=1) / k
+            shear[k] = (t[:, 0] * q[:, 1] - t[:, 1] * q[:, 0]) / k
+            bending[k + 1] = shear[k] / (k + 1)
+    long = stop - start
+    return Pieces(edge, start, long, long > 0.0, axial, shear, bending, bool(spread))
+
+
+def largest(found: Pieces, power: Array, *, sense: int = 0) -> Largest:
+    """The largest size of a polynomial along all pieces of each entry.
+
+    power  (power, piece, case, variant, pose), such as ``found.bending``
+    sense  0 whichever sign it has; +1 the largest, -1 the smallest
+    """
+    ways = [np.zeros_like(found.long), found.long]
+    if found.spread:
+        ways += _turns(power, found.long)
+    best: Array = np.full(power.shape[1:], -np.inf)
+    value, way = np.zeros(power.shape[1:]), np.zeros(power.shape[1:])
+    for x in ways:
+        y = _horner(power, x)
+        rank = np.where(found.real, np.abs(y) if sense == 0 else sense * y, -np.inf)
+        # two signs of one size: the first found stands, so that rounding does not choose
+        better = rank > best
+        best, value = np.where(better, rank, best), np.where(better, y, value)
+        way = np.where(better, x, way)
+    top = np.argmax(np.where(np.isnan(best), -np.inf, best), axis=0)[None]
+    lost = np.isnan(power[0]).any(axis=0)
+
+    def chosen(values: Array) -> Array:
+        return np.take_along_axis(np.broadcast_to(values, power.shape[1:]), top, axis=0)[0]
+
+    edge = np.where(lost, -1, chosen(found.edge))
+    return Largest(
+        np.where(lost, np.nan, chosen(value)), edge, np.where(lost, np.nan, chosen(found.start + way))
+    )
+
+
+def unbalance(acts: Sequence[Act], shape: tuple[int, ...]) -> tuple[Array, Array]:
+    """What all that acts on a member leaves over: force [N] and moment about its origin [N m], (case, variant, pose).
+
+    It is what the diagrams end with instead of nothing.
+    """
+    place, force = (_stacked(v, shape) for v in ([(a.u, a.v) for a in acts], [(a.fu, a.fv) for a in acts]))
+    moment = _stacked([(a.moment,) for a in acts], shape)[:, 0]
+    return np.hypot(*force.sum(axis=0)), np.abs((moment + _cross(place, force)).sum(axis=0))
+
+
+def _attached(body: Body, place: Array) -> tuple[Numbers, Array]:
+    """For each act the edge it goes into and the way along it [m]: the nearest place of the body."""
+    # poses hold for all cases, so that this is worked out for one
+    place = place[:, :, :1]
+    first, t, long = body.nodes[list(body.starts)], body.along, body.long
+    arm = place[:, None] - first[None, :, :, None, None, None]
+    way = (arm * t[None, :, :, None, None, None]).sum(axis=2)
+    room = long[None, :, None, None, None]
+    way = np.where(way <= body.slack, 0.0, np.where(way >= room - body.slack, room, way))
+    off = np.hypot(*np.moveaxis(arm - way[:, :, None] * t[None, :, :, None, None, None], 2, 0))
+    edge = np.argmin(np.where(np.isnan(off), np.inf, off), axis=1)
+    return edge, np.take_along_axis(way, edge[:, None], axis=1)[:, 0]
+
+
+def off_body(body: Body, place: tuple[Value, Value]) -> Array:
+    """[m] how far a place (own frame) is from the body."""
+    at = np.stack([np.asarray(v, float) for v in np.broadcast_arrays(*place)])[None]
+    at = at.reshape(1, 2, *((1,) * (5 - at.ndim)), *at.shape[2:])
+    edge, way = _attached(body, at)
+    foot = body.nodes[np.array(body.starts)][edge] + way[..., None] * body.along[edge]
+    return np.hypot(*(at[:, :, :1] - np.moveaxis(foot, -1, 1))[0])
+
+
+def _along_edges(body: Body, spread: Sequence[Act], shape: tuple[int, ...]) -> Array:
+    """(edge, end, 2, case, variant, pose) [N/m] how strongly spread loads act at both ends of each edge."""
+    load = np.zeros((len(body.starts), 2, 2, *shape))
+    for act in spread:
+        assert act.spread is not None
+        lines = [tuple(np.array([float(np.ravel(w)[0]) for w in (s.u, s.v)]) for s in line) for line in act.spread.lines]
+        longs = np.array([np.hypot(*(b - a)) for a, b in lines])
+        whole = float(longs.sum())
+        force = _stacked([(act.fu, act.fv)], shape)[0] / (whole or 1.0)
+        low, high = act.spread.ends
+        begin = np.concatenate([[0.0], np.cumsum(longs)])
+        for (a, b), long, first in zip(lines, longs, begin, strict=False):
+            for k in range(len(body.starts)):
+                span = _on_line(body, k, a, b, float(long))
+                if span is not None:
+                    for end, s in enumerate(span):
+                        load[k, end] += force * (low + (high - low) * (first + s) / whole)
+    return load
+
+
+def _on_line(body: Body, edge: int, a: Array, b: Array, long: float) -> tuple[float, float] | None:
+    """[m] how far along a line from a to b an edge begins and ends; None if it does not lie on it."""
+    if long <= body.slack:
+        return None
+    t = (b - a) / long
+    found = []
+    for node in (body.starts[edge], body.stops[edge]):
+        arm = body.nodes[node] - a
+        s, off = float(arm @ t), float(arm[1] * t[0] - arm[0] * t[1])
+        if abs(off) > body.slack or not -body.slack <= s <= long + body.slack:
+            return None
+        found.append(s)
+    return found[0], found[1]
+
+
+def _load_at(body: Body, load: Array, edge: Numbers, start: Array) -> tuple[Array, Array]:
+    """(piece, 2, ...) [N/m] spread load at the start of each piece, and its rise [N/m²] along it."""
+    rise = (load[:, 1] - load[:, 0]) / body.long[:, None, None, None, None]
+    rise, first = _of_piece(rise, edge), _of_piece(load[:, 0], edge)
+    return first + rise * start[:, None], rise
+
+
+def _of_piece(of_edge: Array, edge: Numbers) -> Array:
+    """(edge, 2, case, variant, pose) -> (piece, 2, case, variant, pose), by the edge of each piece in each pose."""
+    index = np.broadcast_to(edge[:, None], (len(edge), *of_edge.shape[1:]))
+    return np.take_along_axis(of_edge, index, axis=0) if len(of_edge) != 1 else np.broadcast_to(of_edge, index.shape)
+
+
+def _loaded_beyond(body: Body, load: Array, edge: Numbers, start: Array) -> tuple[Array, Array]:
+    """What spread loads beyond the start of each piece come to: force (piece, 2, ...), moment about the origin."""
+    long = body.long[:, None, None, None, None]
+    whole = (load[:, 0] + load[:, 1]) / 2 * long  # (edge, 2, ...)
+    t = body.along[:, :, None, None, None]
+    at = body.nodes[list(body.starts)][:, :, None, None, None]
+    first = load[:, 0] * long**2 / 2 + (load[:, 1] - load[:, 0]) * long**2 / 3  # first moment along the edge
+    turning = _cross(at, whole) + _cross(t, first)
+    beyond = body.beyond.astype(float)[edge]  # (piece, ..., edge)
+    total = np.einsum("k...e,ei...->ki...", beyond, whole)
+    about = np.einsum("k...e,e...->k...", beyond, turning)
+    # and what is left of the edge itself
+    q, rise = _load_at(body, load, edge, start)
+    rest = (body.long[edge] - start)[:, None]
+    more = q * rest + rise * rest**2 / 2
+    lever = q * rest**2 / 2 + rise * rest**3 / 3
+    way = np.moveaxis(body.along[edge], -1, 1)
+    cut = np.moveaxis(body.nodes[np.array(body.starts)][edge], -1, 1) + start[:, None] * way
+    return total + more, about + _cross(cut, more) + _cross(way, lever)
+
+
+def _turns(power: Array, long: Array) -> list[Array]:
+    """Where a cubic may be largest between the ends of its piece: zeros of its slope, kept within the piece."""
+    a, b, c = 3 * power[3], 2 * power[2], power[1]
+    with np.errstate(all="ignore"):
+        root = np.sqrt(np.maximum(b * b - 4 * a * c, 0.0))
+        q = -(b + np.where(b < 0, -1.0, 1.0) * root) / 2
+        found = [q / a, c / q]
+    return [np.clip(np.where(np.isfinite(x), x, 0.0), 0.0, long) for x in found]
+
+
+def _horner(power: Array, x: Array) -> Array:
+    total = power[-1]
+    for part in power[-2::-1]:
+        total = total * x + part
+    return total
+
+
+def _stacked(rows: Sequence[Sequence[Value]], shape: tuple[int, ...]) -> Array:
+    out: Array = np.empty((len(rows), len(rows[0]) if rows else 2, *shape))
+    for row, values in zip(out, rows, strict=True):
+        for part, value in zip(row, values, strict=True):
+            part[...] = value
+    return out
+
+
+def _cross(a: Array, b: Array) -> Array:
+    """Of vectors whose components are the second axis."""
+    return a[:, 0] * b[:, 1] - a[:, 1] * b[:, 0]
