@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Iterator
+from functools import partial
 from typing import TYPE_CHECKING
 
 import numpy as np
@@ -63,7 +64,10 @@ class Inside:
         """What there is of a member: name of the quantity, and its largest size along the member."""
         if len(self.body(member).starts):
             for quantity in KINDS:
-                yield quantity, lambda shown, q=quantity: np.abs(self.largest(shown, member, q).value)
+                yield quantity, partial(self._size, member, quantity)
+
+    def _size(self, member: str, quantity: str, shown: Shown) -> Array:
+        return np.asarray(np.abs(self.largest(shown, member, quantity).value))
 
     def _kept(self, shown: Shown) -> tuple[Shown, dict[int, list[Act]], dict[str, Pieces]]:
         """What was worked out for a batch last: every quantity of a member begins with the same pieces."""

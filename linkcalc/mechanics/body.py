@@ -25,7 +25,7 @@ _SAME = 1e-9
 class Body:
     """A member's body.
 
-    names    name of each node, "" for the foot of an arm
+    names    name of each node; the foot of an arm is called after its point
     nodes    (node, 2) [m] own frame
     starts, stops  for each edge the numbers of its nodes, the first nearer to the first point of the path
     arms     for each edge True if it is no part of the path but an arm to a point beside it
@@ -120,8 +120,13 @@ def body(drawing: Drawing, member: str) -> Body:
         if np.hypot(*(foot - at)) <= slack:
             node(point, at)
         else:
-            arms.append((node("", foot), node(point, at)))
-    edges = [(a, b, arm) for some, arm in ((lines, False), (arms, True)) for line in some for a, b in _cut(line, nodes, slack)]
+            arms.append((node(f"foot of {point}", foot), node(point, at)))
+    edges = [
+        (a, b, arm)
+        for some, arm in ((lines, False), (arms, True))
+        for line in some
+        for a, b in _cut(line, nodes, slack)
+    ]
     kept, ring = _tree(edges, lines[0][0])
     starts, stops, beside = zip(*kept, strict=True) if kept else ((), (), ())
     return Body(tuple(names), np.array(nodes), starts, stops, beside, ring, slack)
@@ -155,7 +160,8 @@ def _tree(edges: Sequence[tuple[int, int, bool]], root: int) -> tuple[list[tuple
     """The edges that can be reached from a node, each pointing away from it and after the one that leads to it; and
     True if one had to be left out because it closes a ring."""
     left = list({frozenset(edge[:2]): edge for edge in reversed(edges)}.values())[::-1]
-    reached, kept, ring = {root}, [], False
+    reached, ring = {root}, False
+    kept: list[tuple[int, int, bool]] = []
     while True:
         found = next((e for e in left if (e[0] in reached) or (e[1] in reached)), None)
         if found is None:

@@ -15,6 +15,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from typing import Any
 
 import numpy as np
 
@@ -127,13 +128,11 @@ def largest(found: Pieces, power: Array, *, sense: int = 0) -> Largest:
     top = np.argmax(np.where(np.isnan(best), -np.inf, best), axis=0)[None]
     lost = np.isnan(power[0]).any(axis=0)
 
-    def chosen(values: Array) -> Array:
+    def chosen(values: Any) -> Any:
         return np.take_along_axis(np.broadcast_to(values, power.shape[1:]), top, axis=0)[0]
 
     edge = np.where(lost, -1, chosen(found.edge))
-    return Largest(
-        np.where(lost, np.nan, chosen(value)), edge, np.where(lost, np.nan, chosen(found.start + way))
-    )
+    return Largest(np.where(lost, np.nan, chosen(value)), edge, np.where(lost, np.nan, chosen(found.start + way)))
 
 
 def unbalance(acts: Sequence[Act], shape: tuple[int, ...]) -> tuple[Array, Array]:
@@ -174,7 +173,9 @@ def _along_edges(body: Body, spread: Sequence[Act], shape: tuple[int, ...]) -> A
     load = np.zeros((len(body.starts), 2, 2, *shape))
     for act in spread:
         assert act.spread is not None
-        lines = [tuple(np.array([float(np.ravel(w)[0]) for w in (s.u, s.v)]) for s in line) for line in act.spread.lines]
+        lines = [
+            tuple(np.array([float(np.ravel(w)[0]) for w in (s.u, s.v)]) for s in line) for line in act.spread.lines
+        ]
         longs = np.array([np.hypot(*(b - a)) for a, b in lines])
         whole = float(longs.sum())
         force = _stacked([(act.fu, act.fv)], shape)[0] / (whole or 1.0)

@@ -158,7 +158,8 @@ class Drawing:
         """The first point of a member that another carries too, None if there is none. Raises Faults."""
         for name in (member, other):
             self.member(name)
-        carried = self.mechanism.members.get(member, Member()).points
+        entry = self.mechanism.members.get(member)
+        carried = entry.points if entry else ()
         return next((p for p in carried if other in self._carriers.get(p, ())), None)
 
     def own_axis(self, member: str) -> Value:

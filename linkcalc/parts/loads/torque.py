@@ -17,7 +17,9 @@ class Torque:
 
     torque_on: str = fields.name("member", "the member that is turned")
     against: str = fields.name("member", "the member that takes it the other way", "ground")
-    shaft: str | None = fields.name("point", "where it goes in, for inner forces; else where the two members meet", None)
+    shaft: str | None = fields.name(
+        "point", "where it goes in, for inner forces; else where the two members meet", None
+    )
     size: Size | None = fields.size("moment", "how large; left out for the one unknown", None)
 
     def pusher(self, name: str, sketch: Sketch) -> TorquePush:

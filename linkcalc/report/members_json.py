@@ -1,0 +1,88 @@
+"""Inner forces as JSON. ``docs/json.md`` describes it."""
+
+from __future__ import annotations
+
+from linkcalc.design.answer import SCHEMA
+from linkcalc.design.diagram import Diagram
+from linkcalc.design.inside import KINDS
+from linkcalc.design.members import MembersAnswer, Peak, Place
+from linkcalc.report.edge import Edge
+from linkcalc.report.json import BATCH, Tree, array, laid_out, one, real, stroke_tree
+
+
+def members_json(answer: MembersAnswer) -> str:
+    """The inner forces of all members, with the stroke that they belong to."""
+    edge = Edge(answer.stroke)
+    tree = {
+        "schema": SCHEMA,
+        "answer": "members",
+        "members": [
+            {
+                "member": m.member,
+                "two-force": m.two_force,
+                "worst": {
+                    name: _peak(edge, peak)
+                    for name, peak in zip(KINDS, (m.axial, m.shear, m.bending), strict=True)
+                    if peak
+                },
+                "over the stroke": {name: array(edge, values, KINDS[name], BATCH) for name, values in m.over.items()},
+                "unbalance": real(m.unbalance),
+            }
+            for m in answer.members
+        ],
+        "warnings": [{"item": c.item, "text": c.text} for c in answer.caveats],
+        "stroke": stroke_tree(answer.stroke),
+    }
+    return laid_out(tree) + "\n"
+
+
+def diagram_json(found: Diagram) -> str:
+    """The diagrams along one member, with what acts on it."""
+    edge = Edge(found.stroke)
+    tree = {
+        "schema": SCHEMA,
+        "answer": "diagram",
+        "title": found.stroke.mechanism.title,
+        "member": found.member,
+        "case": found.stroke.cases[found.case] or None,
+        "drive": one(edge, found.drive, "drive"),
+        "stretches": [
+            {
+                "from": s.start, "to": s.stop, "arm": s.arm,
+                "along": array(edge, s.along, "length", ["place"]),
+                "x": array(edge, s.spots[:, 0], "length", ["place"]),
+                "y": array(edge, s.spots[:, 1], "length", ["place"]),
+                "axial force": array(edge, s.axial, "force", ["place"]),
+                "shear force": array(edge, s.shear, "force", ["place"]),
+                "bending moment": array(edge, s.bending, "moment", ["place"]),
+            }
+            for s in found.stretches
+        ],
+        "acts": [
+            {
+                "name": a.name, "kind": a.tone, "spread": a.spread,
+                "x": one(edge, a.spot[0], "length"), "y": one(edge, a.spot[1], "length"),
+                "force x": one(edge, a.force[0], "force"), "force y": one(edge, a.force[1], "force"),
+                "moment": one(edge, a.moment, "moment"),
+            }
+            for a in found.acts
+        ],
+        "worst": {name: _peak(edge, peak) for name, peak in found.peaks.items()},
+    }  # fmt: skip
+    return laid_out(tree) + "\n"
+
+
+def _peak(edge: Edge, peak: Peak) -> Tree:
+    return {
+        **one(edge, peak.value, peak.kind),
+        "case": peak.case or None,
+        "drive": one(edge, peak.drive, "drive"),
+        "place": _place(edge, peak.place),
+    }
+
+
+def _place(edge: Edge, place: Place | None) -> Tree | None:
+    if place is None:
+        return None
+    sizes = {"way": place.way, "along": place.along}
+    return {"from": place.start, "towards": place.stop, **{k: one(edge, v, "length") for k, v in sizes.items()}}
