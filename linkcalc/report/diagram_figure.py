@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from linkcalc.report import style
-from linkcalc.report.blocks import Drawing, Sheet
+from linkcalc.report.blocks import Sheet
 from linkcalc.report.drawing_figure import scale_bar
 from linkcalc.report.figure import new_figure, title_line
 from linkcalc.report.pen import Pen
