@@ -1,4 +1,4 @@
-"""Axial force, shear and bending moment along one member in one pose and case: what is drawn, and what can be added up."""
+"""Axial force, shear and bending moment along one member in one pose and case."""
 
 from __future__ import annotations
 

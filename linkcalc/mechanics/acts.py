@@ -7,7 +7,7 @@ from dataclasses import dataclass
 
 from linkcalc.mechanics.pipeline import Solved
 from linkcalc.mechanics.prepare import Ready
-from linkcalc.mechanics.reactions import Side, sized
+from linkcalc.mechanics.reactions import Side, sized_pushers
 from linkcalc.parts.contract import Spread
 from linkcalc.parts.pose import Poses, Value
 
@@ -43,7 +43,7 @@ def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[
             x, y = side.x - at.x[side.member], side.y - at.y[side.member]
             moment = 0.0 if side.own_point and isinstance(side.moment, float) else side.moment
             out[side.member].append(_own(at, side.member, side.joint, "joint", x, y, side.fx, side.fy, moment))
-    for acting, size in sized(ready.pushing, at, solved.balance.effort, solved.balance.load):
+    for acting, size in sized_pushers(ready.pushing, at, solved.balance.effort, solved.balance.load):
         pusher = acting.pusher
         if hasattr(pusher, "through"):
             continue  # the joint has told it

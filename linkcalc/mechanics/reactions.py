@@ -62,7 +62,7 @@ def reactions(
     hubs: dict[str, tuple[int, Joint]] = {}
     pins = {joint.name for joint in chain.joints if joint.word == "pin"}
     turning: dict[str, Value] = {}
-    strong = list(sized(pushing, at, effort, load))
+    strong = list(sized_pushers(pushing, at, effort, load))
     for number, (joint, first) in enumerate(zip(chain.joints, chain.first_row, strict=True)):
         if hasattr(joint, "contacts"):
             if joint.angular:
@@ -176,7 +176,7 @@ def _sum(a: Value, b: Value) -> Value:
     return b if isinstance(a, float) and a == 0.0 else a + b
 
 
-def sized(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
+def sized_pushers(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
     """Every pusher with the strength it has in each case."""
     for acting in pushing.effort:
         yield acting, (acting.factor * effort if len(pushing.effort) > 1 else effort)

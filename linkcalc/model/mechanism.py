@@ -15,6 +15,7 @@ from linkcalc.parts.contract import Size
 
 GROUND = "ground"
 STACKED = 'plates are wanted in order, e.g. [["fork", 8], ["rod", 16, 0.5], ["fork", 8, 0.5]]'
+ENDS = ("pinned", "fixed and pinned", "fixed", "fixed and free")
 DISTRIBUTIONS = ("normal", "uniform", "triangular")
 DRAWN, LOWER, UPPER = "drawn", "lower limit", "upper limit"
 
@@ -46,6 +47,9 @@ class Units:
     torsion_stiffness: str = _unit("torsion stiffness", "N*m/deg")
     pressure: str = _unit("pressure", "bar")
     volume: str = _unit("volume", "cm^3")
+    area: str = _unit("area", "mm^2")
+    second_moment: str = _unit("second moment", "mm^4")
+    section_modulus: str = _unit("section modulus", "mm^3")
     temperature: str = fields.choice(("degC", "degF", "K"), "scale of a bare temperature", "degC")
     number = ""
 
@@ -79,6 +83,10 @@ class Member:
     mass    own mass; None is weightless
     stiffness  force over stretch along the line of its two pins; None: it does not stretch
     centre  point of its centre of mass; else the middle of the path (mass spread evenly along it)
+    section      a section part (Flat, Round, Tube, ...), for its stress
+    material     name of its material; factor against its yield stress
+    bend_radius  of the middle line at the corners of its path
+    ends, ends_across  of a two-force member: how its ends are held against buckling, in the plane and out of it
     """
 
     points: tuple[str, ...] = fields.names("point", "the points it carries, in order", least=0, most=None)
@@ -87,6 +95,19 @@ class Member:
     centre: str | None = fields.name("point", "point at its centre of mass; else the middle of the path", None)
     stiffness: Size | None = fields.size(
         "stiffness", "force over stretch along the line of its two pins", None, sign="plus"
+    )
+    section: Any = _entry("part", "its section: a round, a tube, a flat, ...", family="section")
+    material: str | None = fields.name("material", "what it is made of", None)
+    factor: Size | None = fields.size("number", "factor against yield, and against buckling", None, sign="plus")
+    bend_radius: Size | None = fields.size(
+        "length", "radius of its middle line where the path bends; sharp if left out", None, sign="plus"
+    )
+    ends: Size = fields.size(
+        "number", "of a two-force member: how its ends are held in the plane, or the length factor", "pinned",
+        sign="plus", words=ENDS,
+    )  # fmt: skip
+    ends_across: Size | None = fields.size(
+        "number", "the same out of the plane; as in the plane if left out", None, sign="plus", words=ENDS
     )
 
     short = "points"

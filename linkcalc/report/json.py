@@ -56,19 +56,19 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "quantities": _quantities(answer, edge),
         "joints": _bearings(answer, edge),
         "two-force members": [
-            {"member": m, "axial": array(edge, answer.axial_in(m), "force", BATCH)} for m in answer.two_force
+            {"member": m, "axial": array_tree(edge, answer.axial_in(m), "force", BATCH)} for m in answer.two_force
         ],
         "ropes": [
-            {"rope": r, "tension": array(edge, answer.tension_of(r), "force", BATCH)} for r in answer.ropes
+            {"rope": r, "tension": array_tree(edge, answer.tension_of(r), "force", BATCH)} for r in answer.ropes
         ],
         "loads": [
-            {"load": r.load, "quantity": r.quantity, **array(edge, r.values, r.kind, BATCH)} for r in answer.readings
+            {"load": r.load, "quantity": r.quantity, **array_tree(edge, r.values, r.kind, BATCH)} for r in answer.readings
         ],
         "members": [
             {
                 "member": member,
                 **{
-                    key: array(edge, getattr(answer, key)[i], what, _placed_axes(answer))
+                    key: array_tree(edge, getattr(answer, key)[i], what, _placed_axes(answer))
                     for key, what in (("x", "length"), ("y", "length"), ("turn", "angle"))
                 },
             }
@@ -77,15 +77,15 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "events": [
             {
                 "kind": e.kind, "quantity": e.quantity, "case": e.case or None,
-                "drive": one(edge, e.drive, "drive"), "value": one(edge, e.value, e.value_kind),
+                "drive": one_tree(edge, e.drive, "drive"), "value": one_tree(edge, e.value, e.value_kind),
             }
             for e in answer.events
         ],
         "requirements": [
             {
                 "name": v.name, "text": v.text, "holds": v.holds, "case": v.case or None,
-                "worst": one(edge, v.worst, v.kind), "limit": one(edge, v.limit, v.kind),
-                "drive": one(edge, v.drive, "drive"),
+                "worst": one_tree(edge, v.worst, v.kind), "limit": one_tree(edge, v.limit, v.kind),
+                "drive": one_tree(edge, v.drive, "drive"),
             }
             for v in answer.verdicts
         ],
@@ -93,7 +93,7 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "balances": [
             {
                 "case": r.case or None, "balance": r.text,
-                "turns": [{"member": m, **one(edge, turn, "angle")} for m, turn in r.turns.items()],
+                "turns": [{"member": m, **one_tree(edge, turn, "angle")} for m, turn in r.turns.items()],
             }
             for r in answer.rests
         ],
@@ -124,7 +124,7 @@ def _quantities(answer: StrokeAnswer, edge: Edge) -> Tree:
         if meta["when"] and not getattr(answer, meta["when"]):
             continue
         if meta["axes"] in (tuple(BATCH), ("one", "variant", "pose")):
-            found = array(edge, getattr(answer, name), meta["quantity"], list(meta["axes"]))
+            found = array_tree(edge, getattr(answer, name), meta["quantity"], list(meta["axes"]))
             tree[name.replace("_", " ")] = {"text": meta["text"], **found}
     return tree
 
@@ -137,18 +137,18 @@ def _bearings(answer: StrokeAnswer, edge: Edge) -> list[Tree]:
             "joint": b.joint,
             "kind": b.word,
             "member": b.member,
-            "x": array(edge, answer.force[i, 0], "force", BATCH),
-            "y": array(edge, answer.force[i, 1], "force", BATCH),
-            "resultant": array(edge, size[i], "force", BATCH),
-            "direction": array(edge, points[i], "angle", BATCH),
-            "direction from own axis": array(edge, own[i], "angle", BATCH),
-            "moment": array(edge, answer.moment[i], "moment", BATCH),
+            "x": array_tree(edge, answer.force[i, 0], "force", BATCH),
+            "y": array_tree(edge, answer.force[i, 1], "force", BATCH),
+            "resultant": array_tree(edge, size[i], "force", BATCH),
+            "direction": array_tree(edge, points[i], "angle", BATCH),
+            "direction from own axis": array_tree(edge, own[i], "angle", BATCH),
+            "moment": array_tree(edge, answer.moment[i], "moment", BATCH),
         }
         for i, b in enumerate(answer.bearings)
     ]
 
 
-def array(edge: Edge, values: Array, what: str, axes: list[str]) -> Tree:
+def array_tree(edge: Edge, values: Array, what: str, axes: list[str]) -> Tree:
     return {"unit": edge.unit(what), "axes": axes, "values": _nulls(edge.out(values, what))}
 
 
@@ -157,7 +157,7 @@ def _nulls(values: Array) -> Any:
     return np.where(np.isfinite(values), values, None).tolist()  # type: ignore[call-overload]
 
 
-def one(edge: Edge, value: float, what: str) -> Tree:
+def one_tree(edge: Edge, value: float, what: str) -> Tree:
     unbounded = {"unbounded": True} if math.isinf(value) else {}
     return {"unit": edge.unit(what), "value": real(edge.one(value, what)), **unbounded}
 

@@ -7,7 +7,7 @@ from linkcalc.design.diagram import Diagram
 from linkcalc.design.inside import KINDS
 from linkcalc.design.members import MembersAnswer, Peak, Place
 from linkcalc.report.edge import Edge
-from linkcalc.report.json import BATCH, Tree, array, laid_out, one, real, stroke_tree
+from linkcalc.report.json import BATCH, Tree, array_tree, laid_out, one_tree, real, stroke_tree
 
 
 def members_json(answer: MembersAnswer) -> str:
@@ -25,7 +25,7 @@ def members_json(answer: MembersAnswer) -> str:
                     for name, peak in zip(KINDS, (m.axial, m.shear, m.bending), strict=True)
                     if peak
                 },
-                "over the stroke": {name: array(edge, values, KINDS[name], BATCH) for name, values in m.over.items()},
+                "over the stroke": {name: array_tree(edge, values, KINDS[name], BATCH) for name, values in m.over.items()},
                 "unbalance": real(m.unbalance),
             }
             for m in answer.members
@@ -45,25 +45,25 @@ def diagram_json(found: Diagram) -> str:
         "title": found.stroke.mechanism.title,
         "member": found.member,
         "case": found.stroke.cases[found.case] or None,
-        "drive": one(edge, found.drive, "drive"),
+        "drive": one_tree(edge, found.drive, "drive"),
         "stretches": [
             {
                 "from": s.start, "to": s.stop, "arm": s.arm,
-                "along": array(edge, s.along, "length", ["place"]),
-                "x": array(edge, s.spots[:, 0], "length", ["place"]),
-                "y": array(edge, s.spots[:, 1], "length", ["place"]),
-                "axial force": array(edge, s.axial, "force", ["place"]),
-                "shear force": array(edge, s.shear, "force", ["place"]),
-                "bending moment": array(edge, s.bending, "moment", ["place"]),
+                "along": array_tree(edge, s.along, "length", ["place"]),
+                "x": array_tree(edge, s.spots[:, 0], "length", ["place"]),
+                "y": array_tree(edge, s.spots[:, 1], "length", ["place"]),
+                "axial force": array_tree(edge, s.axial, "force", ["place"]),
+                "shear force": array_tree(edge, s.shear, "force", ["place"]),
+                "bending moment": array_tree(edge, s.bending, "moment", ["place"]),
             }
             for s in found.stretches
         ],
         "acts": [
             {
                 "name": a.name, "kind": a.tone, "spread": a.spread,
-                "x": one(edge, a.spot[0], "length"), "y": one(edge, a.spot[1], "length"),
-                "force x": one(edge, a.force[0], "force"), "force y": one(edge, a.force[1], "force"),
-                "moment": one(edge, a.moment, "moment"),
+                "x": one_tree(edge, a.spot[0], "length"), "y": one_tree(edge, a.spot[1], "length"),
+                "force x": one_tree(edge, a.force[0], "force"), "force y": one_tree(edge, a.force[1], "force"),
+                "moment": one_tree(edge, a.moment, "moment"),
             }
             for a in found.acts
         ],
@@ -74,9 +74,9 @@ def diagram_json(found: Diagram) -> str:
 
 def _peak(edge: Edge, peak: Peak) -> Tree:
     return {
-        **one(edge, peak.value, peak.kind),
+        **one_tree(edge, peak.value, peak.kind),
         "case": peak.case or None,
-        "drive": one(edge, peak.drive, "drive"),
+        "drive": one_tree(edge, peak.drive, "drive"),
         "place": _place(edge, peak.place),
     }
 
@@ -85,4 +85,4 @@ def _place(edge: Edge, place: Place | None) -> Tree | None:
     if place is None:
         return None
     sizes = {"way": place.way, "along": place.along}
-    return {"from": place.start, "towards": place.stop, **{k: one(edge, v, "length") for k, v in sizes.items()}}
+    return {"from": place.start, "towards": place.stop, **{k: one_tree(edge, v, "length") for k, v in sizes.items()}}
