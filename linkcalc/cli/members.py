@@ -20,7 +20,7 @@ from linkcalc.cli.files import (
     option_fault,
     put,
 )
-from linkcalc.cli.poses import pose_value
+from linkcalc.cli.poses import Poses, check_poses, pose_value
 from linkcalc.design.diagram import Diagram
 from linkcalc.design.members import MembersAnswer
 from linkcalc.model.mechanism import DRAWN, GROUND, Mechanism
@@ -37,6 +37,10 @@ At = Annotated[
         metavar="POSE",
     ),
 ]
+WorkingOf = Annotated[
+    str | None,
+    typer.Option("--working", help="The strength of this member as a sheet that can be checked.", metavar="NAME"),
+]
 Output = Annotated[
     list[str] | None,
     typer.Option(
@@ -48,9 +52,11 @@ Output = Annotated[
 def members(
     file: ModelFile,
     case: CaseName = None,
+    poses: Poses = None,
     member: MemberName = None,
     at: At = None,
     output: Output = None,
+    working: WorkingOf = None,
     json: JsonFile = None,
     csv: CsvFile = None,
 ) -> None:
@@ -58,12 +64,19 @@ def members(
     with in_file(file) as model:
         from linkcalc.design.members import members as ask
 
+        check_poses(poses)
         _check_options(model, member, at, output or ())
+        if working is not None:
+            _check_member(model, "--working", working)
+            if member is not None:
+                raise option_fault("--working and --member", "both cannot be printed", "give one of them")
         if json == STDOUT and csv == STDOUT:
             raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
         check_outputs(file, {"--json": [json], "--csv": [csv], "--output": output or []})
-        answer = ask(model, case=case)
-        if member is None:
+        answer = ask(model, case=case, poses=poses)
+        if working is not None:
+            _tell_working(answer, working, json, csv)
+        elif member is None:
             _tell(answer, json, csv)
         else:
             _tell_diagram(_diagram(answer, member, at), output or (), json, csv)
@@ -77,11 +90,17 @@ def _check_options(model: Mechanism, member: str | None, at: str | None, output:
         for option, given in (("--at", at), ("--output", output)):
             if given:
                 raise option_fault(option, "of which member?", "add --member NAME, one of " + ", ".join(moving))
-    elif member not in moving:
-        what = "the ground has no inner forces here" if member == GROUND else f"unknown member {member!r}"
-        raise option_fault("--member", what, nearest(member, moving))
+    else:
+        _check_member(model, "--member", member)
     for target in output:
         check_picture("--output", target)
+
+
+def _check_member(model: Mechanism, option: str, member: str) -> None:
+    moving = [m for m in model.members if m != GROUND]
+    if member not in moving:
+        what = "the ground has no inner forces here" if member == GROUND else f"unknown member {member!r}"
+        raise option_fault(option, what, nearest(member, moving))
 
 
 def _diagram(answer: MembersAnswer, member: str, at: str | None) -> Diagram:
@@ -115,6 +134,21 @@ def _tell(answer: MembersAnswer, json: str | None, csv: str | None) -> None:
         put(csv, lambda: as_csv(members_table(answer)))
     if STDOUT not in (json, csv):
         typer.echo(as_text(members_blocks(answer)))
+
+
+def _tell_working(answer: MembersAnswer, member: str, json: str | None, csv: str | None) -> None:
+    from linkcalc.report.csv import as_csv
+    from linkcalc.report.members_json import members_json
+    from linkcalc.report.sections.member_strength import member_workings, workings_table
+    from linkcalc.report.text import as_text
+
+    blocks = member_workings(answer, member)
+    if json:
+        put(json, lambda: members_json(answer))
+    if csv:
+        put(csv, lambda: as_csv(workings_table(answer, member)))
+    if STDOUT not in (json, csv):
+        typer.echo(as_text(blocks))
 
 
 def _tell_diagram(found: Diagram, output: Sequence[str], json: str | None, csv: str | None) -> None:

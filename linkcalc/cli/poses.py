@@ -3,11 +3,23 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from typing import Annotated
+
+import typer
 
 from linkcalc.cli.files import option_fault
 from linkcalc.faults import Fault, Faults
 from linkcalc.model.mechanism import DRAWN, Mechanism
 from linkcalc.words import nearest
+
+Poses = Annotated[int | None, typer.Option("--poses", help="Number of poses instead of the model's.", metavar="N")]
+_MOST = 100_000
+
+
+def check_poses(poses: int | None) -> None:
+    """Raises Faults: too few or too many."""
+    if poses is not None and not 2 <= poses <= _MOST:
+        raise option_fault("--poses", f"{poses} poses", f"from 2 to {_MOST} are wanted")
 
 
 def pose_value(mechanism: Mechanism, text: str, ends: Mapping[str, float]) -> float:

@@ -8,9 +8,10 @@ import numpy as np
 
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.design.curves import Wanted
-from linkcalc.design.inside import AXIAL, BENDING, KINDS, Inside
-from linkcalc.design.members import MembersAnswer, Peak, where
+from linkcalc.design.inside import AXIAL, BENDING, FORCES, KINDS, Inside
+from linkcalc.design.members import MembersAnswer
 from linkcalc.design.passages import worst
+from linkcalc.design.peaks import Peak, where
 from linkcalc.design.survey import inner
 from linkcalc.faults import fault
 from linkcalc.mechanics.internal import Pieces
@@ -116,7 +117,7 @@ def diagram(answer: MembersAnswer, member: str, *, case: str | None = None, driv
             Acting(act.name, act.tone, tuple(spot.tolist()), tuple(force.tolist()), moment, act.spread is not None)
         )
     peaks = {}
-    for quantity in KINDS if body.starts else ():
+    for quantity in FORCES if body.starts else ():
         top = inside.largest(shown, member, quantity)
         value, edge, way = (float(a[number, 0, 0]) for a in (top.value, top.edge, top.way))
         peaks[quantity] = Peak(value, KINDS[quantity], cases[number], place, where(body, int(edge), way))

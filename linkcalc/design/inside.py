@@ -8,9 +8,10 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
-from linkcalc.mechanics.acts import Act, acts
-from linkcalc.mechanics.body import Body, body
-from linkcalc.mechanics.internal import Largest, Pieces, largest, pieces
+from linkcalc.design.sizing.model_members import MemberSpec, member_spec
+from linkcalc.mechanics.acts import Act, acts, ends
+from linkcalc.mechanics.body import Body, body, straight
+from linkcalc.mechanics.internal import Largest, Pieces, fibre_stress, largest, pieces
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.model.mechanism import GROUND
 from linkcalc.model.requirements import INNER, requirements
@@ -20,7 +21,9 @@ if TYPE_CHECKING:
     from linkcalc.design.survey import Shown
 
 AXIAL, SHEAR, BENDING = "axial force", "shear force", "bending moment"
-KINDS = {AXIAL: "force", SHEAR: "force", BENDING: "moment"}
+STRESS, MARGIN, USED = "stress", "buckling margin", "utilisation"
+FORCES = (AXIAL, SHEAR, BENDING)
+KINDS = {AXIAL: "force", SHEAR: "force", BENDING: "moment", STRESS: "stress", MARGIN: "number", USED: "number"}
 
 
 class Inside:
@@ -30,19 +33,46 @@ class Inside:
     asked    those that requirements ask about
     """
 
-    def __init__(self, ready: Ready):
-        self._ready = ready
+    def __init__(self, ready: Ready, first: Shown):
+        self._ready, self._first = ready, first
         mechanism = ready.drawing.mechanism
         self.members = tuple(m for m in ready.drawing.members if m != GROUND)
         about = [r.of for r in requirements(mechanism) if r.quantity in INNER]
         self.asked = tuple(m for m in self.members if m in about)
         self._bodies: dict[str, Body] = {}
+        self._specs: dict[str, MemberSpec] = {}
+        self._columns: dict[str, float | None] = {}
+        self._buckling: dict[str, float] = {}
         self._last: tuple[Shown, dict[int, list[Act]], dict[str, Pieces]] | None = None
 
     def body(self, member: str) -> Body:
         if member not in self._bodies:
             self._bodies[member] = body(self._ready.drawing, member)
         return self._bodies[member]
+
+    def spec(self, member: str) -> MemberSpec:
+        """Section, material and ends of a member. Raises Faults."""
+        if member not in self._specs:
+            self._specs[member] = member_spec(member, self._ready.drawing)
+        return self._specs[member]
+
+    def column(self, member: str) -> float | None:
+        """[m] length between the two places that a straight member is loaded at, but for its own weight; None for
+        any other member."""
+        if member not in self._columns:
+            of = self.body(member)
+            places = ends(member, self.acts(self._first, member), of.slack)
+            self._columns[member] = None if places is None or not of.starts else straight(of, *places)
+        return self._columns[member]
+
+    def buckling(self, member: str) -> float | None:
+        """[N] compression that a column buckles at; None for what is none, or whose section or material is not told."""
+        spec, long = self.spec(member), self.column(member)
+        if long is None or spec.section is None or spec.material is None or spec.material.modulus is None:
+            return None
+        if member not in self._buckling:
+            self._buckling[member] = spec.buckling_load(long)
+        return self._buckling[member]
 
     def acts(self, shown: Shown, member: str) -> list[Act]:
         return self._kept(shown)[1][self._ready.drawing.member(member)]
@@ -58,16 +88,50 @@ class Inside:
     def largest(self, shown: Shown, member: str, quantity: str) -> Largest:
         """Where along the member a quantity is largest, in every case and pose."""
         found = self.pieces(shown, member)
+        if quantity == STRESS:
+            spec = self.spec(member)
+            return fibre_stress(self.body(member), found, spec.area, spec.modulus, spec.curved)
+        if quantity == MARGIN:
+            return largest(found, found.axial, sense=-1)
         return largest(found, {AXIAL: found.axial, SHEAR: found.shear, BENDING: found.bending}[quantity])
 
     def of(self, member: str) -> Iterator[tuple[str, Callable[[Shown], Array]]]:
-        """What there is of a member: name of the quantity, and its largest size along the member."""
-        if len(self.body(member).starts):
-            for quantity in KINDS:
-                yield quantity, partial(self._size, member, quantity)
+        """What there is of a member: name of the quantity, and its worst along the member."""
+        if not self.body(member).starts:
+            return
+        for quantity in FORCES:
+            yield quantity, partial(self._size, member, quantity)
+        spec = self.spec(member)
+        if spec.section is not None:
+            yield STRESS, partial(self._size, member, STRESS)
+            if self.buckling(member) is not None:
+                yield MARGIN, partial(self._margin, member)
+            if spec.material is not None:
+                yield USED, partial(self._used, member)
 
     def _size(self, member: str, quantity: str, shown: Shown) -> Array:
         return np.asarray(np.abs(self.largest(shown, member, quantity).value))
+
+    def _margin(self, member: str, shown: Shown) -> Array:
+        """Buckling load over compression; without bound where it is not pressed."""
+        load = self.buckling(member)
+        assert load is not None
+        push = -self.largest(shown, member, MARGIN).value
+        with np.errstate(divide="ignore", invalid="ignore"):
+            return np.where(push > 0, load / push, np.where(np.isnan(push), np.nan, np.inf))
+
+    def _used(self, member: str, shown: Shown) -> Array:
+        """Used part of what is allowed: fibre stress, mean shear stress, buckling, whichever is used most."""
+        spec = self.spec(member)
+        assert spec.material is not None
+        allowed = spec.material.yields / spec.factor
+        used = np.maximum(
+            self._size(member, STRESS, shown) / allowed,
+            self._size(member, SHEAR, shown) / spec.area / (allowed / np.sqrt(3.0)),
+        )
+        if self.buckling(member) is not None:
+            used = np.maximum(used, spec.factor / self._margin(member, shown))
+        return np.asarray(used)
 
     def _kept(self, shown: Shown) -> tuple[Shown, dict[int, list[Act]], dict[str, Pieces]]:
         """What was worked out for a batch last: every quantity of a member begins with the same pieces."""

@@ -8,10 +8,15 @@ import numpy as np
 
 from linkcalc.design.answer import Caveat
 from linkcalc.design.curves import Curves
+from linkcalc.design.inside import MARGIN
+from linkcalc.design.sizing.section import SHARP
 from linkcalc.mechanics.acts import Act
 from linkcalc.mechanics.body import Body
 from linkcalc.mechanics.internal import off_body
 from linkcalc.model.units import show
+
+_PRESSED = 0.1
+"""Of the buckling load of a straight bar as long as the body: more than so, bending grows with the compression."""
 
 
 def member_caveats(curves: Curves) -> Iterator[Caveat]:
@@ -36,6 +41,43 @@ def member_caveats(curves: Curves) -> Iterator[Caveat]:
                          " is spread evenly along the path")  # fmt: skip
         for act in inside.acts(curves.shown, name):
             yield from _act(curves, name, body, act)
+        yield from _bends(curves, name, body)
+        yield from _columns(curves, name)
+
+
+def _bends(curves: Curves, name: str, body: Body) -> Iterator[Caveat]:
+    """What a bend does to the stress."""
+    spec = curves.survey.inside.spec(name)
+    corners = ", ".join(body.names[k] for k in body.corners())
+    if spec.section is None or not corners:
+        return
+    if spec.bend_radius is None:
+        yield Caveat(name, f"it bends at {corners} without a 'bend_radius': reckoned as straight bars that meet there;"
+                     " a small radius or a sharp corner carries more at its inside than is told")  # fmt: skip
+    elif spec.curved == 1.0 and spec.bend_radius < SHARP * spec.depth:
+        yield Caveat(name, f"its bend radius is less than {SHARP:g} times its depth, and a section of this kind is"
+                     " reckoned as straight: the inside of the bend carries more than is told")  # fmt: skip
+
+
+def _columns(curves: Curves, name: str) -> Iterator[Caveat]:
+    """Members that are pressed and of which buckling is not told."""
+    inside = curves.survey.inside
+    spec = inside.spec(name)
+    if spec.section is None or spec.material is None or curves.nowhere:
+        return
+    if inside.column(name) is not None:
+        if spec.material.modulus is None:
+            yield Caveat(name, f"{spec.material.name} has no 'modulus', so buckling is not looked at")
+        return
+    least = inside.largest(curves.shown, name, MARGIN).value
+    push = float(np.max(-least, initial=0.0, where=np.isfinite(least)))
+    body = inside.body(name)
+    pressed = (
+        push / (float(body.long.sum()) and spec.buckling_load(float(body.long.sum()))) if spec.material.modulus else 0
+    )
+    if pressed > _PRESSED:
+        yield Caveat(name, "it is pressed and bent at once, or not straight: buckling is not looked at, and its"
+                     " compression is no small part of what it would buckle at")  # fmt: skip
 
 
 def _act(curves: Curves, name: str, body: Body, act: Act) -> Iterator[Caveat]:

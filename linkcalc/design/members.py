@@ -9,52 +9,21 @@ import numpy as np
 
 from linkcalc.design.answer import Caveat, StrokeAnswer
 from linkcalc.design.curves import Curves, Found, Wanted
-from linkcalc.design.inside import AXIAL, BENDING, KINDS, SHEAR
+from linkcalc.design.inside import AXIAL, BENDING, KINDS, MARGIN, SHEAR, STRESS, USED, Inside
 from linkcalc.design.member_caveats import member_caveats
+from linkcalc.design.member_strength import needed, workings
 from linkcalc.design.passages import worst
+from linkcalc.design.peaks import Peak, where
+from linkcalc.design.sizing.model_members import MemberSpec
+from linkcalc.design.sizing.working import Working
 from linkcalc.design.stroke import study
-from linkcalc.design.survey import inner
-from linkcalc.mechanics.body import Body
+from linkcalc.design.survey import Shown, inner
 from linkcalc.mechanics.internal import unbalance
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.parts.pose import Array
 
 _NOTHING = 1e-9
 """Of the largest force in the mechanism (times its size): rounding."""
-
-
-@dataclass(frozen=True)
-class Place:
-    """A place along the body of a member.
-
-    start, stop  names of the ends of the straight part that it is on
-    way, long    [m] how far from start, and how long that part is
-    along        [m] how far from the member's first point, along the body
-    """
-
-    start: str
-    stop: str
-    way: float
-    long: float
-    along: float
-
-
-@dataclass(frozen=True)
-class Peak:
-    """The worst of something within a member, over the stroke and all cases.
-
-    value  SI, with the sign it has there (see ``mechanics.internal``)
-    kind   "force" or "moment"
-    case   name of its load case
-    drive  [rad or m] where in the stroke, found exactly; nan without a stroke
-    place  where along the member; None where it has no bound
-    """
-
-    value: float
-    kind: str
-    case: str
-    drive: float
-    place: Place | None
 
 
 @dataclass(frozen=True, eq=False)
@@ -64,7 +33,14 @@ class MemberForces:
     member     its name
     two_force  True if it is loaded at two pins only
     axial, shear, bending  the worst of each; None if it has none: no body, or nothing but rounding
-    over       quantity -> (case, variant, pose) [SI] the largest along the member, with its sign, at each pose
+    stress     the worst stress of axial force and bending at an outermost fibre; None without a section
+    margin     the smallest buckling load over compression, of a straight member loaded at two places whose section and
+               material are told; no bound if it is never pressed
+    used       the largest used part of what is allowed; None without section and material
+    spec       what the model says of section, material, factor and ends
+    needed     [m3] section modulus that would do; None without a material, or if nothing bends it
+    strength   the working of its worst stress; buckling that of its worst compression
+    over       quantity -> (case, variant, pose) [SI] the worst along the member, forces with their sign, at each pose
     unbalance  what its diagrams end with instead of nothing, over the largest force (times the size of the mechanism)
     """
 
@@ -73,6 +49,13 @@ class MemberForces:
     axial: Peak | None
     shear: Peak | None
     bending: Peak | None
+    stress: Peak | None
+    margin: Peak | None
+    used: Peak | None
+    spec: MemberSpec
+    needed: float | None
+    strength: Working | None
+    buckling: Working | None
     over: dict[str, Array]
     unbalance: float
 
@@ -118,10 +101,27 @@ def members(mechanism: Mechanism, *, case: str | None = None, poses: int | None 
     peaks = _peaks(curves)
     found = []
     for name in inside.members:
-        over = {q: inside.largest(studied.shown, name, q).value for q in KINDS if (name, q) in peaks}
-        axial, shear, bending = (peaks.get((name, q)) for q in (AXIAL, SHEAR, BENDING))
-        two_force = name in studied.answer.two_force
-        found.append(MemberForces(name, two_force, axial, shear, bending, over, _unbalance(curves, name)))
+        mine = {q: peaks.get((name, q)) for q in KINDS}
+        over = {q: _over(inside, studied.shown, name, q) for q, peak in mine.items() if peak}
+        strength, buckling = workings(curves, name, mine[STRESS], mine[MARGIN])
+        found.append(
+            MemberForces(
+                name,
+                name in studied.answer.two_force,
+                axial=mine[AXIAL],
+                shear=mine[SHEAR],
+                bending=mine[BENDING],
+                stress=mine[STRESS],
+                margin=mine[MARGIN],
+                used=mine[USED],
+                spec=inside.spec(name),
+                needed=needed(inside.spec(name), mine[BENDING], strength),
+                strength=strength,
+                buckling=buckling,
+                over=over,
+                unbalance=_unbalance(curves, name),
+            )
+        )
     return MembersAnswer(studied.answer, tuple(found), tuple(member_caveats(curves)), curves)
 
 
@@ -129,22 +129,31 @@ def _peaks(curves: Curves) -> dict[tuple[str, str], Peak]:
     """(member, quantity) -> its worst, of those that are more than rounding."""
     inside, cases = curves.survey.inside, curves.survey.ready.pushing.cases
     asked = [(m, q) for m in inside.members for q in KINDS if _carries(curves, m, q)]
-    wanted = [Wanted(inner(q, m), c, 1) for m, q in asked for c in range(len(cases))]
+    senses = {MARGIN: -1}
+    wanted = [Wanted(inner(q, m), c, senses.get(q, 1)) for m, q in asked for c in range(len(cases))]
     found = iter(worst(curves, wanted))
     top: dict[tuple[str, str], tuple[int, Found]] = {}
     for key in asked:
         each = [next(found) for _ in cases]
-        values = [-np.inf if np.isnan(f.value) else f.value for f in each]
+        values = [-np.inf if np.isnan(f.value) else senses.get(key[1], 1) * f.value for f in each]
         k = int(np.argmax(values))
-        if values[k] > -np.inf:
+        if values[k] > -np.inf or key[1] == MARGIN:
             top[key] = k, each[k]
     return dict(_placed(curves, top))
+
+
+def _over(inside: Inside, shown: Shown, member: str, quantity: str) -> Array:
+    if quantity in (MARGIN, USED):
+        return dict(inside.of(member))[quantity](shown)
+    return inside.largest(shown, member, quantity).value
 
 
 def _carries(curves: Curves, member: str, quantity: str) -> bool:
     name = inner(quantity, member)
     if name not in curves.survey.quantities:
         return False
+    if KINDS[quantity] not in ("force", "moment"):
+        return True
     arm = curves.survey.ready.chain.size if KINDS[quantity] == "moment" else 1.0
     return curves.size(name) > _NOTHING * curves.largest_force * arm
 
@@ -156,19 +165,16 @@ def _placed(curves: Curves, top: dict[tuple[str, str], tuple[int, Found]]) -> It
     inside, cases = curves.survey.inside, curves.survey.ready.pushing.cases
     shown = curves.survey.show(curves.solve(np.array([f.drive for _, f in top.values()])))
     for column, ((member, quantity), (case, found)) in enumerate(top.items()):
+        if quantity == USED:
+            yield (member, quantity), Peak(found.value, "number", cases[case], found.drive, None)
+            continue
         at = inside.largest(shown, member, quantity)
         column = min(column, at.value.shape[2] - 1)
         value, edge = float(at.value[case, 0, column]), int(at.edge[case, 0, column])
         way = float(at.way[case, 0, column])
         place = None if edge < 0 or np.isinf(found.value) else where(inside.body(member), edge, way)
-        signed = found.value * (-1.0 if value < 0 else 1.0)
+        signed = found.value * (-1.0 if value < 0 and quantity != MARGIN else 1.0)
         yield (member, quantity), Peak(signed, KINDS[quantity], cases[case], found.drive, place)
-
-
-def where(body: Body, edge: int, way: float) -> Place:
-    """A place along an edge of a body, in words."""
-    start, stop = (body.names[k[edge]] for k in (body.starts, body.stops))
-    return Place(start, stop, way, float(body.long[edge]), float(body.before[edge]) + way)
 
 
 def _unbalance(curves: Curves, member: str) -> float:

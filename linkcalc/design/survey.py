@@ -7,7 +7,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from linkcalc.design.inside import KINDS, Inside
+from linkcalc.design.inside import FORCES, KINDS, Inside
 from linkcalc.design.told import Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
@@ -67,7 +67,7 @@ class Survey:
         self.contacts = tuple(ready.chain.joints[k].name for k, _, law in ready.chain.gives if law.one_sided)
         self.spoken = spoken(ready.pushing)
         self.watched = watched(ready.pushing)
-        self.inside = Inside(ready)
+        self.inside = Inside(ready, shown)
         members = self.inside.members if inner else self.inside.asked
         self.quantities: dict[str, Quantity] = {q.name: q for q in [*self._all(), *self._inner(members)]}
 
@@ -144,7 +144,7 @@ class Survey:
 
 def inner(quantity: str, member: str) -> str:
     """Name of what goes on in a member at its worst place: "largest bending moment in arm"."""
-    return f"largest {quantity} in {member}"
+    return f"largest {quantity} in {member}" if quantity in FORCES else f"{quantity} of {member}"
 
 
 def efficiency(b: Balance, pushing: Pushing) -> Value:

@@ -9,6 +9,7 @@ import numpy as np
 
 from linkcalc.design.answer import Verdict
 from linkcalc.design.curves import Curves, Wanted
+from linkcalc.design.inside import MARGIN
 from linkcalc.design.passages import worst
 from linkcalc.design.survey import inner
 from linkcalc.design.travel import travel
@@ -122,7 +123,12 @@ def _asked(curves: Curves, requirement: Requirement) -> None:
     name = _quantity(curves, requirement)[0]
     if name in curves.survey.quantities:
         return
-    if requirement.quantity in ("tension", "compression"):
+    if requirement.quantity == MARGIN:
+        what = (
+            f"{requirement.of} is not loaded at two places of a straight body only, so it does not buckle as a column"
+        )
+        cure = f'hold its stress down: "stress in {requirement.of}"'
+    elif requirement.quantity in ("tension", "compression"):
         what = f"{requirement.of} is no two-force member: it is not loaded at two pins only"
         cure = "name the force of its joint: " + f'"force at PIN on {requirement.of}"'
     else:

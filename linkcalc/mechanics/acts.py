@@ -5,6 +5,8 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 
+import numpy as np
+
 from linkcalc.mechanics.pipeline import Solved
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.reactions import Side, sized_pushers
@@ -21,6 +23,7 @@ class Act:
     u, v    [m] where
     fu, fv  [N]
     moment  [N m] about that place
+    pinned  True for a force at a point of the member, without a couple but for friction of a pin
     spread  how it is spread along the member, None for one at its place
     """
 
@@ -31,6 +34,7 @@ class Act:
     fu: Value
     fv: Value
     moment: Value
+    pinned: bool = False
     spread: Spread | None = None
 
 
@@ -42,7 +46,8 @@ def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[
         if side.member > 0:
             x, y = side.x - at.x[side.member], side.y - at.y[side.member]
             moment = 0.0 if side.own_point and isinstance(side.moment, float) else side.moment
-            out[side.member].append(_own(at, side.member, side.joint, "joint", x, y, side.fx, side.fy, moment))
+            one = _own(at, side.member, side.joint, "joint", x, y, side.fx, side.fy, moment, side.own_point)
+            out[side.member].append(one)
     for acting, size in sized_pushers(ready.pushing, at, solved.balance.effort, solved.balance.load):
         pusher = acting.pusher
         if hasattr(pusher, "through"):
@@ -54,15 +59,32 @@ def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[
                 continue
             a, b = at.arm(site)
             # a couple has no arm; what a force leaves of its moment about its own place is rounding
-            moment = 0.0 if pusher.kind == "force" else turning * size
-            out[member].append(_own(at, member, pusher.name, pusher.word, a, b, fx * size, fy * size, moment, spread))
+            force = pusher.kind == "force"
+            moment = 0.0 if force else turning * size
+            one = _own(at, member, pusher.name, pusher.word, a, b, fx * size, fy * size, moment, force, spread)
+            out[member].append(one)
     return out
 
 
 def _own(
     at: Poses, member: int, name: str, tone: str, x: Value, y: Value, fx: Value, fy: Value, moment: Value,
-    spread: Spread | None = None,
+    pinned: bool, spread: Spread | None = None,
 ) -> Act:  # fmt: skip
     """From ground axes to the member's own."""
     c, s = at.c[member], at.s[member]
-    return Act(name, tone, c * x + s * y, c * y - s * x, c * fx + s * fy, c * fy - s * fx, moment, spread)
+    return Act(name, tone, c * x + s * y, c * y - s * x, c * fx + s * fy, c * fy - s * fx, moment, pinned, spread)
+
+
+def ends(member: str, found: Sequence[Act], near: float) -> tuple[tuple[float, float], tuple[float, float]] | None:
+    """The two places (own frame) [m] that a member is loaded at without a couple, but for its own weight and for the
+    friction of its pins; None if there are other than two. near: places closer together are one [m]."""
+    spots: list[tuple[float, float]] = []
+    for act in found:
+        if act.name == f"weight of {member}":
+            continue
+        if not act.pinned or act.spread is not None:
+            return None
+        u, v = (float(np.ravel(w)[0]) for w in (act.u, act.v))
+        if all(np.hypot(u - x, v - y) > near for x, y in spots):
+            spots.append((u, v))
+    return (spots[0], spots[1]) if len(spots) == 2 else None

@@ -132,6 +132,22 @@ def body(drawing: Drawing, member: str) -> Body:
     return Body(tuple(names), np.array(nodes), starts, stops, beside, ring, slack)
 
 
+def straight(of: Body, a: tuple[float, float], b: tuple[float, float]) -> float | None:
+    """[m] how long the body is between two places (own frame), if it runs straight from the one to the other; None if
+    it does not."""
+    first, last = np.array(a), np.array(b)
+    long = float(np.hypot(*(last - first)))
+    if long <= of.slack:
+        return None
+    t, covered = (last - first) / long, 0.0
+    for start, stop in zip(of.starts, of.stops, strict=True):
+        arms = of.nodes[[start, stop]] - first
+        if max(abs(_cross(t, arm)) for arm in arms) <= of.slack:
+            low, high = np.clip(sorted(float(arm @ t) for arm in arms), 0.0, long)
+            covered += float(high - low)
+    return long if covered >= long - 10 * of.slack else None
+
+
 def _foot(at: Array, lines: Sequence[tuple[Array, Array]]) -> Array:
     """The nearest place on some straight lines."""
     feet = []

@@ -14,7 +14,7 @@ M is at most a cubic of the way along a piece where the load changes evenly.
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any
 
 import numpy as np
@@ -55,11 +55,13 @@ class Largest:
     value  with the sign it has there
     edge   number of the edge, -1 where there is no number
     way    [m] along that edge
+    piece  number of the piece
     """
 
     value: Array
     edge: Numbers
     way: Array
+    piece: Numbers
 
 
 def pieces(body: Body, acts: Sequence[Act], shape: tuple[int, ...]) -> Pieces:
@@ -107,15 +109,15 @@ def pieces(body: Body, acts: Sequence[Act], shape: tuple[int, ...]) -> Pieces:
     return Pieces(edge, start, long, long > 0.0, axial, shear, bending, bool(spread))
 
 
-def largest(found: Pieces, power: Array, *, sense: int = 0) -> Largest:
+def largest(found: Pieces, power: Array, *, sense: int = 0, ways: Sequence[Array] | None = None) -> Largest:
     """The largest size of a polynomial along all pieces of each entry.
 
     power  (power, piece, case, variant, pose), such as ``found.bending``
     sense  0 whichever sign it has; +1 the largest, -1 the smallest
+    ways   [m] from the start of the pieces, to look at no other places
     """
-    ways = [np.zeros_like(found.long), found.long]
-    if found.spread:
-        ways += _turns(power, found.long)
+    if ways is None:
+        ways = [np.zeros_like(found.long), found.long, *(_turns(power, found.long) if found.spread else ())]
     best: Array = np.full(power.shape[1:], -np.inf)
     value, way = np.zeros(power.shape[1:]), np.zeros(power.shape[1:])
     for x in ways:
@@ -132,7 +134,52 @@ def largest(found: Pieces, power: Array, *, sense: int = 0) -> Largest:
         return np.take_along_axis(np.broadcast_to(values, power.shape[1:]), top, axis=0)[0]
 
     edge = np.where(lost, -1, chosen(found.edge))
-    return Largest(np.where(lost, np.nan, chosen(value)), edge, np.where(lost, np.nan, chosen(found.start + way)))
+    value, way = (np.where(lost, np.nan, chosen(v)) for v in (value, found.start + way))
+    return Largest(value, edge, way, top[0])
+
+
+def forces_at(found: Pieces, at: Largest, case: int, pose: int) -> tuple[float, float, float]:
+    """N, V and M at such a place, in one entry."""
+    piece, way = int(at.piece[case, 0, pose]), float(at.way[case, 0, pose])
+    x = way - float(np.broadcast_to(found.start, found.axial.shape[1:])[piece, case, 0, pose])
+    axial, shear, bending = (
+        float(np.polynomial.polynomial.polyval(x, q[:, piece, case, 0, pose]))
+        for q in (found.axial, found.shear, found.bending)
+    )
+    return axial, shear, bending
+
+
+def fibre_stress(body: Body, found: Pieces, area: float, modulus: float, curved: float = 1.0) -> Largest:
+    """[Pa] the largest size of the stress of axial force and bending at an outermost fibre, |N|/A + |M|/W.
+
+    area, modulus  [m2], [m3] of the section, the same throughout
+    curved         how much more than straight the inner fibre carries at the corners of the path
+
+    Both fibres are looked at; the value has the sign of the stress at the one where both act the same way.
+    """
+    direct, bent = found.axial / area, found.bending / modulus
+    both = [largest(found, direct + bent), largest(found, direct - bent)]
+    if curved != 1.0:
+        both += _at_corners(body, found, direct, bent * curved)
+    best = both[0]
+    for other in both[1:]:
+        better = np.abs(other.value) > np.abs(best.value)
+        names = ("value", "edge", "way", "piece")
+        best = Largest(*(np.where(better, getattr(other, n), getattr(best, n)) for n in names))
+    return best
+
+
+def _at_corners(body: Body, found: Pieces, direct: Array, bent: Array) -> list[Largest]:
+    """The largest stress of both fibres at either end of pieces that lies on a corner."""
+    corners = np.isin(np.arange(len(body.names)), body.corners())
+    starts, stops = (corners[list(nodes)][found.edge] for nodes in (body.starts, body.stops))
+    begins = starts & (found.start == 0.0)
+    ends = stops & (found.start + found.long == body.long[found.edge])
+    out = []
+    for where, x in ((begins, np.zeros_like(found.long)), (ends, found.long)):
+        at = replace(found, real=found.real & where)
+        out += [largest(at, direct + bent, ways=[x]), largest(at, direct - bent, ways=[x])]
+    return out
 
 
 def unbalance(acts: Sequence[Act], shape: tuple[int, ...]) -> tuple[Array, Array]:

@@ -28,6 +28,10 @@ def _entry(shape: str, text: str, default: Any = None, **more: Any) -> Any:
     return field(metadata=meta) if default is MISSING else field(default=default, metadata=meta)
 
 
+_POWERS = {"area": 2, "section modulus": 3, "second moment": 4}
+"""Kinds that have no unit of their own, but a power of that of length."""
+
+
 def _unit(of: str, default: str) -> Any:
     return _entry("unit", f"unit of a bare {of}, and of answers", default, unit=of)
 
@@ -47,14 +51,13 @@ class Units:
     torsion_stiffness: str = _unit("torsion stiffness", "N*m/deg")
     pressure: str = _unit("pressure", "bar")
     volume: str = _unit("volume", "cm^3")
-    area: str = _unit("area", "mm^2")
-    second_moment: str = _unit("second moment", "mm^4")
-    section_modulus: str = _unit("section modulus", "mm^3")
     temperature: str = fields.choice(("degC", "degF", "K"), "scale of a bare temperature", "degC")
     number = ""
 
     def of(self, kind: str) -> str:
-        """The unit of a kind of size: "length" -> "mm"."""
+        """The unit of a kind of size: "length" -> "mm", "area" -> "mm^2"."""
+        if kind in _POWERS:
+            return f"{self.length}^{_POWERS[kind]}"
         unit: str = getattr(self, kind.replace(" ", "_"))
         return unit
 

@@ -182,7 +182,7 @@ class Drawing:
 
 
 @dataclass(frozen=True)
-class Sheet:
+class Panels:
     """Drawings of the same thing side by side, to one scale."""
 
     title: str

@@ -8,7 +8,7 @@ import numpy as np
 
 from linkcalc.design.diagram import Diagram, Stretch
 from linkcalc.parts.pose import Array
-from linkcalc.report.blocks import Drawing, Item, Sheet
+from linkcalc.report.blocks import Drawing, Item, Panels
 from linkcalc.report.diagram_blocks import nothing
 from linkcalc.report.drawing import arrows, caption_at, scaled
 from linkcalc.report.edge import Edge
@@ -21,7 +21,7 @@ _TOLD = 0.02
 """Of the largest ordinate: smaller ones are not written beside the line."""
 
 
-def draw_diagram(found: Diagram) -> Sheet:
+def draw_diagram(found: Diagram) -> Panels:
     """Four panels: what acts, axial force, shear, bending moment."""
     edge = Edge(found.stroke)
     factor = edge.one(1.0, "length")
@@ -45,7 +45,7 @@ def draw_diagram(found: Diagram) -> Sheet:
             *_spine(found, factor, "spine"),
         ]
         panels.append(panel(f"{title} [{plain(edge.unit(what))}]", items))
-    return Sheet(
+    return Panels(
         title=f"{found.stroke.mechanism.title or 'Mechanism'}: inner forces of {found.member}",
         caption=caption_at(found.stroke, found.drive, found.case),
         panels=tuple(panels),

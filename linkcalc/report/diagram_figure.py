@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from linkcalc.report import style
-from linkcalc.report.blocks import Sheet
+from linkcalc.report.blocks import Panels
 from linkcalc.report.drawing_figure import scale_bar
 from linkcalc.report.figure import new_figure, title_line
 from linkcalc.report.pen import Pen
@@ -23,7 +23,7 @@ _ROOM = 2 * 42.0 / _POINT  # round the geometry of a panel, for arrows and words
 _LOWEST = 26.0
 
 
-def diagram_figure(sheet: Sheet) -> Figure:
+def diagram_figure(sheet: Panels) -> Figure:
     """One page wide; the panels share one scale, so that they can be laid over each other."""
     import matplotlib
 
@@ -60,7 +60,7 @@ def diagram_figure(sheet: Sheet) -> Figure:
     return figure
 
 
-def _extent(sheet: Sheet) -> tuple[np.ndarray, np.ndarray]:
+def _extent(sheet: Panels) -> tuple[np.ndarray, np.ndarray]:
     places = np.array([spot for panel in sheet.panels for item in panel.items for spot in item.spots]).reshape(-1, 2)
     low, high = places.min(axis=0), places.max(axis=0)
     if not np.max(high - low) > 0:

@@ -62,7 +62,8 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
             {"rope": r, "tension": array_tree(edge, answer.tension_of(r), "force", BATCH)} for r in answer.ropes
         ],
         "loads": [
-            {"load": r.load, "quantity": r.quantity, **array_tree(edge, r.values, r.kind, BATCH)} for r in answer.readings
+            {"load": r.load, "quantity": r.quantity, **array_tree(edge, r.values, r.kind, BATCH)}
+            for r in answer.readings
         ],
         "members": [
             {

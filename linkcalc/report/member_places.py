@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from linkcalc.design.members import Place
+from linkcalc.design.peaks import Place
 from linkcalc.report.edge import Edge
 
 SIGNS = (

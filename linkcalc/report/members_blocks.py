@@ -6,6 +6,7 @@ from linkcalc.design.members import MembersAnswer
 from linkcalc.report.blocks import Block, Note
 from linkcalc.report.sections.head import head
 from linkcalc.report.sections.inner_forces import inner_forces
+from linkcalc.report.sections.member_strength import member_strength
 from linkcalc.report.sections.requirements import requirements
 from linkcalc.report.sections.trust import trust
 
@@ -17,6 +18,7 @@ def members_blocks(answer: MembersAnswer) -> list[Block]:
     return [
         *head(answer.stroke),
         *inner_forces(answer),
+        *member_strength(answer),
         *requirements(answer.stroke),
         *(Note(f"{c.item}: {c.text}", "Warning") for c in answer.caveats),
         Note(f"the diagram of every member ends at nothing within {figure} of the largest force.", "Checks"),

@@ -5,9 +5,11 @@ from __future__ import annotations
 from linkcalc.design.answer import SCHEMA
 from linkcalc.design.diagram import Diagram
 from linkcalc.design.inside import KINDS
-from linkcalc.design.members import MembersAnswer, Peak, Place
+from linkcalc.design.members import MemberForces, MembersAnswer
+from linkcalc.design.peaks import Peak, Place
 from linkcalc.report.edge import Edge
 from linkcalc.report.json import BATCH, Tree, array_tree, laid_out, one_tree, real, stroke_tree
+from linkcalc.report.sections.working import working_tree
 
 
 def members_json(answer: MembersAnswer) -> str:
@@ -22,10 +24,13 @@ def members_json(answer: MembersAnswer) -> str:
                 "two-force": m.two_force,
                 "worst": {
                     name: _peak(edge, peak)
-                    for name, peak in zip(KINDS, (m.axial, m.shear, m.bending), strict=True)
+                    for name, peak in zip(KINDS, (m.axial, m.shear, m.bending, m.stress, m.margin, m.used), strict=True)
                     if peak
                 },
-                "over the stroke": {name: array_tree(edge, values, KINDS[name], BATCH) for name, values in m.over.items()},
+                "over the stroke": {
+                    name: array_tree(edge, values, KINDS[name], BATCH) for name, values in m.over.items()
+                },
+                **_strength(edge, m),
                 "unbalance": real(m.unbalance),
             }
             for m in answer.members
@@ -34,6 +39,20 @@ def members_json(answer: MembersAnswer) -> str:
         "stroke": stroke_tree(answer.stroke),
     }
     return laid_out(tree) + "\n"
+
+
+def _strength(edge: Edge, of: MemberForces) -> Tree:
+    """What it is made of, what would do, and the workings; only what the model tells."""
+    units, spec = edge.units, of.spec
+    tree: Tree = {}
+    if spec.section is not None:
+        tree["section"] = spec.section.name
+    if spec.material is not None:
+        tree |= {"material": spec.material.name, "factor": {"value": spec.factor, "given": spec.given}}
+    if of.needed is not None:
+        tree["section modulus needed"] = one_tree(edge, of.needed, "section modulus")
+    named = {"strength": of.strength, "buckling": of.buckling}
+    return tree | {name: working_tree(w, units) for name, w in named.items() if w is not None}
 
 
 def diagram_json(found: Diagram) -> str:

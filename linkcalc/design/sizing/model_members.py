@@ -10,7 +10,6 @@ from linkcalc.design.sizing.column import two_force_member
 from linkcalc.design.sizing.materials import Material, material
 from linkcalc.design.sizing.model_pins import USUAL_FACTOR
 from linkcalc.design.sizing.section import SECTIONS, Section, curved_more
-from linkcalc.design.sizing.working import Sheet
 from linkcalc.faults import Fault, Faults
 from linkcalc.model.mechanism import Member
 from linkcalc.model.sketch import Drawing
@@ -44,6 +43,11 @@ class MemberSpec:
     def modulus(self) -> float:
         """[m3] section modulus in the plane"""
         return self._figure("W")
+
+    @property
+    def depth(self) -> float:
+        """[m] depth of the section in the plane: twice the distance of its outermost fibre"""
+        return 2 * self._figure("c")
 
     def _figure(self, symbol: str) -> float:
         assert self.section is not None

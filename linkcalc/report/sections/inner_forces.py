@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from linkcalc.design.members import MembersAnswer, Peak
+from linkcalc.design.members import MembersAnswer
+from linkcalc.design.peaks import Peak
 from linkcalc.report.blocks import Block, Cell, Column, Note, Table
 from linkcalc.report.edge import Edge
 from linkcalc.report.member_places import SIGNS, spoken
