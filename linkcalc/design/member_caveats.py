@@ -36,7 +36,9 @@ def member_caveats(curves: Curves) -> Iterator[Caveat]:
             what = "is" if len(arms) == 1 else "are"
             yield Caveat(name, f"{', '.join(arms)} {what} beside its path, taken as held by a straight arm from the"
                          " nearest place of it")  # fmt: skip
-        if entry.mass is not None and entry.centre is not None:
+        if entry.centre is not None and any(
+            act.name == f"weight of {name}" and act.spread is None for act in inside.acts(curves.shown, name)
+        ):
             yield Caveat(name, f"its weight is taken as acting at {entry.centre} alone, its centre; without 'centre' it"
                          " is spread evenly along the path")  # fmt: skip
         for act in inside.acts(curves.shown, name):

@@ -225,10 +225,15 @@ class Drawing:
         return self._centres[member]
 
     def mass_lines(self, member: str) -> tuple[tuple[Site, Site], ...]:
-        """The lines that a member's mass is spread along, evenly; empty if its centre is given. Raises Faults."""
-        entry = self._entry(member)
-        lines = () if entry.centre is not None else body_lines(entry)
-        return tuple((self.site(a, member), self.site(b, member)) for a, b in lines)
+        """The lines that a member's mass is spread along, evenly; empty if its centre is given, and lies elsewhere than
+        the middle of them. Raises Faults."""
+        lines = body_lines(self._entry(member))
+        centre, (x, y) = self.mass_site(member), _middle([(self.point(a), self.point(b)) for a, b in lines])
+        middle = self._local(self.member(member), (x, y))
+        off = np.hypot(np.subtract(centre.u, middle.u), np.subtract(centre.v, middle.v))
+        if np.any(off > 1e-9 * drawn(self.mechanism).size):
+            return ()
+        return tuple((self.site(a, member), self.site(b, member)) for a, b in lines if a != b)
 
     def _entry(self, member: str) -> Member:
         self.first_point(member)
