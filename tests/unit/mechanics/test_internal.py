@@ -210,3 +210,25 @@ def _ends(found: Pieces, k: int, edge: int, body: Body) -> bool:
     if found.edge[k, 0, 0, 0] != edge or not found.real[k, 0, 0, 0]:
         return False
     return bool(found.start[k, 0, 0, 0] + found.long[k, 0, 0, 0] == body.long[edge])
+
+
+@pytest.mark.parametrize(
+    ("ends", "most", "where"),
+    [((1.0, 1.0), 1 / 8, 1 / 2), ((0.0, 2.0), 2 / (9 * 3**0.5), 1 / 3**0.5), ((2.0, 0.0), 2 / (9 * 3**0.5), 1 - 1 / 3**0.5)],
+)
+def test_the_summit_under_a_spread_load(ends: tuple[float, float], most: float, where: float) -> None:
+    """A beam on two supports under a load W spread over its length l: W l/8 in the middle if evenly; if it rises from
+    nothing, V = W/3 - W x^2/l^2 passes through nothing at l/sqrt(3), where M is 2 W l/(9 sqrt 3)."""
+    long, whole = 1.6, 700.0
+    beam = chain([(0.0, 0.0), (long, 0.0)], [0])
+    middle = long * (0.5 + (ends[1] - ends[0]) / 12)
+    line = ((Site(1, 0.0, 0.0), Site(1, long, 0.0)),)
+    right = whole * middle / long
+    acts = [
+        act(np.array([middle, 0.0]), (0.0, -whole), 0.0, Spread(line, ends)),
+        act(np.array([0.0, 0.0]), (0.0, whole - right), 0.0), act(np.array([long, 0.0]), (0.0, right), 0.0),
+    ]  # fmt: skip
+    found = pieces(beam, acts, ONE)
+    top = largest(found, found.bending)
+    assert float(top.value[0, 0, 0]) == pytest.approx(most * whole * long)
+    assert float(top.way[0, 0, 0]) == pytest.approx(where * long)
