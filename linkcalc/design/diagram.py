@@ -8,7 +8,7 @@ import numpy as np
 
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.design.curves import Wanted
-from linkcalc.design.inside import AXIAL, BENDING, FORCES, KINDS, Inside
+from linkcalc.design.inside import AXIAL, BENDING, FORCES, KINDS, STRESS, Inside
 from linkcalc.design.members import MembersAnswer
 from linkcalc.design.passages import worst
 from linkcalc.design.peaks import Peak, where
@@ -82,8 +82,8 @@ class Diagram:
 def diagram(answer: MembersAnswer, member: str, *, case: str | None = None, drive: float | None = None) -> Diagram:
     """The inner forces along a member in one pose.
 
-    case   name of a case of the answer; if left out, the one where its bending moment (of a member that is not bent
-           its axial force) is largest
+    case   name of a case of the answer; if left out, the one where its stress (if no section is told its bending
+           moment, of a member that is not bent its axial force) is largest
     drive  [rad or m] value of the stroke; if left out, the pose where that is largest
 
     Raises Faults: unknown member or case, a pose outside the stroke or without an answer.
@@ -128,7 +128,7 @@ def _worst(answer: MembersAnswer, member: str, case: str | None, drive: float | 
     """Pose and number of the case that are asked for; where they are left open, the worst."""
     curves = answer.curves
     cases, entry = curves.survey.ready.pushing.cases, answer.member(member)
-    name = inner(BENDING if entry.bending else AXIAL, member)
+    name = inner(STRESS if entry.stress else BENDING if entry.bending else AXIAL, member)
     if drive is None and case is None:
         peak = entry.worst
         return (peak.drive, cases.index(peak.case)) if peak else (float(curves.drive[0]), 0)

@@ -61,8 +61,8 @@ class MemberForces:
 
     @property
     def worst(self) -> Peak | None:
-        """The bending moment; of a member that is not bent the axial force."""
-        return self.bending or self.axial
+        """The stress, if it is told; else the bending moment; of a member that is not bent the axial force."""
+        return self.stress or self.bending or self.axial
 
 
 @dataclass(frozen=True, eq=False)
@@ -138,8 +138,16 @@ def _peaks(curves: Curves) -> dict[tuple[str, str], Peak]:
         values = [-np.inf if np.isnan(f.value) else senses.get(key[1], 1) * f.value for f in each]
         k = int(np.argmax(values))
         if values[k] > -np.inf or key[1] == MARGIN:
-            top[key] = k, each[k]
+            top[key] = k, _earliest(curves, inner(key[1], key[0]), k, each[k])
     return dict(_placed(curves, top))
+
+
+def _earliest(curves: Curves, name: str, case: int, found: Found) -> Found:
+    """A worst that stands all along is told of the beginning of the stroke, not of where rounding puts it."""
+    first = float(curves.samples(name)[case, 0])
+    if np.isfinite(found.value) and abs(first - found.value) <= _NOTHING * abs(found.value):
+        return Found(float(curves.drive[0]), found.value)
+    return found
 
 
 def _over(inside: Inside, shown: Shown, member: str, quantity: str) -> Array:

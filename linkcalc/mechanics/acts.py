@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from typing import Any
 
 import numpy as np
 
@@ -49,19 +50,20 @@ def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[
             one = _own(at, side.member, side.joint, "joint", x, y, side.fx, side.fy, moment, side.own_point)
             out[side.member].append(one)
     for acting, size in sized_pushers(ready.pushing, at, solved.balance.effort, solved.balance.load):
-        pusher = acting.pusher
+        pusher: Any = acting.pusher
         if hasattr(pusher, "through"):
             continue  # the joint has told it
-        spreads = getattr(pusher, "spread", None) or (None,) * len(pusher.sites)
-        for push, site, pin, spread in zip(pusher.push(at), pusher.sites, pusher.on_pins, spreads, strict=True):
+        moves = hasattr(pusher, "arms")
+        arms = pusher.arms(at) if moves else [at.arm(site) for site in pusher.sites]
+        spreads = getattr(pusher, "spread", None) or (None,) * len(arms)
+        for push, (a, b), pin, spread in zip(pusher.push(at), arms, pusher.on_pins, spreads, strict=True):
             member, fx, fy, turning = push
             if member == 0 or pin in pins:
                 continue
-            a, b = at.arm(site)
             # a couple has no arm; what a force leaves of its moment about its own place is rounding
             force = pusher.kind == "force"
-            moment = 0.0 if force else turning * size
-            one = _own(at, member, pusher.name, pusher.word, a, b, fx * size, fy * size, moment, force, spread)
+            moment, pinned = (0.0 if force else turning * size), force and not moves
+            one = _own(at, member, pusher.name, pusher.word, a, b, fx * size, fy * size, moment, pinned, spread)
             out[member].append(one)
     return out
 

@@ -252,6 +252,8 @@ class Pusher(Protocol):
 
     One whose push comes through a joint has, besides, ``through``: the name of the joint, whose contacts tell it.
     One that is spread along members has, besides, ``spread``: for each entry of its push a Spread, or None.
+    One that moves along a member has, besides, ``arms(at)``: for each entry of its push where it goes in, in place of
+    the ``sites``: from the origin of the member, ground axes [m].
 
     name, word   what the file calls it, and its kind
     kind         kind of its strength: "force" or "moment"

@@ -17,6 +17,8 @@ from linkcalc.report.scene import Acts
 
 _HIGH, _LOW, _SLIM = 0.2, 0.1, 0.3
 """Height of the largest ordinate over the extent of the member; of a member slimmer than so."""
+_UNSEEN = 0.005
+"""Of the largest ordinate: below it no line can be seen."""
 _TOLD = 0.02
 """Of the largest ordinate: smaller ones are not written beside the line."""
 
@@ -92,9 +94,12 @@ def _ordinates(
     found: Diagram, edge: Edge, quantity: str, tone: str, what: str, high: float, factor: float
 ) -> list[Item]:
     """The filled diagram of one quantity with the values worth telling."""
-    most = max((float(np.max(np.abs(_values(s, quantity)))) for s in found.stretches), default=0.0)
-    if most <= nothing(found, what):
-        return [Item("remark", (_spot(found.stretches[0].spots[0] * factor),), name="nothing")]
+    own = _most(found, quantity)
+    # forces along and across share one scale, so that the small one looks small
+    most = own if what == "moment" else max(_most(found, "axial force"), _most(found, "shear force"))
+    if own <= _UNSEEN * most or most <= nothing(found, what):
+        shown = f"at most {number(edge.one(own, what), 4, trim=True)}" if own > nothing(found, what) else "nothing"
+        return [Item("remark", (_spot(found.stretches[0].spots[0] * factor),), name=shown)]
     items: list[Item] = []
     told: list[Item] = []
     for one in found.stretches:
@@ -108,6 +113,10 @@ def _ordinates(
             text = number(edge.one(float(values[k]), what), 4, trim=True)
             told.append(Item("value", (spot,), (float(out[0]), float(out[1])), text, tone))
     return [*items, *_once(told, 0.15 * abs(high) * factor)]
+
+
+def _most(found: Diagram, quantity: str) -> float:
+    return max((float(np.max(np.abs(_values(s, quantity)))) for s in found.stretches), default=0.0)
 
 
 def _spot(place: Array) -> tuple[float, float]:

@@ -164,7 +164,7 @@ def test_what_is_wrong(member: str, requirement: str, message: str) -> None:
 
 def test_a_torque_goes_in_where_the_members_meet_or_where_it_is_told() -> None:
     """A bar built in at A and twisted: the moment runs from where the torque goes in to the foot, and not beyond."""
-    text = BUILT_IN.replace("SECTION", "round = 20").replace(', mass = 2', "")
+    text = BUILT_IN.replace("SECTION", "round = 20").replace(", mass = 2", "")
     torque = text.partition("[load]")[0].replace("B = [600, 80]", "B = [600, 0]\nM = [200, 0]").replace(
         '"A", "B"]', '"A", "M", "B"]')  # fmt: skip
     load = '[load]\ntorque_on = "bar"\nsize = 50\n'

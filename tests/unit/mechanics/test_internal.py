@@ -114,7 +114,9 @@ def test_the_diagram_ends_at_nothing(case: Loaded) -> None:
         for k in last:
             x = float(found.long[k, 0, 0, 0])
             assert at(found.axial[:, k, 0, 0, 0], x) == pytest.approx(float(t @ total), abs=SAME)
-            assert at(found.shear[:, k, 0, 0, 0], x) == pytest.approx(float(t[1] * total[0] - t[0] * total[1]), abs=SAME)
+            assert at(found.shear[:, k, 0, 0, 0], x) == pytest.approx(
+                float(t[1] * total[0] - t[0] * total[1]), abs=SAME
+            )
             assert at(found.bending[:, k, 0, 0, 0], x) == pytest.approx(
                 sum(float(a.moment[0, 0, 0]) for a in here), abs=SAME
             )
@@ -214,7 +216,11 @@ def _ends(found: Pieces, k: int, edge: int, body: Body) -> bool:
 
 @pytest.mark.parametrize(
     ("ends", "most", "where"),
-    [((1.0, 1.0), 1 / 8, 1 / 2), ((0.0, 2.0), 2 / (9 * 3**0.5), 1 / 3**0.5), ((2.0, 0.0), 2 / (9 * 3**0.5), 1 - 1 / 3**0.5)],
+    [
+        ((1.0, 1.0), 1 / 8, 1 / 2),
+        ((0.0, 2.0), 2 / (9 * 3**0.5), 1 / 3**0.5),
+        ((2.0, 0.0), 2 / (9 * 3**0.5), 1 - 1 / 3**0.5),
+    ],
 )
 def test_the_summit_under_a_spread_load(ends: tuple[float, float], most: float, where: float) -> None:
     """A beam on two supports under a load W spread over its length l: W l/8 in the middle if evenly; if it rises from
