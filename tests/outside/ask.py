@@ -5,7 +5,7 @@
     moment guide on arm      moment of a slide or weld on a member
     axial strut              force in a two-force member, tension plus
     tension hoist            of a rope
-    axial force in beam at G towards B    inner force of a member just beside a point (shear force, bending moment alike)
+    axial force in beam at G towards B    of a member just beside a point; shear force, bending moment alike
     effort, load, force ratio, ideal ratio
     range                    how far the stroke goes from its first to its last pose
 

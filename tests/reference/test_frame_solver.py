@@ -1,8 +1,8 @@
 """Inner forces of a frame of several members against a general-purpose finite element package (PyNiteFEA).
 
 The package solves the stiffness equations of the whole frame; what comes out of a frame that balance alone decides does
-not hang on the stiffness. It counts compression plus; its moment has the other sign; and its local y axis points upwards,
-which is to the right of a member that runs from right to left.
+not hang on the stiffness. It counts compression plus; its moment has the other sign; and its local y axis points
+upwards, which is to the right of a member that runs from right to left.
 """
 
 from __future__ import annotations

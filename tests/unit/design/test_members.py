@@ -96,16 +96,16 @@ def test_a_member_that_is_pressed_buckles_at_its_largest_compression() -> None:
 
 
 @pytest.mark.parametrize(
-    ("text", "value", "kind"),
+    ("text", "kind"),
     [
-        ("bending moment in bar <= 80 N*m", 600e-3 * 120 * 0.9903, "moment"),
-        ("shear force in bar >= 1 N", None, "force"),
-        ("axial force in bar <= 1 kN", None, "force"),
-        ("stress in bar <= 200 MPa", None, "stress"),
-        ("utilisation of bar <= 5", None, "number"),
+        ("bending moment in bar <= 80 N*m", "moment"),
+        ("shear force in bar >= 1 N", "force"),
+        ("axial force in bar <= 1 kN", "force"),
+        ("stress in bar <= 200 MPa", "stress"),
+        ("utilisation of bar <= 5", "number"),
     ],
 )
-def test_requirements_name_inner_forces(text: str, value: float | None, kind: str) -> None:
+def test_requirements_name_inner_forces(text: str, kind: str) -> None:
     model = BUILT_IN.replace("SECTION", "flat = [40, 10]") + f'[requirements]\nr = "{text}"\n'
     (verdict,) = stroke(parse(model)).verdicts
     found = members(parse(model)).member("bar")

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import pairwise
 
 import numpy as np
 import pytest
@@ -130,7 +131,7 @@ def test_the_jumps_are_the_loads(case: Loaded) -> None:
     for edge in range(len(body.starts)):
         mine = sorted((float(found.start[k, 0, 0, 0]), k) for k in range(len(found.edge))
                       if found.edge[k, 0, 0, 0] == edge and found.real[k, 0, 0, 0])  # fmt: skip
-        for (s, before), (r, after) in zip(mine, mine[1:], strict=False):
+        for (s, before), (r, after) in pairwise(mine):
             if r == s:
                 continue
             place = body.nodes[body.starts[edge]] + r * body.along[edge]
