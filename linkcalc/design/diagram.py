@@ -8,11 +8,11 @@ import numpy as np
 
 from linkcalc.design.answer import StrokeAnswer
 from linkcalc.design.curves import Wanted
-from linkcalc.design.inside import AXIAL, BENDING, FORCES, KINDS, STRESS, Inside
+from linkcalc.design.inner import AXIAL, BENDING, FORCES, KINDS, STRESS, inner
+from linkcalc.design.inside import Inside
 from linkcalc.design.members import MembersAnswer
 from linkcalc.design.passages import worst
 from linkcalc.design.peaks import Peak, where
-from linkcalc.design.survey import inner
 from linkcalc.faults import fault
 from linkcalc.mechanics.internal import Pieces
 from linkcalc.parts.pose import Array

@@ -8,37 +8,28 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
+from linkcalc.design.inner import AXIAL, BENDING, FORCES, MARGIN, SHEAR, STRESS, USED
 from linkcalc.design.sizing.model_members import MemberSpec, member_spec
 from linkcalc.mechanics.acts import Act, acts, ends
 from linkcalc.mechanics.body import Body, body, straight
 from linkcalc.mechanics.internal import Largest, Pieces, fibre_stress, largest, pieces
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.model.mechanism import GROUND
-from linkcalc.model.requirements import INNER, requirements
 from linkcalc.parts.pose import Array
 
 if TYPE_CHECKING:
     from linkcalc.design.survey import Shown
 
-AXIAL, SHEAR, BENDING = "axial force", "shear force", "bending moment"
-STRESS, MARGIN, USED = "stress", "buckling margin", "utilisation"
-FORCES = (AXIAL, SHEAR, BENDING)
-KINDS = {AXIAL: "force", SHEAR: "force", BENDING: "moment", STRESS: "stress", MARGIN: "number", USED: "number"}
-
 
 class Inside:
     """What goes on in the members.
 
-    members  those that are looked at: all that move
-    asked    those that requirements ask about
+    members  all that move
     """
 
     def __init__(self, ready: Ready, first: Shown):
         self._ready, self._first = ready, first
-        mechanism = ready.drawing.mechanism
         self.members = tuple(m for m in ready.drawing.members if m != GROUND)
-        about = [r.of for r in requirements(mechanism) if r.quantity in INNER]
-        self.asked = tuple(m for m in self.members if m in about)
         self._bodies: dict[str, Body] = {}
         self._specs: dict[str, MemberSpec] = {}
         self._columns: dict[str, float | None] = {}

@@ -8,7 +8,7 @@ import numpy as np
 
 from linkcalc.design.answer import Caveat
 from linkcalc.design.curves import Curves
-from linkcalc.design.inside import MARGIN
+from linkcalc.design.inner import MARGIN
 from linkcalc.design.sizing.section import SHARP
 from linkcalc.mechanics.acts import Act
 from linkcalc.mechanics.body import Body

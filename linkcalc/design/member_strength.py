@@ -5,7 +5,7 @@ from __future__ import annotations
 import numpy as np
 
 from linkcalc.design.curves import Curves
-from linkcalc.design.inside import STRESS
+from linkcalc.design.inner import STRESS
 from linkcalc.design.peaks import Peak
 from linkcalc.design.sizing.column import two_force_member
 from linkcalc.design.sizing.model_members import MemberSpec

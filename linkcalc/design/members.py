@@ -9,7 +9,8 @@ import numpy as np
 
 from linkcalc.design.answer import Caveat, StrokeAnswer
 from linkcalc.design.curves import Curves, Found, Wanted
-from linkcalc.design.inside import AXIAL, BENDING, KINDS, MARGIN, SHEAR, STRESS, USED, Inside
+from linkcalc.design.inner import AXIAL, BENDING, KINDS, MARGIN, SHEAR, STRESS, USED, inner
+from linkcalc.design.inside import Inside
 from linkcalc.design.member_caveats import member_caveats
 from linkcalc.design.member_strength import needed, workings
 from linkcalc.design.passages import worst
@@ -17,7 +18,7 @@ from linkcalc.design.peaks import Peak, where
 from linkcalc.design.sizing.model_members import MemberSpec
 from linkcalc.design.sizing.working import Working
 from linkcalc.design.stroke import study
-from linkcalc.design.survey import Shown, inner
+from linkcalc.design.survey import Shown
 from linkcalc.mechanics.internal import unbalance
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.parts.pose import Array
@@ -95,7 +96,7 @@ def members(mechanism: Mechanism, *, case: str | None = None, poses: int | None 
 
     Raises Faults, as ``stroke`` does.
     """
-    studied = study(mechanism, case=case, poses=poses, inner=True)
+    studied = study(mechanism, case=case, poses=poses, inside=True)
     curves = studied.curves
     inside = curves.survey.inside
     peaks = _peaks(curves)

@@ -74,9 +74,9 @@ def study(
     poses: int | None = None,
     at: Sequence[float] | None = None,
     sizes: Mapping[str, Array] | None = None,
-    inner: bool = False,
+    inside: bool = False,
 ) -> Study:
-    """What ``stroke`` does, and what it came from; inner: with the inner forces of every member among the curves.
+    """What ``stroke`` does, and what it came from; inside: with the inner forces of every member among the curves.
 
     Raises Faults, as ``stroke`` does.
     """
@@ -89,7 +89,7 @@ def study(
             assert mechanism.stroke is not None
             poses = poses or mechanism.stroke.poses
             solved, path = solve_stroke(ready, max(poses, _WATCHED))
-    survey = Survey(ready, solved, inner=inner)
+    survey = Survey(ready, solved, inside=inside)
     shown = survey.first
     curves = Curves(survey, shown, path.limits if path else ())
     found = events(curves, path) if path is not None else ()

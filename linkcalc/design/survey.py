@@ -4,10 +4,12 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Sequence
 from dataclasses import dataclass
+from functools import cached_property
+from typing import TYPE_CHECKING
 
 import numpy as np
 
-from linkcalc.design.inside import FORCES, KINDS, Inside
+from linkcalc.design.inner import KINDS, inner
 from linkcalc.design.told import Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
@@ -16,7 +18,11 @@ from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.pushing import Pushing
 from linkcalc.mechanics.reactions import Side
 from linkcalc.mechanics.solved import Solved
+from linkcalc.model.requirements import INNER, requirements
 from linkcalc.parts.pose import Array, Value
+
+if TYPE_CHECKING:
+    from linkcalc.design.inside import Inside
 
 EFFORT_SPEED, LOAD_SPEED = "speed of the effort", "speed of the load"
 UNBOUNDED = 1e9
@@ -57,8 +63,8 @@ class Survey:
     watched    limits of its loads
     """
 
-    def __init__(self, ready: Ready, first: Solved, *, inner: bool = False):
-        """inner: with the inner forces of every member, not only of those that a requirement asks about."""
+    def __init__(self, ready: Ready, first: Solved, *, inside: bool = False):
+        """inside: with the inner forces of every member, not only of those that a requirement asks about."""
         self.ready = ready
         self.first = shown = self.show(first)
         self.sides = shown.sides
@@ -67,8 +73,7 @@ class Survey:
         self.contacts = tuple(ready.chain.joints[k].name for k, _, law in ready.chain.gives if law.one_sided)
         self.spoken = spoken(ready.pushing)
         self.watched = watched(ready.pushing)
-        self.inside = Inside(ready, shown)
-        members = self.inside.members if inner else self.inside.asked
+        members = self.inside.members if inside else self._asked_about()
         self.quantities: dict[str, Quantity] = {q.name: q for q in [*self._all(), *self._inner(members)]}
 
     def show(self, solved: Solved) -> Shown:
@@ -133,6 +138,18 @@ class Survey:
         out += [Quantity(one.name, "number", self._told(one.room)) for one in self.watched]
         return out
 
+    @cached_property
+    def inside(self) -> Inside:
+        """What goes on within the members."""
+        from linkcalc.design.inside import Inside  # with the sizing of members: most strokes do not need it
+
+        return Inside(self.ready, self.first)
+
+    def _asked_about(self) -> list[str]:
+        """Members whose inside a requirement asks about."""
+        mechanism = self.ready.drawing.mechanism
+        return list(dict.fromkeys(r.of for r in requirements(mechanism) if r.quantity in INNER))
+
     def _inner(self, members: Sequence[str]) -> Iterator[Quantity]:
         for member in members:
             for name, of in self.inside.of(member):
@@ -140,11 +157,6 @@ class Survey:
 
     def _told(self, one: Spoken) -> Callable[[Shown], Value]:
         return lambda shown: one.of(shown.solved, self.ready.pushing)
-
-
-def inner(quantity: str, member: str) -> str:
-    """Name of what goes on in a member at its worst place: "largest bending moment in arm"."""
-    return f"largest {quantity} in {member}" if quantity in FORCES else f"{quantity} of {member}"
 
 
 def efficiency(b: Balance, pushing: Pushing) -> Value:

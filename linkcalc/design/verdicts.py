@@ -9,9 +9,8 @@ import numpy as np
 
 from linkcalc.design.answer import Verdict
 from linkcalc.design.curves import Curves, Wanted
-from linkcalc.design.inside import MARGIN
+from linkcalc.design.inner import MARGIN, inner
 from linkcalc.design.passages import worst
-from linkcalc.design.survey import inner
 from linkcalc.design.travel import travel
 from linkcalc.faults import fault
 from linkcalc.model.dimensions import evaluate

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from linkcalc.design.answer import SCHEMA
 from linkcalc.design.diagram import Diagram
-from linkcalc.design.inside import KINDS
+from linkcalc.design.inner import KINDS
 from linkcalc.design.members import MemberForces, MembersAnswer
 from linkcalc.design.peaks import Peak, Place
 from linkcalc.report.edge import Edge

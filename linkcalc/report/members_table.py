@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 
-from linkcalc.design.inside import KINDS
+from linkcalc.design.inner import KINDS
 from linkcalc.design.members import MembersAnswer
 from linkcalc.mechanics.state import Status
 from linkcalc.report.blocks import Cell, Column, Table
