@@ -21,6 +21,9 @@ if TYPE_CHECKING:
     from linkcalc.design.survey import Shown
 
 
+_Kept = tuple["Shown", dict[int, list[Act]], dict[str, Pieces], dict[tuple[str, str], Largest]]
+
+
 class Inside:
     """What goes on in the members.
 
@@ -34,7 +37,7 @@ class Inside:
         self._specs: dict[str, MemberSpec] = {}
         self._columns: dict[str, float | None] = {}
         self._buckling: dict[str, float] = {}
-        self._last: tuple[Shown, dict[int, list[Act]], dict[str, Pieces]] | None = None
+        self._last: _Kept | None = None
 
     def body(self, member: str) -> Body:
         if member not in self._bodies:
@@ -77,7 +80,13 @@ class Inside:
         return found[member]
 
     def largest(self, shown: Shown, member: str, quantity: str) -> Largest:
-        """Where along the member a quantity is largest, in every case and pose."""
+        """Where along the member a quantity is largest, in every case and pose; worked out once a batch."""
+        kept = self._kept(shown)[3]
+        if (member, quantity) not in kept:
+            kept[member, quantity] = self._largest(shown, member, quantity)
+        return kept[member, quantity]
+
+    def _largest(self, shown: Shown, member: str, quantity: str) -> Largest:
         found = self.pieces(shown, member)
         if quantity == STRESS:
             spec = self.spec(member)
@@ -124,8 +133,8 @@ class Inside:
             used = np.maximum(used, spec.factor / self._margin(member, shown))
         return np.asarray(used)
 
-    def _kept(self, shown: Shown) -> tuple[Shown, dict[int, list[Act]], dict[str, Pieces]]:
+    def _kept(self, shown: Shown) -> _Kept:
         """What was worked out for a batch last: every quantity of a member begins with the same pieces."""
         if self._last is None or self._last[0] is not shown:
-            self._last = shown, acts(self._ready, shown.solved, shown.sides), {}
+            self._last = shown, acts(self._ready, shown.solved, shown.sides), {}, {}
         return self._last

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
 import numpy as np
@@ -23,6 +23,8 @@ from linkcalc.mechanics.internal import unbalance
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.parts.pose import Array
 
+_RIVAL = 0.1
+"""Of the largest sample of all cases: a case whose own is smaller by more cannot hold the worst."""
 _NOTHING = 1e-9
 """Of the largest force in the mechanism (times its size): rounding."""
 
@@ -128,27 +130,43 @@ def members(mechanism: Mechanism, *, case: str | None = None, poses: int | None 
 
 def _peaks(curves: Curves) -> dict[tuple[str, str], Peak]:
     """(member, quantity) -> its worst, of those that are more than rounding."""
-    inside, cases = curves.survey.inside, curves.survey.ready.pushing.cases
-    asked = [(m, q) for m in inside.members for q in KINDS if _carries(curves, m, q)]
-    senses = {MARGIN: -1}
-    wanted = [Wanted(inner(q, m), c, senses.get(q, 1)) for m, q in asked for c in range(len(cases))]
-    found = iter(worst(curves, wanted))
+    asked = [(m, q) for m in curves.survey.inside.members for q in KINDS if _carries(curves, m, q)]
+    wanted = {key: _wanted(curves, inner(key[1], key[0]), -1 if key[1] == MARGIN else 1) for key in asked}
+    search = [w for each in wanted.values() for w in each if not _still(curves, w)]
+    found = dict(zip(search, worst(curves, search), strict=True))
     top: dict[tuple[str, str], tuple[int, Found]] = {}
-    for key in asked:
-        each = [next(found) for _ in cases]
-        values = [-np.inf if np.isnan(f.value) else senses.get(key[1], 1) * f.value for f in each]
-        k = int(np.argmax(values))
-        if values[k] > -np.inf or key[1] == MARGIN:
-            top[key] = k, _earliest(curves, inner(key[1], key[0]), k, each[k])
+    for key, each in wanted.items():
+        every = [(w.case, _known(curves, w, found)) for w in each]
+        if every:
+            top[key] = max(every, key=lambda one: each[0].sense * one[1].value)
     return dict(_placed(curves, top))
 
 
-def _earliest(curves: Curves, name: str, case: int, found: Found) -> Found:
-    """A worst that stands all along is told of the beginning of the stroke, not of where rounding puts it."""
-    first = float(curves.samples(name)[case, 0])
-    if np.isfinite(found.value) and abs(first - found.value) <= _NOTHING * abs(found.value):
-        return Found(float(curves.drive[0]), found.value)
-    return found
+def _wanted(curves: Curves, name: str, sense: int) -> list[Wanted]:
+    """The worst in each case that could be the worst of all: whose samples come near to it."""
+    samples = sense * curves.samples(name)
+    best = np.max(samples, axis=1, initial=-np.inf, where=~np.isnan(samples))
+    reach = _RIVAL * abs(best.max()) if np.isfinite(best.max()) else 0.0
+    return [Wanted(name, c, sense) for c, value in enumerate(best) if value >= best.max() - reach]
+
+
+def _still(curves: Curves, w: Wanted) -> bool:
+    """True if it stands all along but for rounding, or nowhere has a bound: then there is nothing to look for."""
+    samples = curves.samples(w.name)[w.case]
+    with np.errstate(invalid="ignore"):
+        return bool(np.all(samples == samples[0]) or np.ptp(samples) <= _NOTHING * np.max(np.abs(samples)))
+
+
+def _known(curves: Curves, w: Wanted, found: Mapping[Wanted, Found]) -> Found:
+    """What stands all along is told of the beginning of the stroke, not of where rounding puts it; so is what has its
+    worst there among other places."""
+    first = float(curves.samples(w.name)[w.case, 0])
+    if w not in found:
+        return Found(float(curves.drive[0]), first)
+    value = found[w].value
+    if np.isfinite(value) and abs(first - value) <= _NOTHING * abs(value):
+        return Found(float(curves.drive[0]), value)
+    return found[w]
 
 
 def _over(inside: Inside, shown: Shown, member: str, quantity: str) -> Array:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 
@@ -34,17 +35,17 @@ class MemberSpec:
     ends: str | float
     ends_across: str | float | None
 
-    @property
+    @cached_property
     def area(self) -> float:
         """[m2]"""
         return self._figure("A")
 
-    @property
+    @cached_property
     def modulus(self) -> float:
         """[m3] section modulus in the plane"""
         return self._figure("W")
 
-    @property
+    @cached_property
     def depth(self) -> float:
         """[m] depth of the section in the plane: twice the distance of its outermost fibre"""
         return 2 * self._figure("c")
@@ -53,7 +54,7 @@ class MemberSpec:
         assert self.section is not None
         return float(self.section.working[symbol])
 
-    @property
+    @cached_property
     def curved(self) -> float:
         """[-] how much more than a straight bar the inner fibre carries where it is bent."""
         if self.section is None or self.bend_radius is None:
