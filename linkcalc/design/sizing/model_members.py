@@ -93,7 +93,7 @@ def _spec(member: Member, drawing: Drawing) -> MemberSpec:
         for entry in part_fields(member.section):
             given = getattr(member.section, entry.name)
             sizes += [size(one, entry.metadata["unit"]) for one in (given if isinstance(given, tuple) else (given,))]
-        section = SECTIONS[member.section.word.replace("_", " ")](*sizes)
+        section = SECTIONS[member.section.shape](*sizes)
         thin = min((value for _, _, value, kind in section.sizes if kind == "length"), default=0.0)
     of = None if member.material is None else material(member.material, drawing.mechanism, thin)
     factor = size(member.factor, "number")

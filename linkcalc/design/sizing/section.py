@@ -103,7 +103,7 @@ def general(area: float, second: float, edge: float, across: float | None = None
 
 
 SECTIONS: dict[str, Callable[..., Section]] = {
-    "round": round_bar, "tube": tube, "flat": flat, "rectangular tube": rectangular_tube, "area": general,
+    "round": round_bar, "tube": tube, "flat": flat, "rectangular tube": rectangular_tube, "general": general,
 }  # fmt: skip
 """Word for a section -> function that makes it; the names of its parameters say which sizes it takes [SI]."""
 

@@ -1,4 +1,7 @@
-"""Sections of bars. The first size of each lies in the plane of the mechanism, where it takes the bending."""
+"""Sections of bars. The first size of each lies in the plane of the mechanism, where it takes the bending.
+
+``shape`` is its word in ``design.sizing.section``, which reckons with it.
+"""
 
 from __future__ import annotations
 
@@ -14,6 +17,7 @@ from linkcalc.words import word
 class Round:
     """A round bar."""
 
+    shape = "round"
     round: Size = fields.size("length", "its diameter", sign="plus")
 
 
@@ -22,6 +26,7 @@ class Round:
 class Tube:
     """A round tube."""
 
+    shape = "tube"
     tube: tuple[Size, ...] = fields.named_sizes("length", ("outside", "wall"), "outside diameter and wall")
 
 
@@ -30,6 +35,7 @@ class Tube:
 class Flat:
     """A flat bar or a plate."""
 
+    shape = "flat"
     flat: tuple[Size, ...] = fields.named_sizes("length", ("depth", "thickness"), "depth in the plane, thickness across it")
 
 
@@ -38,6 +44,7 @@ class Flat:
 class RectangularTube:
     """A rectangular tube."""
 
+    shape = "rectangular tube"
     rectangular_tube: tuple[Size, ...] = fields.named_sizes(
         "length", ("depth", "width", "wall"), "depth in the plane, width across it, wall"
     )
@@ -48,6 +55,7 @@ class RectangularTube:
 class General:
     """Any section by its figures, as a table of a rolled section has them."""
 
+    shape = "general"
     area: Size = fields.size("area", "its area", sign="plus")
     second_moment: Size = fields.size("second moment", "its second moment for bending in the plane", sign="plus")
     edge_distance: Size = fields.size("length", "from its middle to the outermost fibre in the plane", sign="plus")
