@@ -8,7 +8,7 @@ from typing import Any
 
 import numpy as np
 
-from linkcalc.mechanics.pipeline import Solved
+from linkcalc.mechanics.solved import Solved
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.reactions import Side, sized_pushers
 from linkcalc.parts.contract import Spread

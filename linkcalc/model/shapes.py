@@ -171,7 +171,8 @@ def _example(number: int) -> str:
 
 
 SHAPES: dict[str, Callable[[Any, Meta], Any]] = {
-    "name": _name, "names": _names, "size": _size, "sizes": _sizes, "named sizes": _named_sizes, "own size": _size, "line": _line, "choice": _choice,
+    "name": _name, "names": _names, "size": _size, "sizes": _sizes, "named sizes": _named_sizes,
+    "own size": _size, "line": _line, "choice": _choice,
     "count": _whole, "arcs": _arcs, "pairs": _pairs, "unit": _unit, "tol": _tol, "factor": _factor,
     "factors": _factors, "text": _text, "rows": _rows, "formula": _formula,
 }  # fmt: skip

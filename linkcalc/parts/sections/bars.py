@@ -36,7 +36,9 @@ class Flat:
     """A flat bar or a plate."""
 
     shape = "flat"
-    flat: tuple[Size, ...] = fields.named_sizes("length", ("depth", "thickness"), "depth in the plane, thickness across it")
+    flat: tuple[Size, ...] = fields.named_sizes(
+        "length", ("depth", "thickness"), "depth in the plane, thickness across it"
+    )
 
 
 @word("section", "rectangular_tube")
