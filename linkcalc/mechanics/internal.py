@@ -174,7 +174,7 @@ def _at_corners(body: Body, found: Pieces, direct: Array, bent: Array) -> list[L
     corners = np.isin(np.arange(len(body.names)), body.corners())
     starts, stops = (corners[list(nodes)][found.edge] for nodes in (body.starts, body.stops))
     begins = starts & (found.start == 0.0)
-    ends = stops & (found.start + found.long == body.long[found.edge])
+    ends = stops & (found.start + found.long >= body.long[found.edge] - body.slack)
     out = []
     for where, x in ((begins, np.zeros_like(found.long)), (ends, found.long)):
         at = replace(found, real=found.real & where)
