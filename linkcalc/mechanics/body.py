@@ -14,7 +14,8 @@ from itertools import pairwise
 
 import numpy as np
 
-from linkcalc.model.sketch import Drawing, body_lines
+from linkcalc.model.body_lines import body_lines
+from linkcalc.model.sketch import Drawing
 from linkcalc.parts.pose import Array, Mask
 
 _SAME = 1e-9

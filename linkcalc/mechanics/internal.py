@@ -21,6 +21,7 @@ import numpy as np
 
 from linkcalc.mechanics.acts import Act
 from linkcalc.mechanics.body import Body
+from linkcalc.mechanics.spread import along_edges, cross, load_at, loaded_beyond, stacked
 from linkcalc.parts.pose import Array, Mask, Numbers, Value
 
 POWERS = 4
@@ -70,12 +71,12 @@ def pieces(body: Body, acts: Sequence[Act], shape: tuple[int, ...]) -> Pieces:
     shape  (case, variant, pose) of the batch
     """
     spread = [a for a in acts if a.spread is not None]
-    place = _stacked([(a.u, a.v) for a in acts], shape)  # (act, 2, ...)
-    force = _stacked([(a.fu, a.fv) for a in acts], shape)
-    moment = _stacked([(a.moment,) for a in acts], shape)[:, 0] + _cross(place, force)  # about the member's origin
+    place = stacked([(a.u, a.v) for a in acts], shape)  # (act, 2, ...)
+    force = stacked([(a.fu, a.fv) for a in acts], shape)
+    moment = stacked([(a.moment,) for a in acts], shape)[:, 0] + cross(place, force)  # about the member's origin
     single = np.array([a.spread is None for a in acts], bool)
     place, force, moment = place[single], force[single], moment[single]
-    load = _along_edges(body, spread, shape)  # (edge, end, 2, ...) [N/m]
+    load = along_edges(body, spread, shape)  # (edge, end, 2, ...) [N/m]
     act_edge, act_way = _attached(body, place)
     count = len(body.starts)
     still = np.broadcast_shapes((1, 1, 1), act_way.shape[1:])
@@ -89,18 +90,18 @@ def pieces(body: Body, acts: Sequence[Act], shape: tuple[int, ...]) -> Pieces:
     total = np.einsum("ka...,ai...->ki...", beyond.astype(float), force)
     about = np.einsum("ka...,a...->k...", beyond.astype(float), moment)
     if spread:
-        more, turning = _loaded_beyond(body, load, edge, start)
+        more, turning = loaded_beyond(body, load, edge, start)
         total, about = total + more, about + turning
     at = body.nodes[np.array(body.starts)][edge] + start[..., None] * body.along[edge]
     at = np.moveaxis(at, -1, 1)
-    about = about - _cross(at, total)
+    about = about - cross(at, total)
     t = np.moveaxis(body.along[edge], -1, 1)
     axial, shear, bending = (np.zeros((POWERS, len(edge), *shape)) for _ in range(3))
     axial[0] = (t * total).sum(axis=1)
     shear[0] = -(t[:, 0] * total[:, 1] - t[:, 1] * total[:, 0])
     bending[0], bending[1] = about, shear[0]
     if spread:
-        first, rise = _load_at(body, load, edge, start)
+        first, rise = load_at(body, load, edge, start)
         for k, q in enumerate((first, rise), 1):
             axial[k] = -(t * q).sum(axis=1) / k
             shear[k] = (t[:, 0] * q[:, 1] - t[:, 1] * q[:, 0]) / k
@@ -187,9 +188,9 @@ def unbalance(acts: Sequence[Act], shape: tuple[int, ...]) -> tuple[Array, Array
 
     It is what the diagrams end with instead of nothing.
     """
-    place, force = (_stacked(v, shape) for v in ([(a.u, a.v) for a in acts], [(a.fu, a.fv) for a in acts]))
-    moment = _stacked([(a.moment,) for a in acts], shape)[:, 0]
-    return np.hypot(*force.sum(axis=0)), np.abs((moment + _cross(place, force)).sum(axis=0))
+    place, force = (stacked(v, shape) for v in ([(a.u, a.v) for a in acts], [(a.fu, a.fv) for a in acts]))
+    moment = stacked([(a.moment,) for a in acts], shape)[:, 0]
+    return np.hypot(*force.sum(axis=0)), np.abs((moment + cross(place, force)).sum(axis=0))
 
 
 def _attached(body: Body, place: Array) -> tuple[Numbers, Array]:
@@ -215,77 +216,6 @@ def off_body(body: Body, place: tuple[Value, Value]) -> Array:
     return np.hypot(*(at[:, :, :1] - np.moveaxis(foot, -1, 1))[0])
 
 
-def _along_edges(body: Body, spread: Sequence[Act], shape: tuple[int, ...]) -> Array:
-    """(edge, end, 2, case, variant, pose) [N/m] how strongly spread loads act at both ends of each edge."""
-    load = np.zeros((len(body.starts), 2, 2, *shape))
-    for act in spread:
-        assert act.spread is not None
-        lines = [
-            tuple(np.array([float(np.ravel(w)[0]) for w in (s.u, s.v)]) for s in line) for line in act.spread.lines
-        ]
-        longs = np.array([np.hypot(*(b - a)) for a, b in lines])
-        whole = float(longs.sum())
-        force = _stacked([(act.fu, act.fv)], shape)[0] / (whole or 1.0)
-        low, high = act.spread.ends
-        begin = np.concatenate([[0.0], np.cumsum(longs)])
-        for (a, b), long, first in zip(lines, longs, begin, strict=False):
-            for k in range(len(body.starts)):
-                span = _on_line(body, k, a, b, float(long))
-                if span is not None:
-                    for end, s in enumerate(span):
-                        load[k, end] += force * (low + (high - low) * (first + s) / whole)
-    return load
-
-
-def _on_line(body: Body, edge: int, a: Array, b: Array, long: float) -> tuple[float, float] | None:
-    """[m] how far along a line from a to b an edge begins and ends; None if it does not lie on it."""
-    if long <= body.slack:
-        return None
-    t = (b - a) / long
-    found = []
-    for node in (body.starts[edge], body.stops[edge]):
-        arm = body.nodes[node] - a
-        s, off = float(arm @ t), float(arm[1] * t[0] - arm[0] * t[1])
-        if abs(off) > body.slack or not -body.slack <= s <= long + body.slack:
-            return None
-        found.append(s)
-    return found[0], found[1]
-
-
-def _load_at(body: Body, load: Array, edge: Numbers, start: Array) -> tuple[Array, Array]:
-    """(piece, 2, ...) [N/m] spread load at the start of each piece, and its rise [N/m²] along it."""
-    rise = (load[:, 1] - load[:, 0]) / body.long[:, None, None, None, None]
-    rise, first = _of_piece(rise, edge), _of_piece(load[:, 0], edge)
-    return first + rise * start[:, None], rise
-
-
-def _of_piece(of_edge: Array, edge: Numbers) -> Array:
-    """(edge, 2, case, variant, pose) -> (piece, 2, case, variant, pose), by the edge of each piece in each pose."""
-    index = np.broadcast_to(edge[:, None], (len(edge), *of_edge.shape[1:]))
-    return np.take_along_axis(of_edge, index, axis=0) if len(of_edge) != 1 else np.broadcast_to(of_edge, index.shape)
-
-
-def _loaded_beyond(body: Body, load: Array, edge: Numbers, start: Array) -> tuple[Array, Array]:
-    """What spread loads beyond the start of each piece come to: force (piece, 2, ...), moment about the origin."""
-    long = body.long[:, None, None, None, None]
-    whole = (load[:, 0] + load[:, 1]) / 2 * long  # (edge, 2, ...)
-    t = body.along[:, :, None, None, None]
-    at = body.nodes[list(body.starts)][:, :, None, None, None]
-    first = load[:, 0] * long**2 / 2 + (load[:, 1] - load[:, 0]) * long**2 / 3  # first moment along the edge
-    turning = _cross(at, whole) + _cross(t, first)
-    beyond = body.beyond.astype(float)[edge]  # (piece, ..., edge)
-    total = np.einsum("k...e,ei...->ki...", beyond, whole)
-    about = np.einsum("k...e,e...->k...", beyond, turning)
-    # and what is left of the edge itself
-    q, rise = _load_at(body, load, edge, start)
-    rest = (body.long[edge] - start)[:, None]
-    more = q * rest + rise * rest**2 / 2
-    lever = q * rest**2 / 2 + rise * rest**3 / 3
-    way = np.moveaxis(body.along[edge], -1, 1)
-    cut = np.moveaxis(body.nodes[np.array(body.starts)][edge], -1, 1) + start[:, None] * way
-    return total + more, about + _cross(cut, more) + _cross(way, lever)
-
-
 def _turns(power: Array, long: Array) -> list[Array]:
     """Where a cubic may be largest between the ends of its piece: zeros of its slope, kept within the piece."""
     a, b, c = 3 * power[3], 2 * power[2], power[1]
@@ -301,16 +231,3 @@ def _horner(power: Array, x: Array) -> Array:
     for part in power[-2::-1]:
         total = total * x + part
     return total
-
-
-def _stacked(rows: Sequence[Sequence[Value]], shape: tuple[int, ...]) -> Array:
-    out: Array = np.empty((len(rows), len(rows[0]) if rows else 2, *shape))
-    for row, values in zip(out, rows, strict=True):
-        for part, value in zip(row, values, strict=True):
-            part[...] = value
-    return out
-
-
-def _cross(a: Array, b: Array) -> Array:
-    """Of vectors whose components are the second axis."""
-    return a[:, 0] * b[:, 1] - a[:, 1] * b[:, 0]

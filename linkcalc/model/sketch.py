@@ -8,12 +8,12 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from functools import cached_property
-from itertools import pairwise
 from typing import Any
 
 import numpy as np
 
 from linkcalc.faults import Fault, Faults, fault
+from linkcalc.model.body_lines import body_lines, middle
 from linkcalc.model.dimensions import Overrides, evaluate
 from linkcalc.model.drafting import Place, draw, plain
 from linkcalc.model.formulas import to_si
@@ -220,7 +220,7 @@ class Drawing:
         if entry.centre is not None:
             return self.site(entry.centre, member)
         if member not in self._centres:
-            place = _middle([(self.point(a), self.point(b)) for a, b in body_lines(entry)])
+            place = middle([(self.point(a), self.point(b)) for a, b in body_lines(entry)])
             self._centres[member] = self._local(self.member(member), place)
         return self._centres[member]
 
@@ -228,9 +228,9 @@ class Drawing:
         """The lines that a member's mass is spread along, evenly; empty if its centre is given, and lies elsewhere than
         the middle of them. Raises Faults."""
         lines = body_lines(self._entry(member))
-        centre, (x, y) = self.mass_site(member), _middle([(self.point(a), self.point(b)) for a, b in lines])
-        middle = self._local(self.member(member), (x, y))
-        off = np.hypot(np.subtract(centre.u, middle.u), np.subtract(centre.v, middle.v))
+        centre, (x, y) = self.mass_site(member), middle([(self.point(a), self.point(b)) for a, b in lines])
+        even = self._local(self.member(member), (x, y))
+        off = np.hypot(np.subtract(centre.u, even.u), np.subtract(centre.v, even.v))
         if np.any(off > 1e-9 * drawn(self.mechanism).size):
             return ()
         return tuple((self.site(a, member), self.site(b, member)) for a, b in lines if a != b)
@@ -282,26 +282,3 @@ def _located(*item: str) -> Iterator[None]:
         yield
     except Faults as found:
         raise Faults([Fault(item + f.item, f.what, f.wanted) for f in found.faults]) from None
-
-
-def body_lines(entry: Member) -> list[tuple[str, str]]:
-    """The straight lines of a member's body, each by the names of its ends, none of them twice: a path may go back
-    the way it came, to where a branch leaves it. Of a member with one point it is that point twice."""
-    path = entry.path or entry.points
-    found: dict[frozenset[str], tuple[str, str]] = {}
-    for ends in pairwise(path):
-        found.setdefault(frozenset(ends), ends)
-    return list(found.values()) or [(path[0], path[0])]
-
-
-def _middle(lines: list[tuple[Place, Place]]) -> Place:
-    """Centre of lines of even weight; the first place of them if they have no length."""
-    total: Value = 0.0
-    sum_x: Value = 0.0
-    sum_y: Value = 0.0
-    for (ax, ay), (bx, by) in lines:
-        length = np.hypot(bx - ax, by - ay)
-        total, sum_x, sum_y = total + length, sum_x + length * (ax + bx) / 2, sum_y + length * (ay + by) / 2
-    if np.ndim(total) == 0 and total == 0:
-        return lines[0][0]
-    return sum_x / total, sum_y / total
