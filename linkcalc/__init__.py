@@ -30,18 +30,32 @@ from typing import TYPE_CHECKING, Any
 if TYPE_CHECKING:
     from linkcalc.design.check import check_model
     from linkcalc.design.copies import copies
+    from linkcalc.design.members import members
     from linkcalc.design.stroke import stroke
     from linkcalc.faults import Fault, Faults
     from linkcalc.model.mechanism import Mechanism
     from linkcalc.model.read import parse, read
     from linkcalc.model.write import dumps, write
 
-__all__ = ["Fault", "Faults", "Mechanism", "check_model", "copies", "dumps", "parse", "read", "stroke", "write"]
+__all__ = [
+    "Fault",
+    "Faults",
+    "Mechanism",
+    "check_model",
+    "copies",
+    "dumps",
+    "members",
+    "parse",
+    "read",
+    "stroke",
+    "write",
+]
 
 # loaded when first asked for: a command starts with what it needs
 _HOMES = {
     "check_model": "linkcalc.design.check",
     "copies": "linkcalc.design.copies",
+    "members": "linkcalc.design.members",
     "stroke": "linkcalc.design.stroke",
     "Fault": "linkcalc.faults",
     "Faults": "linkcalc.faults",

@@ -502,6 +502,22 @@ to = 20
 poses = 7
 """
 """A pinion on a block rolls along a rack on a lever, and swings that by a pin in a fixed slot; stroke: its turn."""
+BUILT_IN = """
+[points]
+A = [0, 0]
+B = [600, 80]
+[members]
+ground = ["A"]
+bar = { points = ["A", "B"], mass = 2, section = { SECTION }, material = "S235", factor = 3 }
+[welds.foot]
+members = ["ground", "bar"]
+at = "A"
+[load]
+at = "B"
+direction = -80
+size = 120
+"""
+"""A bar built in at one end."""
 
 SAMPLES = (
     Sample("joint", "contact", "work", CLAMP),
@@ -553,6 +569,19 @@ SAMPLES = (
     Sample("construction", "on", "Q", COLLAR),
     Sample("construction", "crossing", "side", SLOTTED),
     Sample("construction", "mirror", "grip", COLLAR),
+)
+
+
+def _section(word: str, text: str) -> Sample:
+    return Sample("section", word, "bar", BUILT_IN.replace("SECTION", text))
+
+
+SAMPLES += (
+    _section("flat", "flat = [40, 10]"),
+    _section("round", "round = 30"),
+    _section("tube", "tube = [30, 2.5]"),
+    _section("rectangular_tube", "rectangular_tube = [40, 20, 2]"),
+    _section("area", 'area = 171, second_moment = "2.4 cm^4", edge_distance = 20, second_moment_across = 8000'),
 )
 
 

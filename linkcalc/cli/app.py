@@ -11,6 +11,7 @@ import typer
 from linkcalc.cli.check import check
 from linkcalc.cli.draw import draw
 from linkcalc.cli.files import BAD
+from linkcalc.cli.members import members
 from linkcalc.cli.start import start
 from linkcalc.cli.stroke import stroke
 
@@ -39,7 +40,7 @@ def _main(
         raise typer.Exit
 
 
-for command in (start, check, stroke, draw):
+for command in (start, check, stroke, members, draw):
     app.command()(command)
 
 

@@ -18,9 +18,9 @@ from linkcalc.cli.files import (
     option_fault,
     put,
 )
+from linkcalc.cli.poses import pose_value
 from linkcalc.design.answer import StrokeAnswer
-from linkcalc.faults import Fault, Faults
-from linkcalc.model.mechanism import DRAWN, GROUND, Mechanism
+from linkcalc.model.mechanism import DRAWN, GROUND
 from linkcalc.words import nearest
 
 Output = Annotated[
@@ -95,7 +95,7 @@ def _posed(answer: StrokeAnswer, at: list[str]) -> tuple[StrokeAnswer, list[int]
     ends = {"start": float(answer.drive[0, 0, 0]), "end": float(answer.drive[0, 0, -1])}
     if not at:
         return answer, [0, last]
-    places = [_place(answer.mechanism, text, ends) for text in at]
+    places = [pose_value(answer.mechanism, text, ends) for text in at]
     low, high = min(ends.values()), max(ends.values())
     for text, place in zip(at, places, strict=True):
         if not low - 1e-9 <= place <= high + 1e-9:
@@ -106,17 +106,3 @@ def _posed(answer: StrokeAnswer, at: list[str]) -> tuple[StrokeAnswer, list[int]
     drive = drive if ends["end"] >= ends["start"] else drive[::-1]
     case = answer.cases[0] if len(answer.cases) == 1 and answer.mechanism.cases else None
     return ask(answer.mechanism, case=case, at=drive.tolist()), [int(np.argmin(np.abs(drive - p))) for p in places]
-
-
-def _place(mechanism: Mechanism, text: str, ends: dict[str, float]) -> float:
-    from linkcalc.design.poses import stroke_value
-
-    if text in ends:
-        return ends[text]
-    if text.isidentifier() and text != DRAWN and text not in mechanism.dimensions:
-        words = nearest(text, (*ends, DRAWN))
-        raise option_fault("--at", f"unknown pose {text!r}", f'{words}, or a value of the stroke ("30 deg")')
-    try:
-        return stroke_value(mechanism, text)
-    except Faults as found:
-        raise Faults([Fault((), f"--at: {f.what}", f.wanted) for f in found.faults]) from None

@@ -19,14 +19,13 @@ from linkcalc.cli.files import (
     option_fault,
     put,
 )
+from linkcalc.cli.poses import Poses, check_poses
 
-Poses = Annotated[int | None, typer.Option("--poses", help="Number of poses instead of the model's.", metavar="N")]
 Plots = Annotated[
     list[str] | None,
     typer.Option("--plot", help="Write the curves as a picture: .svg, .png or .pdf. May be repeated.", metavar="FILE"),
 ]
 AllJoints = Annotated[bool, typer.Option("--joints", help="A column for every joint in the table.")]
-_MOST = 100_000
 
 
 def stroke(
@@ -42,8 +41,7 @@ def stroke(
     with in_file(file) as model:
         from linkcalc.design.stroke import stroke as ask
 
-        if poses is not None and not 2 <= poses <= _MOST:
-            raise option_fault("--poses", f"{poses} poses", f"from 2 to {_MOST} are wanted")
+        check_poses(poses)
         if json == STDOUT and csv == STDOUT:
             raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
         for target in plot or ():

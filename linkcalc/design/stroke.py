@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
+from dataclasses import dataclass
 
 import numpy as np
 
@@ -50,6 +51,35 @@ def stroke(
 
     Raises Faults: everything wrong with the model, its freedoms or its stroke.
     """
+    return study(mechanism, case=case, poses=poses, at=at, sizes=sizes).answer
+
+
+@dataclass(frozen=True, eq=False)
+class Study:
+    """A stroke with what it was found from, for questions that go on from there.
+
+    curves  every quantity over the stroke, with its exact values anywhere
+    shown   the poses that the answer shows
+    """
+
+    answer: StrokeAnswer
+    curves: Curves
+    shown: Shown
+
+
+def study(
+    mechanism: Mechanism,
+    *,
+    case: str | None = None,
+    poses: int | None = None,
+    at: Sequence[float] | None = None,
+    sizes: Mapping[str, Array] | None = None,
+    inside: bool = False,
+) -> Study:
+    """What ``stroke`` does, and what it came from; inside: with the inner forces of every member among the curves.
+
+    Raises Faults, as ``stroke`` does.
+    """
     mechanism = only_case(check(mechanism), case)
     ready = prepare(drawn(mechanism))
     with located(ready):
@@ -59,7 +89,7 @@ def stroke(
             assert mechanism.stroke is not None
             poses = poses or mechanism.stroke.poses
             solved, path = solve_stroke(ready, max(poses, _WATCHED))
-    survey = Survey(ready, solved)
+    survey = Survey(ready, solved, inside=inside)
     shown = survey.first
     curves = Curves(survey, shown, path.limits if path else ())
     found = events(curves, path) if path is not None else ()
@@ -69,10 +99,11 @@ def stroke(
         shown = survey.show(solve_at(ready, path.mesh, drive))
     if sizes is not None:
         copies, shown = _copies(mechanism, sizes, path, shown.solved.drive)
-        warned = caveats(curves, path, found)
-        return _answer(copies, survey, shown, checks=_checks(shown.solved), found=found, judged=judged, warned=warned)
+        ready = copies
     warned = caveats(curves, path, found)
-    return _answer(ready, survey, shown, checks=_checks(shown.solved), found=found, judged=judged, warned=warned)
+    checks = _checks(shown.solved)
+    told = _answer(ready, survey, shown, checks=checks, found=found, judged=judged, warned=warned)
+    return Study(told, curves, shown)
 
 
 def _asked(path: Path | None, poses: int | None, at: Sequence[float] | None, solved: Solved) -> Array | None:

@@ -2,11 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Iterator, Sequence
 from dataclasses import dataclass
+from functools import cached_property
+from typing import TYPE_CHECKING
 
 import numpy as np
 
+from linkcalc.design.inner import KINDS, inner
 from linkcalc.design.told import Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
@@ -15,7 +18,11 @@ from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.pushing import Pushing
 from linkcalc.mechanics.reactions import Side
 from linkcalc.mechanics.solved import Solved
+from linkcalc.model.requirements import INNER, requirements
 from linkcalc.parts.pose import Array, Value
+
+if TYPE_CHECKING:
+    from linkcalc.design.inside import Inside
 
 EFFORT_SPEED, LOAD_SPEED = "speed of the effort", "speed of the load"
 UNBOUNDED = 1e9
@@ -56,7 +63,8 @@ class Survey:
     watched    limits of its loads
     """
 
-    def __init__(self, ready: Ready, first: Solved):
+    def __init__(self, ready: Ready, first: Solved, *, inside: bool = False):
+        """inside: with the inner forces of every member, not only of those that a requirement asks about."""
         self.ready = ready
         self.first = shown = self.show(first)
         self.sides = shown.sides
@@ -65,7 +73,8 @@ class Survey:
         self.contacts = tuple(ready.chain.joints[k].name for k, _, law in ready.chain.gives if law.one_sided)
         self.spoken = spoken(ready.pushing)
         self.watched = watched(ready.pushing)
-        self.quantities: dict[str, Quantity] = {q.name: q for q in self._all()}
+        members = self.inside.members if inside else self._asked_about()
+        self.quantities: dict[str, Quantity] = {q.name: q for q in [*self._all(), *self._inner(members)]}
 
     def show(self, solved: Solved) -> Shown:
         return Shown(solved, sides(self.ready, solved))
@@ -128,6 +137,23 @@ class Survey:
         out += [Quantity(one.name, one.kind, self._told(one)) for one in self.spoken]
         out += [Quantity(one.name, "number", self._told(one.room)) for one in self.watched]
         return out
+
+    @cached_property
+    def inside(self) -> Inside:
+        """What goes on within the members."""
+        from linkcalc.design.inside import Inside  # with the sizing of members: most strokes do not need it
+
+        return Inside(self.ready, self.first)
+
+    def _asked_about(self) -> list[str]:
+        """Members whose inside a requirement asks about."""
+        mechanism = self.ready.drawing.mechanism
+        return list(dict.fromkeys(r.of for r in requirements(mechanism) if r.quantity in INNER))
+
+    def _inner(self, members: Sequence[str]) -> Iterator[Quantity]:
+        for member in members:
+            for name, of in self.inside.of(member):
+                yield Quantity(inner(name, member), KINDS[name], of)
 
     def _told(self, one: Spoken) -> Callable[[Shown], Value]:
         return lambda shown: one.of(shown.solved, self.ready.pushing)

@@ -9,11 +9,12 @@ import numpy as np
 
 from linkcalc.design.answer import Verdict
 from linkcalc.design.curves import Curves, Wanted
+from linkcalc.design.inner import MARGIN, inner
 from linkcalc.design.passages import worst
 from linkcalc.design.travel import travel
 from linkcalc.faults import fault
 from linkcalc.model.dimensions import evaluate
-from linkcalc.model.requirements import END, START, Requirement, requirements
+from linkcalc.model.requirements import END, INNER, START, Requirement, requirements
 from linkcalc.model.units import show
 from linkcalc.words import nearest
 
@@ -23,7 +24,7 @@ _HOLDS: dict[str, Callable[[float, float], bool]] = {
     "<": operator.lt,
     ">": operator.gt,
 }
-_SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment", "torque")
+_SIZES = ("effort", "load", "tare effort", "frictionless effort", "force", "moment", "torque", *INNER)
 _RATIOS = ("force ratio", "ideal ratio")
 _ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
 
@@ -107,6 +108,8 @@ def _inside(curves: Curves, requirement: Requirement, drive: float) -> None:
 def _quantity(curves: Curves, requirement: Requirement) -> tuple[str, int]:
     """Name of the quantity in the survey, and the sign it is told with."""
     q = requirement
+    if q.quantity in INNER:
+        return inner(q.quantity, q.of), 1
     if q.quantity == "tension" and f"tension of {q.of}" in curves.survey.quantities:
         return f"tension of {q.of}", 1
     if q.quantity in ("tension", "compression"):
@@ -119,7 +122,12 @@ def _asked(curves: Curves, requirement: Requirement) -> None:
     name = _quantity(curves, requirement)[0]
     if name in curves.survey.quantities:
         return
-    if requirement.quantity in ("tension", "compression"):
+    if requirement.quantity == MARGIN:
+        what = (
+            f"{requirement.of} is not loaded at two places of a straight body only, so it does not buckle as a column"
+        )
+        cure = f'hold its stress down: "stress in {requirement.of}"'
+    elif requirement.quantity in ("tension", "compression"):
         what = f"{requirement.of} is no two-force member: it is not loaded at two pins only"
         cure = "name the force of its joint: " + f'"force at PIN on {requirement.of}"'
     else:

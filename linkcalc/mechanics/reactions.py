@@ -62,13 +62,13 @@ def reactions(
     hubs: dict[str, tuple[int, Joint]] = {}
     pins = {joint.name for joint in chain.joints if joint.word == "pin"}
     turning: dict[str, Value] = {}
-    sized = list(_sized(pushing, at, effort, load))
+    strong = list(sized_pushers(pushing, at, effort, load))
     for number, (joint, first) in enumerate(zip(chain.joints, chain.first_row, strict=True)):
         if hasattr(joint, "contacts"):
             if joint.angular:
                 carried = multipliers[first]
             else:  # what fails is not a number throughout
-                carried = np.where(np.isfinite(multipliers[0]), _passed_on(joint.name, sized), np.nan)
+                carried = np.where(np.isfinite(multipliers[0]), _passed_on(joint.name, strong), np.nan)
             for side in _spread(joint, at, carried, pins):
                 if side.pin:
                     on_pin.setdefault(side.pin, []).append((side.fx, side.fy))
@@ -98,7 +98,7 @@ def reactions(
                     moment = about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
                 own = turnable and not placed and (hub or member == joint.members[0])
                 sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
-    for acting, size in sized:
+    for acting, size in strong:
         if hasattr(acting.pusher, "through"):
             continue  # the joint has told it
         for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, acting.pusher.push(at), strict=False):
@@ -126,10 +126,10 @@ def _rubbed(chain: Chain, at: Poses, friction: Sequence[Value]) -> dict[int, lis
     return out
 
 
-def _passed_on(joint: str, sized: Sequence[tuple[Acting, Value]]) -> Value:
+def _passed_on(joint: str, strong: Sequence[tuple[Acting, Value]]) -> Value:
     """[N] what all that push through a joint give it together: at the hauling end of a rope its tension."""
     total: Value = 0.0
-    for acting, size in sized:
+    for acting, size in strong:
         if getattr(acting.pusher, "through", "") == joint:
             total = total + size
     return total
@@ -176,7 +176,7 @@ def _sum(a: Value, b: Value) -> Value:
     return b if isinstance(a, float) and a == 0.0 else a + b
 
 
-def _sized(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
+def sized_pushers(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
     """Every pusher with the strength it has in each case."""
     for acting in pushing.effort:
         yield acting, (acting.factor * effort if len(pushing.effort) > 1 else effort)

@@ -10,7 +10,17 @@ from linkcalc.model.check_names import Known
 from linkcalc.model.dimensions import reckon
 from linkcalc.model.gather import Gather
 from linkcalc.model.mechanism import Mechanism
-from linkcalc.model.requirements import DRAWN, JOINT, LOADING, MEMBER, MOVER, Requirement, requirement
+from linkcalc.model.requirements import (
+    DRAWN,
+    EXAMPLES,
+    JOINT,
+    LOADING,
+    MEMBER,
+    MOVER,
+    NEEDS,
+    Requirement,
+    requirement,
+)
 from linkcalc.model.sketch import Drawing
 from linkcalc.model.told import told_by
 from linkcalc.words import nearest
@@ -74,6 +84,9 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
             raise fault((), f"{one.of!r} does not join {one.on!r}", f"it joins {', '.join(sorted(sides))}")
     if of == MOVER and one.of not in drawing.points and not any(hasattr(joint, "travel") for joint in joints):
         raise fault((), f"{one.of!r} has no travel", "a point, slot, slide or track is wanted")
+    for key in NEEDS.get(one.quantity, ()):
+        if getattr(drawing.mechanism.members[one.of], key) is None:
+            raise fault((), f"{one.of!r} has no {key}", f"give the member one: {EXAMPLES[key]}")
     if of == LOADING:
         told = [t.name for (_, name), load in drawing.pushers().items() if name == one.of for t in told_by(load)]
         if one.quantity not in told:

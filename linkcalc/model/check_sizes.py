@@ -45,6 +45,9 @@ def _sizes(entry: Field[Any], value: Any, stepped: str) -> Iterator[tuple[Size, 
     elif meta["kind"] == "sizes":
         for one in value:
             yield one, meta["unit"], meta["sign"]
+    elif meta["kind"] == "named sizes":
+        for one in value:
+            yield one, meta["unit"], "plus"
     elif meta["kind"] == "line" and not isinstance(value, tuple):
         yield value, "angle", "any"
     elif meta["kind"] == "arcs":

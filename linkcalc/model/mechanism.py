@@ -15,6 +15,7 @@ from linkcalc.parts.contract import Size
 
 GROUND = "ground"
 STACKED = 'plates are wanted in order, e.g. [["fork", 8], ["rod", 16, 0.5], ["fork", 8, 0.5]]'
+ENDS = ("pinned", "fixed and pinned", "fixed", "fixed and free")
 DISTRIBUTIONS = ("normal", "uniform", "triangular")
 DRAWN, LOWER, UPPER = "drawn", "lower limit", "upper limit"
 
@@ -25,6 +26,10 @@ def _entry(shape: str, text: str, default: Any = None, **more: Any) -> Any:
     if default is dict:
         return field(default_factory=dict, metadata=meta)
     return field(metadata=meta) if default is MISSING else field(default=default, metadata=meta)
+
+
+_POWERS = {"area": 2, "section modulus": 3, "second moment": 4}
+"""Kinds that have no unit of their own, but a power of that of length."""
 
 
 def _unit(of: str, default: str) -> Any:
@@ -50,7 +55,9 @@ class Units:
     number = ""
 
     def of(self, kind: str) -> str:
-        """The unit of a kind of size: "length" -> "mm"."""
+        """The unit of a kind of size: "length" -> "mm", "area" -> "mm^2"."""
+        if kind in _POWERS:
+            return f"{self.length}^{_POWERS[kind]}"
         unit: str = getattr(self, kind.replace(" ", "_"))
         return unit
 
@@ -79,6 +86,10 @@ class Member:
     mass    own mass; None is weightless
     stiffness  force over stretch along the line of its two pins; None: it does not stretch
     centre  point of its centre of mass; else the middle of the path (mass spread evenly along it)
+    section      a section part (Flat, Round, Tube, ...), for its stress
+    material     name of its material; factor against its yield stress
+    bend_radius  of the middle line at the corners of its path
+    ends, ends_across  of a two-force member: how its ends are held against buckling, in the plane and out of it
     """
 
     points: tuple[str, ...] = fields.names("point", "the points it carries, in order", least=0, most=None)
@@ -87,6 +98,19 @@ class Member:
     centre: str | None = fields.name("point", "point at its centre of mass; else the middle of the path", None)
     stiffness: Size | None = fields.size(
         "stiffness", "force over stretch along the line of its two pins", None, sign="plus"
+    )
+    section: Any = _entry("part", "its section: a round, a tube, a flat, ...", family="section")
+    material: str | None = fields.name("material", "what it is made of", None)
+    factor: Size | None = fields.size("number", "factor against yield, and against buckling", None, sign="plus")
+    bend_radius: Size | None = fields.size(
+        "length", "radius of its middle line where the path bends; sharp if left out", None, sign="plus"
+    )
+    ends: Size = fields.size(
+        "number", "of a two-force member: how its ends are held in the plane, or the length factor", "pinned",
+        sign="plus", words=ENDS,
+    )  # fmt: skip
+    ends_across: Size | None = fields.size(
+        "number", "the same out of the plane; as in the plane if left out", None, sign="plus", words=ENDS
     )
 
     short = "points"

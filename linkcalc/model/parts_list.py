@@ -186,7 +186,8 @@ def assemble(drawing: Drawing) -> Assembly:
     for name, member in mechanism.members.items():
         if member.mass is not None and name != GROUND:
             full = f"weight of {name}"
-            weight = WeightPush(full, drawing.mass_site(name), drawing.value(member.mass, "mass"))
+            mass = drawing.value(member.mass, "mass")
+            weight = WeightPush(full, drawing.mass_site(name), mass, lines=drawing.mass_lines(name))
             pushers["", full] = cast("Pusher", weight)
     for case_name, case in mechanism.cases.items():
         if case.effort is not None:

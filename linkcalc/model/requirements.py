@@ -54,7 +54,18 @@ _MEASURES = (
     ("tension", Measure("force", "of", DRAWN)),
     ("compression", Measure("force", "in", MEMBER)),
     ("travel", Measure("length", "of", MOVER)),
+    ("bending moment", Measure("moment", "in", MEMBER)),
+    ("shear force", Measure("force", "in", MEMBER)),
+    ("axial force", Measure("force", "in", MEMBER)),
+    ("stress", Measure("stress", "in", MEMBER)),
+    ("buckling margin", Measure("number", "of", MEMBER)),
+    ("utilisation", Measure("number", "of", MEMBER)),
 )
+INNER = ("bending moment", "shear force", "axial force", "stress", "buckling margin", "utilisation")
+"""What goes on within a member, at its worst place."""
+NEEDS = {"stress": ("section",), "buckling margin": ("section", "material"), "utilisation": ("section", "material")}
+"""Keys that the member must have for it."""
+EXAMPLES = {"section": "section = { flat = [40, 10] }", "material": 'material = "S355"'}
 
 
 @cache

@@ -62,6 +62,15 @@ def _sizes(raw: Any, meta: Meta) -> tuple[Any, Any]:
     return size(raw[0]), size(raw[1])
 
 
+def _named_sizes(raw: Any, meta: Meta) -> tuple[Any, ...]:
+    names = meta["names"]
+    wanted = f"[{', '.join(names)}] is wanted"
+    if not isinstance(raw, (list, tuple)) or len(raw) != len(names):
+        what = f"a list of {len(raw)}" if isinstance(raw, (list, tuple)) else f"{shown(raw)} is no list"
+        raise fault((), what, wanted)
+    return tuple(size(one) for one in raw)
+
+
 def _line(raw: Any, meta: Meta) -> Any:  # noqa: ARG001
     if not isinstance(raw, (list, tuple)):
         return size(raw)
@@ -162,7 +171,8 @@ def _example(number: int) -> str:
 
 
 SHAPES: dict[str, Callable[[Any, Meta], Any]] = {
-    "name": _name, "names": _names, "size": _size, "sizes": _sizes, "own size": _size, "line": _line, "choice": _choice,
+    "name": _name, "names": _names, "size": _size, "sizes": _sizes, "named sizes": _named_sizes,
+    "own size": _size, "line": _line, "choice": _choice,
     "count": _whole, "arcs": _arcs, "pairs": _pairs, "unit": _unit, "tol": _tol, "factor": _factor,
     "factors": _factors, "text": _text, "rows": _rows, "formula": _formula,
 }  # fmt: skip

@@ -8,12 +8,12 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from functools import cached_property
-from itertools import pairwise
 from typing import Any
 
 import numpy as np
 
 from linkcalc.faults import Fault, Faults, fault
+from linkcalc.model.body_lines import body_lines, middle
 from linkcalc.model.dimensions import Overrides, evaluate
 from linkcalc.model.drafting import Place, draw, plain
 from linkcalc.model.formulas import to_si
@@ -154,6 +154,14 @@ class Drawing:
             raise fault((), f"member {member!r} has no points", "name the points it carries")
         return entry.points[0]
 
+    def shared_point(self, member: str, other: str) -> str | None:
+        """The first point of a member that another carries too, None if there is none. Raises Faults."""
+        for name in (member, other):
+            self.member(name)
+        entry = self.mechanism.members.get(member)
+        carried = entry.points if entry else ()
+        return next((p for p in carried if other in self._carriers.get(p, ())), None)
+
     def own_axis(self, member: str) -> Value:
         """[rad] direction of the member's own x axis, first to last point as drawn; 0.0 for the ground."""
         if member == GROUND:
@@ -212,9 +220,20 @@ class Drawing:
         if entry.centre is not None:
             return self.site(entry.centre, member)
         if member not in self._centres:
-            place = _middle([self.point(p) for p in entry.path or entry.points])
+            place = middle([(self.point(a), self.point(b)) for a, b in body_lines(entry)])
             self._centres[member] = self._local(self.member(member), place)
         return self._centres[member]
+
+    def mass_lines(self, member: str) -> tuple[tuple[Site, Site], ...]:
+        """The lines that a member's mass is spread along, evenly; empty if its centre is given, and lies elsewhere than
+        the middle of them. Raises Faults."""
+        lines = body_lines(self._entry(member))
+        centre, (x, y) = self.mass_site(member), middle([(self.point(a), self.point(b)) for a, b in lines])
+        even = self._local(self.member(member), (x, y))
+        off = np.hypot(np.subtract(centre.u, even.u), np.subtract(centre.v, even.v))
+        if np.any(off > 1e-9 * drawn(self.mechanism).size):
+            return ()
+        return tuple((self.site(a, member), self.site(b, member)) for a, b in lines if a != b)
 
     def _entry(self, member: str) -> Member:
         self.first_point(member)
@@ -263,16 +282,3 @@ def _located(*item: str) -> Iterator[None]:
         yield
     except Faults as found:
         raise Faults([Fault(item + f.item, f.what, f.wanted) for f in found.faults]) from None
-
-
-def _middle(places: list[Place]) -> Place:
-    """Centre of a line of even weight through the places; the first of them if it has no length."""
-    total: Value = 0.0
-    sum_x: Value = 0.0
-    sum_y: Value = 0.0
-    for (ax, ay), (bx, by) in pairwise(places):
-        length = np.hypot(bx - ax, by - ay)
-        total, sum_x, sum_y = total + length, sum_x + length * (ax + bx) / 2, sum_y + length * (ay + by) / 2
-    if np.ndim(total) == 0 and total == 0:
-        return places[0]
-    return sum_x / total, sum_y / total

@@ -40,6 +40,9 @@ KINDS: dict[str, Dims] = {
     "torsion stiffness": (2, 1, -2, -1),
     "pressure": (-1, 1, -2, 0),
     "volume": (3, 0, 0, 0),
+    "area": (2, 0, 0, 0),
+    "second moment": (4, 0, 0, 0),
+    "section modulus": (3, 0, 0, 0),
 }
 _TABLE = Path(__file__).with_name("units.json")
 _WORD = re.compile(r"[A-Za-z_]+")

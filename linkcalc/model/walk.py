@@ -57,6 +57,8 @@ def everything(mechanism: Mechanism) -> Iterator[Part]:
         yield Part(("points", name), part)
     for name, member in mechanism.members.items():
         yield Part(("members", name), member)
+        if member.section is not None:
+            yield Part(("members", name, "section"), member.section)
     yield from joints(mechanism)
     for point, pin in mechanism.pins.items():
         yield Part(("pins", point), pin)

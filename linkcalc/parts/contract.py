@@ -18,7 +18,7 @@ from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
     "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Poses",
-    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Told", "Travelled", "Value", "X", "Y",
+    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Spread", "Told", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -69,6 +69,19 @@ class Contact:
     moment: Value
 
 
+@dataclass(frozen=True, eq=False)
+class Spread:
+    """How a push is spread along its member: it has the same resultant, but bends the member less.
+
+    lines  straight lines on the member, each by its ends; the push is spread along all of them
+    ends   how strong it is at the beginning of the first and the end of the last, each over its mean; it changes
+           evenly along the way between
+    """
+
+    lines: tuple[tuple[Site, Site], ...]
+    ends: tuple[float, float] = (1.0, 1.0)
+
+
 class Sketch(Protocol):
     """What a part may ask of the mechanism as drawn. Everything in SI; batches are (1, variant, 1)."""
 
@@ -103,6 +116,9 @@ class Sketch(Protocol):
 
     def first_point(self, member: str) -> str:
         """the point at the origin of the member's frame"""
+
+    def shared_point(self, member: str, other: str) -> str | None:
+        """the first point of a member that another carries too, None if there is none"""
 
     def own_axis(self, member: str) -> Value:
         """[rad] direction of the member's own x axis (first to last point) in the drawing pose"""
@@ -219,6 +235,10 @@ class Hauled(Protocol):
     def pins(self) -> tuple[str, ...]:
         """for each of its contacts the name of the pin that takes it, "" if a member does"""
 
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        """for each of its contacts where it acts"""
+
     def haul(self, at: Poses) -> Value:
         """[m] how much has been drawn in since the drawing pose"""
 
@@ -231,11 +251,15 @@ class Pusher(Protocol):
     """Something that pushes: a force, torque, weight or pair.
 
     One whose push comes through a joint has, besides, ``through``: the name of the joint, whose contacts tell it.
+    One that is spread along members has, besides, ``spread``: for each entry of its push a Spread, or None.
+    One that moves along a member has, besides, ``arms(at)``: for each entry of its push where it goes in, in place of
+    the ``sites``: from the origin of the member, ground axes [m].
 
     name, word   what the file calls it, and its kind
     kind         kind of its strength: "force" or "moment"
     size         as the file gives it, SI (a weight: its mass), float or (1, variant, 1); None for the one unknown
     on_pins      for each entry of its push: the name of the pin that takes it, "" if a member does
+    sites        for each entry of its push: where it goes into the member
     """
 
     word: str
@@ -247,6 +271,8 @@ class Pusher(Protocol):
     def size(self) -> Value | None: ...
     @property
     def on_pins(self) -> tuple[str, ...]: ...
+    @property
+    def sites(self) -> tuple[Site, ...]: ...
 
     def strength(self, at: Poses) -> Value:
         """[N] or [N m] how strong it is; not asked of the unknown"""

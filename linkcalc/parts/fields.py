@@ -34,6 +34,11 @@ def sizes(unit: str, text: str, default: Any = MISSING, *, sign: str = "any") ->
     return _made("sizes", text, default, unit=unit, sign=sign)
 
 
+def named_sizes(unit: str, names: tuple[str, ...], text: str, default: Any = MISSING) -> Any:
+    """As many sizes of one kind as there are names, kept as a tuple; all more than nothing."""
+    return _made("named sizes", text, default, unit=unit, names=names)
+
+
 def line(text: str, default: Any = MISSING) -> Any:
     """A line: two points, or an angle from the x axis as drawn."""
     return _made("line", text, default)

@@ -10,7 +10,7 @@ from typing import Protocol
 
 import numpy as np
 
-from linkcalc.parts.contract import Limit, Mark, Poses, Push, Sketch, Told, Value
+from linkcalc.parts.contract import Limit, Mark, Poses, Push, Site, Sketch, Told, Value
 from linkcalc.parts.laws import Law
 from linkcalc.parts.pose import Mask
 
@@ -27,6 +27,8 @@ class Way(Protocol):
 
     @property
     def on_pins(self) -> tuple[str, ...]: ...
+    @property
+    def sites(self) -> tuple[Site, ...]: ...
 
     def value(self, at: Poses) -> Value:
         """[m] or [rad]"""
@@ -74,6 +76,10 @@ class LawPush:
     @property
     def on_pins(self) -> tuple[str, ...]:
         return self.path.on_pins
+
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return self.path.sites
 
     def strength(self, at: Poses) -> Value:
         return self.law.force(self.path.value(at))

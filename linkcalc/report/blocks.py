@@ -181,4 +181,13 @@ class Drawing:
     tables: tuple[Table, ...] = field(default=())
 
 
+@dataclass(frozen=True)
+class Panels:
+    """Drawings of the same thing side by side, to one scale."""
+
+    title: str
+    caption: str
+    panels: tuple[Drawing, ...]
+
+
 Block = Heading | Note | Lines | Table | Chart | Drawing

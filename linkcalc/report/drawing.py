@@ -90,9 +90,21 @@ def caption(answer: StrokeAnswer, poses: Sequence[int], case: int) -> str:
         words.append(f"{answer.drive_name} {drives[0]} {unit}")
         if drives[1:]:
             words[0] += f", lighter {' and '.join(drives[1:])} {unit}"
-    if answer.cases[case]:
-        words.append(f"case {answer.cases[case]}")
-    return "; ".join(words)
+    return "; ".join([*words, *_case(answer, case)])
+
+
+def caption_at(answer: StrokeAnswer, drive: float, case: int) -> str:
+    """The same for any value of the stroke."""
+    edge = Edge(answer)
+    words = []
+    if answer.drive_name:
+        value = number(edge.one(drive, "drive"), places=edge.drive_places(answer.drive), trim=True)
+        words.append(f"{answer.drive_name} {value} {plain(edge.unit('drive'))}")
+    return "; ".join([*words, *_case(answer, case)])
+
+
+def _case(answer: StrokeAnswer, case: int) -> list[str]:
+    return [f"case {answer.cases[case]}"] if answer.cases[case] else []
 
 
 def scaled(items: Iterable[Item], edge: Edge) -> list[Item]:

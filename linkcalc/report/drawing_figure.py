@@ -47,7 +47,7 @@ def drawing_figure(drawing: Drawing) -> Figure:
         ax.set_ylim(middle[1] - tall / 2 / scale, middle[1] + tall / 2 / scale)
         ax.set_axis_off()
         pen = Pen(ax, 1 / (_POINT * scale), middle)
-        _scale_bar(pen, drawing.unit)
+        scale_bar(pen, drawing.unit)
         for item in drawing.items:
             SHAPES[item.shape](pen, item)
         pen.write()
@@ -70,7 +70,7 @@ def _extent(drawing: Drawing) -> tuple[float, float, float, float]:
     return float(low[0]), float(low[1]), float(wide), float(tall)
 
 
-def _scale_bar(pen: Pen, unit: str) -> None:
+def scale_bar(pen: Pen, unit: str) -> None:
     """A round length under the drawing."""
     x0, _ = pen.ax.get_xlim()
     y0, _ = pen.ax.get_ylim()

@@ -7,6 +7,7 @@ import math
 import numpy as np
 
 from linkcalc.design.answer import StrokeAnswer
+from linkcalc.model.mechanism import Units
 from linkcalc.model.units import from_si
 from linkcalc.parts.pose import Array
 from linkcalc.report.numbers import number, plain
@@ -36,6 +37,11 @@ class Edge:
     def kind(self, what: str) -> str:
         """The kind of size behind "drive", "effort", "load"; any other is one already."""
         return self._kinds.get(what, "number" if what in ("drive", "effort", "load", "ratio") else what)
+
+    @property
+    def units(self) -> Units:
+        """The units of the model file."""
+        return self._units
 
     def unit(self, what: str) -> str:
         """Its unit as the file writes it: "N*m"."""

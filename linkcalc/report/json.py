@@ -16,22 +16,22 @@ from linkcalc.report.bearings import direction, own_direction, resultant
 from linkcalc.report.edge import Edge
 
 Tree = dict[str, Any]
-_BATCH = ["case", "variant", "pose"]
+BATCH = ["case", "variant", "pose"]
 
 
 def as_json(answer: StrokeAnswer) -> str:
     """The text of ``stroke_tree``: valid JSON, keys always in the same order."""
-    return _laid_out(stroke_tree(answer)) + "\n"
+    return laid_out(stroke_tree(answer)) + "\n"
 
 
-def _laid_out(tree: Any, indent: str = "") -> str:
+def laid_out(tree: Any, indent: str = "") -> str:
     """JSON text that can be read: a line a key, but the numbers along one axis on one line."""
     deeper = indent + " "
     if isinstance(tree, dict) and tree:
-        inner = [f"{json.dumps(k, ensure_ascii=False)}: {_laid_out(v, deeper)}" for k, v in tree.items()]
+        inner = [f"{json.dumps(k, ensure_ascii=False)}: {laid_out(v, deeper)}" for k, v in tree.items()]
         return "{\n" + ",\n".join(deeper + line for line in inner) + f"\n{indent}}}"
     if isinstance(tree, list) and any(isinstance(item, (dict, list)) for item in tree):
-        return "[\n" + ",\n".join(deeper + _laid_out(item, deeper) for item in tree) + f"\n{indent}]"
+        return "[\n" + ",\n".join(deeper + laid_out(item, deeper) for item in tree) + f"\n{indent}]"
     return json.dumps(tree, ensure_ascii=False, allow_nan=False)
 
 
@@ -56,19 +56,20 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "quantities": _quantities(answer, edge),
         "joints": _bearings(answer, edge),
         "two-force members": [
-            {"member": m, "axial": _array(edge, answer.axial_in(m), "force", _BATCH)} for m in answer.two_force
+            {"member": m, "axial": array_tree(edge, answer.axial_in(m), "force", BATCH)} for m in answer.two_force
         ],
         "ropes": [
-            {"rope": r, "tension": _array(edge, answer.tension_of(r), "force", _BATCH)} for r in answer.ropes
+            {"rope": r, "tension": array_tree(edge, answer.tension_of(r), "force", BATCH)} for r in answer.ropes
         ],
         "loads": [
-            {"load": r.load, "quantity": r.quantity, **_array(edge, r.values, r.kind, _BATCH)} for r in answer.readings
+            {"load": r.load, "quantity": r.quantity, **array_tree(edge, r.values, r.kind, BATCH)}
+            for r in answer.readings
         ],
         "members": [
             {
                 "member": member,
                 **{
-                    key: _array(edge, getattr(answer, key)[i], what, _placed_axes(answer))
+                    key: array_tree(edge, getattr(answer, key)[i], what, _placed_axes(answer))
                     for key, what in (("x", "length"), ("y", "length"), ("turn", "angle"))
                 },
             }
@@ -77,15 +78,15 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "events": [
             {
                 "kind": e.kind, "quantity": e.quantity, "case": e.case or None,
-                "drive": _one(edge, e.drive, "drive"), "value": _one(edge, e.value, e.value_kind),
+                "drive": one_tree(edge, e.drive, "drive"), "value": one_tree(edge, e.value, e.value_kind),
             }
             for e in answer.events
         ],
         "requirements": [
             {
                 "name": v.name, "text": v.text, "holds": v.holds, "case": v.case or None,
-                "worst": _one(edge, v.worst, v.kind), "limit": _one(edge, v.limit, v.kind),
-                "drive": _one(edge, v.drive, "drive"),
+                "worst": one_tree(edge, v.worst, v.kind), "limit": one_tree(edge, v.limit, v.kind),
+                "drive": one_tree(edge, v.drive, "drive"),
             }
             for v in answer.verdicts
         ],
@@ -93,19 +94,19 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
         "balances": [
             {
                 "case": r.case or None, "balance": r.text,
-                "turns": [{"member": m, **_one(edge, turn, "angle")} for m, turn in r.turns.items()],
+                "turns": [{"member": m, **one_tree(edge, turn, "angle")} for m, turn in r.turns.items()],
             }
             for r in answer.rests
         ],
         "warnings": [{"item": c.item, "text": c.text} for c in answer.caveats],
         "cautions": [{"item": c.item, "text": c.text} for c in answer.cautions],
         "checks": {
-            "closure": _real(answer.checks.closure),
-            "equilibrium": _real(answer.checks.equilibrium),
-            "virtual work": _real(answer.checks.virtual_work),
+            "closure": real(answer.checks.closure),
+            "equilibrium": real(answer.checks.equilibrium),
+            "virtual work": real(answer.checks.virtual_work),
         },
         "status": {
-            "axes": _BATCH,
+            "axes": BATCH,
             "values": answer.status.tolist(),
             "meaning": {str(int(s)): s.text for s in Status},
         },
@@ -114,7 +115,7 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
 
 def _placed_axes(answer: StrokeAnswer) -> list[str]:
     """Free members stand elsewhere in each case; all others in the same place in all."""
-    return _BATCH if answer.loose else ["one", "variant", "pose"]
+    return BATCH if answer.loose else ["one", "variant", "pose"]
 
 
 def _quantities(answer: StrokeAnswer, edge: Edge) -> Tree:
@@ -123,9 +124,9 @@ def _quantities(answer: StrokeAnswer, edge: Edge) -> Tree:
     for name, meta in quantities(answer).items():
         if meta["when"] and not getattr(answer, meta["when"]):
             continue
-        if meta["axes"] in (tuple(_BATCH), ("one", "variant", "pose")):
-            array = _array(edge, getattr(answer, name), meta["quantity"], list(meta["axes"]))
-            tree[name.replace("_", " ")] = {"text": meta["text"], **array}
+        if meta["axes"] in (tuple(BATCH), ("one", "variant", "pose")):
+            found = array_tree(edge, getattr(answer, name), meta["quantity"], list(meta["axes"]))
+            tree[name.replace("_", " ")] = {"text": meta["text"], **found}
     return tree
 
 
@@ -137,18 +138,18 @@ def _bearings(answer: StrokeAnswer, edge: Edge) -> list[Tree]:
             "joint": b.joint,
             "kind": b.word,
             "member": b.member,
-            "x": _array(edge, answer.force[i, 0], "force", _BATCH),
-            "y": _array(edge, answer.force[i, 1], "force", _BATCH),
-            "resultant": _array(edge, size[i], "force", _BATCH),
-            "direction": _array(edge, points[i], "angle", _BATCH),
-            "direction from own axis": _array(edge, own[i], "angle", _BATCH),
-            "moment": _array(edge, answer.moment[i], "moment", _BATCH),
+            "x": array_tree(edge, answer.force[i, 0], "force", BATCH),
+            "y": array_tree(edge, answer.force[i, 1], "force", BATCH),
+            "resultant": array_tree(edge, size[i], "force", BATCH),
+            "direction": array_tree(edge, points[i], "angle", BATCH),
+            "direction from own axis": array_tree(edge, own[i], "angle", BATCH),
+            "moment": array_tree(edge, answer.moment[i], "moment", BATCH),
         }
         for i, b in enumerate(answer.bearings)
     ]
 
 
-def _array(edge: Edge, values: Array, what: str, axes: list[str]) -> Tree:
+def array_tree(edge: Edge, values: Array, what: str, axes: list[str]) -> Tree:
     return {"unit": edge.unit(what), "axes": axes, "values": _nulls(edge.out(values, what))}
 
 
@@ -157,10 +158,10 @@ def _nulls(values: Array) -> Any:
     return np.where(np.isfinite(values), values, None).tolist()  # type: ignore[call-overload]
 
 
-def _one(edge: Edge, value: float, what: str) -> Tree:
+def one_tree(edge: Edge, value: float, what: str) -> Tree:
     unbounded = {"unbounded": True} if math.isinf(value) else {}
-    return {"unit": edge.unit(what), "value": _real(edge.one(value, what)), **unbounded}
+    return {"unit": edge.unit(what), "value": real(edge.one(value, what)), **unbounded}
 
 
-def _real(value: float) -> float | None:
+def real(value: float) -> float | None:
     return float(value) if math.isfinite(value) else None

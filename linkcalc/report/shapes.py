@@ -13,6 +13,7 @@ import numpy as np
 
 from linkcalc.report import style
 from linkcalc.report.blocks import Item
+from linkcalc.report.diagram_shapes import DIAGRAM_SHAPES
 from linkcalc.report.gear_shapes import GEAR_SHAPES
 from linkcalc.report.pen import Pen, Spot
 from linkcalc.report.spring_shapes import SPRING_SHAPES
@@ -293,4 +294,5 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     "haul": _told_by_arrow,
     **GEAR_SHAPES,
     **SPRING_SHAPES,
+    **DIAGRAM_SHAPES,
 }

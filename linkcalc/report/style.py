@@ -38,6 +38,9 @@ TONES = {
     "load": "#173f5f",
     "joint": "#3a8f83",
     "weight": "#6d3f73",
+    "axial": "#173f5f",
+    "shear": "#3a8f83",
+    "bending": "#c4572e",
 }
 
 # fills of members: near to white, so that a grey print keeps the outlines

@@ -5,6 +5,7 @@
     moment guide on arm      moment of a slide or weld on a member
     axial strut              force in a two-force member, tension plus
     tension hoist            of a rope
+    axial force in beam at G towards B    of a member just beside a point; shear force, bending moment alike
     effort, load, force ratio, ideal ratio
     range                    how far the stroke goes from its first to its last pose
 
@@ -21,7 +22,8 @@ from typing import Any
 
 import numpy as np
 
-from linkcalc import read, stroke
+from linkcalc import members, read, stroke
+from linkcalc.design.diagram import diagram
 
 
 def ask(file: Path, words: str, case: str = "", pose: int = 0) -> float:
@@ -33,6 +35,8 @@ def ask(file: Path, words: str, case: str = "", pose: int = 0) -> float:
         return -ask(file, words[1:], case, pose)
     if multiple := re.fullmatch(r"([\d.]+)\*(.+)", words):
         return float(multiple[1]) * ask(file, multiple[2], case, pose)
+    if inner := re.fullmatch(r"(axial force|shear force|bending moment) in (\S+) at (\S+) towards (\S+)", words):
+        return _inside(file, *inner.groups())
     mechanism, answer = _solved(file)
     row = list(mechanism.cases).index(case) if case else 0
     return float(np.asarray(_asked(answer, words))[row, 0, pose])
@@ -42,6 +46,18 @@ def ask(file: Path, words: str, case: str = "", pose: int = 0) -> float:
 def _solved(file: Path) -> tuple[Any, Any]:
     mechanism = read(file)
     return mechanism, stroke(mechanism)
+
+
+def _inside(file: Path, quantity: str, member: str, at: str, towards: str) -> float:
+    """In the first pose of the first case."""
+    found = diagram(members(read(file)), member)
+    for one in found.stretches:
+        values = {"axial force": one.axial, "shear force": one.shear, "bending moment": one.bending}[quantity]
+        if (one.start, one.stop) == (at, towards) and one.way[0] == 0.0:
+            return float(values[0])
+        if (one.stop, one.start) == (at, towards):
+            last = float(values[-1])
+    return last
 
 
 def _asked(answer: Any, words: str) -> Any:

@@ -186,6 +186,16 @@ _NEUTRAL = {
 }
 
 
+def curved_more(section: Section, radius: float) -> float:
+    """How much more than straight the inner fibre of a bent bar carries, by Winkler and Bach; 1.0 for a section that is
+    reckoned as straight. radius: [m] of the middle line. Raises Faults: one that the section does not fit.
+    """
+    sheet = Sheet("bend")
+    section.write(sheet)
+    sheet.positive("R", radius, "length", "radius of the middle line")
+    return float(sheet.working()["k_i"]) if _curve(sheet, section, radius) else 1.0
+
+
 def _hollow(outside: float, wall: float) -> None:
     if wall > outside / 2 * (1 + 1e-12):
         raise fault((), f"a wall of {_mm(wall)} does not fit into {_mm(outside)}", "at most half of it is wanted")

@@ -153,6 +153,10 @@ class RopeJoint:
     def pins(self) -> tuple[str, ...]:
         return tuple(place.pin for place in self.places)
 
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return tuple(place.site for place in self.places)
+
     def gap(self, at: Poses) -> tuple[Value, ...]:
         return () if self.hauled else (self.haul(at),)
 

@@ -87,6 +87,10 @@ class ForcePush:
     kind = "force"
     word = "force"
 
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return (self.site,)
+
     def strength(self, at: Poses) -> Value:  # noqa: ARG002
         assert self.size is not None
         return self.size

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import Hauled, Mark, Poses, Push, Size, Sketch, Value
+from linkcalc.parts.contract import Hauled, Mark, Poses, Push, Site, Size, Sketch, Value
 from linkcalc.words import word
 
 
@@ -42,6 +42,10 @@ class HaulPush:
     @property
     def on_pins(self) -> tuple[str, ...]:
         return self.rope.pins
+
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return self.rope.sites
 
     def strength(self, at: Poses) -> Value:  # noqa: ARG002
         assert self.size is not None

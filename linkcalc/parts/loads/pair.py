@@ -39,6 +39,10 @@ class PairPush:
     kind = "force"
     word = "pair"
 
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return self.first, self.second
+
     def strength(self, at: Poses) -> Value:  # noqa: ARG002
         assert self.size is not None
         return self.size

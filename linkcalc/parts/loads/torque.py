@@ -6,6 +6,7 @@ from dataclasses import dataclass
 
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Mark, Poses, Push, Site, Size, Sketch, Value
+from linkcalc.parts.shaft import shaft
 from linkcalc.words import word
 
 
@@ -16,12 +17,15 @@ class Torque:
 
     torque_on: str = fields.name("member", "the member that is turned")
     against: str = fields.name("member", "the member that takes it the other way", "ground")
+    shaft: str | None = fields.name(
+        "point", "where it goes in, for inner forces; else where the two members meet", None
+    )
     size: Size | None = fields.size("moment", "how large; left out for the one unknown", None)
 
     def pusher(self, name: str, sketch: Sketch) -> TorquePush:
         size = None if self.size is None else sketch.value(self.size, "moment")
-        member = sketch.member(self.torque_on)
-        return TorquePush(name, member, sketch.member(self.against), size, Site(member, 0.0, 0.0))
+        sites = shaft(sketch, self.torque_on, self.against, self.shaft)
+        return TorquePush(name, sketch.member(self.torque_on), sketch.member(self.against), size, sites)
 
 
 @dataclass(frozen=True, eq=False)
@@ -32,7 +36,7 @@ class TorquePush:
     member: int
     against: int
     size: Value | None
-    site: Site
+    sites: tuple[Site, Site]
     on_pins: tuple[str, str] = ("", "")
     kind = "moment"
     word = "torque"
@@ -45,5 +49,5 @@ class TorquePush:
         return (self.member, 0.0, 0.0, 1.0), (self.against, 0.0, 0.0, -1.0)
 
     def mark(self, at: Poses) -> Mark:
-        x, y = at.spot(self.site)
+        x, y = at.spot(self.sites[0])
         return Mark("torque", ((float(x), float(y)),), name=self.name)

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import Mark, Poses, Push, Site, Size, Sketch, Value
+from linkcalc.parts.contract import Mark, Poses, Push, Site, Size, Sketch, Spread, Value
 from linkcalc.words import word
 
 
@@ -28,14 +28,26 @@ class Weight:
 
 @dataclass(frozen=True, eq=False)
 class WeightPush:
-    """What a weight does, for 1 N; its size is the mass [kg], its strength mass times the field of gravity."""
+    """What a weight does, for 1 N; its size is the mass [kg], its strength mass times the field of gravity.
+
+    lines  straight lines that the mass is spread along evenly, each by its ends; empty for one at a point
+    """
 
     name: str
     site: Site
     size: Value
     on_pins: tuple[str] = ("",)
+    lines: tuple[tuple[Site, Site], ...] = ()
     kind = "force"
     word = "weight"
+
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return (self.site,)
+
+    @property
+    def spread(self) -> tuple[Spread | None, ...]:
+        return (Spread(self.lines) if self.lines else None,)
 
     def strength(self, at: Poses) -> Value:
         return self.size * at.field

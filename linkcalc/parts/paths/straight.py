@@ -26,6 +26,10 @@ class Straight:
     def on_pins(self) -> tuple[str, ...]:
         return self.pins
 
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return self.first, self.second
+
     def value(self, at: Poses) -> Value:
         """[m]"""
         (ax, ay), (bx, by) = at.spot(self.first), at.spot(self.second)

@@ -8,6 +8,7 @@ import numpy as np
 
 from linkcalc.parts.contract import Mark, Poses, Push, Site, Sketch, Value
 from linkcalc.parts.coordinates.turn import Turn, TurnCoordinate
+from linkcalc.parts.shaft import shaft
 
 WIDEST = np.radians(170.0)
 """How far from the drawing pose a turn can be told from one the other way round."""
@@ -19,7 +20,7 @@ class Turning:
     pose; and a couple that turns the one counter-clockwise against the other."""
 
     angle: TurnCoordinate
-    site: Site
+    sites: tuple[Site, ...]
     kind = "angle"
     strength = "moment"
     on_pins = ("", "")
@@ -33,7 +34,7 @@ class Turning:
         return (self.angle.member, 0.0, 0.0, 1.0), (self.angle.other, 0.0, 0.0, -1.0)
 
     def mark(self, at: Poses, shape: str, name: str) -> Mark:
-        x, y = at.spot(self.site)
+        x, y = at.spot(self.sites[0])
         return Mark(shape, ((float(x), float(y)),), name=name)
 
     def room(self, at: Poses, strength: Value) -> Value:  # noqa: ARG002
@@ -43,4 +44,4 @@ class Turning:
 
 def turning(sketch: Sketch, member: str, against: str) -> Turning:
     """The turn of one member against another, or against the ground."""
-    return Turning(Turn(member, against=against).coordinate(sketch), Site(sketch.member(member), 0.0, 0.0))
+    return Turning(Turn(member, against=against).coordinate(sketch), shaft(sketch, member, against))

@@ -24,6 +24,7 @@ FIELDS = {
     "names": lambda m: st.lists(NAMES, min_size=m["least"], max_size=m["most"] or 4).map(tuple),
     "size": lambda m: st.one_of(SIZES, st.sampled_from(m["words"])) if m["words"] else SIZES,
     "sizes": lambda _: st.tuples(SIZES, SIZES),
+    "named sizes": lambda m: st.tuples(*(SIZES for _ in m["names"])),
     "own size": lambda _: SIZES,
     "tol": lambda _: st.one_of(SIZES, st.tuples(SIZES, SIZES)),
     "line": lambda _: st.one_of(SIZES, st.tuples(NAMES, NAMES)),

@@ -90,8 +90,8 @@ def test_a_bare_tolerance_is_in_the_unit_of_its_kind() -> None:
             "or the lower departure first: [-0.1, 0.05]"),
         ({"a": Dimension(3, "2 deg")}, "dimensions.a.tol: 2 deg is an angle; a length is wanted (e.g. 12 mm)"),
         (
-            {"a": Dimension("3 mm^2", 1)},
-            "dimensions.a.tol: the dimension is a length^2; only sizes of a usual kind carry a tolerance",
+            {"a": Dimension("3 mm^5", 1)},
+            "dimensions.a.tol: the dimension is a length^5; only sizes of a usual kind carry a tolerance",
         ),
     ],
 )  # fmt: skip

@@ -153,7 +153,7 @@ def test_sizes_in_si(size: float | str, kind: str, units: Units, value: float) -
     ("size", "message"),
     [
         ("12 kg", "12 kg is a mass; a length is wanted (e.g. 12 mm)"),
-        ("link*link", "link*link is a length^2; a length is wanted (e.g. 12 mm)"),
+        ("link*link", "link*link is an area; a length is wanted (e.g. 12 mm)"),
         ("40", "40 is a plain number; a length is wanted (e.g. 12 mm, or 40 without quotes)"),
         ("n", "n is a plain number; a length is wanted (e.g. 12 mm)"),
         (True, "True is no size; a length is wanted (e.g. 12 mm)"),

@@ -110,6 +110,21 @@ def test_the_moment_is_that_of_the_force_at_its_place(sample: Sample) -> None:
                                    atol=WORK_TOLERANCE)  # fmt: skip
 
 
+@every_load
+def test_each_entry_of_a_push_acts_at_its_site(sample: Sample) -> None:
+    """A force has the moment of its arm about the origin of its member, and a couple has no force."""
+    part, members = pusher(sample)
+    at = random_poses(members)
+    for (member, fx, fy, moment), site in zip(part.push(at), part.sites, strict=True):
+        assert site.member == member
+        if part.kind == "moment":
+            assert (fx, fy) == (0.0, 0.0)
+        elif not hasattr(part, "through"):  # a rope on a drum turns it besides
+            a, b = at.arm(site)
+            np.testing.assert_allclose(np.broadcast_to(moment, SHAPE), np.broadcast_to(a * fy - b * fx, SHAPE),
+                                       atol=WORK_TOLERANCE)  # fmt: skip
+
+
 def closed_in_themselves() -> list[Sample]:
     return [s for s in loads() if s.word and isinstance(pusher(s)[0], (PairPush, TorquePush))]
 

@@ -24,7 +24,7 @@ from tests.unit.parts.batch import (
     random_poses,
 )
 
-FAMILIES = ("joint", "load", "coordinate", "construction")
+FAMILIES = ("joint", "load", "coordinate", "construction", "section")
 
 
 @pytest.mark.parametrize("family", FAMILIES)
@@ -40,6 +40,7 @@ def test_a_sample_is_of_the_word_it_is_for(sample: Sample) -> None:
         "load": lambda: {"effort": m.effort, "load": m.load, **m.loads}[sample.name],
         "coordinate": lambda: m.stroke.along,
         "construction": lambda: m.points[sample.name],
+        "section": lambda: m.members[sample.name].section,
     }
     assert type(found[sample.family]()) is kinds(sample.family)[sample.word]
 

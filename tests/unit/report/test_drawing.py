@@ -132,10 +132,11 @@ def test_what_is_not_there_is_a_clear_fault(ask, message):
 
 
 TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "round of rope", "rope", "line of rope", "line of track", "spring",
-             "gas spring", "constant spring", "cylinder", "screw", "force over length",
-             "round of gear", "round of rack", "line of gear", "line of rack", "segment", "rim",
-             "line of contact")  # fmt: skip
-NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope", "track", "gear", "rack", "contact")
+             "gas spring", "ordinates", "constant spring", "cylinder", "screw", "force over length",
+             "round of gear", "round of rack", "line of gear", "line of rack", "line of contact",
+             "segment", "rim")  # fmt: skip
+NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope", "track", "gear", "rack", "contact",
+         "value", "remark")  # fmt: skip
 STEM = """
 [points]
 A = [0, 0]
