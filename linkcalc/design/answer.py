@@ -72,7 +72,7 @@ class Event:
     """Something that happens at an exact pose.
 
     kind      "largest", "smallest", "reversal", "dead point", "slack", "limit", "contact made", "contact lost",
-              "snap-through"
+              "snap-through", "opposite peak" (of an effort that changes its sense, the largest of the lesser sense)
     quantity  what it happens to, in the words of the requirements: "effort", "force ratio", "force at C", "strut"
     case      name of the load case, "" if it is the same for all
     drive     [rad or m] value of the stepped coordinate, found by root finding, not by sampling

@@ -110,10 +110,9 @@ def _extremes(curves: Curves, wanted: Extremes) -> Iterator[Event]:
     found |= wanted.found(besides=found)
     for w in wanted.wanted:
         if not np.isnan(found[w].value):
-            kind = "largest" if w.sense > 0 or w in other else "smallest"
+            kind = "opposite peak" if w in other else "largest" if w.sense > 0 else "smallest"
             value_kind = curves.survey.quantities[w.name].kind
-            name = w.name if w not in other else f"{w.name} the other way"
-            yield Event(kind, name, _case(curves, w.case), found[w].drive, found[w].value, value_kind)
+            yield Event(kind, w.name, _case(curves, w.case), found[w].drive, found[w].value, value_kind)
 
 
 def _wanted(curves: Curves) -> Iterator[Wanted]:

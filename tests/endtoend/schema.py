@@ -20,7 +20,7 @@ TOLD = {
     "raising torque": "moment", "lowering torque": "moment",
 }  # fmt: skip
 EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack", "self-locking edge",
-          "contact made", "contact lost", "snap-through"}  # fmt: skip
+          "contact made", "contact lost", "snap-through", "opposite peak"}  # fmt: skip
 BATCH = ["case", "variant", "pose"]
 STILL = ["one", "variant", "pose"]
 
