@@ -9,7 +9,8 @@ from typing import Any
 import numpy as np
 
 from linkcalc.mechanics.prepare import Ready
-from linkcalc.mechanics.reactions import Side, sized_pushers
+from linkcalc.mechanics.pushing import sized_pushers
+from linkcalc.mechanics.reactions import Side
 from linkcalc.mechanics.solved import Solved
 from linkcalc.parts.contract import Spread
 from linkcalc.parts.pose import Poses, Value

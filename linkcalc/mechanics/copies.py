@@ -66,7 +66,7 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
         if wanted:
             solved = balance(ready.chain, there, ready.pushing, checked=checked)
             if not live.all():
-                solved = failed(solved, ~live, Status.OUT_OF_REACH)
+                solved = failed(solved, ~live, Status.NO_FIT if ready.chain.sharing else Status.OUT_OF_REACH)
                 solved = failed(solved, lost, Status.BRANCH_LOST)
             if ready.undrawn is not None:
                 solved = failed(solved, ready.undrawn, Status.NOT_DRAWN)

@@ -8,8 +8,9 @@ import numpy as np
 
 from linkcalc.faults import Fault, Faults
 from linkcalc.mechanics.eliminate import SMALL
+from linkcalc.mechanics.excess import no_fit
 from linkcalc.mechanics.mesh import Mesh
-from linkcalc.mechanics.motion import Closed, alone, close
+from linkcalc.mechanics.motion import Closed, alone, along, close
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.walk import Node, Walk, walk
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
@@ -32,6 +33,7 @@ class OutOfReach(ArithmeticError):
 
 
 _SHORT = 1e-9  # of the stroke: how far short of a limit of motion its last pose stands
+_BEYOND = 0.1  # of the rest of the stroke: where it is looked how far joints come apart
 _FAR = 10.0  # sizes of the mechanism that a length may run before it counts as without limit
 
 
@@ -144,9 +146,19 @@ def _to(ready: Ready, start: Node, end: Size, begin: float, far: float, key: str
         return Walk((*nodes[:-1], *last.nodes) if nodes else last.nodes, "limit", way.limit, way.passed)
     if way.stopped:
         far_node = way.nodes[-1]
+        if way.stopped == "stuck" and ready.chain.sharing is not None:
+            raise _apart(ready, far_node, target)
         why = _in_line(ready, far_node) if way.stopped == "limit" else ""
         raise OutOfReach(key, target, far_node.drive, way.limit, why)
     return way
+
+
+def _apart(ready: Ready, last: Node, target: float) -> Faults:
+    """Joints that come apart a little on from the last node."""
+    assert ready.chain.coordinate is not None
+    drive = last.drive + _BEYOND * (target - last.drive)
+    there = close(ready.chain, along(last.pose, drive - last.drive), ready.chain.coordinate.hold(drive))
+    return no_fit(ready.drawing, ready.chain, there, np.array([drive]))
 
 
 def _in_line(ready: Ready, node: Node) -> str:

@@ -5,6 +5,7 @@ from __future__ import annotations
 import numpy as np
 
 from linkcalc.mechanics.balance import balance, failed
+from linkcalc.mechanics.excess import no_fit
 from linkcalc.mechanics.loose_path import LooseMesh, lay_loose_path, loose_range, solve_loose
 from linkcalc.mechanics.mesh import Mesh
 from linkcalc.mechanics.motion import close
@@ -47,7 +48,10 @@ def mesh_of(ready: Ready, solved: Solved) -> Mesh:
 def solve_stroke(ready: Ready, poses: int) -> tuple[Solved, Path]:
     """One mechanism over its whole stroke. Raises Faults where the stroke is out of reach."""
     path = path_of(ready)
-    return solve_at(ready, path.mesh, path.poses(poses)), path
+    solved = solve_at(ready, path.mesh, path.poses(poses))
+    if ready.chain.sharing is not None and not solved.closed.fine.all():
+        raise no_fit(ready.drawing, ready.chain, solved.closed, solved.drive[0, 0])
+    return solved, path
 
 
 def reach(ready: Ready) -> tuple[float, float, float]:

@@ -9,6 +9,7 @@ import numpy as np
 from linkcalc.faults import Fault, Faults
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.eliminate import SMALL
+from linkcalc.mechanics.excess import CURE, idle, sharing
 from linkcalc.mechanics.freedom import Freedom, freedom, motion_of
 from linkcalc.mechanics.limit import Place
 from linkcalc.mechanics.loose import Loose
@@ -66,17 +67,22 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
         what = "nothing drives it: the model has no effort"
         raise Faults(Fault(("stroke",), what, "give it an [effort] without a size"))
     giving = len(chain.gives)
+    shared = sharing(drawing, wanted) if counted < wanted and not giving else None
+    if shared is None and (without := [*idle(drawing)]):
+        raise Faults(without)
     if counted > wanted and (mechanism.free or counted - giving <= wanted):
         ready = _settled(drawing, chain, at, loads, wanted, like)
         if ready is not None:
             return ready
-    if counted != wanted:
+    if counted != wanted and shared is None:
         raise Faults(_misfit(drawing, freedom(chain, at), wanted))
+    if shared is not None:
+        chain = Chain(moving, drawing.joints, coordinate, drawing.size, sharing=shared)
     if coordinate is None and wanted:
         way = motion_of(chain, at)
         k = int(np.argmax(np.abs(way)))
         coordinate = Place(k // 3 + 1, k % 3)
-        chain = Chain(moving, drawing.joints, coordinate, drawing.size)
+        chain = chain.driven_by(coordinate)
     if like is not None:
         chain.share_plans(like.chain)
     try:
@@ -196,9 +202,7 @@ def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
         faults.append(Fault(("members", movers[0] if movers else "ground"), what, cure))
     if found.excess:
         what = f"held {found.excess} time{'s' if found.excess > 1 else ''} more than needed, among joints {joints}"
-        faults.append(
-            Fault(("members",), what, "turn one of these pins into a slot along the line, or leave one joint out")
-        )
+        faults.append(Fault(("members",), what, CURE))
     if found.free < wanted:
         faults.append(
             Fault(("members",), f"nothing can move, yet {driven} wants one degree of freedom",

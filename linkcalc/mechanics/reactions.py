@@ -13,7 +13,7 @@ from typing import Any
 import numpy as np
 
 from linkcalc.mechanics.chain import Chain
-from linkcalc.mechanics.pushing import Acting, Pushing, strength
+from linkcalc.mechanics.pushing import Acting, Pushing, sized_pushers
 from linkcalc.parts.contract import TURN, Joint, Push, X, Y
 from linkcalc.parts.pose import Poses, Value
 
@@ -174,13 +174,3 @@ def _times(value: Value, m: Value) -> Value:
 
 def _sum(a: Value, b: Value) -> Value:
     return b if isinstance(a, float) and a == 0.0 else a + b
-
-
-def sized_pushers(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
-    """Every pusher with the strength it has in each case."""
-    for acting in pushing.effort:
-        yield acting, (acting.factor * effort if len(pushing.effort) > 1 else effort)
-    for acting in pushing.load:
-        yield acting, load
-    for acting in pushing.rest:
-        yield acting, strength([acting], at)

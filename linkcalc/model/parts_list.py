@@ -14,6 +14,7 @@ from linkcalc.parts.contract import Joint, Pusher, Site, Value
 from linkcalc.parts.joints.pin import PinJoint, StretchJoint
 from linkcalc.parts.lines import exact
 from linkcalc.parts.loads.weight import WeightPush
+from linkcalc.parts.stiff import shares
 
 if TYPE_CHECKING:
     from linkcalc.model.sketch import Drawing
@@ -46,12 +47,13 @@ class PinGroup:
         hub, radius = drawing.site(self.point, self.hub), drawing.friction_radius(self.point)
         own = drawing.mechanism.pins.get(self.point, Pin()).stiffness
         stiffness = None if own is None else drawing.value(own, "stiffness")
+        gives = {"share" if shares(drawing.mechanism.joints) else "stiffness": stiffness}
         for other in self.others:
             site = drawing.site(self.point, other)
             if other in self.links:
                 yield cast("Joint", self._stretching(drawing, site, hub, radius, self.links[other]))
             else:
-                yield cast("Joint", PinJoint(self.point, site, hub, friction_radius=radius, stiffness=stiffness))
+                yield cast("Joint", PinJoint(self.point, site, hub, friction_radius=radius, **gives))
 
     def _stretching(self, drawing: Drawing, a: Site, b: Site, radius: Value, link: str) -> StretchJoint:
         member = drawing.mechanism.members[link]
