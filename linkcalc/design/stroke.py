@@ -134,8 +134,8 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
     nominal = survey.ready
     drawn = alone(nominal.start.at)
     kinds = {}
-    if ready.steps and ready.chain.coordinate is not None:
-        kinds["drive"] = ready.chain.coordinate.kind
+    if ready.steps:
+        kinds["drive"] = ready.drive_kind
     if p.effort:
         kinds["effort"] = p.effort[0].pusher.kind
     if p.load:

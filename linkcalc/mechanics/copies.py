@@ -16,6 +16,7 @@ from linkcalc.mechanics.loose_copies import each_loose_pose
 from linkcalc.mechanics.loose_path import LoosePath
 from linkcalc.mechanics.motion import Closed, along, between, close
 from linkcalc.mechanics.path import Path
+from linkcalc.mechanics.pipeline import solve_standing
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.solved import Solved, joined
 from linkcalc.mechanics.state import Status
@@ -37,6 +38,9 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
     """
     if isinstance(path, LoosePath):
         yield from each_loose_pose(ready, path, drive, checked=checked)
+        return
+    if ready.standing is not None:
+        yield from (solve_standing(ready, np.array([value]), checked=checked) for value in drive)
         return
     coordinate = ready.chain.coordinate
     assert coordinate is not None

@@ -14,7 +14,7 @@ from linkcalc.mechanics.motion import Closed, alone, along, close
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.walk import Node, Walk, walk
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
-from linkcalc.parts.contract import Size
+from linkcalc.parts.contract import Size, Standing
 from linkcalc.parts.pose import Array
 
 
@@ -58,7 +58,10 @@ class Path:
     passed: tuple[tuple[float, float], ...]
 
     @property
-    def mesh(self) -> Mesh:
+    def mesh(self) -> Mesh | None:
+        """Of the nodes; None if nothing moves."""
+        if not self.nodes:
+            return None
         return Mesh(np.array([n.drive for n in self.nodes]), [n.pose for n in self.nodes])
 
     def poses(self, count: int) -> Array:
@@ -69,6 +72,8 @@ class Path:
 def lay_path(ready: Ready) -> Path:
     """Walk through the stroke. Raises OutOfReach, and Faults if it begins at the limit where it should end."""
     stroke = ready.drawing.mechanism.stroke
+    if ready.standing is not None:
+        return _standing(ready, ready.standing)
     coordinate = ready.chain.coordinate
     assert stroke is not None and coordinate is not None
     drawn = float(np.asarray(coordinate.value(ready.start.at)).flat[0])
@@ -90,8 +95,28 @@ def lay_path(ready: Ready) -> Path:
     return Path(drawn, start, stop, first.nodes, _nodes(first, second), limits, _inside(first, second, start, stop))
 
 
+def _standing(ready: Ready, standing: Standing) -> Path:
+    """The way of a load through a mechanism that stands: nothing to walk."""
+    stroke = ready.drawing.mechanism.stroke
+    assert stroke is not None
+    lower, drawn, upper = motion_range(ready)
+    words = {DRAWN: drawn, LOWER: lower, UPPER: upper}
+    start, stop = (
+        words[size] if size in words else float(np.ravel(ready.drawing.value(size, standing.kind))[0])
+        for size in (stroke.start, stroke.stop)
+    )
+    if start == stop:
+        raise Faults(
+            Fault(("stroke", "to"), "the stroke begins at the end of the line where it ends", "give another end")
+        )
+    return Path(drawn, start, stop, (), (), (), ())
+
+
 def motion_range(ready: Ready) -> tuple[float, float, float]:
     """Lower limit, drawn value and upper limit of the drive [rad or m]; nan for a limit that is not there."""
+    if ready.standing is not None:
+        drawn, span = (np.ravel(v)[0] for v in (ready.standing.value(ready.start.at), ready.standing.span))
+        return 0.0, float(drawn), float(span)
     coordinate = ready.chain.coordinate
     assert coordinate is not None
     drawn = float(np.ravel(coordinate.value(ready.start.at))[0])

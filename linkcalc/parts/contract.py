@@ -17,8 +17,8 @@ from typing import Protocol
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
-    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Poses",
-    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Spread", "Told", "Travelled", "Value", "X", "Y",
+    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Moved",
+    "Poses", "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Standing", "Told", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -131,6 +131,9 @@ class Sketch(Protocol):
 
     def hauled(self, name: str) -> Hauled:
         """the rope of that name, to draw it in at its hauling end"""
+
+    def moved(self, name: str) -> Moved:
+        """the load of that name that moves along a line"""
 
 
 @dataclass(frozen=True, eq=False)
@@ -251,6 +254,18 @@ class Hauled(Protocol):
     def mark(self, at: Poses) -> Mark: ...
 
 
+class Moved(Protocol):
+    """A pusher that stands along a line, where the poses' ``places`` say.
+
+    place  [m] how far along it stands as drawn; span  [m] the length of the line
+    """
+
+    @property
+    def place(self) -> Value: ...
+    @property
+    def span(self) -> Value: ...
+
+
 class Pusher(Protocol):
     """Something that pushes: a force, torque, weight or pair.
 
@@ -354,3 +369,22 @@ class Coordinate(Protocol):
 
     def hold(self, target: Value) -> Drive:
         """the row that keeps it at a target (1, variant, pose)"""
+
+
+class Standing(Protocol):
+    """A coordinate that moves no member, but a load: the mechanism stands as drawn while it is stepped. Its part and
+    itself say ``stands = True``.
+
+    kind  "length"; span  [m] how far it may go, from nothing
+    """
+
+    @property
+    def kind(self) -> str: ...
+    @property
+    def span(self) -> Value: ...
+
+    def value(self, at: Poses) -> Value:
+        """[m]"""
+
+    def put(self, at: Poses, place: Value) -> Poses:
+        """the same poses with another value of it"""

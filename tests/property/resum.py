@@ -17,6 +17,7 @@ from linkcalc.model.mechanism import GROUND, Case, Member
 from linkcalc.model.sketch import Drawing
 from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.haul import HaulForce
+from linkcalc.parts.loads.moving import MovingForce, MovingMass
 from linkcalc.parts.loads.pair import Pair
 from linkcalc.parts.loads.torque import Torque
 from linkcalc.parts.loads.weight import Weight
@@ -130,7 +131,7 @@ class Resum:
     def _strength(self, load: Any, factors: list[float]) -> np.ndarray:
         """Size of a load with its factor in each case; a hung mass pulls as the gravity of the case makes it."""
         each = np.reshape(np.array(factors, float), (-1, 1, 1))
-        if isinstance(load, Weight):
+        if isinstance(load, (Weight, MovingMass)):
             size = self.drawing.value(load.mass, "mass") * self._gravity()[2]
             return np.broadcast_to(each * size, self.shape)
         size = self.drawing.value(load.size, "moment" if isinstance(load, Torque) else "force")
@@ -163,6 +164,8 @@ class Resum:
             case Force():
                 ux, uy = self._direction(load)
                 yield self.bearer(load.at, load.on), *self.somewhere(load.at), size * ux, size * uy, none
+            case MovingForce() | MovingMass():
+                yield self._moving(load, size)
             case HaulForce():
                 return  # the rope tells what it does
             case Torque():
@@ -178,6 +181,23 @@ class Resum:
                 yield from self._couple(load.turned, size)
             case _:
                 raise TypeError(f"not a load: {load}")
+
+    def _moving(self, load: MovingForce | MovingMass, size: np.ndarray) -> Wrench:
+        """At its place along its line, which the stroke may step."""
+        m, (first, second) = self.mechanism, load.way
+        who = load.on or next(n for n in self.carriers(first) if n in self.carriers(second))
+        (ax, ay), (bx, by) = self.place(first, who), self.place(second, who)
+        stepped = {"effort": m.effort, "load": m.load, **m.loads}.get(getattr(m.stroke and m.stroke.along, "place", ""))
+        way = self.answer.drive if stepped is load else self.drawing.value(load.place, "length")
+        part = way / np.hypot(bx - ax, by - ay)
+        if isinstance(load, MovingMass):
+            ux, uy, _ = self._gravity()
+        else:
+            turn = self.answer.turn[self.index[load.turns_with]] if load.turns_with else np.zeros(self.shape)
+            angle = self.drawing.value(load.direction, "angle") + np.broadcast_to(turn, self.shape)
+            ux, uy = np.cos(angle), np.sin(angle)
+        x, y = ax + part * (bx - ax), ay + part * (by - ay)
+        return who, x, y, size * ux, size * uy, np.zeros(self.shape)
 
     def _couple(self, members: tuple[str, str], size: np.ndarray) -> Iterator[Wrench]:
         none = np.zeros(self.shape)

@@ -204,6 +204,13 @@ size = 5
 at = "E"
 along = ["A", "E"]
 size = 5
+[loads.wheel]
+moves_along = ["B", "C"]
+direction = -80
+size = 6
+[loads.trolley]
+mass_along = ["B", "C"]
+mass = 6
 [loads.coil]
 spring = ["A", "E"]
 rate = 1
