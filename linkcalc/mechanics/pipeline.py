@@ -13,7 +13,7 @@ from linkcalc.mechanics.mesh import Mesh
 from linkcalc.mechanics.motion import close
 from linkcalc.mechanics.path import Path, lay_path, motion_range
 from linkcalc.mechanics.prepare import Ready
-from linkcalc.mechanics.reactions import Side, reactions
+from linkcalc.mechanics.reactions import Side, on_one, reactions
 from linkcalc.mechanics.solved import Solved
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Poses
@@ -91,6 +91,7 @@ def solve_drawn(ready: Ready) -> Solved:
 
 
 def sides(ready: Ready, solved: Solved) -> list[Side]:
-    """What every joint does to every member in a solved batch."""
+    """What every joint does to every member in a solved batch; to one plate, where a member stands for several."""
     b = solved.balance
-    return reactions(ready.chain, solved.closed.at, b.multipliers, b.friction, ready.pushing, b.effort, b.load)
+    found = reactions(ready.chain, solved.closed.at, b.multipliers, b.friction, ready.pushing, b.effort, b.load)
+    return on_one(found, ready.plates) if max(ready.plates) > 1 else found

@@ -48,6 +48,12 @@ class Ready:
     standing: Standing | None = None
 
     @property
+    def plates(self) -> list[int]:
+        """How many equal plates each member stands for, the ground first."""
+        members = self.drawing.mechanism.members
+        return [members[name].copies if name in members else 1 for name in self.drawing.members]
+
+    @property
     def drive_kind(self) -> str:
         """Kind of what is stepped, "length" or "angle"; "" without a stroke."""
         stepped = self.standing or self.chain.coordinate

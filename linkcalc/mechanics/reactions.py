@@ -7,7 +7,7 @@ several members the hub's force follows from the balance of the pin itself, whic
 from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any
 
 import numpy as np
@@ -32,6 +32,7 @@ class Side:
     part_of      name of the joint that this is one of several sides of, each with its own name ("hoist" of a side
                  "hoist at P"); "" otherwise
     carried      [N] of such a joint what it carries throughout (the tension of a rope)
+    copies       how many equal plates the member stands for; the force is that on one of them
     """
 
     joint: str
@@ -46,6 +47,7 @@ class Side:
     own_point: bool
     part_of: str = ""
     carried: Value = 0.0
+    copies: int = 1
 
 
 def reactions(
@@ -113,6 +115,22 @@ def reactions(
         moment = turning.get(name, 0.0)
         sides.insert(last + 1, Side(name, joint.word, member, "", fx, fy, moment, x, y, True))
     return sides
+
+
+def on_one(sides: Sequence[Side], copies: Sequence[int]) -> list[Side]:
+    """Sides as one plate of each member feels them; copies: how many each stands for, the ground first."""
+    return [
+        side
+        if side.member < 0 or copies[side.member] == 1
+        else replace(
+            side,
+            fx=side.fx / copies[side.member],
+            fy=side.fy / copies[side.member],
+            moment=side.moment / copies[side.member],
+            copies=copies[side.member],
+        )
+        for side in sides
+    ]
 
 
 def _rubbed(chain: Chain, at: Poses, friction: Sequence[Value]) -> dict[int, list[Push]]:

@@ -90,6 +90,8 @@ class Member:
     material     name of its material; factor against its yield stress
     bend_radius  of the middle line at the corners of its path
     ends, ends_across  of a two-force member: how its ends are held against buckling, in the plane and out of it
+    copies  how many equal plates side by side it stands for: mass and stiffness are those of one, and so are the
+            forces on it that answers tell; all of them together are what holds and weighs
     """
 
     points: tuple[str, ...] = fields.names("point", "the points it carries, in order", least=0, most=None)
@@ -112,6 +114,7 @@ class Member:
     ends_across: Size | None = fields.size(
         "number", "the same out of the plane; as in the plane if left out", None, sign="plus", words=ENDS
     )
+    copies: int = fields.count("how many equal plates side by side it stands for", 1, most=100)
 
     short = "points"
 

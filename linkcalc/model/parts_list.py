@@ -62,7 +62,7 @@ class PinGroup:
         length = np.hypot(x1 - x0, y1 - y0)
         tx, ty = exact((x1 - x0) / length), exact((y1 - y0) / length)
         assert member.stiffness is not None
-        stiffness = drawing.value(member.stiffness, "stiffness")
+        stiffness = member.copies * drawing.value(member.stiffness, "stiffness")
         return StretchJoint(
             self.point, a, b, friction_radius=radius, stiffness=stiffness, link=drawing.member(link), tx=tx, ty=ty
         )
@@ -188,7 +188,7 @@ def assemble(drawing: Drawing) -> Assembly:
     for name, member in mechanism.members.items():
         if member.mass is not None and name != GROUND:
             full = f"weight of {name}"
-            mass = drawing.value(member.mass, "mass")
+            mass = member.copies * drawing.value(member.mass, "mass")
             weight = WeightPush(full, drawing.mass_site(name), mass, lines=drawing.mass_lines(name))
             pushers["", full] = cast("Pusher", weight)
     for case_name, case in mechanism.cases.items():

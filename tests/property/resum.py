@@ -96,7 +96,8 @@ class Resum:
 
     def joints(self) -> Iterator[Wrench]:
         for k, b in enumerate(self.answer.bearings):
-            yield b.member, *self.joint_place(b.joint, b.word), *self.answer.force[k], self.answer.moment[k]
+            force, moment = b.copies * self.answer.force[k], b.copies * self.answer.moment[k]
+            yield b.member, *self.joint_place(b.joint, b.word), *force, moment
 
     def loads(self) -> Iterator[Wrench]:
         """Everything that pushes, with the strength it has in each case."""
@@ -120,7 +121,7 @@ class Resum:
                 yield from self.wrenches(load, self._told(load, name) if told else self._strength(load, list(only)))
         for name, member in m.members.items():
             if member.mass is not None and name != GROUND:
-                mass = self.drawing.value(member.mass, "mass")
+                mass = member.copies * self.drawing.value(member.mass, "mass")
                 ux, uy, field = (np.broadcast_to(v, self.shape) for v in self._gravity())
                 at = self.carried(self._centre(member), name)
                 yield name, *at, mass * field * ux, mass * field * uy, np.zeros(self.shape)
@@ -249,7 +250,9 @@ def unbalanced(answer: StrokeAnswer) -> dict[str, float]:
             out[who] = _worst(left[answered])
     for point in table.pins:
         # what the pin gives its members is what it takes itself: its loads, and slots that guide it
-        felt = [answer.force[k] for k, b in enumerate(answer.bearings) if (b.joint, b.word) == (point, "pin")]
+        felt = [
+            b.copies * answer.force[k] for k, b in enumerate(answer.bearings) if (b.joint, b.word) == (point, "pin")
+        ]
         own = sums.get(f"pin {point}", [np.zeros(table.shape)] * 3)
         left = np.hypot(sum(f[0] for f in felt) - own[0], sum(f[1] for f in felt) - own[1]) / largest
         out[f"pin {point}"] = _worst(left[answered])
