@@ -544,6 +544,18 @@ direction = -70
 turns_with = "lever"
 place = 30
 size = 45
+[loads.bed]
+spread = ["Q", "K"]
+intensity = 0.2
+intensity_end = 0.5
+direction = -60
+turns_with = "table"
+[loads.snow]
+spread = ["O", "P"]
+on = "lever"
+intensity = 0.3
+direction = -90
+per = "projection"
 [stroke]
 place = "load"
 from = 10
@@ -597,6 +609,8 @@ SAMPLES = (
     Sample("coordinate", "distance", "", SLOTTED),
     Sample("load", "mass_along", "load", GANTRY),
     Sample("load", "moves_along", "roller", GANTRY),
+    Sample("load", "spread", "bed", GANTRY),
+    Sample("load", "spread", "snow", GANTRY),
     Sample("coordinate", "place", "", GANTRY),
     Sample("construction", "x", "A", RAM),
     Sample("construction", "from", "B", RAM),

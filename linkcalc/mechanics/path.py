@@ -14,7 +14,8 @@ from linkcalc.mechanics.motion import Closed, alone, along, close
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.walk import Node, Walk, walk
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
-from linkcalc.parts.contract import Size, Standing
+from linkcalc.parts.along import Standing
+from linkcalc.parts.contract import Size
 from linkcalc.parts.pose import Array
 
 

@@ -19,7 +19,7 @@ from linkcalc.mechanics.pushing import Pushing, column, pushing
 from linkcalc.mechanics.settle import acted_on, come_to_rest
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
 from linkcalc.model.sketch import Drawing, drawn
-from linkcalc.parts.contract import Standing
+from linkcalc.parts.along import Standing
 from linkcalc.parts.pose import Mask, Poses, Value
 
 

@@ -18,6 +18,7 @@ from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.haul import HaulForce
 from linkcalc.parts.loads.moving import MovingForce, MovingMass
 from linkcalc.parts.loads.pair import Pair
+from linkcalc.parts.loads.spread import SpreadForce
 from linkcalc.parts.loads.torque import Torque
 from linkcalc.parts.loads.weight import Weight
 
@@ -136,7 +137,10 @@ def _weight(load: Weight, item: Item, carried: Carried, gather: Gather) -> None:
 
 @_check.register(MovingForce)
 @_check.register(MovingMass)
+@_check.register(SpreadForce)
 def _moving(load: Any, item: Item, carried: Carried, gather: Gather) -> None:
+    if getattr(load, "turns_with", None) is not None and load.direction is None:
+        gather.add((*item, "turns_with"), "there is no direction to be turned", "it goes with 'direction' only")
     if load.way[0] == load.way[1]:
         _line(load.way, (*item, load.word), gather)
         return
@@ -207,7 +211,7 @@ def _turn(stroke: Turn, item: Item, carried: Carried, gather: Gather) -> None:
 def _place(stroke: Place, item: Item, carried: Carried, gather: Gather) -> None:
     m = carried.mechanism
     load = {"effort": m.effort, "load": m.load, **m.loads}.get(stroke.place)
-    if load is not None and not hasattr(load, "way"):
+    if load is not None and not hasattr(load, "place"):
         wanted = "a load of the kind 'moves_along' or 'mass_along' is wanted"
         gather.add((*item, "place"), f"{stroke.place} does not move along a line", wanted)
 

@@ -50,6 +50,7 @@ class Units:
     acceleration: str = _unit("acceleration", "m/s^2")
     torsion_stiffness: str = _unit("torsion stiffness", "N*m/deg")
     pressure: str = _unit("pressure", "bar")
+    line_load: str = _unit("line load", "N/mm")
     volume: str = _unit("volume", "cm^3")
     temperature: str = fields.choice(("degC", "degF", "K"), "scale of a bare temperature", "degC")
     number = ""

@@ -21,7 +21,8 @@ from linkcalc.model.functions import Quantity
 from linkcalc.model.mechanism import GROUND, Mechanism, Member, Pin
 from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
 from linkcalc.model.units import KINDS, show
-from linkcalc.parts.contract import Hauled, Joint, Moved, Poses, Pusher, Site, Size, Travelled, Value
+from linkcalc.parts.along import Moved
+from linkcalc.parts.contract import Hauled, Joint, Poses, Pusher, Site, Size, Travelled, Value
 from linkcalc.words import nearest
 
 

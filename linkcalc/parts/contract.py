@@ -14,11 +14,12 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from typing import Protocol
 
+from linkcalc.parts.along import Moved
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
-    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Moved",
-    "Poses", "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Standing", "Told", "Travelled", "Value", "X", "Y",
+    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Poses",
+    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Told", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -254,18 +255,6 @@ class Hauled(Protocol):
     def mark(self, at: Poses) -> Mark: ...
 
 
-class Moved(Protocol):
-    """A pusher that stands along a line, where the poses' ``places`` say.
-
-    place  [m] how far along it stands as drawn; span  [m] the length of the line
-    """
-
-    @property
-    def place(self) -> Value: ...
-    @property
-    def span(self) -> Value: ...
-
-
 class Pusher(Protocol):
     """Something that pushes: a force, torque, weight or pair.
 
@@ -369,22 +358,3 @@ class Coordinate(Protocol):
 
     def hold(self, target: Value) -> Drive:
         """the row that keeps it at a target (1, variant, pose)"""
-
-
-class Standing(Protocol):
-    """A coordinate that moves no member, but a load: the mechanism stands as drawn while it is stepped. Its part and
-    itself say ``stands = True``.
-
-    kind  "length"; span  [m] how far it may go, from nothing
-    """
-
-    @property
-    def kind(self) -> str: ...
-    @property
-    def span(self) -> Value: ...
-
-    def value(self, at: Poses) -> Value:
-        """[m]"""
-
-    def put(self, at: Poses, place: Value) -> Poses:
-        """the same poses with another value of it"""

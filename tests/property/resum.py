@@ -19,6 +19,7 @@ from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.haul import HaulForce
 from linkcalc.parts.loads.moving import MovingForce, MovingMass
 from linkcalc.parts.loads.pair import Pair
+from linkcalc.parts.loads.spread import SpreadForce
 from linkcalc.parts.loads.torque import Torque
 from linkcalc.parts.loads.weight import Weight
 
@@ -132,6 +133,8 @@ class Resum:
     def _strength(self, load: Any, factors: list[float]) -> np.ndarray:
         """Size of a load with its factor in each case; a hung mass pulls as the gravity of the case makes it."""
         each = np.reshape(np.array(factors, float), (-1, 1, 1))
+        if isinstance(load, SpreadForce):
+            return np.broadcast_to(each, self.shape)
         if isinstance(load, (Weight, MovingMass)):
             size = self.drawing.value(load.mass, "mass") * self._gravity()[2]
             return np.broadcast_to(each * size, self.shape)
@@ -165,6 +168,8 @@ class Resum:
             case Force():
                 ux, uy = self._direction(load)
                 yield self.bearer(load.at, load.on), *self.somewhere(load.at), size * ux, size * uy, none
+            case SpreadForce():
+                yield from self._spread(load, size)
             case MovingForce() | MovingMass():
                 yield self._moving(load, size)
             case HaulForce():
@@ -199,6 +204,24 @@ class Resum:
             ux, uy = np.cos(angle), np.sin(angle)
         x, y = ax + part * (bx - ax), ay + part * (by - ay)
         return who, x, y, size * ux, size * uy, np.zeros(self.shape)
+
+    def _spread(self, load: SpreadForce, factor: np.ndarray) -> Iterator[Wrench]:
+        """By Simpson's rule, which is exact here: force and arm are straight lines over the length."""
+        first, second = load.way
+        who = load.on or next(n for n in self.carriers(first) if n in self.carriers(second))
+        (ax, ay), (bx, by) = self.place(first, who), self.place(second, who)
+        length = np.hypot(bx - ax, by - ay)
+        tx, ty = (bx - ax) / length, (by - ay) / length
+        ux, uy = -ty, tx
+        if load.direction is not None:
+            turn = self.answer.turn[self.index[load.turns_with]] if load.turns_with else np.zeros(self.shape)
+            angle = self.drawing.value(load.direction, "angle") + np.broadcast_to(turn, self.shape)
+            ux, uy = np.cos(angle), np.sin(angle)
+        seen = np.abs(tx * uy - ty * ux) if load.per == "projection" else 1.0
+        ends = [self.drawing.value(q, "line load") for q in (load.intensity, load.intensity_end or load.intensity)]
+        for part, weight in ((0.0, 1 / 6), (0.5, 4 / 6), (1.0, 1 / 6)):
+            force = factor * seen * weight * length * (ends[0] + part * (ends[1] - ends[0]))
+            yield who, ax + part * (bx - ax), ay + part * (by - ay), force * ux, force * uy, np.zeros(self.shape)
 
     def _couple(self, members: tuple[str, str], size: np.ndarray) -> Iterator[Wrench]:
         none = np.zeros(self.shape)

@@ -5,7 +5,8 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import Moved, Poses, Sketch, Value
+from linkcalc.parts.along import Moved
+from linkcalc.parts.contract import Poses, Sketch, Value
 from linkcalc.words import word
 
 

@@ -123,6 +123,13 @@ class MovingPush:
         line = self.line
         return Site(line.start.member, line.start.u + self.place * line.eu, line.start.v + self.place * line.ev)
 
+    @property
+    def sites(self) -> tuple[Site, ...]:
+        return (self.site,)
+
+    def arms(self, at: Poses) -> tuple[tuple[Value, Value], ...]:
+        return (self.line.arm(at, self._place(at)),)
+
     def _place(self, at: Poses) -> Value:
         return at.places.get(self.name, self.place)
 
