@@ -119,9 +119,7 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
         raise Faults(_misfit(drawing, found, wanted)) from None
     if not bool(np.any(start.fine)):
         raise Faults(Fault(("points",), "the drawing pose does not close", "check the points that slots guide"))
-    return Ready(
-        drawing, chain, start, loads, mechanism.stroke is not None, _undrawn(drawing), standing=standing
-    )
+    return Ready(drawing, chain, start, loads, mechanism.stroke is not None, _undrawn(drawing), standing=standing)
 
 
 def _settled(

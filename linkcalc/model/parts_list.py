@@ -47,13 +47,16 @@ class PinGroup:
         hub, radius = drawing.site(self.point, self.hub), drawing.friction_radius(self.point)
         own = drawing.mechanism.pins.get(self.point, Pin()).stiffness
         stiffness = None if own is None else drawing.value(own, "stiffness")
-        gives = {"share" if shares(drawing.mechanism.joints) else "stiffness": stiffness}
+        share = None
+        if shares(drawing.mechanism.joints):
+            stiffness, share = None, stiffness
         for other in self.others:
             site = drawing.site(self.point, other)
             if other in self.links:
                 yield cast("Joint", self._stretching(drawing, site, hub, radius, self.links[other]))
             else:
-                yield cast("Joint", PinJoint(self.point, site, hub, friction_radius=radius, **gives))
+                pin = PinJoint(self.point, site, hub, friction_radius=radius, stiffness=stiffness, share=share)
+                yield cast("Joint", pin)
 
     def _stretching(self, drawing: Drawing, a: Site, b: Site, radius: Value, link: str) -> StretchJoint:
         member = drawing.mechanism.members[link]

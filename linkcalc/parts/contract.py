@@ -182,7 +182,7 @@ class Joint(Protocol):
     One with teeth has ``place(at)``, where its force is told, for that moves on its members: (x, y) [m]; ``grain``:
     its gap is known but for multiples of that [m]; ``astray(at)``: how far its centres have moved apart [m].
 
-    One that can share a force with joints that hold the same has, besides, ``share``: its stiffness [N/m], None if untold.
+    One that can share a force with joints that hold the same has, besides, ``share``: its stiffness [N/m], or None.
     Its angular row is as stiff as its ``turning_stiffness`` [N m/rad], or else as two halves of that stiffness are at a
     ``lever`` [m] each; None: at half the extent of the drawing.
 

@@ -8,7 +8,6 @@ from typing import Any
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Sketch
 
-
 _TEXT = "how stiff it is, by which it shares a force with others that hold the same"
 
 

@@ -15,8 +15,8 @@ from linkcalc.report import style
 from linkcalc.report.blocks import Item
 from linkcalc.report.diagram_shapes import DIAGRAM_SHAPES
 from linkcalc.report.gear_shapes import GEAR_SHAPES
-from linkcalc.report.pen import Pen, Spot
 from linkcalc.report.load_shapes import LOAD_SHAPES
+from linkcalc.report.pen import Pen, Spot
 from linkcalc.report.spring_shapes import SPRING_SHAPES
 
 

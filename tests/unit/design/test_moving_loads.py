@@ -270,6 +270,12 @@ def test_a_load_on_the_ground_is_turned_down() -> None:
         parse(text.replace('["A", "C"]\ndirection', '["A", "D"]\ndirection'))
 
 
+def test_what_settles_anew_at_every_place_is_turned_down() -> None:
+    text = RUNWAY + "[pins.A]\nstiffness = 900\n"
+    with pytest.raises(Faults, match="the mechanism gives or has free members, which settle anew"):
+        stroke(parse(text))
+
+
 def test_a_mechanism_that_nothing_holds_is_turned_down() -> None:
     text = RUNWAY.replace('[slots.roller]\npoint = "B"\nalong = 0\n', "")
     with pytest.raises(Faults, match="1 degree of freedom: beam can move; give the model an"):
