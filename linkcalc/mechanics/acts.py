@@ -41,7 +41,7 @@ class Act:
 
 
 def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[Act]]:
-    """Index of a moving member -> everything that acts on it, or on one plate of it: joints first, then loads, weights."""
+    """Index of a moving member -> everything that acts on it (on one plate of it): joints, loads, weights."""
     at, pins, plates = solved.closed.at, ready.drawing.pins, ready.plates
     out: dict[int, list[Act]] = {k: [] for k in range(1, len(ready.drawing.members))}
     for side in sides:

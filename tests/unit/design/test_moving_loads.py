@@ -5,7 +5,7 @@ from __future__ import annotations
 import numpy as np
 import pytest
 
-from linkcalc import Faults, parse, stroke
+from linkcalc import Faults, members, parse, stroke
 from linkcalc.design.check import check_model
 from linkcalc.design.copies import copies
 from tests.property.resum import unbalanced
@@ -280,3 +280,12 @@ def test_a_mechanism_that_nothing_holds_is_turned_down() -> None:
     text = RUNWAY.replace('[slots.roller]\npoint = "B"\nalong = 0\n', "")
     with pytest.raises(Faults, match="1 degree of freedom: beam can move; give the model an"):
         stroke(parse(text))
+
+
+def test_bending_under_a_moving_wheel() -> None:
+    """Largest moment of a beam under one wheel: P l/4 with the wheel in the middle (common practice)."""
+    answer = members(parse(RUNWAY.replace("to = 7000\nposes = 8", "to = 6000\nposes = 21")))
+    (beam,) = answer.members
+    assert beam.bending is not None
+    assert beam.bending.value == pytest.approx(20e3 * 6 / 4, rel=1e-9)
+    assert beam.bending.drive == pytest.approx(3.0, abs=1e-6)

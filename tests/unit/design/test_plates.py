@@ -7,10 +7,11 @@ import json
 import numpy as np
 import pytest
 
-from linkcalc import Faults, parse, stroke
+from linkcalc import Faults, members, parse, stroke
 from linkcalc.report.edge import Edge
 from linkcalc.report.free_body import free_body, free_body_table
 from linkcalc.report.json import as_json
+from linkcalc.report.members_blocks import members_blocks
 from linkcalc.report.stroke_blocks import stroke_blocks
 from linkcalc.report.stroke_table import stroke_table
 from linkcalc.report.text import as_text
@@ -117,6 +118,32 @@ guide = "moment at guide <= 5 N*m"
     answer = stroke(parse(text))
     assert answer.moment_on("guide", "ram")[0, 0, 0] == pytest.approx(80 * 0.05 / 2, rel=1e-12)
     assert answer.verdicts[0].worst == pytest.approx(4.0, rel=1e-12)
+
+
+def test_inner_forces_are_those_of_one_plate() -> None:
+    """A beam under an even load w has w l/2 and w l²/8; each of two plates half, its own weight included."""
+    text = """
+[points]
+A = [0, 0]
+B = [6000, 0]
+[members]
+ground = ["A"]
+beam = { points = ["A", "B"], mass = 12, copies = 2 }
+[slots.roller]
+point = "B"
+along = 0
+[loads.bed]
+spread = ["A", "B"]
+intensity = "2 kN/m"
+direction = -90
+"""
+    answer = members(parse(text))
+    (beam,) = answer.members
+    total = 2e3 * 6 / 2 + 12 * 9.80665
+    assert beam.shear is not None and beam.bending is not None
+    assert abs(beam.shear.value) == pytest.approx(total / 2, rel=1e-9)
+    assert beam.bending.value == pytest.approx(total * 6 / 8, rel=1e-9)
+    assert "beam (1 of 2)" in as_text(members_blocks(answer))
 
 
 @pytest.mark.parametrize(
