@@ -519,6 +519,51 @@ size = 120
 """
 """A bar built in at one end."""
 
+GANTRY = """
+[points]
+O = [0, 0]
+P = { from = "O", distance = 120, angle = 15 }
+H = { from = "O", distance = 70, angle = 160 }
+Q = [240, -20]
+K = [60, 90]
+[members]
+ground = ["O"]
+lever = { points = ["O", "P", "H"], mass = 2 }
+table = { points = ["P", "Q", "K"], mass = 3 }
+[slots.floor]
+point = "Q"
+along = -10
+[effort]
+torque_on = "lever"
+[load]
+mass_along = ["P", "Q"]
+mass = 25
+[loads.roller]
+moves_along = ["H", "P"]
+direction = -70
+turns_with = "lever"
+place = 30
+size = 45
+[loads.bed]
+spread = ["Q", "K"]
+intensity = 0.2
+intensity_end = 0.5
+direction = -60
+turns_with = "table"
+[loads.snow]
+spread = ["O", "P"]
+on = "lever"
+intensity = 0.3
+direction = -90
+per = "projection"
+[stroke]
+place = "load"
+from = 10
+to = 95
+poses = 7
+"""
+"""A table from a lever to the floor, with goods that are moved along it, and a roller on the lever."""
+
 SAMPLES = (
     Sample("joint", "contact", "work", CLAMP),
     Sample("joint", "contact", "rest", CLAMP),
@@ -562,6 +607,11 @@ SAMPLES = (
     Sample("coordinate", "travel", "", RAM),
     Sample("coordinate", "turn", "", COLLAR),
     Sample("coordinate", "distance", "", SLOTTED),
+    Sample("load", "mass_along", "load", GANTRY),
+    Sample("load", "moves_along", "roller", GANTRY),
+    Sample("load", "spread", "bed", GANTRY),
+    Sample("load", "spread", "snow", GANTRY),
+    Sample("coordinate", "place", "", GANTRY),
     Sample("construction", "x", "A", RAM),
     Sample("construction", "from", "B", RAM),
     Sample("construction", "meets", "C", RAM),

@@ -29,6 +29,11 @@ def quantities(answer: Any) -> dict[str, Mapping[str, Any]]:
     return {f.name: f.metadata for f in fields(answer) if "quantity" in f.metadata}
 
 
+def plate(member: str, copies: int) -> str:
+    """A member in a table: "strut", or "strut (1 of 2)" where what is told is that of one of several plates."""
+    return f"{member} (1 of {copies})" if copies > 1 else member
+
+
 BATCH = ("case", "variant", "pose")
 
 
@@ -39,11 +44,18 @@ class Bearing:
     joint   name of the joint (a pin is named by its point)
     word    its kind: "pin", "slot", "slide", "weld"
     member  the member that feels it, "ground" included
+    copies  how many equal plates the member stands for; the force is that on one of them
     """
 
     joint: str
     word: str
     member: str
+    copies: int = 1
+
+    @property
+    def text(self) -> str:
+        """The member for a table: "strut", or "strut (1 of 2)" where the force is that on one of several plates."""
+        return plate(self.member, self.copies)
 
 
 @dataclass(frozen=True)

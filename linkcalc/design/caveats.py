@@ -32,6 +32,7 @@ def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple
         *_off_track(curves),
         *_out_of_mesh(curves),
         *_passed(curves, path),
+        *_shared(curves),
         *_held(curves, events),
         *_free(curves, events),
         *limits(curves),
@@ -139,6 +140,20 @@ def _passed(curves: Curves, path: Path | None) -> Iterator[Caveat]:
             "stroke",
             f"between {where} the stroke passes a change point: the mechanism could also go on another way from there",
         )
+
+
+def _shared(curves: Curves) -> Iterator[Caveat]:
+    """Joints among which forces are shared."""
+    sharing = curves.survey.ready.chain.sharing
+    if sharing is None:
+        return
+    times = "once" if sharing.excess == 1 else f"{sharing.excess} times"
+    by = "by the stiffness given" if sharing.given else "as if all were equally stiff"
+    yield Caveat(
+        ", ".join(sharing.names),
+        f"held {times} more than needed: forces are shared among these joints {by}; tolerances, clearances and the "
+        "give of the members decide the real shares",
+    )
 
 
 def _held(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:

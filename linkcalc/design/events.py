@@ -117,7 +117,7 @@ def _extremes(curves: Curves, wanted: Extremes) -> Iterator[Event]:
 
 def _wanted(curves: Curves) -> Iterator[Wanted]:
     pushing = curves.survey.ready.pushing
-    given = {"load"} if pushing.effort_asked else {"effort"}
+    given = {"effort"} if pushing.load_asked else {"load"}
     joints = dict.fromkeys(s.joint for s in curves.survey.sides)
     for case in range(len(pushing.cases)):
         for name in _BOTH_WAYS:

@@ -8,6 +8,6 @@ from linkcalc.model.units import show
 
 def place(ready: Ready, value: float) -> str:
     """A value of the stroke for a sentence: "35 deg"; the drawing pose, if that is all there is."""
-    if not ready.steps or ready.chain.coordinate is None:
+    if not ready.steps:
         return "the drawing pose"
-    return show(value, ready.chain.coordinate.kind, ready.drawing.mechanism.units)
+    return show(value, ready.drive_kind, ready.drawing.mechanism.units)

@@ -134,8 +134,8 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
     nominal = survey.ready
     drawn = alone(nominal.start.at)
     kinds = {}
-    if ready.steps and ready.chain.coordinate is not None:
-        kinds["drive"] = ready.chain.coordinate.kind
+    if ready.steps:
+        kinds["drive"] = ready.drive_kind
     if p.effort:
         kinds["effort"] = p.effort[0].pusher.kind
     if p.load:
@@ -149,7 +149,7 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         cases=p.cases,
         kinds=kinds,
         drive_name=drive_name(stroke_part.along) if stroke_part else "",
-        bearings=tuple(Bearing(s.joint, s.word, survey.side_name(s)) for s in shown.sides),
+        bearings=tuple(Bearing(s.joint, s.word, survey.side_name(s), s.copies) for s in shown.sides),
         two_force=tuple(_two_force(survey)),
         ropes=survey.ropes,
         drive=_full(drive, (1, drive.shape[1], shape[2])),

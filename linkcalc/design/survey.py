@@ -119,11 +119,13 @@ class Survey:
                 out.append(Quantity(f"moment at {side.joint} on {self.side_name(side)}", "moment", _moment(k)))
         loaded = {pin for a in p.all for pin in a.pusher.on_pins} | {s.pin for s in self.sides}
         for joint, ks in joints.items():
-            # the two sides of a joint feel the same force, unless a load on the pin itself stands between them
-            alike = len(ks) == 2 and joint not in loaded
+            # the two sides of a joint feel the same force, unless a load on the pin itself stands between them, or one
+            # of the members is several plates
+            alike = len(ks) == 2 and joint not in loaded and len({self.sides[k].copies for k in ks}) == 1
             out.append(Quantity(f"force at {joint}", "force", _resultant(ks[:1] if alike else ks)))
             turned = [k for k in ks if not isinstance(self.sides[k].moment, float)]
             if turned:
+                turned.sort(key=lambda k: self.sides[k].copies)  # the whole moment, if one member takes it alone
                 out.append(Quantity(f"moment at {joint}", "moment", _moment(turned[0])))
         for rope in self.ropes:
             first = next(k for k, side in enumerate(self.sides) if side.part_of == rope)

@@ -97,10 +97,8 @@ def _inside(curves: Curves, requirement: Requirement, drive: float) -> None:
     slack = 1e-9 * abs(end - start)
     if min(start, end) - slack <= drive <= max(start, end) + slack:
         return
-    coordinate = curves.survey.ready.chain.coordinate
-    assert coordinate is not None
     units = curves.survey.ready.drawing.mechanism.units
-    place, first, last = (show(v, coordinate.kind, units) for v in (drive, start, end))
+    place, first, last = (show(v, curves.survey.ready.drive_kind, units) for v in (drive, start, end))
     what = f"{place} is outside the stroke, which goes from {first} to {last}"
     raise fault(("requirements", requirement.name), what, "name a pose between its ends, or make the stroke longer")
 

@@ -9,7 +9,8 @@ from typing import Any
 import numpy as np
 
 from linkcalc.mechanics.prepare import Ready
-from linkcalc.mechanics.reactions import Side, sized_pushers
+from linkcalc.mechanics.pushing import sized_pushers
+from linkcalc.mechanics.reactions import Side
 from linkcalc.mechanics.solved import Solved
 from linkcalc.parts.contract import Spread
 from linkcalc.parts.pose import Poses, Value
@@ -40,8 +41,8 @@ class Act:
 
 
 def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[Act]]:
-    """Index of a moving member -> everything that acts on it: joints first, then loads and weights."""
-    at, pins = solved.closed.at, ready.drawing.pins
+    """Index of a moving member -> everything that acts on it (on one plate of it): joints, loads, weights."""
+    at, pins, plates = solved.closed.at, ready.drawing.pins, ready.plates
     out: dict[int, list[Act]] = {k: [] for k in range(1, len(ready.drawing.members))}
     for side in sides:
         if side.member > 0:
@@ -49,7 +50,7 @@ def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[
             moment = 0.0 if side.own_point and isinstance(side.moment, float) else side.moment
             one = _own(at, side.member, side.joint, "joint", x, y, side.fx, side.fy, moment, side.own_point)
             out[side.member].append(one)
-    for acting, size in sized_pushers(ready.pushing, at, solved.balance.effort, solved.balance.load):
+    for acting, whole in sized_pushers(ready.pushing, at, solved.balance.effort, solved.balance.load):
         pusher: Any = acting.pusher
         if hasattr(pusher, "through"):
             continue  # the joint has told it
@@ -61,7 +62,7 @@ def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[
             if member == 0 or pin in pins:
                 continue
             # a couple has no arm; what a force leaves of its moment about its own place is rounding
-            force = pusher.kind == "force"
+            force, size = pusher.kind == "force", whole / plates[member]
             moment, pinned = (0.0 if force else turning * size), force and not moves
             one = _own(at, member, pusher.name, pusher.word, a, b, fx * size, fy * size, moment, pinned, spread)
             out[member].append(one)

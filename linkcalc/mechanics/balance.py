@@ -16,10 +16,10 @@ from typing import Any
 import numpy as np
 
 from linkcalc.mechanics.batch import tops
-from linkcalc.mechanics.chain import Chain
+from linkcalc.mechanics.chain import Chain, pins_strained
 from linkcalc.mechanics.friction import rub
 from linkcalc.mechanics.motion import Closed, fastest
-from linkcalc.mechanics.pushing import Column, Pushing, add_pushes, column, strength, unknown
+from linkcalc.mechanics.pushing import Column, Pushing, acts, add_pushes, column, sized_pushers, strength, unknown
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Codes, Mask, Value
 
@@ -104,7 +104,8 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
         total = _sum(
             rest, (load, load_unit) if pushing.load else None, (effort, effort_unit) if pushing.effort else None
         )
-        negative = closed.factored.solve(total, transposed=True)
+        beside = pins_strained(chain, at, sized_pushers(pushing, at, effort, load))
+        negative = closed.factored.solve([*total, *beside], transposed=True)
         frictionless = effort
         friction: list[Value] = []
         if chain.rubs and (speed or any(one.always for _, one in chain.rubs)):
@@ -112,7 +113,9 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             asked_speed = load_speed if pushing.load_asked else effort_speed
             sense = pushing.sense * (pushing.forward or np.sign(effort_speed))
             answer = load if pushing.load_asked else effort
-            found = rub(chain, closed, sense, asked, asked_speed, answer, negative, [-g for g in given])
+            beside = pins_strained(chain, at, acts(pushing.load if pushing.load_asked else pushing.effort))
+            still = [-g for g in given]
+            found = rub(chain, closed, sense, asked, asked_speed, answer, negative, still, beside)
             more = found.unknown - answer
             total = _sum(total, (more, asked), *zip(found.amounts, found.columns, strict=True))
             frictionless = effort if pushing.load_asked else found.frictionless

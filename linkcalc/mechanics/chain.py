@@ -8,7 +8,7 @@ constraint: its multiplier follows from its gap, and it is told at the same plac
 from __future__ import annotations
 
 import math
-from collections.abc import Sequence
+from collections.abc import Iterable, Sequence
 from functools import cached_property
 from typing import Protocol
 
@@ -16,6 +16,9 @@ import numpy as np
 
 from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.eliminate import Elimination, Factors
+from linkcalc.mechanics.pushing import Acting
+from linkcalc.mechanics.redundancy import Sharing
+from linkcalc.mechanics.shared_factors import SharedElimination
 from linkcalc.parts.contract import TURN, Drive, Give, Joint, Push, Row
 from linkcalc.parts.pose import Array, Mask, Poses, Value
 
@@ -41,6 +44,7 @@ class Chain:
     toothed     True if some joint is known but for whole teeth or turns
     size        [m] size of the mechanism: what lengths are compared with
     holds       coordinates that are held besides the drive, while free members settle
+    sharing     how joints share forces, if they hold more often than needed
     first_row   number of the first multiplier of each joint
     joint_rows  how many rows of joints are constraints
     row_joint   number of the joint of each of those
@@ -49,8 +53,9 @@ class Chain:
 
     def __init__(
         self, moving: int, joints: Sequence[Joint], coordinate: Holder | None, size: float,
-        holds: Sequence[Holder] = (),
+        holds: Sequence[Holder] = (), sharing: Sharing | None = None,
     ):  # fmt: skip
+        self.sharing = sharing
         self.moving, self.joints, self.coordinate, self.size = moving, tuple(joints), coordinate, size
         self.holds = tuple(holds)
         self.columns = 3 * moving
@@ -85,6 +90,11 @@ class Chain:
         self._gap_size = (self.row_size / size).tolist()
         self._gather: list[list[int]] | None = None
         self._elimination: Elimination | None = None
+        self._shared: SharedElimination | None = None
+
+    def driven_by(self, coordinate: Holder) -> Chain:
+        """The same joints with another coordinate that is driven."""
+        return Chain(self.moving, self.joints, coordinate, self.size, sharing=self.sharing)
 
     def equations(self, at: Poses, drive: Drive | None, held: Sequence[Drive] = ()) -> tuple[list[Value], list[Value]]:
         """Gaps, one a row, zero when it holds [m] or [rad]; and the entries of the Jacobian, at ``places``."""
@@ -169,19 +179,24 @@ class Chain:
         out: Array = np.where(np.isfinite(worst), worst, np.inf)
         return out
 
-    def factor(self, entries: Sequence[Value], *, lone: bool) -> Factors:
+    def factor(self, entries: Sequence[Value], at: Poses, *, lone: bool) -> Factors:
         """Factors of the square Jacobian. Raises NoPlan where it is singular throughout.
 
         lone  the entries are those of one pose, in plain floats
         """
+        if self.sharing is not None:
+            if self._shared is None:
+                self._shared = SharedElimination(self.places, self.row_size, self.column_size)
+            return self._shared.factor(entries, self.sharing.places(at), lone=lone)
         if self._elimination is None:
             self._elimination = Elimination(self.columns, self.places, self.row_size, self.column_size)
         return self._elimination.factor(entries, lone=lone)
 
     def share_plans(self, other: Chain) -> None:
         """Use the plans of a chain of the same joints with other sizes."""
-        if other.columns == self.columns and other.rows == self.rows and other._elimination is not None:
+        if other.columns == self.columns and other.rows == self.rows and (other._elimination or other._shared):
             self.places, self._gather, self._elimination = other.places, other._gather, other._elimination
+            self._shared = other._shared
 
     def dense(self, entries: Sequence[Value]) -> Array:
         """(rows, columns) Jacobian of the first pose of a batch, rows and columns scaled to pure numbers."""
@@ -190,3 +205,11 @@ class Chain:
             out[i, j] = float(np.asarray(e).flat[0])
         scaled: Array = out * self.row_size[:, None] / self.column_size
         return scaled
+
+
+def pins_strained(chain: Chain, at: Poses, sized: Iterable[tuple[Acting, Value]]) -> list[Value]:
+    """What pushers strain by acting on pins themselves, to follow the generalised forces; empty if none are shared."""
+    if chain.sharing is None:
+        return []
+    on = [(p, size, q) for a, size in sized for p, q in zip(a.pusher.on_pins, a.pusher.push(at), strict=True) if p]
+    return chain.sharing.beside(at, on)

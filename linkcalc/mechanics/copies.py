@@ -16,6 +16,7 @@ from linkcalc.mechanics.loose_copies import each_loose_pose
 from linkcalc.mechanics.loose_path import LoosePath
 from linkcalc.mechanics.motion import Closed, along, between, close
 from linkcalc.mechanics.path import Path
+from linkcalc.mechanics.pipeline import solve_standing
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.solved import Solved, joined
 from linkcalc.mechanics.state import Status
@@ -37,6 +38,9 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
     """
     if isinstance(path, LoosePath):
         yield from each_loose_pose(ready, path, drive, checked=checked)
+        return
+    if ready.standing is not None:
+        yield from (solve_standing(ready, np.array([value]), checked=checked) for value in drive)
         return
     coordinate = ready.chain.coordinate
     assert coordinate is not None
@@ -66,7 +70,7 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
         if wanted:
             solved = balance(ready.chain, there, ready.pushing, checked=checked)
             if not live.all():
-                solved = failed(solved, ~live, Status.OUT_OF_REACH)
+                solved = failed(solved, ~live, Status.NO_FIT if ready.chain.sharing else Status.OUT_OF_REACH)
                 solved = failed(solved, lost, Status.BRANCH_LOST)
             if ready.undrawn is not None:
                 solved = failed(solved, ready.undrawn, Status.NOT_DRAWN)

@@ -19,6 +19,7 @@ from linkcalc.parts.pose import Array, Poses
 _RANK = 1e-9  # of the largest singular value
 _TAKES_PART = 1e-5  # of the largest component of a null vector
 _NUDGE = 1e-3
+_BESIDE = 0.02  # of the mechanism's size: far enough to see what is not so in the drawing pose
 
 
 @dataclass(frozen=True)
@@ -59,6 +60,12 @@ def motion_of(chain: Chain, at: Poses) -> Array:
     _, _, vt = np.linalg.svd(_jacobian(chain, at), full_matrices=True)
     last: Array = vt[-1]
     return last
+
+
+def beside(chain: Chain, at: Poses) -> Poses | None:
+    """A closed pose a little on, of a chain with one freedom; None if it cannot be closed there."""
+    way = motion_of(chain, at) * _BESIDE * chain.size / chain.column_size
+    return _closed(chain, moved(at, way.tolist()))
 
 
 def _jacobian(chain: Chain, at: Poses) -> Array:

@@ -51,7 +51,7 @@ class Rubbed:
 
 def rub(
     chain: Chain, closed: Closed, sense: Value, unit: Column, unit_speed: Value,
-    unknown: Value, negative: Sequence[Value], given: Sequence[Value],
+    unknown: Value, negative: Sequence[Value], given: Sequence[Value], beside: Sequence[Value] = (),
 ) -> Rubbed:  # fmt: skip
     """Add friction and the like to an answer without. A chain that is not driven has no friction.
 
@@ -59,15 +59,20 @@ def rub(
     unit        what the unknown does to the coordinates for a strength of 1; unit_speed its speed along itself
     unknown, negative  the answer without
     given       negative multipliers of the rows that give, which their gaps tell
+    beside      what the unknown strains beside that, see ``Sharing.beside``
     """
     columns, responses, weights = [], [], []
-    for _, one in chain.rubs:
+    for number, one in chain.rubs:
         push: Column = [0.0] * chain.columns
-        add_pushes(push, 1.0, one.push(closed.at))
+        pushes = one.push(closed.at)
+        add_pushes(push, 1.0, pushes)
         speed = _power(closed.speed, push) if closed.speed else 0.0
         answer = -np.divide(speed, unit_speed) if closed.speed else 0.0
         whole = [_sum(q, _times(answer, u)) for q, u in zip(push, unit, strict=True)]
         columns.append(push)
+        if chain.sharing is not None:
+            own = chain.sharing.beside(closed.at, [(chain.joints[number].on_pin, 1.0, pushes[0])])
+            whole += [_sum(q, _times(answer, u)) for q, u in zip(own, beside, strict=True)]
         responses.append((closed.factored.solve(whole, transposed=True), answer))
         weights.append(one.factor if one.always else -one.factor * np.sign(sense * speed))
     still = [0.0] * len(given)

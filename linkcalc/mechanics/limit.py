@@ -68,7 +68,7 @@ def limit_beyond(chain: Chain, drive: float, near: Closed, sense: int) -> float:
     speed = single(near.speed) * chain.column_size
     fast = int(np.argmax(np.abs(speed)))
     place = Place(fast // 3 + 1, fast % 3)
-    other = Chain(chain.moving, chain.joints, place, chain.size)
+    other = chain.driven_by(place)
     try:
         p, pose = float(np.asarray(place.value(near.at)).flat[0]), near
         pose = close(other, near.at, _held(place, p))

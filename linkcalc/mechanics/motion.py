@@ -88,13 +88,13 @@ def close(
             if worst <= within / 10 and worst > 0.1 * last:
                 break
             last = worst
-        at = moved(at, chain.factor(entries, lone=lone).solve(gaps))
+        at = moved(at, chain.factor(entries, at, lone=lone).solve(gaps))
     fine = np.ones((1, 1, 1) if lone else _batch(at), bool)
     if not worst <= within or live is not None:
         each = chain.worst_each(gaps)
         fine = fine & (each <= within)
         worst = float(each[np.broadcast_to(fine, each.shape)].max(initial=0.0))
-    factored = chain.factor(entries, lone=lone)
+    factored = chain.factor(entries, at, lone=lone)
     speed = factored.solve([0.0] * (chain.rows - 1) + [1.0]) if drive is not None else []
     return Closed(at, entries, fine, worst, factored, speed)
 

@@ -8,11 +8,13 @@ import numpy as np
 
 from linkcalc.faults import Fault, Faults
 from linkcalc.mechanics.eliminate import SMALL
+from linkcalc.mechanics.excess import no_fit
 from linkcalc.mechanics.mesh import Mesh
-from linkcalc.mechanics.motion import Closed, alone, close
+from linkcalc.mechanics.motion import Closed, alone, along, close
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.walk import Node, Walk, walk
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
+from linkcalc.parts.along import Standing
 from linkcalc.parts.contract import Size
 from linkcalc.parts.pose import Array
 
@@ -32,6 +34,7 @@ class OutOfReach(ArithmeticError):
 
 
 _SHORT = 1e-9  # of the stroke: how far short of a limit of motion its last pose stands
+_BEYOND = 0.1  # of the rest of the stroke: where it is looked how far joints come apart
 _FAR = 10.0  # sizes of the mechanism that a length may run before it counts as without limit
 
 
@@ -56,7 +59,10 @@ class Path:
     passed: tuple[tuple[float, float], ...]
 
     @property
-    def mesh(self) -> Mesh:
+    def mesh(self) -> Mesh | None:
+        """Of the nodes; None if nothing moves."""
+        if not self.nodes:
+            return None
         return Mesh(np.array([n.drive for n in self.nodes]), [n.pose for n in self.nodes])
 
     def poses(self, count: int) -> Array:
@@ -67,6 +73,8 @@ class Path:
 def lay_path(ready: Ready) -> Path:
     """Walk through the stroke. Raises OutOfReach, and Faults if it begins at the limit where it should end."""
     stroke = ready.drawing.mechanism.stroke
+    if ready.standing is not None:
+        return _standing(ready, ready.standing)
     coordinate = ready.chain.coordinate
     assert stroke is not None and coordinate is not None
     drawn = float(np.asarray(coordinate.value(ready.start.at)).flat[0])
@@ -88,8 +96,28 @@ def lay_path(ready: Ready) -> Path:
     return Path(drawn, start, stop, first.nodes, _nodes(first, second), limits, _inside(first, second, start, stop))
 
 
+def _standing(ready: Ready, standing: Standing) -> Path:
+    """The way of a load through a mechanism that stands: nothing to walk."""
+    stroke = ready.drawing.mechanism.stroke
+    assert stroke is not None
+    lower, drawn, upper = motion_range(ready)
+    words = {DRAWN: drawn, LOWER: lower, UPPER: upper}
+    start, stop = (
+        words[size] if size in words else float(np.ravel(ready.drawing.value(size, standing.kind))[0])
+        for size in (stroke.start, stroke.stop)
+    )
+    if start == stop:
+        raise Faults(
+            Fault(("stroke", "to"), "the stroke begins at the end of the line where it ends", "give another end")
+        )
+    return Path(drawn, start, stop, (), (), (), ())
+
+
 def motion_range(ready: Ready) -> tuple[float, float, float]:
     """Lower limit, drawn value and upper limit of the drive [rad or m]; nan for a limit that is not there."""
+    if ready.standing is not None:
+        drawn, span = (np.ravel(v)[0] for v in (ready.standing.value(ready.start.at), ready.standing.span))
+        return 0.0, float(drawn), float(span)
     coordinate = ready.chain.coordinate
     assert coordinate is not None
     drawn = float(np.ravel(coordinate.value(ready.start.at))[0])
@@ -144,9 +172,19 @@ def _to(ready: Ready, start: Node, end: Size, begin: float, far: float, key: str
         return Walk((*nodes[:-1], *last.nodes) if nodes else last.nodes, "limit", way.limit, way.passed)
     if way.stopped:
         far_node = way.nodes[-1]
+        if way.stopped == "stuck" and ready.chain.sharing is not None:
+            raise _apart(ready, far_node, target)
         why = _in_line(ready, far_node) if way.stopped == "limit" else ""
         raise OutOfReach(key, target, far_node.drive, way.limit, why)
     return way
+
+
+def _apart(ready: Ready, last: Node, target: float) -> Faults:
+    """Joints that come apart a little on from the last node."""
+    assert ready.chain.coordinate is not None
+    drive = last.drive + _BEYOND * (target - last.drive)
+    there = close(ready.chain, along(last.pose, drive - last.drive), ready.chain.coordinate.hold(drive))
+    return no_fit(ready.drawing, ready.chain, there, np.array([drive]))
 
 
 def _in_line(ready: Ready, node: Node) -> str:

@@ -9,6 +9,7 @@ import numpy as np
 from linkcalc.faults import Fault, Faults
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.eliminate import SMALL
+from linkcalc.mechanics.excess import CURE, idle, sharing
 from linkcalc.mechanics.freedom import Freedom, freedom, motion_of
 from linkcalc.mechanics.limit import Place
 from linkcalc.mechanics.loose import Loose
@@ -18,6 +19,7 @@ from linkcalc.mechanics.pushing import Pushing, column, pushing
 from linkcalc.mechanics.settle import acted_on, come_to_rest
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
 from linkcalc.model.sketch import Drawing, drawn
+from linkcalc.parts.along import Standing
 from linkcalc.parts.pose import Mask, Poses, Value
 
 
@@ -32,6 +34,7 @@ class Ready:
     pushing   loads of all cases
     steps     True if there is a stroke
     undrawn   (1, variant, 1) True for copies of which some point cannot be drawn; None: all can
+    standing  what is stepped while the mechanism stands as drawn, if that is so
     """
 
     drawing: Drawing
@@ -42,6 +45,19 @@ class Ready:
     undrawn: Mask | None = None
     loose: Loose | None = None
     unknown: Value = 0.0
+    standing: Standing | None = None
+
+    @property
+    def plates(self) -> list[int]:
+        """How many equal plates each member stands for, the ground first."""
+        members = self.drawing.mechanism.members
+        return [members[name].copies if name in members else 1 for name in self.drawing.members]
+
+    @property
+    def drive_kind(self) -> str:
+        """Kind of what is stepped, "length" or "angle"; "" without a stroke."""
+        stepped = self.standing or self.chain.coordinate
+        return stepped.kind if self.steps and stepped is not None else ""
 
 
 def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
@@ -57,30 +73,40 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     if moving == 0:
         raise Faults(Fault(("members",), "only the ground is there", "name at least one member that moves"))
     coordinate = mechanism.stroke.along.coordinate(drawing) if mechanism.stroke else None
+    standing: Standing | None = coordinate if mechanism.stroke and not moves(drawing) else None
+    coordinate = None if standing else coordinate
     chain = Chain(moving, drawing.joints, coordinate, drawing.size)
     counted = chain.columns - chain.joint_rows
     asked = loads.effort_asked or loads.load_asked
     wanted = 1 if coordinate is not None or asked else 0
-    if mechanism.stroke and not asked:
+    if moves(drawing) and not asked:
         # that effort and load both have a size is a fault of the model, found before it comes here
         what = "nothing drives it: the model has no effort"
         raise Faults(Fault(("stroke",), what, "give it an [effort] without a size"))
     giving = len(chain.gives)
+    shared = sharing(drawing, wanted) if counted < wanted and not giving else None
+    if shared is None and (without := [*idle(drawing)]):
+        raise Faults(without)
     if counted > wanted and (mechanism.free or counted - giving <= wanted):
         ready = _settled(drawing, chain, at, loads, wanted, like)
+        if ready is not None and standing is not None:
+            what = "the mechanism gives or has free members, which settle anew at every place of the load"
+            raise Faults(Fault(("stroke", "place"), what, "hold them, or give the load a fixed place"))
         if ready is not None:
             return ready
-    if counted != wanted:
+    if counted != wanted and shared is None:
         raise Faults(_misfit(drawing, freedom(chain, at), wanted))
+    if shared is not None:
+        chain = Chain(moving, drawing.joints, coordinate, drawing.size, sharing=shared)
     if coordinate is None and wanted:
         way = motion_of(chain, at)
         k = int(np.argmax(np.abs(way)))
         coordinate = Place(k // 3 + 1, k % 3)
-        chain = Chain(moving, drawing.joints, coordinate, drawing.size)
+        chain = chain.driven_by(coordinate)
     if like is not None:
         chain.share_plans(like.chain)
     try:
-        if mechanism.stroke and chain.columns <= SMALL and drawing is drawn(mechanism):
+        if moves(drawing) and chain.columns <= SMALL and drawing is drawn(mechanism):
             at = alone(at)  # no copies: the walk takes one pose at a time
         start = close(chain, at, None if coordinate is None else coordinate.hold(coordinate.value(at)))
         singular = start.factored.singular
@@ -88,12 +114,12 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
             raise NoPlan([])
     except NoPlan:
         found = freedom(chain, at)
-        if found.free == wanted and mechanism.stroke:
+        if found.free == wanted and moves(drawing):
             raise Faults(_dead_drive(drawing)) from None
         raise Faults(_misfit(drawing, found, wanted)) from None
     if not bool(np.any(start.fine)):
         raise Faults(Fault(("points",), "the drawing pose does not close", "check the points that slots guide"))
-    return Ready(drawing, chain, start, loads, mechanism.stroke is not None, _undrawn(drawing))
+    return Ready(drawing, chain, start, loads, mechanism.stroke is not None, _undrawn(drawing), standing=standing)
 
 
 def _settled(
@@ -132,9 +158,9 @@ def _held(chain: Chain, at: Poses, loads: Pushing) -> Place:
 
 
 def _forward(drawing: Drawing) -> float:
-    """Which way the drive moves along the stroke, +1 or -1; 0.0 without a stroke."""
+    """Which way the drive moves along the stroke, +1 or -1; 0.0 without a stroke that moves the mechanism."""
     stroke = drawing.mechanism.stroke
-    if stroke is None:
+    if stroke is None or not moves(drawing):
         return 0.0
     ends = {UPPER: np.inf, LOWER: -np.inf}
     value = stroke.along.coordinate(drawing).value(_drawn(drawing, None))
@@ -144,6 +170,12 @@ def _forward(drawing: Drawing) -> float:
     )
     way = np.ravel(np.subtract(stop, start))[0]
     return 1.0 if way >= 0 else -1.0
+
+
+def moves(drawing: Drawing) -> bool:
+    """True if there is a stroke that moves the mechanism, and not only a load along it."""
+    stroke = drawing.mechanism.stroke
+    return stroke is not None and not getattr(stroke.along, "stands", False)
 
 
 def _undrawn(drawing: Drawing) -> Mask | None:
@@ -174,7 +206,7 @@ def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
     faults: list[Fault] = []
     movers = [drawing.members[m] for m in found.movers]
     joints = ", ".join(found.repeated)
-    driven = "the stroke" if drawing.mechanism.stroke else "the effort"
+    driven = "the stroke" if moves(drawing) else "the effort"
     if found.special and found.counted == wanted:
         return [
             Fault(
@@ -196,9 +228,7 @@ def _misfit(drawing: Drawing, found: Freedom, wanted: int) -> list[Fault]:
         faults.append(Fault(("members", movers[0] if movers else "ground"), what, cure))
     if found.excess:
         what = f"held {found.excess} time{'s' if found.excess > 1 else ''} more than needed, among joints {joints}"
-        faults.append(
-            Fault(("members",), what, "turn one of these pins into a slot along the line, or leave one joint out")
-        )
+        faults.append(Fault(("members",), what, CURE))
     if found.free < wanted:
         faults.append(
             Fault(("members",), f"nothing can move, yet {driven} wants one degree of freedom",

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -101,6 +101,23 @@ def strength(acting: Sequence[Acting], at: Poses) -> Value:
     return total
 
 
+def sized_pushers(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
+    """Every pusher with the strength it has in each case."""
+    for acting in pushing.effort:
+        yield acting, (acting.factor * effort if len(pushing.effort) > 1 else effort)
+    for acting in pushing.load:
+        yield acting, load
+    for acting in pushing.rest:
+        yield acting, strength([acting], at)
+
+
+def acts(acting: Sequence[Acting]) -> Iterator[tuple[Acting, Value]]:
+    """The same of an effort or load for a strength of 1."""
+    for a in acting:
+        # of the factors of alternatives only "acts in this case or not" counts
+        yield a, _plain(np.sign(np.abs(a.factor))) if len(acting) > 1 else 1.0
+
+
 def unknown(acting: Sequence[Acting], at: Poses) -> Mask | None:
     """Where something that acts has no strength at all, because it is not told there. None: nowhere."""
     lost = [np.isnan(_own(a, at)) for a in acting if _partial(a) and a.pusher.size is not None]
@@ -125,10 +142,8 @@ def column(acting: Sequence[Acting], at: Poses, columns: int, *, unit: bool) -> 
     unit  for a strength of 1; else for their own strength and factor
     """
     out: Column = [0.0] * columns
-    for a in acting:
-        # of the factors of alternatives only "acts in this case or not" counts
-        acts = _plain(np.sign(np.abs(a.factor))) if len(acting) > 1 else 1.0
-        add_pushes(out, acts if unit else _own(a, at), a.pusher.push(at))
+    for a, one in acts(acting):
+        add_pushes(out, one if unit else _own(a, at), a.pusher.push(at))
     return out
 
 

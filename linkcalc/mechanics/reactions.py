@@ -7,13 +7,13 @@ several members the hub's force follows from the balance of the pin itself, whic
 from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any
 
 import numpy as np
 
 from linkcalc.mechanics.chain import Chain
-from linkcalc.mechanics.pushing import Acting, Pushing, strength
+from linkcalc.mechanics.pushing import Acting, Pushing, sized_pushers
 from linkcalc.parts.contract import TURN, Joint, Push, X, Y
 from linkcalc.parts.pose import Poses, Value
 
@@ -32,6 +32,7 @@ class Side:
     part_of      name of the joint that this is one of several sides of, each with its own name ("hoist" of a side
                  "hoist at P"); "" otherwise
     carried      [N] of such a joint what it carries throughout (the tension of a rope)
+    copies       how many equal plates the member stands for; the force is that on one of them
     """
 
     joint: str
@@ -46,6 +47,7 @@ class Side:
     own_point: bool
     part_of: str = ""
     carried: Value = 0.0
+    copies: int = 1
 
 
 def reactions(
@@ -115,6 +117,22 @@ def reactions(
     return sides
 
 
+def on_one(sides: Sequence[Side], copies: Sequence[int]) -> list[Side]:
+    """Sides as one plate of each member feels them; copies: how many each stands for, the ground first."""
+    return [
+        side
+        if side.member < 0 or copies[side.member] == 1
+        else replace(
+            side,
+            fx=side.fx / copies[side.member],
+            fy=side.fy / copies[side.member],
+            moment=side.moment / copies[side.member],
+            copies=copies[side.member],
+        )
+        for side in sides
+    ]
+
+
 def _rubbed(chain: Chain, at: Poses, friction: Sequence[Value]) -> dict[int, list[Push]]:
     """Number of a joint -> what its friction does to its members."""
     out: dict[int, list[Push]] = {}
@@ -174,13 +192,3 @@ def _times(value: Value, m: Value) -> Value:
 
 def _sum(a: Value, b: Value) -> Value:
     return b if isinstance(a, float) and a == 0.0 else a + b
-
-
-def sized_pushers(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
-    """Every pusher with the strength it has in each case."""
-    for acting in pushing.effort:
-        yield acting, (acting.factor * effort if len(pushing.effort) > 1 else effort)
-    for acting in pushing.load:
-        yield acting, load
-    for acting in pushing.rest:
-        yield acting, strength([acting], at)

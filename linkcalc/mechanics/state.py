@@ -17,6 +17,7 @@ class Status(IntEnum):
     JAMMED = 6
     NO_FORCE = 7
     UNSETTLED = 8
+    NO_FIT = 9
 
     @property
     def text(self) -> str:
@@ -32,5 +33,6 @@ _TEXTS = {
     Status.JAMMED: "jams: friction grows as fast as the effort, however large",
     Status.SINGULAR: "the joints do not hold the members in this pose",
     Status.UNSETTLED: "the free members find no balance there",
+    Status.NO_FIT: "with these sizes joints that hold more than needed do not fit, or it is beyond the limit of motion",
     Status.NO_FORCE: "a load has no force there: it is outside the range that it is told for",
 }

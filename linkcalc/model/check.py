@@ -70,7 +70,7 @@ def checked(tree: Mapping[str, Any], gather: Gather) -> Mechanism:
         check_loads(mechanism, gather)
     if _clean(gather, *_SHAPE, "stroke"):
         check_stroke(mechanism, gather)
-    if _clean(gather, *_SHAPE, *_LOADS, "stroke", "gravity", "pins"):
+    if _clean(gather, *_SHAPE, *_LOADS, "stroke", "gravity", "friction", "pins"):
         drawing = check_drawing(mechanism, gather)
     check_requirements(mechanism, known, drawing, gather)
     return mechanism

@@ -66,6 +66,8 @@ def check_members(mechanism: Mechanism, gather: Gather) -> None:
         if member.centre is not None:
             carried.check((member.centre,), name, (*item, "centre"), gather)
         if name == GROUND:
+            if member.copies > 1:
+                gather.add((*item, "copies"), "there is one ground only", "leave it out")
             continue
         if not member.points:
             gather.add(item, "it has no points", f'the points it carries are wanted: {name} = ["A", "B"]')

@@ -11,11 +11,14 @@ from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import GROUND, Mechanism, asked_by, strength_kind
 from linkcalc.parts.coordinates.distance import Distance
 from linkcalc.parts.coordinates.haul import Haul
+from linkcalc.parts.coordinates.place import Place
 from linkcalc.parts.coordinates.turn import Turn
 from linkcalc.parts.joints.rope import DEAD, HAULING
 from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.haul import HaulForce
+from linkcalc.parts.loads.moving import MovingForce, MovingMass
 from linkcalc.parts.loads.pair import Pair
+from linkcalc.parts.loads.spread import SpreadForce
 from linkcalc.parts.loads.torque import Torque
 from linkcalc.parts.loads.weight import Weight
 
@@ -132,6 +135,28 @@ def _weight(load: Weight, item: Item, carried: Carried, gather: Gather) -> None:
     _on(load.mass_at, load.on, item, carried, gather)
 
 
+@_check.register(MovingForce)
+@_check.register(MovingMass)
+@_check.register(SpreadForce)
+def _moving(load: Any, item: Item, carried: Carried, gather: Gather) -> None:
+    if getattr(load, "turns_with", None) is not None and load.direction is None:
+        gather.add((*item, "turns_with"), "there is no direction to be turned", "it goes with 'direction' only")
+    if load.way[0] == load.way[1]:
+        _line(load.way, (*item, load.word), gather)
+        return
+    both = [m for m in carried.by(load.way[0]) if m in carried.by(load.way[1])]
+    first, second = load.way
+    if load.on is not None and load.on not in both:
+        wanted = f"{' or '.join(both)} is wanted" if both else "take two points of one member"
+        gather.add((*item, "on"), f"{load.on} does not carry both {first} and {second}", wanted)
+    elif not both:
+        gather.add((*item, load.word), f"no member carries both {first} and {second}", "take two points of one member")
+    elif load.on is None and len(both) > 1:
+        gather.add(item, f"{' and '.join(both)} carry both {first} and {second}", "name one of them in 'on'")
+    elif (load.on or both[0]) == GROUND:
+        gather.add((*item, load.word), "it stands on the ground, and loads nothing", "take two points of a member")
+
+
 @_check.register
 def _torque(load: Torque, item: Item, carried: Carried, gather: Gather) -> None:  # noqa: ARG001
     _turned((load.torque_on, load.against), "torque", item, gather)
@@ -180,6 +205,15 @@ def _turn(stroke: Turn, item: Item, carried: Carried, gather: Gather) -> None:
     if stroke.line:
         _line(stroke.line, (*item, "line"), gather)
         carried.check(stroke.line, stroke.turn, (*item, "line"), gather)
+
+
+@_check.register
+def _place(stroke: Place, item: Item, carried: Carried, gather: Gather) -> None:
+    m = carried.mechanism
+    load = {"effort": m.effort, "load": m.load, **m.loads}.get(stroke.place)
+    if load is not None and not hasattr(load, "place"):
+        wanted = "a load of the kind 'moves_along' or 'mass_along' is wanted"
+        gather.add((*item, "place"), f"{stroke.place} does not move along a line", wanted)
 
 
 @_check.register

@@ -27,6 +27,7 @@ class Known:
     dimensions: tuple[str, ...]
     ropes: tuple[str, ...] = ()
     materials: tuple[str, ...] = ()
+    pushers: tuple[str, ...] = ()
 
     @classmethod
     def of(cls, tree: Mapping[str, Any]) -> Known:
@@ -36,16 +37,17 @@ class Known:
 
         joints = tuple(name for word in kinds("joint") for name in names(f"{word}s"))
         loads = (*((_LOAD,) if "load" in tree else ()), *names("loads"))
+        pushers = (*((_EFFORT,) if _EFFORT in tree else ()), *loads)
         members = (GROUND, *(m for m in names("members") if m != GROUND))
         dimensions, ropes, own = names("dimensions"), names("ropes"), names("materials")
-        return cls(names("points"), members, joints, loads, dimensions, ropes, own)
+        return cls(names("points"), members, joints, loads, dimensions, ropes, own, pushers)
 
     def table(self, of: str) -> tuple[str, ...]:
-        """The names that a field may give: of = "point", "member", "guide", "load", "rope", "material"."""
+        """The names that a field may give: of = "point", "member", "guide", "load", "rope", "material", "pusher"."""
         if of == "material":
             return material_names(self.materials)
         tables = {"point": self.points, "member": self.members, "guide": self.joints, "load": self.loads}
-        return {**tables, "rope": self.ropes}[of]
+        return {**tables, "rope": self.ropes, "pusher": self.pushers}[of]
 
 
 def _one(value: Any, of: str) -> Iterator[tuple[str, str]]:
@@ -87,7 +89,7 @@ def check_names(mechanism: Mechanism, known: Known, gather: Gather) -> None:
             for of, name in names(value, entry.metadata.get("of", "")) if names else ():
                 own = getattr(part.part, "add", {}) if of == "load" and entry.name == "scale" else {}
                 if name not in known.table(of) and name not in own:
-                    kind = "slot, slide or track" if of == "guide" else of
+                    kind = {"guide": "slot, slide or track", "pusher": "load"}.get(of, of)
                     gather.add(item, f"unknown {kind} {name!r}", nearest(name, known.table(of)))
 
 

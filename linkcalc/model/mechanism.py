@@ -50,6 +50,7 @@ class Units:
     acceleration: str = _unit("acceleration", "m/s^2")
     torsion_stiffness: str = _unit("torsion stiffness", "N*m/deg")
     pressure: str = _unit("pressure", "bar")
+    line_load: str = _unit("line load", "N/mm")
     volume: str = _unit("volume", "cm^3")
     temperature: str = fields.choice(("degC", "degF", "K"), "scale of a bare temperature", "degC")
     number = ""
@@ -90,6 +91,8 @@ class Member:
     material     name of its material; factor against its yield stress
     bend_radius  of the middle line at the corners of its path
     ends, ends_across  of a two-force member: how its ends are held against buckling, in the plane and out of it
+    copies  how many equal plates side by side it stands for: mass and stiffness are those of one, and so are the
+            forces on it that answers tell; all of them together are what holds and weighs
     """
 
     points: tuple[str, ...] = fields.names("point", "the points it carries, in order", least=0, most=None)
@@ -112,6 +115,7 @@ class Member:
     ends_across: Size | None = fields.size(
         "number", "the same out of the plane; as in the plane if left out", None, sign="plus", words=ENDS
     )
+    copies: int = fields.count("how many equal plates side by side it stands for", 1, most=100)
 
     short = "points"
 

@@ -14,6 +14,7 @@ from linkcalc.parts.contract import Joint, Pusher, Site, Value
 from linkcalc.parts.joints.pin import PinJoint, StretchJoint
 from linkcalc.parts.lines import exact
 from linkcalc.parts.loads.weight import WeightPush
+from linkcalc.parts.stiff import shares
 
 if TYPE_CHECKING:
     from linkcalc.model.sketch import Drawing
@@ -46,12 +47,16 @@ class PinGroup:
         hub, radius = drawing.site(self.point, self.hub), drawing.friction_radius(self.point)
         own = drawing.mechanism.pins.get(self.point, Pin()).stiffness
         stiffness = None if own is None else drawing.value(own, "stiffness")
+        share = None
+        if shares(drawing.mechanism.joints):
+            stiffness, share = None, stiffness
         for other in self.others:
             site = drawing.site(self.point, other)
             if other in self.links:
                 yield cast("Joint", self._stretching(drawing, site, hub, radius, self.links[other]))
             else:
-                yield cast("Joint", PinJoint(self.point, site, hub, friction_radius=radius, stiffness=stiffness))
+                pin = PinJoint(self.point, site, hub, friction_radius=radius, stiffness=stiffness, share=share)
+                yield cast("Joint", pin)
 
     def _stretching(self, drawing: Drawing, a: Site, b: Site, radius: Value, link: str) -> StretchJoint:
         member = drawing.mechanism.members[link]
@@ -60,7 +65,7 @@ class PinGroup:
         length = np.hypot(x1 - x0, y1 - y0)
         tx, ty = exact((x1 - x0) / length), exact((y1 - y0) / length)
         assert member.stiffness is not None
-        stiffness = drawing.value(member.stiffness, "stiffness")
+        stiffness = member.copies * drawing.value(member.stiffness, "stiffness")
         return StretchJoint(
             self.point, a, b, friction_radius=radius, stiffness=stiffness, link=drawing.member(link), tx=tx, ty=ty
         )
@@ -186,7 +191,7 @@ def assemble(drawing: Drawing) -> Assembly:
     for name, member in mechanism.members.items():
         if member.mass is not None and name != GROUND:
             full = f"weight of {name}"
-            mass = drawing.value(member.mass, "mass")
+            mass = member.copies * drawing.value(member.mass, "mass")
             weight = WeightPush(full, drawing.mass_site(name), mass, lines=drawing.mass_lines(name))
             pushers["", full] = cast("Pusher", weight)
     for case_name, case in mechanism.cases.items():

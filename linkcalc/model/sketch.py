@@ -21,6 +21,7 @@ from linkcalc.model.functions import Quantity
 from linkcalc.model.mechanism import GROUND, Mechanism, Member, Pin
 from linkcalc.model.parts_list import Assembly, PinGroup, assemble, pin_groups
 from linkcalc.model.units import KINDS, show
+from linkcalc.parts.along import Moved
 from linkcalc.parts.contract import Hauled, Joint, Poses, Pusher, Site, Size, Travelled, Value
 from linkcalc.words import nearest
 
@@ -183,6 +184,14 @@ class Drawing:
         if name not in able:
             raise fault((), f"unknown rope {name!r}", nearest(name, able))
         found: Hauled = able[name]
+        return found
+
+    def moved(self, name: str) -> Moved:
+        """The load of that name that moves along a line. Raises Faults."""
+        able: dict[str, Any] = {of: p for (_, of), p in self.pushers().items() if hasattr(p, "span")}
+        if name not in able:
+            raise fault((), f"unknown load {name!r}", nearest(name, able))
+        found: Moved = able[name]
         return found
 
     @cached_property

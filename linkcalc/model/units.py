@@ -36,6 +36,7 @@ KINDS: dict[str, Dims] = {
     "moment": (2, 1, -2, 0),
     "stress": (-1, 1, -2, 0),
     "stiffness": (0, 1, -2, 0),
+    "line load": (0, 1, -2, 0),
     "acceleration": (1, 0, -2, 0),
     "torsion stiffness": (2, 1, -2, -1),
     "pressure": (-1, 1, -2, 0),

@@ -64,6 +64,7 @@ def everything(mechanism: Mechanism) -> Iterator[Part]:
         yield Part(("pins", point), pin)
     for name, material in mechanism.materials.items():
         yield Part(("materials", name), material)
+    yield Part(("friction",), mechanism.friction)
     yield Part((), mechanism)
     yield Part(("gravity",), mechanism.gravity)
     yield from loads(mechanism)

@@ -14,11 +14,12 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from typing import Protocol
 
+from linkcalc.parts.along import Moved
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
 
 __all__ = [
     "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Poses",
-    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Spread", "Told", "Travelled", "Value", "X", "Y",
+    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Told", "Travelled", "Value", "X", "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -132,6 +133,9 @@ class Sketch(Protocol):
     def hauled(self, name: str) -> Hauled:
         """the rope of that name, to draw it in at its hauling end"""
 
+    def moved(self, name: str) -> Moved:
+        """the load of that name that moves along a line"""
+
 
 @dataclass(frozen=True, eq=False)
 class Rub:
@@ -177,6 +181,10 @@ class Joint(Protocol):
     multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).
     One with teeth has ``place(at)``, where its force is told, for that moves on its members: (x, y) [m]; ``grain``:
     its gap is known but for multiples of that [m]; ``astray(at)``: how far its centres have moved apart [m].
+
+    One that can share a force with joints that hold the same has, besides, ``share``: its stiffness [N/m], or None.
+    Its angular row is as stiff as its ``turning_stiffness`` [N m/rad], or else as two halves of that stiffness are at a
+    ``lever`` [m] each; None: at half the extent of the drawing.
 
     name, word   what the file calls it, and its kind
     members      indices of the members it joins; the first is the one its force acts on

@@ -12,7 +12,8 @@ def _made(kind: str, text: str, default: Any, **more: Any) -> Any:
 
 
 def name(of: str, text: str, default: Any = MISSING) -> Any:
-    """The name of one item: of = "point", "member", "guide" (a slot, slide or track), "rope"."""
+    """The name of one item: of = "point", "member", "guide" (a slot, slide or track), "rope", "load", "pusher" (a
+    load or the effort)."""
     return _made("name", text, default, of=of)
 
 

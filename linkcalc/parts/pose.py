@@ -7,7 +7,7 @@ and arrays ``(case, variant, pose)`` where they do; that difference is what cons
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 from typing import TYPE_CHECKING, Any
@@ -53,6 +53,7 @@ class Poses:
     c, s     [-]  cosine and sine of its turn
     down     [-]     direction of gravity (x, y), float or (case, 1, 1)
     field    [m/s2]  strength of gravity, float or (case, 1, 1)
+    places   [m]  where loads stand that are moved along a line while nothing else moves, by name
 
     >>> at = Poses(x=[0.0, 1.0], y=[0.0, 2.0], c=[1.0, 0.0], s=[0.0, 1.0])
     >>> at.spot(Site(1, 0.5, 0.0))
@@ -67,9 +68,11 @@ class Poses:
         s: Sequence[Value],
         down: tuple[Value, Value] = (0.0, -1.0),
         field: Value = 9.80665,
+        places: Mapping[str, Value] | None = None,
     ):
         self.x, self.y, self.c, self.s = x, y, c, s
         self.down, self.field = down, field
+        self.places: Mapping[str, Value] = places or {}
         self._arms: dict[int, tuple[Value, Value, Site]] = {}  # by the site's identity; the site is kept alive
 
     def arm(self, site: Site) -> tuple[Value, Value]:

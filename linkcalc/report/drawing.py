@@ -39,6 +39,8 @@ def draw_mechanism(
     """
     scene, edge = Scene(answer), Edge(answer)
     check_pose(scene, poses, case)
+    if not moves(answer):
+        poses = poses[:1]
     main = scene.at(poses[0], case)
     items = [Item("path", spots) for spots in _traces(scene, case, traces)]
     for pose in poses[1:]:
@@ -66,6 +68,11 @@ def draw_mechanism(
         items=tuple(scaled(items, edge)),
         caption=caption(answer, poses, case),
     )
+
+
+def moves(answer: StrokeAnswer) -> bool:
+    """False if the mechanism stands in all poses, and only a load moves along it."""
+    return any(np.ptp(q, axis=-1).any() for q in (answer.x, answer.y, answer.turn))
 
 
 def check_pose(scene: Scene, poses: Sequence[int], case: int) -> None:

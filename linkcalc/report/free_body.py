@@ -4,10 +4,11 @@ from __future__ import annotations
 
 import math
 from collections.abc import Iterator
+from dataclasses import replace
 
 import numpy as np
 
-from linkcalc.design.answer import StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer, plate
 from linkcalc.faults import fault
 from linkcalc.model.mechanism import GROUND
 from linkcalc.parts.contract import Joint, Mark
@@ -41,7 +42,7 @@ def free_body(answer: StrokeAnswer, member: str, *, pose: int = 0, case: int = 0
         if a.pin in entry.points
     ]
     return Drawing(
-        title=f"{answer.mechanism.title or 'Mechanism'}: {member} cut free",
+        title=f"{answer.mechanism.title or 'Mechanism'}: {plate(member, entry.copies)} cut free",
         unit=plain(edge.unit("length")),
         items=tuple(scaled(items, edge)),
         caption="; ".join(t for t in told if t),
@@ -92,7 +93,7 @@ def free_body_table(answer: StrokeAnswer, member: str, *, pose: int = 0, case: i
         ),
     )
     rows.append(("sum", "", "", *totals))
-    return Table(columns, tuple(rows), f"Forces on {member}, cut free")
+    return Table(columns, tuple(rows), f"Forces on {plate(member, answer.mechanism.members[member].copies)}, cut free")
 
 
 def _places(size: float) -> int:
@@ -101,10 +102,14 @@ def _places(size: float) -> int:
 
 
 def acting_on(scene: Scene, member: str, pose: int, case: int) -> list[Acts]:
-    """Everything that acts on one member: joints first, then loads."""
+    """Everything that acts on one member, or on one plate of it: joints first, then loads."""
     index = scene.sketch.member(member)
     joints = [a for a in scene.bearings(pose, case) if a.member == index]
-    return joints + [a for a in scene.acting(pose, case) if a.member == index and not a.pin]
+    copies = scene.answer.mechanism.members[member].copies
+    loads = [a for a in scene.acting(pose, case) if a.member == index and not a.pin]
+    return joints + [
+        replace(a, force=(a.force[0] / copies, a.force[1] / copies), moment=a.moment / copies) for a in loads
+    ]
 
 
 def check_member(answer: StrokeAnswer, member: str) -> None:

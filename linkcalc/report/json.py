@@ -138,6 +138,7 @@ def _bearings(answer: StrokeAnswer, edge: Edge) -> list[Tree]:
             "joint": b.joint,
             "kind": b.word,
             "member": b.member,
+            "copies": b.copies,
             "x": array_tree(edge, answer.force[i, 0], "force", BATCH),
             "y": array_tree(edge, answer.force[i, 1], "force", BATCH),
             "resultant": array_tree(edge, size[i], "force", BATCH),

@@ -62,7 +62,11 @@ class Scene:
         x, y, turn = (q[:, placed, 0, pose] for q in (a.x, a.y, a.turn))
         down = (_number(loads.down[0]), _number(loads.down[1]))
         c, s = [float(v) for v in np.cos(turn)], [float(v) for v in np.sin(turn)]
-        return Poses([float(v) for v in x], [float(v) for v in y], c, s, down, _number(loads.field))
+        at = Poses([float(v) for v in x], [float(v) for v in y], c, s, down, _number(loads.field))
+        stroke = a.mechanism.stroke
+        if stroke is not None and getattr(stroke.along, "stands", False):
+            at = stroke.along.coordinate(self.sketch).put(at, float(a.drive[0, 0, pose]))
+        return at
 
     def known(self, pose: int) -> bool:
         """False where the pose could not be computed."""

@@ -15,6 +15,7 @@ from linkcalc.report import style
 from linkcalc.report.blocks import Item
 from linkcalc.report.diagram_shapes import DIAGRAM_SHAPES
 from linkcalc.report.gear_shapes import GEAR_SHAPES
+from linkcalc.report.load_shapes import LOAD_SHAPES
 from linkcalc.report.pen import Pen, Spot
 from linkcalc.report.spring_shapes import SPRING_SHAPES
 
@@ -295,4 +296,5 @@ SHAPES: dict[str, Callable[[Pen, Item], None]] = {
     **GEAR_SHAPES,
     **SPRING_SHAPES,
     **DIAGRAM_SHAPES,
+    **LOAD_SHAPES,
 }

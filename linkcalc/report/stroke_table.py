@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 
-from linkcalc.design.answer import StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer, plate
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array
 from linkcalc.report.bearings import direction, own_direction, resultant
@@ -44,7 +44,7 @@ def stroke_table(answer: StrokeAnswer) -> Table:
         add("efficiency", answer.efficiency, "number")
     size, points, own = resultant(answer), direction(answer), own_direction(answer)
     for i, b in enumerate(answer.bearings):
-        on = f"{b.joint} on {b.member}"
+        on = f"{b.joint} on {b.text}"
         add(f"{on} x", answer.force[i, 0], "force")
         add(f"{on} y", answer.force[i, 1], "force")
         add(f"{on} resultant", size[i], "force")
@@ -53,7 +53,7 @@ def stroke_table(answer: StrokeAnswer) -> Table:
         if np.any(answer.moment[i]):
             add(f"{on} moment", answer.moment[i], "moment")
     for member in answer.two_force:
-        add(f"axial in {member}", answer.axial_in(member), "force")
+        add(f"axial in {plate(member, answer.mechanism.members[member].copies)}", answer.axial_in(member), "force")
     for rope in answer.ropes:
         add(f"tension of {rope}", answer.tension_of(rope), "force")
     for reading in answer.readings:

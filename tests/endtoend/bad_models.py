@@ -114,9 +114,9 @@ BAD = [
     ),
     _changed(
         "over-constrained",
-        'strut = ["B", "C"]',
-        'strut = ["B", "C"]\nstay = ["B", "C"]',
-        "members: held 1 time more than needed, among joints B, C; "
+        "[effort]",
+        '[slots.level]\npoint = "B"\nof = "handle"\nalong = 120\n\n[effort]',
+        "members: held 1 time more than needed, among joints A, level; "
         "turn one of these pins into a slot along the line, or leave one joint out",
         blamed="[members]",
     ),

@@ -50,7 +50,7 @@ class Schema:
             QUANTITIES + (RUBBING if rubs else []) + (["steady"] if loose else [])
         )
         for side in tree["joints"]:
-            assert list(side) == ["joint", "kind", "member", *JOINT]
+            assert list(side) == ["joint", "kind", "member", "copies", *JOINT]
             assert side["joint"] in tree["axes"]["joint"]
             for key, kind in JOINT.items():
                 self.array(side[key], kind, BATCH)

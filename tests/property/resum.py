@@ -17,7 +17,9 @@ from linkcalc.model.mechanism import GROUND, Case, Member
 from linkcalc.model.sketch import Drawing
 from linkcalc.parts.loads.force import Force
 from linkcalc.parts.loads.haul import HaulForce
+from linkcalc.parts.loads.moving import MovingForce, MovingMass
 from linkcalc.parts.loads.pair import Pair
+from linkcalc.parts.loads.spread import SpreadForce
 from linkcalc.parts.loads.torque import Torque
 from linkcalc.parts.loads.weight import Weight
 
@@ -95,7 +97,8 @@ class Resum:
 
     def joints(self) -> Iterator[Wrench]:
         for k, b in enumerate(self.answer.bearings):
-            yield b.member, *self.joint_place(b.joint, b.word), *self.answer.force[k], self.answer.moment[k]
+            force, moment = b.copies * self.answer.force[k], b.copies * self.answer.moment[k]
+            yield b.member, *self.joint_place(b.joint, b.word), *force, moment
 
     def loads(self) -> Iterator[Wrench]:
         """Everything that pushes, with the strength it has in each case."""
@@ -119,7 +122,7 @@ class Resum:
                 yield from self.wrenches(load, self._told(load, name) if told else self._strength(load, list(only)))
         for name, member in m.members.items():
             if member.mass is not None and name != GROUND:
-                mass = self.drawing.value(member.mass, "mass")
+                mass = member.copies * self.drawing.value(member.mass, "mass")
                 ux, uy, field = (np.broadcast_to(v, self.shape) for v in self._gravity())
                 at = self.carried(self._centre(member), name)
                 yield name, *at, mass * field * ux, mass * field * uy, np.zeros(self.shape)
@@ -130,7 +133,9 @@ class Resum:
     def _strength(self, load: Any, factors: list[float]) -> np.ndarray:
         """Size of a load with its factor in each case; a hung mass pulls as the gravity of the case makes it."""
         each = np.reshape(np.array(factors, float), (-1, 1, 1))
-        if isinstance(load, Weight):
+        if isinstance(load, SpreadForce):
+            return np.broadcast_to(each, self.shape)
+        if isinstance(load, (Weight, MovingMass)):
             size = self.drawing.value(load.mass, "mass") * self._gravity()[2]
             return np.broadcast_to(each * size, self.shape)
         size = self.drawing.value(load.size, "moment" if isinstance(load, Torque) else "force")
@@ -163,6 +168,10 @@ class Resum:
             case Force():
                 ux, uy = self._direction(load)
                 yield self.bearer(load.at, load.on), *self.somewhere(load.at), size * ux, size * uy, none
+            case SpreadForce():
+                yield from self._spread(load, size)
+            case MovingForce() | MovingMass():
+                yield self._moving(load, size)
             case HaulForce():
                 return  # the rope tells what it does
             case Torque():
@@ -178,6 +187,41 @@ class Resum:
                 yield from self._couple(load.turned, size)
             case _:
                 raise TypeError(f"not a load: {load}")
+
+    def _moving(self, load: MovingForce | MovingMass, size: np.ndarray) -> Wrench:
+        """At its place along its line, which the stroke may step."""
+        m, (first, second) = self.mechanism, load.way
+        who = load.on or next(n for n in self.carriers(first) if n in self.carriers(second))
+        (ax, ay), (bx, by) = self.place(first, who), self.place(second, who)
+        stepped = {"effort": m.effort, "load": m.load, **m.loads}.get(getattr(m.stroke and m.stroke.along, "place", ""))
+        way = self.answer.drive if stepped is load else self.drawing.value(load.place, "length")
+        part = way / np.hypot(bx - ax, by - ay)
+        if isinstance(load, MovingMass):
+            ux, uy, _ = self._gravity()
+        else:
+            turn = self.answer.turn[self.index[load.turns_with]] if load.turns_with else np.zeros(self.shape)
+            angle = self.drawing.value(load.direction, "angle") + np.broadcast_to(turn, self.shape)
+            ux, uy = np.cos(angle), np.sin(angle)
+        x, y = ax + part * (bx - ax), ay + part * (by - ay)
+        return who, x, y, size * ux, size * uy, np.zeros(self.shape)
+
+    def _spread(self, load: SpreadForce, factor: np.ndarray) -> Iterator[Wrench]:
+        """By Simpson's rule, which is exact here: force and arm are straight lines over the length."""
+        first, second = load.way
+        who = load.on or next(n for n in self.carriers(first) if n in self.carriers(second))
+        (ax, ay), (bx, by) = self.place(first, who), self.place(second, who)
+        length = np.hypot(bx - ax, by - ay)
+        tx, ty = (bx - ax) / length, (by - ay) / length
+        ux, uy = -ty, tx
+        if load.direction is not None:
+            turn = self.answer.turn[self.index[load.turns_with]] if load.turns_with else np.zeros(self.shape)
+            angle = self.drawing.value(load.direction, "angle") + np.broadcast_to(turn, self.shape)
+            ux, uy = np.cos(angle), np.sin(angle)
+        seen = np.abs(tx * uy - ty * ux) if load.per == "projection" else 1.0
+        ends = [self.drawing.value(q, "line load") for q in (load.intensity, load.intensity_end or load.intensity)]
+        for part, weight in ((0.0, 1 / 6), (0.5, 4 / 6), (1.0, 1 / 6)):
+            force = factor * seen * weight * length * (ends[0] + part * (ends[1] - ends[0]))
+            yield who, ax + part * (bx - ax), ay + part * (by - ay), force * ux, force * uy, np.zeros(self.shape)
 
     def _couple(self, members: tuple[str, str], size: np.ndarray) -> Iterator[Wrench]:
         none = np.zeros(self.shape)
@@ -229,7 +273,9 @@ def unbalanced(answer: StrokeAnswer) -> dict[str, float]:
             out[who] = _worst(left[answered])
     for point in table.pins:
         # what the pin gives its members is what it takes itself: its loads, and slots that guide it
-        felt = [answer.force[k] for k, b in enumerate(answer.bearings) if (b.joint, b.word) == (point, "pin")]
+        felt = [
+            b.copies * answer.force[k] for k, b in enumerate(answer.bearings) if (b.joint, b.word) == (point, "pin")
+        ]
         own = sums.get(f"pin {point}", [np.zeros(table.shape)] * 3)
         left = np.hypot(sum(f[0] for f in felt) - own[0], sum(f[1] for f in felt) - own[1]) / largest
         out[f"pin {point}"] = _worst(left[answered])

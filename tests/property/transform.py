@@ -13,7 +13,6 @@ from typing import Any
 
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER, Mechanism, Stroke, Units
 from linkcalc.model.sketch import Drawing
-from linkcalc.parts.loads.force import Force
 from linkcalc.parts.points.coordinates import Coordinates
 
 SI_OF = {"mm": 1e-3, "in": 0.0254, "deg": radians(1), "rad": 1.0, "N": 1.0, "lbf": 4.4482216152605,
@@ -46,7 +45,7 @@ def turned(mechanism: Mechanism, by: float) -> Mechanism:
         return f"{float(drawing.value(size, 'angle')) + by!r} rad"
 
     def load(part: Any) -> Any:
-        if isinstance(part, Force) and part.direction is not None:
+        if getattr(part, "direction", None) is not None:
             return replace(part, direction=angle(part.direction))
         return part
 

@@ -15,6 +15,7 @@ class PinJoint:
 
     friction_radius  [m] radius of the friction circle: pin radius times the sine of the angle of friction
     stiffness        [N/m] of pin and bush, alike in all directions; None: they do not give
+    share            [N/m] the same of one that does not give, but shares its force with other joints by it
     """
 
     name: str
@@ -23,6 +24,7 @@ class PinJoint:
     on_pin: str = ""
     friction_radius: Value = 0.0
     stiffness: Value | None = None
+    share: Value | None = None
     angular = (False, False)
     word = "pin"
 

@@ -17,6 +17,7 @@ from linkcalc.parts.contract import TURN, Contact, Entry, Mark, Poses, Row, Rub,
 from linkcalc.parts.paths.over_pulleys import OverPulleys, Wheel, over_pulleys
 from linkcalc.parts.paths.room import check_room
 from linkcalc.parts.paths.shape import line_of
+from linkcalc.parts.stiff import stiff, stiffness_field
 from linkcalc.words import word
 
 DEAD, HAULING = "dead", "hauling"
@@ -93,6 +94,7 @@ class Rope:
     end: str = fields.choice(
         (DEAD, HAULING), "its last end: made fast, or drawn in there by an effort or load with 'haul'", DEAD
     )
+    stiffness: Size | None = stiffness_field()
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[RopeJoint]:
         wheels, contacts = [], dict[tuple[Site, str], tuple[str, list[int]]]()
@@ -108,7 +110,7 @@ class Rope:
             path = over_pulleys(wheels, sketch.drawn)
             check_room(path, sketch, [step.point for step in self.path])
             places = tuple(Place(where, site, pin, tuple(which)) for (site, pin), (where, which) in contacts.items())
-            yield RopeJoint(name, path, path.length(sketch.drawn), places, self.end == HAULING)
+            yield RopeJoint(name, path, path.length(sketch.drawn), places, self.end == HAULING, **stiff(self, sketch))
 
 
 @dataclass(frozen=True, eq=False)
@@ -135,6 +137,7 @@ class RopeJoint:
     places: tuple[Place, ...]
     hauled: bool
     on_pin: str = ""
+    share: Value | None = None
     word = "rope"
 
     @property

@@ -9,6 +9,7 @@ from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Mark, Poses, Row, Rub, Site, Size, Sketch, Value
 from linkcalc.parts.joints.slot import SlotJoint
 from linkcalc.parts.lines import Guide, Line, guide, rubless
+from linkcalc.parts.stiff import stiff, stiffness_field, turning_field
 from linkcalc.words import word
 
 
@@ -28,6 +29,8 @@ class Slide:
     length: Size | None = fields.size(
         "length", "length of the guide: its moment then presses at both ends, and rubs there", None, sign="plus"
     )
+    stiffness: Size | None = stiffness_field()
+    torsion_stiffness: Size | None = turning_field()
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlideJoint]:
         site = sketch.site(self.at, self.member) if self.at else Site(sketch.member(self.member), 0.0, 0.0)
@@ -38,7 +41,9 @@ class Slide:
         lead = line.start if isinstance(self.along, tuple) else start
         mu = sketch.coefficient("slides", self.friction)
         length = None if self.length is None else sketch.value(self.length, "length")
-        yield SlideJoint(name, site, Guide(start, line.tx, line.ty), lead, friction=mu, length=length)
+        yield SlideJoint(
+            name, site, Guide(start, line.tx, line.ty), lead, friction=mu, length=length, **stiff(self, sketch)
+        )
 
 
 @dataclass(frozen=True, eq=False)
@@ -55,12 +60,19 @@ class SlideJoint:
     on_pin: str = ""
     friction: Value = 0.0
     length: Value | None = None
+    share: Value | None = None
+    turning_stiffness: Value | None = None
     angular = (False, True)
     word = "slide"
 
     @property
     def members(self) -> tuple[int, int]:
         return self.site.member, self.line.member
+
+    @property
+    def lever(self) -> Value | None:
+        """[m] from the middle of the guide to its ends, at which it presses."""
+        return None if self.length is None else self.length / 2
 
     @property
     def _slot(self) -> SlotJoint:

@@ -11,6 +11,7 @@ from dataclasses import dataclass
 from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Mark, Poses, Push, Row, Rub, Site, Size, Sketch, Value, X, Y
 from linkcalc.parts.lines import Guide, Line, guide, rubless
+from linkcalc.parts.stiff import stiff, stiffness_field
 from linkcalc.words import word
 
 
@@ -27,12 +28,15 @@ class Slot:
     friction: Size | None = fields.size(
         "number", "coefficient of friction, if not the one for all slots", None, sign="not minus"
     )
+    stiffness: Size | None = stiffness_field()
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlotJoint]:
         alone = self.of is not None or len(sketch.carriers(self.point)) < 2
         line = guide(sketch, self.along, self.on, self.point)
         mu = sketch.coefficient("slots", self.friction)
-        yield SlotJoint(name, sketch.site(self.point, self.of), line, "" if alone else self.point, mu)
+        yield SlotJoint(
+            name, sketch.site(self.point, self.of), line, "" if alone else self.point, mu, **stiff(self, sketch)
+        )
 
 
 @dataclass(frozen=True, eq=False)
@@ -44,6 +48,7 @@ class SlotJoint:
     line: Guide
     on_pin: str = ""
     friction: Value = 0.0
+    share: Value | None = None
     angular = (False,)
     word = "slot"
 

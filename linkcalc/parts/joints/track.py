@@ -15,6 +15,7 @@ from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Entry, Mark, Poses, Push, Row, Rub, Site, Size, Sketch, Value, X, Y
 from linkcalc.parts.lines import rubless
 from linkcalc.parts.paths.curves import Arc, Foot, Smooth, arc_through, smooth_through
+from linkcalc.parts.stiff import stiff, stiffness_field
 from linkcalc.words import word
 
 _FLAT = 1e-9
@@ -37,6 +38,7 @@ class Track:
     friction: Size | None = fields.size(
         "number", "coefficient of friction, if not the one for all slots", None, sign="not minus"
     )
+    stiffness: Size | None = stiffness_field()
 
     one_of = ("arc", "through")
 
@@ -52,7 +54,9 @@ class Track:
             curve = smooth_through(places)
         base = Site(sketch.member(self.on), 0.0, 0.0)
         mu = sketch.coefficient("slots", self.friction)
-        yield TrackJoint(name, sketch.site(self.point, self.of), base, curve, "" if alone else self.point, mu)
+        yield TrackJoint(
+            name, sketch.site(self.point, self.of), base, curve, "" if alone else self.point, mu, **stiff(self, sketch)
+        )
 
     def _check_bent(self, sketch: Sketch) -> None:
         (ax, ay), (bx, by), (cx, cy) = (sketch.point(p) for p in self.arc or ())
@@ -75,6 +79,7 @@ class TrackJoint:
     curve: Arc | Smooth
     on_pin: str = ""
     friction: Value = 0.0
+    share: Value | None = None
     angular = (False,)
     word = "track"
 

@@ -6,8 +6,9 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 
 from linkcalc.parts import fields
-from linkcalc.parts.contract import TURN, Mark, Poses, Row, Rub, Site, Sketch, Value
+from linkcalc.parts.contract import TURN, Mark, Poses, Row, Rub, Site, Size, Sketch, Value
 from linkcalc.parts.joints.pin import PinJoint
+from linkcalc.parts.stiff import stiff, stiffness_field, turning_field
 from linkcalc.words import word
 
 
@@ -18,10 +19,12 @@ class Weld:
 
     members: tuple[str, str] = fields.names("member", "the two members; force and moment are told on the first")
     at: str = fields.name("point", "where they are joined, and where force and moment are told")
+    stiffness: Size | None = stiffness_field()
+    torsion_stiffness: Size | None = turning_field()
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[WeldJoint]:
         a, b = self.members
-        yield WeldJoint(name, sketch.site(self.at, a), sketch.site(self.at, b))
+        yield WeldJoint(name, sketch.site(self.at, a), sketch.site(self.at, b), **stiff(self, sketch))
 
 
 @dataclass(frozen=True, eq=False)
@@ -32,6 +35,8 @@ class WeldJoint:
     site: Site
     other: Site
     on_pin: str = ""
+    share: Value | None = None
+    turning_stiffness: Value | None = None
     angular = (False, False, True)
     word = "weld"
 

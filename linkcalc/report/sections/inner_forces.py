@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from linkcalc.design.answer import plate
 from linkcalc.design.members import MembersAnswer
 from linkcalc.design.peaks import Peak
 from linkcalc.report.blocks import Block, Cell, Column, Note, Table
@@ -20,7 +21,7 @@ def inner_forces(answer: MembersAnswer) -> list[Block]:
     )  # fmt: skip
     rows: list[tuple[Cell, ...]] = []
     for one in answer.members:
-        lead = one.member
+        lead = plate(one.member, stroke.mechanism.members[one.member].copies)
         for name, peak in (
             ("axial force N", one.axial),
             ("shear force V", one.shear),

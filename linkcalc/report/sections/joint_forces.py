@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 
-from linkcalc.design.answer import StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer, plate
 from linkcalc.report.bearings import direction, own_direction, resultant
 from linkcalc.report.blocks import Block, Cell, Column, Note, Table
 from linkcalc.report.edge import Edge
@@ -40,7 +40,7 @@ def _forces(answer: StrokeAnswer) -> Table:
             shared = shared or part < 0.999
             feels = edge.one(worst.value, "force") * part if worst else None
             angles = [edge.one(a[(i, *worst.index)], "angle") if worst else None for a in (points, own)]
-            rows.append((*(lead if n == 0 else ("",) * len(lead)), answer.bearings[i].member, feels, *angles))
+            rows.append((*(lead if n == 0 else ("",) * len(lead)), answer.bearings[i].text, feels, *angles))
     columns = [
         Column("joint"), Column("kind"), Column("largest force", edge.unit("force"), zero=edge.zero("force")),
         *_where(answer, edge), Column("on member"), Column("feels", edge.unit("force"), zero=edge.zero("force")),
@@ -82,7 +82,12 @@ def _two_force(answer: StrokeAnswer) -> list[Block]:
         axial = answer.axial_in(member)
         pull, push = (largest(answer, f"axial force in {member}", axial, sense) for sense in (1, -1))
         sides = (pull if pull and pull.value > 0 else None, push if push and push.value < 0 else None)
-        rows.append((member, *(cell for side in sides for cell in _worst_cells(answer, edge, side, "force"))))
+        rows.append(
+            (
+                plate(member, answer.mechanism.members[member].copies),
+                *(cell for side in sides for cell in _worst_cells(answer, edge, side, "force")),
+            )
+        )
     unit, zero = edge.unit("force"), edge.zero("force")
     columns = (
         Column("two-force member"), Column("largest tension", unit, zero=zero), *_where(answer, edge),

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from linkcalc.design.answer import StrokeAnswer
+from linkcalc.design.answer import StrokeAnswer, plate
 from linkcalc.report.bearings import direction, own_direction, resultant
 from linkcalc.report.blocks import Block, Column, Table
 from linkcalc.report.edge import Edge
@@ -28,11 +28,14 @@ def pose_forces(answer: StrokeAnswer, pose: int) -> list[Block]:
             numbers = (*(answer.force[(i, axis, *at)] for axis in (0, 1)), size[(i, *at)])
             turn = (edge.one(answer.moment[(i, *at)], "moment"),) if turning else ()
             angles = (edge.one(a[(i, *at)], "angle") for a in (points, own))
-            rows.append((b.joint, b.word, b.member, *(edge.one(n, "force") for n in numbers), *angles, *turn))
+            rows.append((b.joint, b.word, b.text, *(edge.one(n, "force") for n in numbers), *angles, *turn))
         of_case = f", case {name}" if len(answer.cases) > 1 else ""
         if rows:
             blocks.append(Table(columns, tuple(rows), f"Force of each joint on each member{of_case}", keys=3))
-        axial = tuple((m, edge.one(answer.axial_in(m)[at], "force")) for m in answer.two_force)
+        axial = tuple(
+            (plate(m, answer.mechanism.members[m].copies), edge.one(answer.axial_in(m)[at], "force"))
+            for m in answer.two_force
+        )
         if axial:
             heads = (Column("two-force member"), Column("tension (plus) or compression (minus)", force, zero=zero))
             blocks.append(Table(heads, axial, f"Two-force members{of_case}"))

@@ -160,7 +160,7 @@ def test_a_frame_that_can_move() -> None:
 
 def test_held_more_than_needed() -> None:
     braced = STRAIGHT.replace("[100, 0]", "[100, 30]") + '[welds.w]\nmembers = ["left", "ground"]\nat = "A"\n'
-    text = refused(braced + ON_LEFT)
+    text = refused(braced + ON_LEFT + '[effort]\ntorque_on = "left"\n')
     assert "held 1 time more than needed, among joints B, C, w" in text
 
 
@@ -176,8 +176,9 @@ def test_a_special_pose() -> None:
     assert "draw it a little off that pose" in text
 
 
-def test_a_lasting_excess_names_its_joints() -> None:
-    text = refused(PARALLEL + EFFORT + LOAD + '[stroke]\nturn = "crank"\nto = 90\n')
+def test_an_excess_that_does_not_last_names_its_joints() -> None:
+    third = PARALLEL.replace('"G", distance = 40', '"G", distance = 41')
+    text = refused(third + EFFORT + LOAD + '[stroke]\nturn = "crank"\nto = 90\n')
     assert "held 1 time more than needed" in text
     assert all(f" {pin}" in text for pin in "ABCDGH")
 

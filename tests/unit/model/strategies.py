@@ -53,7 +53,7 @@ UNITS = {
     "length": ["mm", "in", '"'], "angle": ["deg", "rad", "°"], "force": ["N", "lbf"], "mass": ["kg", "lb"],
     "moment": ["N*m", "in-lbf"], "stress": ["MPa", "psi"], "stiffness": ["N/mm", "lbf/in"],
     "acceleration": ["m/s^2", "ft/s²"], "torsion stiffness": ["N*mm/turn", "lbf*in/rad"], "pressure": ["bar", "psi"],
-    "volume": ["cm^3", "in^3"],
+    "volume": ["cm^3", "in^3"], "line load": ["N/mm", "lbf/ft"],
 }  # fmt: skip
 
 

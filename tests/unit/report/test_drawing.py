@@ -134,7 +134,7 @@ def test_what_is_not_there_is_a_clear_fault(ask, message):
 TWO_SPOTS = ("bar", "stem", "path", "guide", "pair", "round of rope", "rope", "line of rope", "line of track", "spring",
              "gas spring", "ordinates", "constant spring", "cylinder", "screw", "force over length",
              "round of gear", "round of rack", "line of gear", "line of rack", "line of contact",
-             "segment", "rim")  # fmt: skip
+             "segment", "rim", "spread")  # fmt: skip
 NAMED = ("bar", "pin", "slot", "slide", "weld", "point", "arrow", "couple", "rope", "track", "gear", "rack", "contact",
          "value", "remark")  # fmt: skip
 STEM = """
@@ -204,6 +204,16 @@ size = 5
 at = "E"
 along = ["A", "E"]
 size = 5
+[loads.bed]
+spread = ["B", "C"]
+intensity = 2
+[loads.wheel]
+moves_along = ["B", "C"]
+direction = -80
+size = 6
+[loads.trolley]
+mass_along = ["B", "C"]
+mass = 6
 [loads.coil]
 spring = ["A", "E"]
 rate = 1
