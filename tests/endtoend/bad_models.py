@@ -125,7 +125,8 @@ BAD = [
         'ground = ["A", "D"]',
         'ground = ["A"]',
         "members.handle: 3 degrees of freedom, of which the stroke takes one: handle, strut, arm can move; "
-        "hold them by 2 more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3",
+        "hold them by 2 more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3; or name in 'free' what settles"
+        " where it balances",
         blamed='handle = ["A", "B", "grip"]',
     ),
     _changed(
@@ -133,7 +134,8 @@ BAD = [
         'ground = ["A", "B"]',
         'ground = ["A"]',
         "members.bar: 2 degrees of freedom: bar, tie can move; "
-        "hold them by 2 more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3",
+        "hold them by 2 more: a slot, gear or rack holds 1, a pin or slide 2, a weld 3; or name in 'free' what settles"
+        " where it balances",
         blamed='bar = ["A", "C"]',
         model=FRAME,
     ),
