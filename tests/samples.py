@@ -199,9 +199,9 @@ pan = { points = ["B"], mass = 2 }
 member = "pan"
 along = 80
 [ropes.line]
-path = ["M", { pulley = "T", radius = 6, wrap = "left" }, "B"]
+path = ["M", { pulley = "T", radius = 6, wrap = "left", pin_friction = 0.15, pin_diameter = 5 }, "B"]
 [ropes.fall]
-path = ["Q", { pulley = "K", radius = 3, wrap = "right" }, "W"]
+path = ["Q", { pulley = "K", radius = 3, wrap = "right", friction = 0.2, turns = 0.5 }, "W"]
 end = "hauling"
 [effort]
 haul = "fall"
@@ -234,7 +234,11 @@ weight = { points = ["S", "foot"], mass = 6 }
 member = "weight"
 along = 85
 [ropes.strap]
-path = [{ drum = "O", radius = 10, wrap = "left", on = "lever" }, { pulley = "P", radius = 4, wrap = "right" }, "S"]
+path = [
+  { drum = "O", radius = 10, wrap = "left", on = "lever" },
+  { pulley = "P", radius = 4, wrap = "right", efficiency = 0.9 },
+  "S",
+]
 [effort]
 torque_on = "lever"
 [load]
@@ -356,6 +360,7 @@ force = 90
 length = 340
 stroke = 120
 rise = 1.3
+seal_friction = 6
 [loads.strip]
 constant_spring = ["K", "B"]
 pull = 8

@@ -203,7 +203,7 @@ class StrokeAnswer:
     verdicts: tuple[Verdict, ...] = ()
     caveats: tuple[Caveat, ...] = ()
     cautions: tuple[Caveat, ...] = ()  # what can hurt; item: the loads that it is so with
-    readings: tuple[Reading, ...] = ()  # what loads tell of themselves
+    readings: tuple[Reading, ...] = ()  # what loads tell of themselves, and ropes of their ends
     rests: tuple[Rest, ...] = ()  # where free members balance that nothing drives
     marks: tuple[Mark, ...] = ()  # joints and loads in the drawing pose
 

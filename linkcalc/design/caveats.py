@@ -12,6 +12,7 @@ from linkcalc.design.curves import Curves
 from linkcalc.design.events import SLACK
 from linkcalc.design.limits import limits
 from linkcalc.design.places import place
+from linkcalc.design.unusual import unusual
 from linkcalc.mechanics.balance import part_of_motion
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.state import Status
@@ -35,7 +36,9 @@ def caveats(curves: Curves, path: Path | None, events: Sequence[Event]) -> tuple
         *_shared(curves),
         *_held(curves, events),
         *_free(curves, events),
+        *_several(curves),
         *limits(curves),
+        *unusual(curves.survey.ready.drawing),
         *_failed(curves),
     )
 
@@ -159,7 +162,7 @@ def _shared(curves: Curves) -> Iterator[Caveat]:
 def _held(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
     """Where friction holds the mechanism without any effort: none moves it on and none lets it back."""
     pushing = curves.survey.ready.pushing
-    if not curves.survey.ready.chain.rubbing or not pushing.effort_asked:
+    if not pushing.rubbing or not pushing.effort_asked:
         return
     effort = curves.samples("effort")
     for case in range(0, len(pushing.cases), 2):
@@ -176,6 +179,24 @@ def _held(curves: Curves, events: Sequence[Event]) -> Iterator[Caveat]:
             yield Caveat(
                 "effort",
                 f"holds by itself {where}{of}: friction alone keeps the load; an effort the other way lets it back",
+            )
+
+
+def _several(curves: Curves) -> Iterator[Caveat]:
+    """Where the equations of friction have another solution."""
+    ready, several = curves.survey.ready, curves.shown.solved.balance.several
+    if several is None:
+        return
+    for case, name in enumerate(ready.pushing.cases):
+        for start, stop in _runs(np.broadcast_to(several, curves.shown.solved.balance.status.shape)[case, 0]):
+            where = "in the drawing pose"
+            if ready.steps:
+                first, last = (place(ready, float(curves.drive[k])) for k in (start, stop))
+                where = f"from {first} to {last}" if start < stop else f"at {first}"
+            yield Caveat(
+                "effort",
+                f"friction has more than one answer {where}, case {name}: the one told hangs together with that "
+                "without friction; in the other the mechanism is wedged",
             )
 
 

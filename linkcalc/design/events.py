@@ -75,7 +75,7 @@ def _passages(curves: Curves, zeros: Zeros) -> Iterator[Event]:
             yield Event(_making(curves, name, case, drive), contact, of, drive, 0.0, "force")
         elif name == "effort" and any(abs(drive - d) <= near for d in dead):
             continue  # it changes sign without bound there, not through nothing
-        elif name == "effort" and not curves.survey.ready.chain.rubbing:
+        elif name == "effort" and not curves.survey.ready.pushing.rubbing:
             yield Event("reversal", "effort", of, drive, 0.0, curves.survey.quantities[name].kind)
         elif name == "effort":
             # no effort is on the edge of the band between moving on and moving back

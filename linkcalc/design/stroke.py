@@ -171,13 +171,14 @@ def _answer(ready: Ready, survey: Survey, shown: Shown, *, checks, found, judged
         loose=ready.loose is not None,
         steady=_full(np.nan if solved.closed.steady is None else solved.closed.steady.astype(float), shape),
         rests=rests(ready),
-        rubs=ready.chain.rubbing,
+        rubs=ready.pushing.rubbing,
         checks=checks,
         events=found,
         verdicts=judged,
         caveats=warned,
         cautions=_cautions(survey),
-        readings=tuple(Reading(s.load, s.quantity, s.kind, _full(s.of(solved, p), shape)) for s in spoken(p)),
+        readings=tuple(Reading(s.load, s.quantity, s.kind, _full(s.of(solved, p), shape)) for s in spoken(p))
+        + tuple(Reading(rope, end, "force", _full(q.of(shown), shape)) for rope, end, q in survey.rope_ends()),
         marks=tuple(j.mark(drawn) for j in nominal.chain.joints)
         + tuple(a.pusher.mark(drawn) for a in nominal.pushing.all),
     )

@@ -10,7 +10,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from linkcalc.design.inner import KINDS, inner
-from linkcalc.design.told import Spoken, spoken, watched
+from linkcalc.design.told import Fitting, Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
 from linkcalc.mechanics.pipeline import sides
@@ -25,6 +25,7 @@ if TYPE_CHECKING:
     from linkcalc.design.inside import Inside
 
 EFFORT_SPEED, LOAD_SPEED = "speed of the effort", "speed of the load"
+ROPE_ENDS = ("first tension", "last tension")
 UNBOUNDED = 1e9
 """A ratio above this is at a dead point, where it has no bound."""
 
@@ -72,7 +73,7 @@ class Survey:
         self.ropes = tuple(dict.fromkeys(s.part_of for s in shown.sides if s.part_of))
         self.contacts = tuple(ready.chain.joints[k].name for k, _, law in ready.chain.gives if law.one_sided)
         self.spoken = spoken(ready.pushing)
-        self.watched = watched(ready.pushing)
+        self.watched = watched(ready.pushing, ready.chain.joints)
         members = self.inside.members if inside else self._asked_about()
         self.quantities: dict[str, Quantity] = {q.name: q for q in [*self._all(), *self._inner(members)]}
 
@@ -85,6 +86,13 @@ class Survey:
         for k, name in enumerate(names):
             out[k] = self.quantities[name].of(shown)
         return out
+
+    def rope_ends(self) -> Iterator[tuple[str, str, Quantity]]:
+        """The tensions at both ends of ropes whose pulleys rub: name of the rope, of the tension, the quantity."""
+        for rope in self.ropes:
+            for end in ROPE_ENDS:
+                if f"{end} of {rope}" in self.quantities:
+                    yield rope, end, self.quantities[f"{end} of {rope}"]
 
     def side_name(self, side: Side) -> str:
         return f"pin {side.pin}" if side.member < 0 else self.ready.drawing.members[side.member]
@@ -106,7 +114,7 @@ class Survey:
             out.append(Quantity(EFFORT_SPEED, "number", lambda s: s.solved.balance.effort_speed))
         if p.load and self.ready.chain.coordinate is not None:
             out.append(Quantity(LOAD_SPEED, "number", lambda s: s.solved.balance.load_speed))
-        if self.ready.chain.rubbing and p.effort_asked:
+        if p.rubbing and p.effort_asked:
             out.append(
                 Quantity("frictionless effort", p.effort[0].pusher.kind, lambda s: s.solved.balance.frictionless)
             )
@@ -130,6 +138,9 @@ class Survey:
         for rope in self.ropes:
             first = next(k for k, side in enumerate(self.sides) if side.part_of == rope)
             out.append(Quantity(f"tension of {rope}", "force", _carried(first)))
+            if len(self.sides[first].carried) > 1:  # with friction it is not the same all along
+                for end, part in zip(ROPE_ENDS, (0, -1), strict=True):
+                    out.append(Quantity(f"{end} of {rope}", "force", _carried(first, part)))
         for k, one in enumerate(self.ready.chain.joints):
             if one.name in self.contacts:
                 out.append(Quantity(f"room at {one.name}", "length", _room(self.ready, k)))
@@ -157,7 +168,7 @@ class Survey:
             for name, of in self.inside.of(member):
                 yield Quantity(inner(name, member), KINDS[name], of)
 
-    def _told(self, one: Spoken) -> Callable[[Shown], Value]:
+    def _told(self, one: Spoken | Fitting) -> Callable[[Shown], Value]:
         return lambda shown: one.of(shown.solved, self.ready.pushing)
 
 
@@ -191,8 +202,17 @@ def _room(ready: Ready, joint: int) -> Callable[[Shown], Value]:
     return lambda shown: ready.chain.joints[joint].gap(shown.solved.closed.at)[0]
 
 
-def _carried(k: int) -> Callable[[Shown], Value]:
-    return lambda shown: shown.sides[k].carried
+def _carried(k: int, part: int | None = None) -> Callable[[Shown], Value]:
+    """The tension of a rope in one of its parts; without: in the one that is the tightest."""
+
+    def of(shown: Shown) -> Value:
+        parts = shown.sides[k].carried
+        if part is not None or len(parts) == 1:
+            return parts[part or 0]
+        tightest: Value = np.max(np.broadcast_arrays(*parts), axis=0)
+        return tightest
+
+    return of
 
 
 def _axial(two: TwoForce) -> Callable[[Shown], Value]:

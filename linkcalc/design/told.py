@@ -7,13 +7,14 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from linkcalc.mechanics.pushing import Acting, Pushing, strength
+from linkcalc.mechanics.pushing import Acting, Column, Pushing, add_pushes, strength
 from linkcalc.mechanics.solved import Solved
+from linkcalc.mechanics.sums import dot
 from linkcalc.model.told import limits_of, told_by
-from linkcalc.parts.contract import Limit
+from linkcalc.parts.contract import Joint, Limit
 from linkcalc.parts.pose import Poses, Value
 
-Of = Callable[[Poses, Value], Value]
+Of = Callable[[Poses, Value, Value], Value]
 
 
 @dataclass(frozen=True, eq=False)
@@ -40,7 +41,7 @@ class Spoken:
         total: Value = np.nan
         with np.errstate(all="ignore"):
             for acting, told in self.parts:
-                value = told(at, _strength(acting, solved, pushing))
+                value = told(at, _strength(acting, solved, pushing), _motion(acting, solved, pushing))
                 here = np.not_equal(acting.factor, 0.0)
                 total = np.where(here, value, total)
         return total
@@ -53,7 +54,18 @@ class Watched:
     load: str
     text: str
     name: str
-    room: Spoken
+    room: Spoken | Fitting
+
+
+@dataclass(frozen=True, eq=False)
+class Fitting:
+    """The room of a joint's own limit: that of a rope on its pulley."""
+
+    limit: Limit
+
+    def of(self, solved: Solved, pushing: Pushing) -> Value:  # noqa: ARG002
+        with np.errstate(all="ignore"):
+            return self.limit.room(solved.closed.at, 0.0)
 
 
 def spoken(pushing: Pushing) -> list[Spoken]:
@@ -66,19 +78,34 @@ def spoken(pushing: Pushing) -> list[Spoken]:
     return [Spoken(load, quantity, kind, parts) for (load, quantity), (kind, parts) in found.items()]
 
 
-def watched(pushing: Pushing) -> list[Watched]:
-    """Every limit of every load."""
+def watched(pushing: Pushing, joints: Sequence[Joint]) -> list[Watched]:
+    """Every limit of every load, and of every joint."""
     out: list[Watched] = []
     for acting in pushing.all:
         for limit in limits_of(acting.pusher):
             out.append(_watched(acting, limit, len(out)))
+    for joint in joints:
+        for limit in limits_of(joint):
+            out.append(Watched(joint.name, limit.text, f"room {len(out)} of {joint.name}", Fitting(limit)))
     return out
 
 
 def _watched(acting: Acting, limit: Limit, number: int) -> Watched:
     load = acting.pusher.name
-    room = Spoken(load, f"room {number}", "number", [(acting, limit.room)])
+    room = Spoken(load, f"room {number}", "number", [(acting, lambda at, strength, _: limit.room(at, strength))])
     return Watched(load, limit.text, room.name, room)
+
+
+def _motion(acting: Acting, solved: Solved, pushing: Pushing) -> Value:
+    """Which way it moves along its push: +1, -1, or 0.0 where it stands."""
+    speed, columns = solved.closed.speed, len(solved.closed.speed)
+    if not speed or not hasattr(acting.pusher, "told"):
+        return 0.0
+    push: Column = [0.0] * columns
+    add_pushes(push, 1.0, acting.pusher.push(solved.closed.at))
+    # without a stroke the drive counts the way that the effort pushes
+    forward = pushing.forward or np.sign(solved.balance.effort_speed)
+    return np.sign(pushing.sense * forward * dot(speed, push))
 
 
 def _strength(acting: Acting, solved: Solved, pushing: Pushing) -> Value:

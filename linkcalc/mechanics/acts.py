@@ -40,6 +40,10 @@ class Act:
     spread: Spread | None = None
 
 
+def _strengths(solved: Solved) -> tuple[Value, Value, list[Value]]:
+    return solved.balance.effort, solved.balance.load, solved.balance.seals
+
+
 def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[Act]]:
     """Index of a moving member -> everything that acts on it (on one plate of it): joints, loads, weights."""
     at, pins, plates = solved.closed.at, ready.drawing.pins, ready.plates
@@ -50,7 +54,7 @@ def acts(ready: Ready, solved: Solved, sides: Sequence[Side]) -> dict[int, list[
             moment = 0.0 if side.own_point and isinstance(side.moment, float) else side.moment
             one = _own(at, side.member, side.joint, "joint", x, y, side.fx, side.fy, moment, side.own_point)
             out[side.member].append(one)
-    for acting, whole in sized_pushers(ready.pushing, at, solved.balance.effort, solved.balance.load):
+    for acting, whole in sized_pushers(ready.pushing, at, *_strengths(solved)):
         pusher: Any = acting.pusher
         if hasattr(pusher, "through"):
             continue  # the joint has told it

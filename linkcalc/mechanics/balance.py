@@ -17,10 +17,12 @@ import numpy as np
 
 from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.chain import Chain, pins_strained
-from linkcalc.mechanics.friction import rub
+from linkcalc.mechanics.drag import Drive, Response
+from linkcalc.mechanics.friction import Rubbed, rub
 from linkcalc.mechanics.motion import Closed, fastest
 from linkcalc.mechanics.pushing import Column, Pushing, acts, add_pushes, column, sized_pushers, strength, unknown
 from linkcalc.mechanics.state import Status
+from linkcalc.mechanics.sums import dot, zero
 from linkcalc.parts.pose import Array, Codes, Mask, Value
 
 DEAD = 1e-9  # speed of the effort, over the fastest in the mechanism, below which no answer is given
@@ -38,6 +40,10 @@ class Balance:
     status        Status of each entry
     frictionless  what the effort would be without friction
     friction      friction (or the like) of each of the chain's rubs, along its push [N] or [N m]
+    parts         for each of the chain's drags the pulls in its parts over that in its last
+    seals         friction within each of the pushers, along its push [N]; empty if none has any
+    acting        all of that as sizes, each with what it does to the coordinates for 1
+    several       where friction has another answer beside the one told; None: nowhere that is known
     """
 
     effort: Value
@@ -51,6 +57,10 @@ class Balance:
     status: Codes
     frictionless: Value = np.nan
     friction: list[Value] = field(default_factory=list)
+    parts: list[list[Value]] = field(default_factory=list)
+    seals: list[Value] = field(default_factory=list)
+    acting: list[tuple[Value, Column]] = field(default_factory=list)
+    several: Mask | None = None
 
     @property
     def force_ratio(self) -> Value:
@@ -61,7 +71,7 @@ class Balance:
     @property
     def ideal_ratio(self) -> Value:
         """Velocity ratio of the geometry alone; NaN without a load."""
-        if _zero(self.load_speed):
+        if zero(self.load_speed):
             return np.nan
         with np.errstate(all="ignore"):
             return -np.divide(self.effort_speed, self.load_speed)
@@ -83,7 +93,6 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
     load: Value = np.nan
     tare: Value = np.nan
     dead: Mask | None = None
-    jammed: Mask | None = None
     with np.errstate(all="ignore"):
         if pushing.load and not pushing.load_asked:
             load = strength(pushing.load, at)
@@ -107,20 +116,18 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
         beside = pins_strained(chain, at, sized_pushers(pushing, at, effort, load))
         negative = closed.factored.solve([*total, *beside], transposed=True)
         frictionless = effort
-        friction: list[Value] = []
-        if chain.rubs and (speed or any(one.always for _, one in chain.rubs)):
-            asked = load_unit if pushing.load_asked else effort_unit
-            asked_speed = load_speed if pushing.load_asked else effort_speed
+        rubbed = Rubbed()
+        if (pushing.rubbing and speed) or any(one.always for _, one in chain.rubs):
+            asked, asked_speed = (load_unit, load_speed) if pushing.load_asked else (effort_unit, effort_speed)
             sense = pushing.sense * (pushing.forward or np.sign(effort_speed))
-            answer = load if pushing.load_asked else effort
-            beside = pins_strained(chain, at, acts(pushing.load if pushing.load_asked else pushing.effort))
-            still = [-g for g in given]
-            found = rub(chain, closed, sense, asked, asked_speed, answer, negative, still, beside)
-            more = found.unknown - answer
-            total = _sum(total, (more, asked), *zip(found.amounts, found.columns, strict=True))
-            frictionless = effort if pushing.load_asked else found.frictionless
-            effort, load = (effort, found.unknown) if pushing.load_asked else (found.unknown, load)
-            negative, friction, jammed = found.negative, found.amounts, found.jammed
+            start = Response(negative, load if pushing.load_asked else effort)
+            strained = pins_strained(chain, at, acts(pushing.load if pushing.load_asked else pushing.effort))
+            drive = Drive(closed, asked, asked_speed, strained)
+            rubbed = rub(chain, drive, pushing, sense, start, [-g for g in given])
+            total = _sum(total, (rubbed.unknown - start.unknown, asked), *rubbed.acting)
+            frictionless = effort if pushing.load_asked else rubbed.frictionless
+            effort, load = (effort, rubbed.unknown) if pushing.load_asked else (rubbed.unknown, load)
+            negative = rubbed.negative
         if chain.floor and speed:
             effort, frictionless, tare = (_cleared(chain, speed, e, effort_speed) for e in (effort, frictionless, tare))
         unbalance = disagreement = _UNCHECKED
@@ -128,8 +135,8 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
             unbalance, disagreement = _checks(chain, closed.entries, negative, total, effort_unit, effort_speed, effort)
     multipliers = chain.whole([-v if lost is None else np.where(lost, np.nan, -v) for v in negative], given)
     status = _status(closed, multipliers, dead, len(pushing.cases))
-    if jammed is not None:
-        status = np.where(jammed & (status == Status.SINGULAR), np.int8(Status.JAMMED), status)
+    if rubbed.jammed is not None:
+        status = np.where(rubbed.jammed & (status == Status.SINGULAR), np.int8(Status.JAMMED), status)
     whole = Balance(
         effort,
         load,
@@ -141,7 +148,11 @@ def balance(chain: Chain, closed: Closed, pushing: Pushing, *, checked: bool = T
         disagreement,
         status,
         frictionless,
-        friction,
+        rubbed.amounts,
+        rubbed.parts,
+        rubbed.seals,
+        rubbed.acting,
+        rubbed.several,
     )
     without = unknown(pushing.all, at)
     return whole if without is None else failed(whole, without & closed.fine, Status.NO_FORCE)
@@ -172,13 +183,7 @@ def _cleared(chain: Chain, speed: Sequence[Value], effort: Value, effort_speed: 
 
 
 def _power(speed: Sequence[Value], push: Column) -> Value:
-    """Speed times force, over all coordinates."""
-    total: Value = 0.0
-    if speed:
-        for v, q in zip(speed, push, strict=True):
-            if not (_zero(v) or _zero(q)):
-                total = total + v * q
-    return total
+    return dot(speed, push) if speed else 0.0
 
 
 _UNCHECKED = np.full((1, 1, 1), np.nan)
@@ -198,7 +203,7 @@ def _strongest(chain: Chain, push: Column) -> Value:
     """Largest generalised force, moments counted at the size of the mechanism."""
     force: Value = 0.0
     for q, size in zip(push, chain.column_size, strict=True):
-        if not _zero(q):
+        if not zero(q):
             force = np.maximum(force, np.abs(q) / size)
     return force
 
@@ -210,7 +215,7 @@ def _sum(rest: Column, *more: tuple[Value, Column] | None) -> Column:
             continue
         size, unit = item
         for k, q in enumerate(unit):
-            if not _zero(q):
+            if not zero(q):
                 total[k] = total[k] + size * q
     return total
 
@@ -226,20 +231,20 @@ def _checks(
 ) -> tuple[Array, Array]:
     """What is left of the equations of equilibrium, and of the drive's multiplier; places that are held do not hold."""
     held = range(chain.joint_rows, chain.joint_rows + len(chain.holds))
-    left: Column = [-q if not _zero(q) else 0.0 for q in total]
+    left: Column = [-q if not zero(q) else 0.0 for q in total]
     for (i, j), e in zip(chain.places, entries, strict=True):
-        if not (_zero(negative[i]) or i in held):
+        if not (zero(negative[i]) or i in held):
             left[j] = left[j] + e * negative[i]
     most: Value = 1e-300
     for m, size in zip([*negative, *total], [*(1.0 / chain.row_size), *(1.0 / chain.column_size)], strict=True):
-        if not _zero(m):
+        if not zero(m):
             most = np.maximum(most, np.abs(m) if size == 1.0 else np.abs(m) * size)
     over: Value = 0.0
     for m, size in zip(left, 1.0 / chain.column_size, strict=True):
-        if not _zero(m):
+        if not zero(m):
             over = np.maximum(over, np.abs(m) if size == 1.0 else np.abs(m) * size)
     unbalance = np.asarray(over / most, float)
-    if not any(not _zero(q) for q in effort_unit) or chain.rows == chain.joint_rows:
+    if not any(not zero(q) for q in effort_unit) or chain.rows == chain.joint_rows:
         return unbalance, np.zeros_like(unbalance)
     work = np.maximum(np.abs(effort * effort_speed), DEAD * most * (chain.size if chain.row_size[-1] != 1.0 else 1.0))
     return unbalance, np.asarray(np.abs(negative[-1]) / work, float)
@@ -257,10 +262,6 @@ def _status(closed: Closed, multipliers: Sequence[Value], dead: Mask | None, cas
     if not closed.fine.all():
         status[~np.broadcast_to(closed.fine, shape)] = Status.OUT_OF_REACH
     return status
-
-
-def _zero(value: Value) -> bool:
-    return isinstance(value, float) and value == 0.0
 
 
 def part_of_motion(chain: Chain, closed: Closed, pushing: Pushing) -> tuple[Array, Array]:

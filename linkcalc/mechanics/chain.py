@@ -19,7 +19,7 @@ from linkcalc.mechanics.eliminate import Elimination, Factors
 from linkcalc.mechanics.pushing import Acting
 from linkcalc.mechanics.redundancy import Sharing
 from linkcalc.mechanics.shared_factors import SharedElimination
-from linkcalc.parts.contract import TURN, Drive, Give, Joint, Push, Row
+from linkcalc.parts.contract import TURN, Drag, Drive, Give, Joint, Push, Row
 from linkcalc.parts.pose import Array, Mask, Poses, Value
 
 _ROUNDING = 2e-15  # of the size of the mechanism
@@ -40,7 +40,7 @@ class Chain:
 
     moving      number of moving members
     rubs        (number of the joint, its friction or the like) of every joint that rubs
-    rubbing     True if some of that is friction
+    drags       the same of every rope that loses on its pulleys
     toothed     True if some joint is known but for whole teeth or turns
     size        [m] size of the mechanism: what lengths are compared with
     holds       coordinates that are held besides the drive, while free members settle
@@ -78,7 +78,8 @@ class Chain:
         self._partly = {k for k, _, _ in gives}
         self.joint_rows = len(angular)
         self.rubs = tuple((k, rub) for k, joint in enumerate(self.joints) for rub in joint.rubs())
-        self.rubbing = any(not rub.always for _, rub in self.rubs)
+        dragging = ((k, joint.drag()) for k, joint in enumerate(self.joints) if hasattr(joint, "drag"))
+        self.drags: tuple[tuple[int, Drag], ...] = tuple((k, drag) for k, drag in dragging if drag is not None)
         self.toothed = any(hasattr(joint, "grain") for joint in self.joints)
         angular.extend(hold.kind == "angle" for hold in self.holds)
         if coordinate is not None:

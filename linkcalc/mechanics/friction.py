@@ -1,9 +1,7 @@
 """Friction: what each joint's reaction costs, solved together with the reactions it depends on.
 
 Statics is linear in the frictions: every multiplier, and the effort, is its frictionless value plus a response to each
-friction of 1. So all that is left is one unknown a rubbing joint, its normal force N = |reaction(N)|. From the
-frictionless values the iteration N <- |reaction(N)| contracts by about the friction angle; where it does not (close to
-jamming), Newton goes on, with the friction raised step by step from nothing. What then finds no answer jams.
+friction of 1. So all that is left is one unknown a rubbing joint, its normal force (see ``normals``).
 
 What teeth push each other apart with is such an unknown too, but pushes the same way in either sense of motion: it
 is no friction, and belongs to the frictionless answer.
@@ -12,235 +10,169 @@ is no friction, and belongs to the frictionless answer.
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 
 import numpy as np
 
-from linkcalc.mechanics.chain import Chain
-from linkcalc.mechanics.motion import Closed
-from linkcalc.mechanics.pushing import Column, add_pushes
-from linkcalc.parts.contract import Rub
-from linkcalc.parts.pose import Array, Mask, Value
-
-_ROUNDS = 40
-_CLOSE = 1e-14  # of the largest normal force: no use in going on
-_SURE = 1e-13  # of the largest normal force: what is not that close goes to Newton
-_RAISES = 10
-_NEWTON = 30
+from linkcalc.mechanics.arith import plus, times
+from linkcalc.mechanics.chain import Chain, pins_strained
+from linkcalc.mechanics.drag import Drags, Drive, Pull, Response, drags
+from linkcalc.mechanics.normals import Normals, Side, normals
+from linkcalc.mechanics.pushing import Column, Pushing, add_pushes, present, seal, through
+from linkcalc.parts.lines import rubless
+from linkcalc.parts.pose import Mask, Value
 
 
 @dataclass(frozen=True, eq=False)
 class Rubbed:
     """Friction of a batch, (case, variant, pose).
 
-    amounts  force or couple of each rub, along its push, signed [N] or [N m]
-    columns  what each does to the coordinates, for 1
-    unknown  what the unknown (effort or load) becomes
+    unknown  what the unknown (effort or load) becomes; NaN here means that nothing rubs
     frictionless  the same with only what always pushes
     negative the multipliers, negative, friction counted
+    amounts  friction force or couple of each rub, along its push, signed [N] or [N m]
+    parts    for each rope that loses on its pulleys the pulls in its parts over that in its last
+    seals    friction within each pusher, along its push [N]; empty if none has any
+    acting   all of it as sizes, each with what it does to the coordinates for 1
     jammed   where there is no answer, None: nowhere
+    several  where there is another answer besides, None: nowhere
     """
 
-    amounts: list[Value]
-    columns: list[Column]
-    unknown: Value
-    frictionless: Value
-    negative: list[Value]
-    jammed: Mask | None
+    unknown: Value = np.nan
+    frictionless: Value = np.nan
+    negative: list[Value] = field(default_factory=list)
+    amounts: list[Value] = field(default_factory=list)
+    parts: list[list[Value]] = field(default_factory=list)
+    seals: list[Value] = field(default_factory=list)
+    acting: list[tuple[Value, Column]] = field(default_factory=list)
+    jammed: Mask | None = None
+    several: Mask | None = None
 
 
-def rub(
-    chain: Chain, closed: Closed, sense: Value, unit: Column, unit_speed: Value,
-    unknown: Value, negative: Sequence[Value], given: Sequence[Value], beside: Sequence[Value] = (),
-) -> Rubbed:  # fmt: skip
-    """Add friction and the like to an answer without. A chain that is not driven has no friction.
+def rub(chain: Chain, drive: Drive, pushing: Pushing, sense: Value, bare: Response, given: Sequence[Value]) -> Rubbed:
+    """Add friction and the like to an answer without: first that of seals, which is known, then that of ropes, which
+    is in proportion to their pull, at last that of pins and guides, which hangs on all of it.
 
-    sense       which way the drive moves, +1 or -1: float or (case, 1, 1)
-    unit        what the unknown does to the coordinates for a strength of 1; unit_speed its speed along itself
-    unknown, negative  the answer without
-    given       negative multipliers of the rows that give, which their gaps tell
-    beside      what the unknown strains beside that, see ``Sharing.beside``
+    sense  which way the drive moves, +1 or -1: float or (case, 1, 1)
+    bare   the answer without
+    given  negative multipliers of the rows that give, which their gaps tell
     """
-    columns, responses, weights = [], [], []
+    found, slack = _rub(chain, drive, pushing, [sense] * len(chain.drags), sense, bare, given)
+    if any(np.any(mask) for mask in slack):
+        # no rope: a warning tells it. Where it would have to push, friction still must not give power
+        ways = [np.where(mask, -1.0, 1.0) * sense for mask in slack]
+        found, _ = _rub(chain, drive, pushing, ways, sense, bare, given)
+    return found
+
+
+def _rub(
+    chain: Chain, drive: Drive, pushing: Pushing, ways: Sequence[Value], sense: Value, bare: Response,
+    given: Sequence[Value],
+) -> tuple[Rubbed, list[Mask]]:  # fmt: skip
+    """The same, with which way each rope resists; and where ropes would have to push."""
+    rubbing = pushing.rubbing and drive.moves
+    seals, held = _sealed(chain, drive, pushing, sense) if rubbing else ([], [])
+    start = bare
+    for amount, column, beside in held:
+        start = _with(start, amount, drive.respond(column, beside))
+    pulls = [_pull(chain, pushing, drive, k) for k, _ in chain.drags] if rubbing else []
+    ropes = drags(chain, drive, ways, pulls) if rubbing else Drags()
+    if pulls:
+        start = ropes.from_nothing(start.rows, start.unknown)
+    columns, plain, weights = [], [], []
     for number, one in chain.rubs:
         push: Column = [0.0] * chain.columns
-        pushes = one.push(closed.at)
+        pushes = one.push(drive.closed.at)
         add_pushes(push, 1.0, pushes)
-        speed = _power(closed.speed, push) if closed.speed else 0.0
-        answer = -np.divide(speed, unit_speed) if closed.speed else 0.0
-        whole = [_sum(q, _times(answer, u)) for q, u in zip(push, unit, strict=True)]
         columns.append(push)
-        if chain.sharing is not None:
-            own = chain.sharing.beside(closed.at, [(chain.joints[number].on_pin, 1.0, pushes[0])])
-            whole += [_sum(q, _times(answer, u)) for q, u in zip(own, beside, strict=True)]
-        responses.append((closed.factored.solve(whole, transposed=True), answer))
-        weights.append(one.factor if one.always else -one.factor * np.sign(sense * speed))
+        on_pin = [(chain.joints[number].on_pin, 1.0, pushes[0])]
+        plain.append(drive.respond(push, chain.sharing.beside(drive.closed.at, on_pin) if chain.sharing else ()))
+        weights.append(one.factor if one.always else -one.factor * np.sign(sense * drive.moving(chain, push)))
+    responses = [ropes.through(one) for one in plain] if pulls else plain
+    found = _normals(chain, start, responses, weights, given)
+    amounts: list[Value] = [w * n for w, n in zip(weights, found.sizes, strict=True)]
+    for amount, response in zip(amounts, responses, strict=True):
+        start = _with(start, amount, response)
+    dragged = [(p.of(start.rows, start.unknown), c) for p, c in zip(pulls, ropes.columns, strict=True)]
+    acting = [*((amount, column) for amount, column, _ in held), *dragged, *zip(amounts, columns, strict=True)]
+    jammed = found.jammed
+    if ropes.jammed is not None:
+        jammed = ropes.jammed if jammed is None else jammed | ropes.jammed
+    slack = [np.asarray(pull < 0) for pull, _ in dragged]
+    without = _frictionless(chain, bare, plain, weights, given) if rubbing else start.unknown
+    told = Rubbed(
+        start.unknown, without, start.rows, amounts, ropes.parts, seals, acting, jammed, found.several
+    )  # fmt: skip
+    return told, slack
+
+
+def _frictionless(
+    chain: Chain, bare: Response, plain: Sequence[Response], weights: Sequence[Value], given: Sequence[Value]
+) -> Value:
+    """The unknown with only what always pushes."""
+    if not any(one.always for _, one in chain.rubs):
+        return bare.unknown
+    always = [w if one.always else 0.0 for w, (_, one) in zip(weights, chain.rubs, strict=True)]
+    told = bare.unknown
+    for weight, size, response in zip(always, _normals(chain, bare, plain, always, given).sizes, plain, strict=True):
+        told = told + weight * size * response.unknown
+    return told
+
+
+def _normals(
+    chain: Chain, start: Response, responses: Sequence[Response], weights: Sequence[Value], given: Sequence[Value]
+) -> Normals:
+    if not chain.rubs:
+        return Normals([])
     still = [0.0] * len(given)
-    before, gained = chain.whole(negative, given), [chain.whole(r, still) for r, _ in responses]
-    amounts, jammed = _amounts(chain, before, gained, weights)
-    rows = list(negative)
-    for amount, (response, _) in zip(amounts, responses, strict=True):
-        rows = [_sum(z, _times(amount, r)) for z, r in zip(rows, response, strict=True)]
-    answers = [answer for _, answer in responses]
-    told = frictionless = _answered(unknown, amounts, answers)
-    if chain.rubbing:
-        always = [w if one.always else 0.0 for w, (_, one) in zip(weights, chain.rubs, strict=True)]
-        if any(one.always for _, one in chain.rubs):
-            without, _ = _amounts(chain, before, gained, always)
-            frictionless = _answered(unknown, without, answers)
-        else:
-            frictionless = unknown
-    return Rubbed(amounts, columns, told, frictionless, rows, jammed)
+    whole = [chain.whole(r.rows, still) for r in responses]
+    return normals(_reactions(chain, chain.whole(start.rows, given), whole), weights)
 
 
-def _answered(unknown: Value, amounts: Sequence[Value], answers: Sequence[Value]) -> Value:
-    for amount, answer in zip(amounts, answers, strict=True):
-        unknown = _sum(unknown, _times(amount, answer))
-    return unknown
+def _with(start: Response, amount: Value, one: Response) -> Response:
+    rows = [plus(z, times(amount, r)) for z, r in zip(start.rows, one.rows, strict=True)]
+    return Response(rows, start.unknown + amount * one.unknown)
 
 
-def _amounts(
-    chain: Chain, negative: Sequence[Value], responses: Sequence[Sequence[Value]],
-    weights: Sequence[Value],
-) -> tuple[list[Value], Mask | None]:  # fmt: skip
-    """Friction of each rub: weight times normal force, the normal forces found together."""
-    forms = [_forms(chain, k, one) for k, one in chain.rubs]
+def _pull(chain: Chain, pushing: Pushing, drive: Drive, joint: int) -> Pull:
+    """Where the pull of a rope comes from."""
+    if chain.joints[joint].angular:
+        return Pull(chain.row_joint.index(joint))
+    return Pull(None, *through(pushing, chain.joints[joint].name, drive.closed.at))
 
-    def reaction(rows: Sequence[Value], form: Sequence[tuple[int, Value]]) -> Value:
+
+def _sealed(
+    chain: Chain, drive: Drive, pushing: Pushing, sense: Value
+) -> tuple[list[Value], list[tuple[Value, Column, list[Value]]]]:
+    """Friction within each pusher, along its push; and of those that have any with what it does and strains for 1."""
+    seals: list[Value] = []
+    held: list[tuple[Value, Column, list[Value]]] = []
+    for acting in pushing.all:
+        within = seal(acting)
+        if rubless(within):
+            seals.append(0.0)
+            continue
+        push: Column = [0.0] * chain.columns
+        add_pushes(push, 1.0, acting.pusher.push(drive.closed.at))
+        seals.append(-within * present(acting) * np.sign(sense * drive.moving(chain, push)))
+        held.append((seals[-1], push, pins_strained(chain, drive.closed.at, [(acting, 1.0)])))
+    return (seals, held) if held else ([], [])
+
+
+def _reactions(chain: Chain, start: Sequence[Value], responses: Sequence[Sequence[Value]]) -> list[list[list[Side]]]:
+    """The components that the normal force of each rub is made of, as they hang on the frictions."""
+
+    def along(rows: Sequence[Value], form: Sequence[Value], first: int) -> Value:
         total: Value = 0.0
-        for row, coefficient in form:
-            total = _sum(total, _times(coefficient, rows[row]))
+        for row, coefficient in enumerate(form, first):
+            total = plus(total, times(coefficient, rows[row]))
         return total
 
-    base = [[[reaction(negative, f) for f in part] for part in parts] for parts in forms]
-    gain = [[[[reaction(r, f) for r in responses] for f in part] for part in parts] for parts in forms]
-
-    def normal(k: int, amounts: Sequence[Value]) -> Value:
-        total: Value = 0.0
-        for part, gains in zip(base[k], gain[k], strict=True):
-            sides = []
-            for value, each in zip(part, gains, strict=True):
-                side = value
-                for other, amount in zip(each, amounts, strict=True):
-                    side = _sum(side, _times(other, amount))
-                sides.append(side)
-            total = _sum(total, np.abs(sides[0]) if len(sides) == 1 else np.hypot(sides[0], sides[1]))
-        return total
-
-    every = range(len(forms))
-    normals = [normal(k, [0.0 for _ in every]) for k in every]
-    apart: Value = np.inf
-    coming: Value = np.inf
-    for _ in range(_ROUNDS):
-        amounts = [w * n for w, n in zip(weights, normals, strict=True)]
-        following = [normal(k, amounts) for k in every]
-        last, apart = apart, _largest([np.abs(np.subtract(a, b)) for a, b in zip(following, normals, strict=True)])
-        normals = following
-        # what the next round would still change is foretold by how much less this one changed than the last
-        with np.errstate(all="ignore"):
-            coming = apart * np.where(np.isfinite(last), np.minimum(np.divide(apart, last), 1.0), 1.0)
-        if not np.any(coming > _CLOSE * _largest(following)):
-            break
-    doubt = ~(np.asarray(coming) <= _SURE * _largest(normals))
-    jammed: Mask | None = None
-    if doubt.any():
-        normals, jammed = _raised(base, gain, weights, normals, doubt)
-    return [w * n for w, n in zip(weights, normals, strict=True)], jammed
-
-
-def _raised(
-    base: list[list[list[Value]]],
-    gain: list[list[list[list[Value]]]],
-    weights: Sequence[Value],
-    normals: Sequence[Value],
-    doubt: Mask,
-) -> tuple[list[Value], Mask | None]:
-    """Newton on the entries in doubt, the friction raised from nothing; those without an answer jam."""
-    shape = np.broadcast_shapes(doubt.shape, *(np.shape(n) for n in normals), *(np.shape(w) for w in weights))
-    where = np.nonzero(np.broadcast_to(doubt, shape))
-    m = len(normals)
-
-    def pick(value: Value) -> Array:
-        return np.broadcast_to(value, shape)[where]
-
-    w = np.stack([pick(x) for x in weights], axis=1)  # (picked, m)
-    parts = [
-        [(np.stack([pick(v) for v in part], 1), np.stack([np.stack([pick(g) for g in each], 1) for each in gains], 1))
-         for part, gains in zip(base[k], gain[k], strict=True)]
-        for k in range(m)
+    return [
+        [
+            [(along(start, form, chain.first_row[k]), [along(r, form, chain.first_row[k]) for r in responses])
+             for form in part]
+            for part in one.normals
+        ]
+        for k, one in chain.rubs
     ]  # fmt: skip
-    n = np.zeros((where[0].size, m))
-    good = np.ones(where[0].size, bool)
-    for scale in np.linspace(0.0, 1.0, _RAISES + 1):
-        for _ in range(_NEWTON):
-            found, slope = np.zeros_like(n), np.zeros((*n.shape, m))
-            for k in range(m):
-                for b, g in parts[k]:
-                    sides = b + scale * np.einsum("ifj,ij->if", g, w * n)
-                    size = np.linalg.norm(sides, axis=1)
-                    found[:, k] += size
-                    lead = np.divide(sides, size[:, None], out=np.zeros_like(sides), where=size[:, None] > 0)
-                    slope[:, k] += scale * np.einsum("if,ifj->ij", lead, g) * w
-            gap = found - n
-            with np.errstate(all="ignore"):
-                matrix = slope - np.eye(m)
-                finite = np.isfinite(matrix).all(axis=(1, 2)) & np.isfinite(gap).all(axis=1)
-                step = np.zeros_like(n)
-                if finite.any():
-                    step[finite] = _solved(matrix[finite], gap[finite])
-            n = n - step
-            if np.all(np.abs(step) <= 1e-14 * np.maximum(np.abs(n).max(axis=1, keepdims=True), 1e-300)):
-                break
-        # a normal force is no minus: past the pose where it ran to infinity it would come back from the other side
-        good &= np.isfinite(n).all(axis=1) & (n >= -1e-9 * np.abs(n).max(axis=1, keepdims=True)).all(axis=1)
-        good &= np.abs(gap).max(axis=1) <= 1e-9 * np.maximum(np.abs(n).max(axis=1), 1e-300)
-    out: list[Value] = []
-    for k in range(m):
-        full = np.array(np.broadcast_to(normals[k], shape), float)
-        full[where] = np.where(good, n[:, k], np.nan)
-        out.append(full)
-    jammed = np.zeros(shape, bool)
-    jammed[where] = ~good
-    return out, jammed if jammed.any() else None
-
-
-def _solved(matrix: Array, gap: Array) -> Array:
-    try:
-        return np.asarray(np.linalg.solve(matrix, gap[:, :, None])[:, :, 0], np.float64)
-    except np.linalg.LinAlgError:
-        return np.full(gap.shape, np.nan)
-
-
-def _forms(chain: Chain, joint: int, one: Rub) -> list[list[list[tuple[int, Value]]]]:
-    first = chain.first_row[joint]
-    return [[[(first + i, c) for i, c in enumerate(form)] for form in part] for part in one.normals]
-
-
-def _largest(values: Sequence[Value]) -> Value:
-    top: Value = 0.0
-    for value in values:
-        top = np.maximum(top, value)
-    return top
-
-
-def _power(speed: Sequence[Value], push: Column) -> Value:
-    total: Value = 0.0
-    for v, q in zip(speed, push, strict=True):
-        total = _sum(total, _times(q, v))
-    return total
-
-
-def _zero(value: Value) -> bool:
-    return isinstance(value, float) and value == 0.0
-
-
-def _times(a: Value, b: Value) -> Value:
-    if _zero(a) or _zero(b):
-        return 0.0
-    return b if isinstance(a, float) and a == 1.0 else a * b
-
-
-def _sum(a: Value, b: Value) -> Value:
-    if _zero(a):
-        return b
-    return a if _zero(b) else a + b

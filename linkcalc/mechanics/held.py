@@ -66,20 +66,19 @@ class Work:
         """Everything that follows from the places."""
         closed = self.close(at, [p[..., k] for k in range(len(self.places))])
         known, unit = self.forces(closed.at)
-        if self.chain.toothed or (self.chain.rubs and self.asked and self.drive is not None):
+        if self.chain.toothed or (self._rubs and self.asked and self.drive is not None):
             for amount, push in self._rubbed(closed):
                 known = plus(known, amount, push)
         return State(self, closed, self.rates(closed), known, unit, unknown)
 
+    @property
+    def _rubs(self) -> bool:
+        return bool(self.chain.rubs) or self.pushing.rubbing
+
     def _rubbed(self, closed: Closed) -> list[tuple[Value, Column]]:
         """Frictions that go with a pose, in the sense of the motion last known."""
         b = balance(self.chain, replace(closed, speed=list(self.sense or closed.speed)), self.pushing, checked=False)
-        columns: list[tuple[Value, Column]] = []
-        for (_, one), amount in zip(self.chain.rubs, b.friction, strict=True):
-            push: Column = [0.0] * self.chain.columns
-            add_pushes(push, 1.0, one.push(closed.at))
-            columns.append((amount, push))
-        return columns
+        return b.acting
 
 
 class State:

@@ -93,5 +93,5 @@ def solve_drawn(ready: Ready) -> Solved:
 def sides(ready: Ready, solved: Solved) -> list[Side]:
     """What every joint does to every member in a solved batch; to one plate, where a member stands for several."""
     b = solved.balance
-    found = reactions(ready.chain, solved.closed.at, b.multipliers, b.friction, ready.pushing, b.effort, b.load)
+    found = reactions(ready.chain, solved.closed.at, b, ready.pushing)
     return on_one(found, ready.plates) if max(ready.plates) > 1 else found

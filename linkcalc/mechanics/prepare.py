@@ -20,6 +20,8 @@ from linkcalc.mechanics.settle import acted_on, come_to_rest
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
 from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.along import Standing
+from linkcalc.parts.contract import Joint
+from linkcalc.parts.lines import rubless
 from linkcalc.parts.pose import Mask, Poses, Value
 
 
@@ -66,8 +68,11 @@ def prepare(drawing: Drawing, like: Ready | None = None) -> Ready:
     like  the same mechanism with other sizes, made ready before: its plans of elimination are used again
     """
     mechanism = drawing.mechanism
-    friction = any(not rub.always for joint in drawing.joints for rub in joint.rubs())
-    loads = pushing(drawing.assembly(), rubbing=friction and mechanism.effort is not None, forward=_forward(drawing))
+    assembly = drawing.assembly()
+    rubs = any(_rubs(joint) for joint in drawing.joints) or any(
+        not rubless(getattr(pusher, "seal", 0.0)) for pusher in assembly.pushers.values()
+    )
+    loads = pushing(assembly, rubbing=rubs and mechanism.effort is not None, forward=_forward(drawing))
     at = _drawn(drawing, loads)
     moving = len(drawing.members) - 1
     if moving == 0:
@@ -155,6 +160,11 @@ def _held(chain: Chain, at: Poses, loads: Pushing) -> Place:
     push = single(column(asked, at, chain.columns, unit=True)) / chain.column_size
     k = int(np.argmax(np.abs(push)))
     return Place(k // 3 + 1, k % 3)
+
+
+def _rubs(joint: Joint) -> bool:
+    """True if it has friction of any kind."""
+    return any(not rub.always for rub in joint.rubs()) or (hasattr(joint, "drag") and joint.drag() is not None)
 
 
 def _forward(drawing: Drawing) -> float:

@@ -32,6 +32,7 @@ class Pushing:
     rest     all other loads and weights
     down, field  direction [-] and strength [m/s2] of gravity, float or (case, 1, 1)
     sense    +1 in a case that moves along the stroke, -1 in one that moves back: float or (case, 1, 1)
+    rubbing  True if something rubs: then each case comes twice
     forward  which way the drive moves along the stroke, +1 or -1; 0.0 without a stroke: the way the effort pushes
     """
 
@@ -43,6 +44,7 @@ class Pushing:
     field: Value
     sense: Value = 1.0
     forward: float = 1.0
+    rubbing: bool = False
 
     @property
     def effort_asked(self) -> bool:
@@ -85,7 +87,7 @@ def pushing(assembly: Assembly, *, rubbing: bool, forward: float) -> Pushing:
     if rubbing:
         names = tuple(_both_ways(n)[k % 2] for k, n in enumerate(names))
         sense = _by_case([1.0 - 2.0 * (k % 2) for k in range(len(cases))])
-    return Pushing(names, tuple(used), tuple(loads), tuple(rest), down, field, sense, forward)
+    return Pushing(names, tuple(used), tuple(loads), tuple(rest), down, field, sense, forward, rubbing)
 
 
 def _both_ways(name: str) -> tuple[str, str]:
@@ -101,14 +103,20 @@ def strength(acting: Sequence[Acting], at: Poses) -> Value:
     return total
 
 
-def sized_pushers(pushing: Pushing, at: Poses, effort: Value, load: Value) -> Iterator[tuple[Acting, Value]]:
-    """Every pusher with the strength it has in each case."""
-    for acting in pushing.effort:
-        yield acting, (acting.factor * effort if len(pushing.effort) > 1 else effort)
-    for acting in pushing.load:
-        yield acting, load
-    for acting in pushing.rest:
-        yield acting, strength([acting], at)
+def sized_pushers(
+    pushing: Pushing, at: Poses, effort: Value, load: Value, seals: Sequence[Value] = ()
+) -> Iterator[tuple[Acting, Value]]:
+    """Every pusher with the strength it has in each case.
+
+    seals  friction within each of them, along its push: what is left is what its pins feel
+    """
+    each: list[tuple[Acting, Value]] = [
+        *((acting, acting.factor * effort if len(pushing.effort) > 1 else effort) for acting in pushing.effort),
+        *((acting, load) for acting in pushing.load),
+        *((acting, strength([acting], at)) for acting in pushing.rest),
+    ]
+    for k, (acting, size) in enumerate(each):
+        yield acting, (size + seals[k] if seals else size)
 
 
 def acts(acting: Sequence[Acting]) -> Iterator[tuple[Acting, Value]]:
@@ -123,6 +131,34 @@ def unknown(acting: Sequence[Acting], at: Poses) -> Mask | None:
     lost = [np.isnan(_own(a, at)) for a in acting if _partial(a) and a.pusher.size is not None]
     lost = [mask for mask in lost if mask.any()]
     return np.logical_or.reduce(np.broadcast_arrays(*lost)) if lost else None
+
+
+def through(pushing: Pushing, joint: str, at: Poses) -> tuple[Value, Value]:
+    """What all that push through a joint give it together: known [N], and so many times the unknown."""
+    known: Value = 0.0
+    part: Value = 0.0
+    for acting, asked in (
+        *((a, pushing.effort_asked) for a in pushing.effort),
+        *((a, pushing.load_asked) for a in pushing.load),
+        *((a, False) for a in pushing.rest),
+    ):
+        if getattr(acting.pusher, "through", "") == joint:
+            if asked:
+                part = part + present(acting)
+            else:
+                known = known + _own(acting, at)
+    return known, part
+
+
+def present(a: Acting) -> Value:
+    """1 in a case that it acts in, else 0."""
+    return _plain(np.sign(np.abs(a.factor)))
+
+
+def seal(a: Acting) -> Value:
+    """[N] friction within it, 0.0 if it has none."""
+    within: Value = getattr(a.pusher, "seal", 0.0)
+    return within
 
 
 def _own(a: Acting, at: Poses) -> Value:

@@ -12,6 +12,7 @@ from typing import Any
 
 import numpy as np
 
+from linkcalc.mechanics.balance import Balance
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.pushing import Acting, Pushing, sized_pushers
 from linkcalc.parts.contract import TURN, Joint, Push, X, Y
@@ -31,7 +32,7 @@ class Side:
     own_point    True if the place is a fixed point of the member, and no moment can act there
     part_of      name of the joint that this is one of several sides of, each with its own name ("hoist" of a side
                  "hoist at P"); "" otherwise
-    carried      [N] of such a joint what it carries throughout (the tension of a rope)
+    carried      [N] of such a joint what it carries: the tension of a rope, from part to part, or one throughout
     copies       how many equal plates the member stands for; the force is that on one of them
     """
 
@@ -46,34 +47,31 @@ class Side:
     y: Value
     own_point: bool
     part_of: str = ""
-    carried: Value = 0.0
+    carried: tuple[Value, ...] = ()
     copies: int = 1
 
 
-def reactions(
-    chain: Chain, at: Poses, multipliers: Sequence[Value], friction: Sequence[Value], pushing: Pushing,
-    effort: Value, load: Value,
-) -> list[Side]:  # fmt: skip
-    """All sides of all joints, in the order of the joints.
-
-    friction  of each of the chain's rubs, along its push; empty without friction
-    """
-    rubbed = _rubbed(chain, at, friction)
+def reactions(chain: Chain, at: Poses, told: Balance, pushing: Pushing) -> list[Side]:
+    """All sides of all joints, in the order of the joints."""
+    multipliers = told.multipliers
+    rubbed = _rubbed(chain, at, told.friction)
+    parts = {number: part for (number, _), part in zip(chain.drags, told.parts, strict=False)}
     sides: list[Side] = []
     on_pin: dict[str, list[tuple[Value, Value]]] = {}
     hubs: dict[str, tuple[int, Joint]] = {}
     pins = {joint.name for joint in chain.joints if joint.word == "pin"}
     turning: dict[str, Value] = {}
-    strong = list(sized_pushers(pushing, at, effort, load))
+    pushers = list(sized_pushers(pushing, at, told.effort, told.load, told.seals))
     for number, (joint, first) in enumerate(zip(chain.joints, chain.first_row, strict=True)):
         if hasattr(joint, "contacts"):
             if joint.angular:
                 carried = multipliers[first]
             else:  # what fails is not a number throughout
-                carried = np.where(np.isfinite(multipliers[0]), _passed_on(joint.name, strong), np.nan)
-            for side in _spread(joint, at, carried, pins):
+                carried = np.where(np.isfinite(multipliers[0]), _passed_on(joint.name, pushers), np.nan)
+            for side, passed in _spread(joint, at, carried, parts.get(number, ()), pins):
                 if side.pin:
                     on_pin.setdefault(side.pin, []).append((side.fx, side.fy))
+                    turning[side.pin] = _sum(turning.get(side.pin, 0.0), passed)
                 sides.append(side)
             continue
         placed = getattr(joint, "place", None)
@@ -100,7 +98,7 @@ def reactions(
                     moment = about_origin - ((x - at.x[member]) * fy - (y - at.y[member]) * fx)
                 own = turnable and not placed and (hub or member == joint.members[0])
                 sides.append(Side(joint.name, joint.word, member, "", fx, fy, moment, x, y, own))
-    for acting, size in strong:
+    for acting, size in pushers:
         if hasattr(acting.pusher, "through"):
             continue  # the joint has told it
         for name, (_, fx, fy, _) in zip(acting.pusher.on_pins, acting.pusher.push(at), strict=False):
@@ -153,16 +151,21 @@ def _passed_on(joint: str, strong: Sequence[tuple[Acting, Value]]) -> Value:
     return total
 
 
-def _spread(joint: Any, at: Poses, carried: Value, pins: set[str]) -> Iterator[Side]:
-    """The sides of a joint that acts at several places, each told by itself."""
-    for c in joint.contacts(at):
+def _spread(
+    joint: Any, at: Poses, carried: Value, parts: Sequence[Value], pins: set[str]
+) -> Iterator[tuple[Side, Value]]:
+    """The sides of a joint that acts at several places, each told by itself; and the moment that a pin passes on to the
+    member that stands for it."""
+    pulls = tuple(_times(part, carried) for part in parts) or (carried,)
+    for c in joint.contacts(at, parts):
         x, y = at.spot(c.site)
         fx, fy = carried * c.fx, carried * c.fy
         turned = not (isinstance(c.moment, float) and c.moment == 0.0)
+        moment = carried * c.moment if turned else 0.0
         pin = c.on_pin if c.on_pin in pins else ""
         member = -1 if pin else c.site.member
-        yield Side(c.name, joint.word, member, pin, fx, fy, carried * c.moment if turned else 0.0, x, y,
-                   not (pin or turned), joint.name, carried)  # fmt: skip
+        yield Side(c.name, joint.word, member, pin, fx, fy, 0.0 if pin else moment, x, y,
+                   not (pin or turned), joint.name, pulls), moment  # fmt: skip
 
 
 def _on_members(

@@ -60,6 +60,11 @@ def joined(poses: Sequence[Solved], order: Numbers | None = None) -> Solved:
         status=put([p.balance.status for p in poses]),
         frictionless=join(lambda p: p.balance.frictionless),
         friction=[join(lambda p, k=k: p.balance.friction[k]) for k in range(len(first.friction))],
+        parts=[
+            [join(lambda p, r=r, k=k: p.balance.parts[r][k]) for k in range(len(rope))]
+            for r, rope in enumerate(first.parts)
+        ],
+        seals=[join(lambda p, k=k: p.balance.seals[k]) for k in range(len(first.seals))],
     )
     return Solved(put([p.drive for p in poses]), whole, told)
 

@@ -20,7 +20,7 @@ def tangent_of(work: Work, state: State) -> Tangent:
     multipliers = [-z for z in state.closed.factored.solve(state.total, transposed=True)]
     slopes = [_bent(work, state.closed.at, v, multipliers, state.unknown) for v in state.rates]
     tangent = Tangent(work, state, multipliers, slopes)
-    if work.chain.rubs and work.drive is not None:
+    if (work.chain.rubs or work.pushing.rubbing) and work.drive is not None:
         work.sense = settled_speed(work, tangent)
     return tangent
 

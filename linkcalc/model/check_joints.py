@@ -12,7 +12,8 @@ from linkcalc.model.mechanism import GROUND, Mechanism
 from linkcalc.parts.joints.contact import Contact
 from linkcalc.parts.joints.gear import Gear
 from linkcalc.parts.joints.rack import Rack
-from linkcalc.parts.joints.rope import HAULING, Pulley, Rope
+from linkcalc.parts.joints.rope import HAULING, Rope
+from linkcalc.parts.joints.rope_steps import Pulley
 from linkcalc.parts.joints.slide import Slide
 from linkcalc.parts.joints.slot import Slot
 from linkcalc.parts.joints.track import Track
@@ -145,8 +146,25 @@ def _rope(joint: Rope, item: Item, carried: Carried, gather: Gather) -> None:
         elif not ends and not pulley:
             wanted = f'{{ pulley = "{step.point}", radius = 30, wrap = "left" }} is wanted between the ends'
             gather.add((*item, "path"), f"{step.point} is an end in the middle of the rope", wanted)
+        if pulley:
+            _losses(step, where, gather)
     if joint.end == HAULING and joint.path[-1].fixed:
         gather.add((*item, "end"), "a drum is no hauling end: it winds by its turn", "a point is wanted there")
+
+
+def _losses(step: Pulley, where: Item, gather: Gather) -> None:
+    """One kind of friction at most, and what goes with it."""
+    told = [key for key in step.losses if getattr(step, key) is not None]
+    if len(told) > 1:
+        what = f"{' and '.join(repr(key) for key in told)} are two ways to tell its friction"
+        gather.add((*where, told[1]), what, "one of them is wanted")
+    if step.turns and step.friction is None:
+        gather.add((*where, "turns"), "it goes with 'friction' only", "a rope is wound round a post that does not turn")
+    if (step.pin_friction is None) != (step.pin_diameter is None):
+        there, other = (
+            ("pin_diameter", "pin_friction") if step.pin_friction is None else ("pin_friction", "pin_diameter")
+        )
+        gather.add((*where, there), f"it goes with {other!r}", "both are wanted, or neither")
 
 
 @_check.register

@@ -18,6 +18,7 @@ from linkcalc.model.requirements import (
     MEMBER,
     MOVER,
     NEEDS,
+    ROPE,
     Requirement,
     requirement,
 )
@@ -60,6 +61,7 @@ def _check_names(one: Requirement, mechanism: Mechanism, known: Known, drawing: 
     pools = {JOINT: joints, MEMBER: known.members[1:], MOVER: known.joints + known.points}
     pools[DRAWN] = known.members[1:] + known.ropes
     pools[LOADING] = tuple(item[-1] for item, _ in walk.loads(mechanism))
+    pools[ROPE] = known.ropes
     what = one.measure.of
     if what == DRAWN and not known.ropes:
         what = MEMBER

@@ -21,6 +21,8 @@ from linkcalc.model.tokens import names_in
 from linkcalc.model.units import show
 from linkcalc.parts.contract import Size
 
+_WANTED = {"plus": "more than nothing", "not minus": "nothing or more", "part": "more than nothing, up to 1,"}
+
 
 def check_sizes(mechanism: Mechanism, known: Known, gather: Gather) -> None:
     """Dimensions, their tolerances, and every size in the model."""
@@ -76,6 +78,7 @@ def _check(
         if any(name not in dimensions for name in names_in(size, known.dimensions)):
             return  # what is wrong with the dimension is told there
     value = to_si(size, kind, mechanism.units, dimensions)
-    least = {"plus": "more than nothing", "not minus": "nothing or more"}.get(sign)
-    if least and (np.any(np.less(value, 0)) or (sign == "plus" and np.any(np.equal(value, 0)))):
+    least = _WANTED.get(sign)
+    low = np.any(np.less(value, 0)) or (sign != "not minus" and np.any(np.equal(value, 0)))
+    if least and (low or (sign == "part" and np.any(np.greater(value, 1)))):
         raise fault((), f"{show(float(value), kind, mechanism.units)} cannot stand here", f"{least} is wanted")

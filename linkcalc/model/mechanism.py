@@ -132,10 +132,13 @@ class Gravity:
 class Friction:
     """Friction of all joints that say nothing of their own."""
 
-    pins: Size | None = fields.size("number", "coefficient of friction in pins", None, sign="not minus")
+    pins: Size | None = fields.friction("in pins")
     diameter: Size | None = fields.size("length", "diameter of the pins", None, sign="plus")
-    slots: Size | None = fields.size("number", "coefficient of friction in slots", None, sign="not minus")
-    slides: Size | None = fields.size("number", "coefficient of friction in slides", None, sign="not minus")
+    slots: Size | None = fields.friction("in slots")
+    slides: Size | None = fields.friction("in slides")
+    sheave_efficiency: Size | None = fields.size(
+        "number", "efficiency of pulleys of ropes", None, sign="part", sensible=(0.5, 1)
+    )
 
 
 @dataclass(frozen=True)
@@ -159,7 +162,7 @@ class Pin:
     stack  the plates across it in order (Plate), each as often as it comes; () if it is not told
     """
 
-    friction: Size | None = fields.size("number", "its coefficient of friction", None, sign="not minus")
+    friction: Size | None = fields.friction("of the pin")
     diameter: Size | None = fields.size("length", "its diameter", None, sign="plus")
     friction_radius: Size | None = fields.size(
         "length", "radius of its friction circle, instead of coefficient and diameter", None, sign="not minus"

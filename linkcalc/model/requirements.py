@@ -38,6 +38,7 @@ class Measure:
 
 
 JOINT, MEMBER, DRAWN, MOVER, LOADING = "joint", "member", "member or rope", "point, slot, slide or track", "load"
+ROPE = "rope"
 _WHOLE = {
     "effort": "effort",
     "load": "load",
@@ -52,6 +53,8 @@ _MEASURES = (
     ("moment", Measure("moment", "at", JOINT)),
     ("tension", Measure("force", "in", DRAWN)),
     ("tension", Measure("force", "of", DRAWN)),
+    ("first tension", Measure("force", "of", ROPE)),
+    ("last tension", Measure("force", "of", ROPE)),
     ("compression", Measure("force", "in", MEMBER)),
     ("travel", Measure("length", "of", MOVER)),
     ("bending moment", Measure("moment", "in", MEMBER)),

@@ -85,6 +85,11 @@ class Drawing:
         size = own if own is not None else getattr(self.mechanism.friction, kind)
         return 0.0 if size is None else self.value(size, "number")
 
+    def sheave_efficiency(self) -> Value:
+        """[-] efficiency of all pulleys that say nothing of their own. Raises Faults."""
+        size = self.mechanism.friction.sheave_efficiency
+        return 1.0 if size is None else self.value(size, "number")
+
     def friction_radius(self, point: str) -> Value:
         """[m] radius of the friction circle of a pin: its radius times the sine of the angle of friction.
 

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterable
 
 from linkcalc.model.parts_list import EFFORT, LOAD
-from linkcalc.parts.contract import Limit, Pusher, Told
+from linkcalc.parts.contract import Joint, Limit, Pusher, Told
 
 _STRENGTH = ("force", "torque")
 
@@ -16,9 +16,9 @@ def told_by(pusher: Pusher) -> tuple[Told, ...]:
     return tuple(t for t in told if not (pusher.name in (EFFORT, LOAD) and t.name in _STRENGTH))
 
 
-def limits_of(pusher: Pusher) -> tuple[Limit, ...]:
-    """What should hold of a load in every pose."""
-    found: tuple[Limit, ...] = pusher.limits() if hasattr(pusher, "limits") else ()
+def limits_of(part: Pusher | Joint) -> tuple[Limit, ...]:
+    """What should hold of a load or joint in every pose."""
+    found: tuple[Limit, ...] = part.limits() if hasattr(part, "limits") else ()
     return found
 
 

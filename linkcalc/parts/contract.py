@@ -16,10 +16,12 @@ from typing import Protocol
 
 from linkcalc.parts.along import Moved
 from linkcalc.parts.pose import TURN, Array, Poses, Site, Value, X, Y
+from linkcalc.parts.telling import Limit, Telling, Told
 
 __all__ = [
-    "TURN", "Array", "Contact", "Coordinate", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark", "Poses",
-    "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Told", "Travelled", "Value", "X", "Y",
+    "TURN", "Array", "Contact", "Coordinate", "Drag", "Drive", "Entry", "Give", "Hauled", "Joint", "Limit", "Mark",
+    "Poses", "Push", "Pusher", "Row", "Rub", "Site", "Size", "Sketch", "Telling", "Told", "Travelled", "Value", "X",
+    "Y",
 ]  # fmt: skip
 
 Size = float | int | str
@@ -127,6 +129,9 @@ class Sketch(Protocol):
     def coefficient(self, kind: str, own: Size | None) -> Value:
         """[-] coefficient of friction: a joint's own, else that of its kind ("pins", "slots", "slides"), else 0.0"""
 
+    def sheave_efficiency(self) -> Value:
+        """[-] efficiency of all pulleys that say nothing of their own, 1.0 if none is told"""
+
     def travelled(self, name: str) -> Travelled:
         """the slot, slide or track of that name, for a stroke along it"""
 
@@ -146,8 +151,7 @@ class Rub:
     factor   friction for a normal force of 1: a coefficient [-], or the radius of the friction circle [m]
     push     (poses) -> what a friction of 1 would do to each member if it pushed along the relative motion; its power
              tells which way that is
-    always   True if it acts along its push whichever way the joint moves: no friction, but teeth pushing each other
-             apart. It is there without a motion too
+    always   True if it acts along its push whichever way the joint moves, and without a motion too: teeth apart
     """
 
     normals: tuple[tuple[tuple[Value, ...], ...], ...]
@@ -172,13 +176,26 @@ class Give(Protocol):
         """[N] or [N m] the row's multiplier at a gap [m] or [rad], elementwise"""
 
 
+@dataclass(frozen=True, eq=False)
+class Drag:
+    """Friction of a joint whose pull is not the same all along, in ratios that the senses of motion tell: a rope.
+
+    spans   (poses) -> for each part of it, what a pull of 1 in that part does to each member
+    ratios  (poses) -> for each place between two: pull beyond it over pull before it when the joint runs on over it,
+            1 or more; the float 1.0 without friction
+    """
+
+    spans: Callable[[Poses], tuple[tuple[Push, ...], ...]]
+    ratios: Callable[[Poses], tuple[Value, ...]]
+
+
 class Joint(Protocol):
     """Something that holds members together: rows of constraint equations.
 
-    One that gives has, besides, ``gives``: for each row a Give, or None where it holds without giving.
-
-    One that acts at several places has, besides, ``contacts(at)``: a Contact for each of them. It has one row, whose
-    multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).
+    One that gives has, besides, ``gives``: for each row a Give, or None where it holds. One that acts at several places has, besides, ``contacts(at, parts)``: a Contact for each of them. It has one row,
+    whose multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).
+    If its pull changes along it, ``drag()`` gives its Drag; the multiplier is the pull in its last part, and ``parts``
+    are the pulls of all its parts over that one. ``limits()``, if it is there, tells what should hold in every pose.
     One with teeth has ``place(at)``, where its force is told, for that moves on its members: (x, y) [m]; ``grain``:
     its gap is known but for multiples of that [m]; ``astray(at)``: how far its centres have moved apart [m].
 
@@ -251,7 +268,7 @@ class Hauled(Protocol):
         """[m] how much has been drawn in since the drawing pose"""
 
     def haul_slope(self, at: Poses) -> Row: ...
-    def contacts(self, at: Poses) -> tuple[Contact, ...]: ...
+    def contacts(self, at: Poses, parts: Sequence[Value] = ()) -> tuple[Contact, ...]: ...
     def mark(self, at: Poses) -> Mark: ...
 
 
@@ -290,49 +307,6 @@ class Pusher(Protocol):
 
     def mark(self, at: Poses) -> Mark:
         """How to draw it in a single pose."""
-
-
-@dataclass(frozen=True, eq=False)
-class Told:
-    """Something that a load can say of itself in each pose, beside its push.
-
-    name   "force", "length", "pressure"; requirements and columns call it "length of NAME"
-    kind   kind of its size
-    value  from the poses and the strength it has in them [SI]
-    """
-
-    name: str
-    kind: str
-    value: Callable[[Poses, Value], Value]
-
-
-@dataclass(frozen=True, eq=False)
-class Limit:
-    """Something that should hold in every pose. Where it does not, the answer warns, and says from where to where.
-
-    text  what is so beyond it: "shorter than its shortest, 40 mm"
-    room  from the poses and the strength in them, [SI]; below nothing where the limit is passed
-    """
-
-    text: str
-    room: Callable[[Poses, Value], Value]
-
-
-class Telling(Protocol):
-    """What a pusher may have besides: see ``LawPush``. One that has not tells nothing and has no limits.
-
-    cautions     what can hurt
-    temperature  [K] at which its strength is what it says; the strength grows with the absolute temperature. None: it
-                 does not
-    partial      True if its strength is not a number in some poses, because there is none
-    """
-
-    cautions: tuple[str, ...]
-    temperature: float | None
-    partial: bool
-
-    def told(self) -> tuple[Told, ...]: ...
-    def limits(self) -> tuple[Limit, ...]: ...
 
 
 class Drive(Protocol):

@@ -22,12 +22,34 @@ def names(of: str, text: str, default: Any = MISSING, least: int = 2, most: int 
     return _made("names", text, default, of=of, least=least, most=most)
 
 
-def size(unit: str, text: str, default: Any = MISSING, *, sign: str = "any", words: tuple[str, ...] = ()) -> Any:
-    """A size as written; unit = its kind ("length", "angle", ...); sign = "any", "plus" or "not minus".
+Range = tuple[float, float]
 
-    words  words that may stand in its place ("drawn", "limit")
+USUAL_FRICTION: Range = (0.0, 0.6)
+"""Coefficients of friction from oiled to dry steel on steel; more is met with rubber and clean soft metals only
+(common practice)."""
+
+
+def size(
+    unit: str,
+    text: str,
+    default: Any = MISSING,
+    *,
+    sign: str = "any",
+    words: tuple[str, ...] = (),
+    sensible: Range | None = None,
+) -> Any:
+    """A size as written; unit = its kind ("length", "angle", ...); sign = "any", "plus", "not minus", or "part":
+    more than nothing and no more than 1.
+
+    words     words that may stand in its place ("drawn", "limit")
+    sensible  from where to where it is usual; an answer warns of what is not
     """
-    return _made("size", text, default, unit=unit, sign=sign, words=words)
+    return _made("size", text, default, unit=unit, sign=sign, words=words, sensible=sensible)
+
+
+def friction(text: str, default: Any = None) -> Any:
+    """A coefficient of friction; text = what of."""
+    return size("number", f"coefficient of friction {text}", default, sign="not minus", sensible=USUAL_FRICTION)
 
 
 def sizes(unit: str, text: str, default: Any = MISSING, *, sign: str = "any") -> Any:

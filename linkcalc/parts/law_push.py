@@ -12,6 +12,7 @@ import numpy as np
 
 from linkcalc.parts.contract import Limit, Mark, Poses, Push, Site, Sketch, Told, Value
 from linkcalc.parts.laws import Law
+from linkcalc.parts.lines import rubless
 from linkcalc.parts.pose import Mask
 
 
@@ -49,6 +50,7 @@ class LawPush:
     edges        what should hold in every pose
     cautions     what can hurt
     temperature  [K] at which it is as strong as it says; None: it does not hang on it
+    seal         [N] friction within it, whatever it pushes, against its motion
     """
 
     name: str
@@ -60,6 +62,7 @@ class LawPush:
     edges: tuple[Limit, ...] = ()
     cautions: tuple[str, ...] = ()
     temperature: float | None = None
+    seal: Value = 0.0
 
     @property
     def kind(self) -> str:
@@ -97,15 +100,25 @@ class LawPush:
         """Its strength, the length or angle it goes by, and what its kind adds."""
         strong = "torque" if self.path.strength == "moment" else "force"
         return (
-            Told(strong, self.path.strength, lambda _, strength: strength),
-            Told(self.path.kind, self.path.kind, lambda at, _: self.path.value(at)),
+            Told(strong, self.path.strength, lambda _, strength, __: strength),
+            Told(self.path.kind, self.path.kind, lambda at, *_: self.path.value(at)),
+            *self._through_seal(),
             *self.more,
         )
+
+    def _through_seal(self) -> tuple[Told, ...]:
+        """What its pins feel of it, where that is not the same as what its law gives."""
+        if rubless(self.seal):
+            return ()
+        return (Told(ROD_FORCE, "force", lambda _, strength, motion: strength - self.seal * motion),)
 
     def limits(self) -> tuple[Limit, ...]:
         return self.edges
 
 
+ROD_FORCE = "rod force"
+"""What the pins of a load feel whose seals rub: its force less their friction when it moves along its force, plus it
+when it moves against."""
 TELLS_FORCE = {"force": "force", "length": "length"}
 TELLS_TORQUE = {"torque": "moment", "angle": "angle"}
 

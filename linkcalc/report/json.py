@@ -59,11 +59,18 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
             {"member": m, "axial": array_tree(edge, answer.axial_in(m), "force", BATCH)} for m in answer.two_force
         ],
         "ropes": [
-            {"rope": r, "tension": array_tree(edge, answer.tension_of(r), "force", BATCH)} for r in answer.ropes
+            {
+                "rope": rope,
+                "tension": array_tree(edge, answer.tension_of(rope), "force", BATCH),
+                # of a rope whose pulleys rub those at its ends too
+                **{r.quantity: array_tree(edge, r.values, r.kind, BATCH) for r in answer.readings if r.load == rope},
+            }
+            for rope in answer.ropes
         ],
         "loads": [
             {"load": r.load, "quantity": r.quantity, **array_tree(edge, r.values, r.kind, BATCH)}
             for r in answer.readings
+            if r.load not in answer.ropes
         ],
         "members": [
             {

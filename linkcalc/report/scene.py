@@ -12,6 +12,7 @@ from linkcalc.design.answer import StrokeAnswer
 from linkcalc.model.parts_list import EFFORT, LOAD, CaseLoads
 from linkcalc.model.sketch import drawn
 from linkcalc.parts.contract import Joint, Mark, Pusher, Site
+from linkcalc.parts.law_push import ROD_FORCE
 from linkcalc.parts.pose import Poses
 
 Spot = tuple[float, float]
@@ -110,7 +111,10 @@ class Scene:
         for pusher, tone, factor in self.pushers(case):
             if hasattr(pusher, "through"):
                 continue  # a joint tells it
+            rod = f"{ROD_FORCE} of {pusher.name}"
+            told = next((r.values[case, 0, pose] for r in self.answer.readings if r.name == rod), None)
             size = answered[tone][case, 0, pose] if tone in answered else factor * _number(pusher.strength(at))
+            size = size if told is None else told
             spots = pusher.mark(at).spots
             for k, push in enumerate(pusher.push(at)):
                 member, fx, fy, turning = push[0], *(float(part * size) for part in push[1:])

@@ -59,8 +59,10 @@ class Schema:
             assert entry["member"] in tree["axes"]["member"]
             self.array(entry["axial"], "force", BATCH)
         for entry in tree["ropes"]:
-            assert list(entry) == ["rope", "tension"]
-            self.array(entry["tension"], "force", BATCH)
+            ends = ["first tension", "last tension"] if len(entry) > 2 else []
+            assert list(entry) == ["rope", "tension", *ends]
+            for key in list(entry)[1:]:
+                self.array(entry[key], "force", BATCH)
         for entry in tree["loads"]:
             array = {key: value for key, value in entry.items() if key not in ("load", "quantity")}
             self.array(array, TOLD[entry["quantity"]], BATCH)

@@ -35,6 +35,9 @@ class Resum:
         self.drawing = Drawing(self.mechanism)
         self.index = {name: k for k, name in enumerate(self.drawing.members)}
         self.shape = answer.status.shape
+        # with friction each case comes twice, along the stroke and back
+        cases = list((self.mechanism.cases or {"": Case()}).values())
+        self.cases = [case for case in cases for _ in range(self.shape[0] // len(cases))]
         self.pins = {b.joint for b in answer.bearings if b.word == "pin"}
 
     def place(self, point: str, member: str) -> tuple[np.ndarray, np.ndarray]:
@@ -103,11 +106,13 @@ class Resum:
     def loads(self) -> Iterator[Wrench]:
         """Everything that pushes, with the strength it has in each case."""
         m = self.mechanism
-        cases = list((m.cases or {"": Case()}).values())
+        cases = self.cases
         if m.effort is not None:
+            told = {r.name: r.values for r in self.answer.readings}
+            effort = told.get("rod force of effort", self.answer.effort)
             for k, case in enumerate(cases):
                 size = np.zeros(self.shape)
-                size[k] = self.answer.effort[k]
+                size[k] = effort[k]
                 yield from self.wrenches(case.effort or m.effort, size)
         if m.load is not None:
             yield from self.wrenches(m.load, np.array(self.answer.load))
@@ -143,7 +148,11 @@ class Resum:
 
     def _told(self, load: Any, name: str) -> np.ndarray:
         """Strength of a spring or the like, as the answer gives it; nothing in a case that is without it."""
-        return np.nan_to_num(self.answer.reading(f"{'torque' if hasattr(load, 'turned') else 'force'} of {name}"))
+        told = {r.name: r.values for r in self.answer.readings}
+        strength = told.get(f"rod force of {name}")  # what its seals leave of it
+        if strength is None:
+            strength = self.answer.reading(f"{'torque' if hasattr(load, 'turned') else 'force'} of {name}")
+        return np.nan_to_num(strength)
 
     def _centre(self, member: Member) -> tuple[Any, Any]:
         if member.centre:
@@ -157,7 +166,7 @@ class Resum:
     def _gravity(self) -> tuple[np.ndarray, np.ndarray, np.ndarray]:
         """Direction x, y [-] and strength [m/s2] of gravity, case by case."""
         g, value = self.mechanism.gravity, self.drawing.value
-        changes = [c.gravity for c in (self.mechanism.cases or {"": Case()}).values()]
+        changes = [c.gravity for c in self.cases]
         angle = np.array([value(g.direction, "angle") + value(c.turn, "angle") for c in changes]).reshape(-1, 1, 1)
         size = np.array([value(g.size, "acceleration") * c.scale for c in changes]).reshape(-1, 1, 1)
         return np.cos(angle), np.sin(angle), size

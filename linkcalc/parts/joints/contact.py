@@ -36,7 +36,7 @@ class Contact:
     preload: Size | None = fields.size("force", "force in the drawing pose", None, sign="plus")
     on: str = fields.name("member", "the member that has the face", "ground")
     of: str | None = fields.name("member", "the member that the point belongs to, if several carry it", None)
-    friction: Size | None = fields.size("number", "coefficient of friction of the contact", None, sign="not minus")
+    friction: Size | None = fields.friction("of the contact")
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[ContactJoint]:
         alone = self.of is not None or len(sketch.carriers(self.point)) < 2

@@ -1,19 +1,41 @@
-"""Rope or chain: from end to end over fixed and moving pulleys; one tension throughout, pull only.
+"""Rope or chain: from end to end over fixed and moving pulleys; pull only, the same all along but for friction.
 
 A rope with two dead ends has one length, which does not change: one equation, whose multiplier is the tension. A rope
 with a hauling end is drawn in there by an effort or a load, whose size is the tension; it holds nothing by itself.
+With friction the tension steps at each pulley; that of the last part is the multiplier, or the pull at the hauling end.
 """
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
+from itertools import pairwise
 from typing import Any
 
 import numpy as np
 
+from linkcalc.faults import Fault, Faults
 from linkcalc.parts import fields
-from linkcalc.parts.contract import TURN, Contact, Entry, Mark, Poses, Row, Rub, Site, Size, Sketch, Value, X, Y
+from linkcalc.parts.contract import (
+    TURN,
+    Contact,
+    Drag,
+    Entry,
+    Limit,
+    Mark,
+    Poses,
+    Push,
+    Row,
+    Rub,
+    Site,
+    Size,
+    Sketch,
+    Value,
+    X,
+    Y,
+)
+from linkcalc.parts.joints.rope_steps import Pulley
+from linkcalc.parts.paths.drag_at import Loss
 from linkcalc.parts.paths.over_pulleys import OverPulleys, Wheel, over_pulleys
 from linkcalc.parts.paths.room import check_room
 from linkcalc.parts.paths.shape import line_of
@@ -21,64 +43,6 @@ from linkcalc.parts.stiff import stiff, stiffness_field
 from linkcalc.words import word
 
 DEAD, HAULING = "dead", "hauling"
-_SIDES = {"left": -1.0, "right": 1.0}
-_WRAP = "the side of the centre on which the rope passes, looking along the path"
-
-
-@word("rope step", "point")
-@dataclass(frozen=True)
-class Anchor:
-    """An end that is made fast at a point."""
-
-    point: str = fields.name("point", "the point it is made fast to; where several members meet the pin itself")
-    on: str | None = fields.name("member", "the member that takes the pull, if several carry the point", None)
-
-    short = "point"
-    radius = 0.0
-    side = 1.0
-    fixed = False
-
-
-@word("rope step", "pulley")
-@dataclass(frozen=True)
-class Pulley:
-    """A pulley that turns freely about a point."""
-
-    pulley: str = fields.name("point", "its centre; where several members meet it sits on the pin itself")
-    radius: Size = fields.size("length", "to the middle of the rope", sign="not minus")
-    wrap: str = fields.choice(tuple(_SIDES), _WRAP)
-    on: str | None = fields.name("member", "the member that takes the pull, if several carry the point", None)
-
-    fixed = False
-
-    @property
-    def point(self) -> str:
-        return self.pulley
-
-    @property
-    def side(self) -> float:
-        return _SIDES[self.wrap]
-
-
-@word("rope step", "drum")
-@dataclass(frozen=True)
-class Drum:
-    """An end that winds on a drum or sector fixed to a member, within half a turn of the drawing pose."""
-
-    drum: str = fields.name("point", "its centre")
-    radius: Size = fields.size("length", "to the middle of the rope", sign="plus")
-    wrap: str = fields.choice(tuple(_SIDES), _WRAP)
-    on: str | None = fields.name("member", "the member that the drum is part of, if several carry the point", None)
-
-    fixed = True
-
-    @property
-    def point(self) -> str:
-        return self.drum
-
-    @property
-    def side(self) -> float:
-        return _SIDES[self.wrap]
 
 
 @word("joint", "rope")
@@ -97,11 +61,12 @@ class Rope:
     stiffness: Size | None = stiffness_field()
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[RopeJoint]:
-        wheels, contacts = [], dict[tuple[Site, str], tuple[str, list[int]]]()
+        wheels, losses, contacts = [], list[Loss | None](), dict[tuple[Site, str], tuple[str, list[int]]]()
         for k, step in enumerate(self.path):
             site = sketch.site(step.point, step.on)
             radius = sketch.value(step.radius, "length") if step.radius else 0.0
             wheels.append(Wheel(site, radius, step.side, step.fixed))
+            losses.append(_loss(step, k, sketch))
             # a drum is part of a member, so it does not sit on the pin of several
             on_pin = step.on is None and not step.fixed and len(sketch.carriers(step.point)) > 1
             key = site, step.point if on_pin else ""
@@ -110,7 +75,28 @@ class Rope:
             path = over_pulleys(wheels, sketch.drawn)
             check_room(path, sketch, [step.point for step in self.path])
             places = tuple(Place(where, site, pin, tuple(which)) for (site, pin), (where, which) in contacts.items())
-            yield RopeJoint(name, path, path.length(sketch.drawn), places, self.end == HAULING, **stiff(self, sketch))
+            whole, limits = path.length(sketch.drawn), _limits(self.path, path, sketch)
+            hauled = self.end == HAULING
+            yield RopeJoint(name, path, whole, places, hauled, tuple(losses[1:-1]), limits, **stiff(self, sketch))
+
+
+def _loss(step: Any, k: int, sketch: Sketch) -> Loss | None:
+    """What it loses on a step of its way. Raises Faults, with the step named."""
+    try:
+        return step.loss(sketch) if isinstance(step, Pulley) else None
+    except Faults as found:
+        raise Faults([Fault(("path", str(k + 1), *f.item), f.what, f.wanted) for f in found.faults]) from None
+
+
+def _limits(steps: Sequence[Any], path: OverPulleys, sketch: Sketch) -> tuple[Limit, ...]:
+    """It must lie on each of its pulleys: over the arc that is left, with the whole turns beside it."""
+
+    def room(k: int, more: Value) -> Limit:
+        text = f"off the pulley at {steps[k].point}: it would have to pass it on the other side"
+        return Limit(text, lambda at, _: path.arcs(at, path.run(at))[k] + more)
+
+    pulleys = [(k, step) for k, step in enumerate(steps) if isinstance(step, Pulley)]
+    return tuple(room(k, 2 * np.pi * sketch.value(step.turns, "number")) for k, step in pulleys)
 
 
 @dataclass(frozen=True, eq=False)
@@ -129,6 +115,8 @@ class RopeJoint:
 
     whole   [m] its own length, but for what is on drums
     hauled  True if it has a hauling end: then its length may change, and there is no equation
+    losses  for each pulley between its ends what it loses there, None: nothing
+    edges   what should hold of it in every pose
     """
 
     name: str
@@ -136,6 +124,8 @@ class RopeJoint:
     whole: Value
     places: tuple[Place, ...]
     hauled: bool
+    losses: tuple[Loss | None, ...] = ()
+    edges: tuple[Limit, ...] = ()
     on_pin: str = ""
     share: Value | None = None
     word = "rope"
@@ -180,9 +170,9 @@ class RopeJoint:
             row += [(member, X, fx), (member, Y, fy), (member, TURN, _about_origin(at, wheel.site, fx, fy, moment))]
         return row
 
-    def contacts(self, at: Poses) -> tuple[Contact, ...]:
+    def contacts(self, at: Poses, parts: Sequence[Value] = ()) -> tuple[Contact, ...]:
         with np.errstate(all="ignore"):
-            pulls = self.path.pulls(self.path.run(at))
+            pulls = self.path.pulls(self.path.run(at), parts)
         out = []
         for place in self.places:
             fx, fy, moment = (sum((pulls[k][i] for k in place.wheels[1:]), pulls[place.wheels[0]][i]) for i in range(3))
@@ -192,6 +182,30 @@ class RopeJoint:
     def rubs(self) -> tuple[Rub, ...]:
         return ()
 
+    def drag(self) -> Drag | None:
+        return Drag(self._spans, self._ratios) if any(loss is not None for loss in self.losses) else None
+
+    def _spans(self, at: Poses) -> tuple[tuple[Push, ...], ...]:
+        with np.errstate(all="ignore"):
+            ends = self.path.ends(self.path.run(at))
+        return tuple(
+            tuple(_push(at, wheel.site, *pull) for wheel, pull in zip(wheels, pulls, strict=True))
+            for wheels, pulls in zip(pairwise(self.path.wheels), ends, strict=True)
+        )
+
+    def _ratios(self, at: Poses) -> tuple[Value, ...]:
+        with np.errstate(all="ignore"):
+            run = self.path.run(at)
+            arcs = self.path.arcs(at, run)[1:-1]
+            ways = pairwise(run.ways)
+            return tuple(
+                1.0 if loss is None else loss(before, after, arc)
+                for loss, (before, after), arc in zip(self.losses, ways, arcs, strict=True)
+            )
+
+    def limits(self) -> tuple[Limit, ...]:
+        return self.edges
+
     def mark(self, at: Poses) -> Mark:
         spots = [at.spot(w.site) for w in self.path.wheels]
         places = tuple((float(x), float(y)) for x, y in spots)
@@ -199,6 +213,10 @@ class RopeJoint:
             (x, y, float(w.radius)) for (x, y), w in zip(places, self.path.wheels, strict=True) if float(w.radius)
         )
         return Mark("rope", places, name=self.name, line=line_of(self.path, at), rounds=rounds)
+
+
+def _push(at: Poses, site: Site, fx: Value, fy: Value, moment: Value) -> Push:
+    return site.member, fx, fy, _about_origin(at, site, fx, fy, moment)
 
 
 def _about_origin(at: Poses, site: Site, fx: Value, fy: Value, moment: Value) -> Value:

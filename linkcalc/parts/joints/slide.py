@@ -23,9 +23,7 @@ class Slide:
     on: str = fields.name("member", "the member that has the guide", "ground")
     at: str | None = fields.name("point", "where force and moment are told; else the member's first point", None)
 
-    friction: Size | None = fields.size(
-        "number", "coefficient of friction, if not the one for all slides", None, sign="not minus"
-    )
+    friction: Size | None = fields.friction("if not the one for all slides")
     length: Size | None = fields.size(
         "length", "length of the guide: its moment then presses at both ends, and rubs there", None, sign="plus"
     )

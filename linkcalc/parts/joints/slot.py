@@ -25,9 +25,7 @@ class Slot:
     on: str = fields.name("member", "the member that has the slot", "ground")
     of: str | None = fields.name("member", "the member that the point belongs to, if several carry it", None)
 
-    friction: Size | None = fields.size(
-        "number", "coefficient of friction, if not the one for all slots", None, sign="not minus"
-    )
+    friction: Size | None = fields.friction("if not the one for all slots")
     stiffness: Size | None = stiffness_field()
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlotJoint]:

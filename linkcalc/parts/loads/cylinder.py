@@ -9,7 +9,7 @@ import numpy as np
 from linkcalc.faults import fault
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Limit, Size, Sketch, Told, Value
-from linkcalc.parts.law_push import TELLS_FORCE, LawPush, between, nominal, sure
+from linkcalc.parts.law_push import ROD_FORCE, TELLS_FORCE, LawPush, between, nominal, sure
 from linkcalc.parts.laws.steady import Steady
 from linkcalc.parts.paths.straight import straight
 from linkcalc.words import word
@@ -34,10 +34,13 @@ class Cylinder:
     acts: str = fields.choice((PUSH, PULL), "which way the pressure acts", PUSH)
     shortest: Size | None = fields.size("length", "length between its pins fully in", None, sign="plus")
     longest: Size | None = fields.size("length", "length between its pins fully out", None, sign="plus")
+    seal_friction: Size | None = fields.size(
+        "force", "friction of its seals, against its motion", None, sign="not minus"
+    )
     on: tuple[str, str] | None = fields.names("member", "the members they are on, if several carry the points", None)
 
     asked = "pressure"
-    tells = TELLS_FORCE | {"pressure": "pressure"}
+    tells = TELLS_FORCE | {ROD_FORCE: "force", "pressure": "pressure"}
 
     @property
     def ends(self) -> tuple[str, str]:
@@ -51,9 +54,10 @@ class Cylinder:
         can, other = ("push", "draw") if self.acts == PUSH else ("draw", "push")
         wrong = f"asked to {other}, with a pressure below nothing: it can only {can}"
         edges = (*between(path, sketch, shortest, longest, "its"), Limit(wrong, lambda _, strength: strength))
-        told = Told("pressure", "pressure", lambda _, strength: strength / area)
+        told = Told("pressure", "pressure", lambda _, strength, __: strength / area)
         sense = 1.0 if self.acts == PUSH else -1.0
-        return LawPush(name, "cylinder", Steady(size), path, sense, (told,), edges, (_CAUTION,))
+        seal = 0.0 if self.seal_friction is None else sketch.value(self.seal_friction, "force")
+        return LawPush(name, "cylinder", Steady(size), path, sense, (told,), edges, (_CAUTION,), seal=seal)
 
     def _area(self, sketch: Sketch) -> Value:
         """[m2] that the pressure acts on. Raises Faults."""

@@ -9,7 +9,7 @@ import numpy as np
 from linkcalc.faults import fault
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Size, Sketch, Value
-from linkcalc.parts.law_push import TELLS_FORCE, LawPush, between, nominal, sure
+from linkcalc.parts.law_push import ROD_FORCE, TELLS_FORCE, LawPush, between, nominal, sure
 from linkcalc.parts.laws.gas import Gas, taken_by_rise
 from linkcalc.parts.paths.straight import straight
 from linkcalc.words import word
@@ -20,7 +20,8 @@ from linkcalc.words import word
 class GasSpring:
     """A gas spring between two points: pushes them apart, the harder the deeper the rod is in and the warmer it is.
 
-    The force is that of the gas alone, between those measured on the way in and on the way out.
+    The force is that of the gas alone, midway between those measured on the way in and on the way out; half their
+    difference is the friction of its seals.
     """
 
     gas_spring: tuple[str, str] = fields.names("point", "the two points it is pinned to")
@@ -32,10 +33,13 @@ class GasSpring:
     rod: Size | None = fields.size("length", "diameter of the rod; goes with 'volume'", None, sign="plus")
     exponent: Size = fields.size("number", "of the gas law: 1 moved slowly, up to 1.4 moved fast", 1, sign="plus")
     temperature: Size = fields.size("temperature", "at which its force is told", "20 degC")
+    seal_friction: Size | None = fields.size(
+        "force", "friction of its seals, against its motion", None, sign="not minus"
+    )
     on: tuple[str, str] | None = fields.names("member", "the members they are on, if several carry the points", None)
 
     one_of = ("rise", "volume")
-    tells = TELLS_FORCE
+    tells = TELLS_FORCE | {ROD_FORCE: "force"}
 
     @property
     def ends(self) -> tuple[str, str]:
@@ -52,7 +56,8 @@ class GasSpring:
         path = straight(sketch, self.gas_spring, self.on)
         edges = between(path, sketch, longest - stroke, longest, "its")
         warm = nominal(sketch.value(self.temperature, "temperature"))
-        return LawPush(name, "gas spring", law, path, edges=edges, cautions=(_CAUTION,), temperature=warm)
+        seal = 0.0 if self.seal_friction is None else sketch.value(self.seal_friction, "force")
+        return LawPush(name, "gas spring", law, path, edges=edges, cautions=(_CAUTION,), temperature=warm, seal=seal)
 
     def _taken(self, stroke: Value, exponent: Value, sketch: Sketch) -> Value:
         """[1/m] part of the volume that each length of rod takes. Raises Faults."""

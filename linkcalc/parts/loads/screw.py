@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import MISSING, dataclass
 
 import numpy as np
 
@@ -14,23 +14,27 @@ from linkcalc.parts.laws.steady import Steady
 from linkcalc.parts.paths.straight import straight
 from linkcalc.words import word
 
-RAISING, LOWERING = "raising torque", "lowering torque"
+RAISING, LOWERING, TURNING = "raising torque", "lowering torque", "turning torque"
+EFFICIENCY, HOLDING = "thread efficiency", "holding ratio"
 
 
 @word("load", "screw")
 @dataclass(frozen=True)
 class Screw:
     """A screw between two points: plus pushes them apart. It tells the torque that moves it against the force, and
-    the one that moves it with the force; minus there: it runs back by itself unless it is held."""
+    the one that moves it with the force; minus there: it runs back by itself unless it is held. The one of these that
+    its motion asks for is its turning torque."""
 
     screw: tuple[str, str] = fields.names("point", "the two points")
     diameter: Size = fields.size("length", "mean diameter of the thread", sign="plus")
     lead: Size = fields.size("length", "travel for one turn", sign="plus")
-    friction: Size = fields.size("number", "coefficient of friction in the thread, over its flank", sign="not minus")
+    friction: Size = fields.friction("in the thread, over its flank", MISSING)
     size: Size | None = fields.size("force", "how large; left out for the one unknown", None)
     on: tuple[str, str] | None = fields.names("member", "the members they are on, if several carry the points", None)
 
-    tells = TELLS_FORCE | {RAISING: "moment", LOWERING: "moment"}
+    tells = TELLS_FORCE | {
+        RAISING: "moment", LOWERING: "moment", TURNING: "moment", EFFICIENCY: "number", HOLDING: "number",
+    }  # fmt: skip
 
     @property
     def ends(self) -> tuple[str, str]:
@@ -45,8 +49,14 @@ class Screw:
         arm, back = _arms(diameter, rise, friction)
         size = None if self.size is None else sketch.value(self.size, "force")
         told = (
-            Told(RAISING, "moment", lambda _, strength: np.abs(strength) * arm),
-            Told(LOWERING, "moment", lambda _, strength: np.abs(strength) * back),
+            Told(RAISING, "moment", lambda _, strength, __: np.abs(strength) * arm),
+            Told(LOWERING, "moment", lambda _, strength, __: np.abs(strength) * back),
+            # it drives where it moves along its push
+            Told(
+                TURNING, "moment", lambda _, strength, way: np.abs(strength) * np.where(strength * way < 0, back, arm)
+            ),
+            Told(EFFICIENCY, "number", lambda *_: diameter / 2 * rise / arm),
+            Told(HOLDING, "number", lambda *_: friction / rise),
         )
         runs_back = Limit(
             "not held by its own friction: it runs back unless a brake holds it", lambda *_: friction - rise

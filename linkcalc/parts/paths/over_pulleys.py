@@ -21,6 +21,8 @@ import numpy as np
 from linkcalc.parts.contract import Poses, Site, Value
 
 Way = tuple[Value, Value]
+Pull = tuple[Value, Value, Value]
+"""force x, y and moment about the centre of a wheel, for a tension of 1"""
 
 
 @dataclass(frozen=True, eq=False)
@@ -94,19 +96,36 @@ class OverPulleys:
         off: Value = wheel.side * (_angle(drawn, way) - turn)
         return off
 
-    def pulls(self, run: Run) -> list[tuple[Value, Value, Value]]:
-        """What a tension of 1 does to each wheel: force x, y and moment about its centre."""
-        out: list[tuple[Value, Value, Value]] = []
-        last = len(self.wheels) - 1
+    def pulls(self, run: Run, parts: Sequence[Value] = ()) -> list[Pull]:
+        """What a tension of 1 does to each wheel; with parts: tensions in the straight parts that are not the same."""
+        if parts:
+            ends = [[tuple(_times(part, v) for v in pull) for pull in both]
+                    for part, both in zip(parts, self.ends(run), strict=True)]  # fmt: skip
+            first, last = ends[0][0], ends[-1][1]
+            between = []
+            for j, (before, after) in enumerate(pairwise(ends)):
+                even = parts[j] is parts[j + 1]  # what it takes on one side it gives on the other
+                fx, fy, moment = (a + b for a, b in zip(before[1], after[0], strict=True))
+                between.append((fx, fy, 0.0 if even else moment))
+            return [first, *between, last]  # type: ignore[list-item]
+        out: list[Pull] = []
+        last_wheel = len(self.wheels) - 1
         for k, wheel in enumerate(self.wheels):
-            fx, fy = run.ways[k] if k < last else (0.0, 0.0)
+            fx, fy = run.ways[k] if k < last_wheel else (0.0, 0.0)
             moment = wheel.side * wheel.radius if wheel.fixed else 0.0
             if k:
                 bx, by = run.ways[k - 1]
-                fx, fy = (fx - bx, fy - by) if k < last else (-bx, -by)
+                fx, fy = (fx - bx, fy - by) if k < last_wheel else (-bx, -by)
                 moment = -moment
             out.append((fx, fy, moment))
         return out
+
+    def ends(self, run: Run) -> list[tuple[Pull, Pull]]:
+        """What a tension of 1 in each straight part alone does to the wheels at both its ends, acting at their rims."""
+        return [
+            ((dx, dy, _lever(v)), (-dx, -dy, -_lever(w)))
+            for (dx, dy), (v, w) in zip(run.ways, pairwise(self.wheels), strict=True)
+        ]
 
 
 def over_pulleys(wheels: Sequence[Wheel], at: Poses) -> OverPulleys:
@@ -142,6 +161,14 @@ def _angle(before: Way, after: Way) -> Value:
     (ax, ay), (bx, by) = before, after
     angle: Value = np.arctan2(ax * by - ay * bx, ax * bx + ay * by)
     return angle
+
+
+def _lever(wheel: Wheel) -> Value:
+    return 0.0 if _point(wheel) else wheel.side * wheel.radius
+
+
+def _times(part: Value, value: Value) -> Value:
+    return 0.0 if isinstance(value, float) and value == 0.0 else part * value
 
 
 def _point(wheel: Wheel) -> bool:

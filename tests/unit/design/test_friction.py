@@ -185,6 +185,11 @@ size = 1000
     assert jammed.status[0, 0, 0] == Status.JAMMED and np.isnan(jammed.effort[0, 0, 0])
     assert jammed.status[1, 0, 0] == Status.FINE
     assert any("jams" in c.text for c in jammed.caveats)
+    # coming back F = W - mu N with N = 2 |F| a / L has a second answer, F < 0, as soon as it jams the other way
+    told = [c.text for c in jammed.caveats if "more than one answer" in c.text]
+    assert len(told) == 1 and "case back" in told[0]
+    free = stroke(parse(text.format(arm=0.2, mu=0.24)))
+    assert not any("more than one" in c.text for c in free.caveats)
 
 
 STROKE = """
