@@ -192,10 +192,11 @@ class Drag:
 class Joint(Protocol):
     """Something that holds members together: rows of constraint equations.
 
-    One that gives has, besides, ``gives``: for each row a Give, or None where it holds. One that acts at several places has, besides, ``contacts(at, parts)``: a Contact for each of them. It has one row,
-    whose multiplier they are told for; or none, if it holds nothing and only passes on what a pusher does (``Hauled``).
-    If its pull changes along it, ``drag()`` gives its Drag; the multiplier is the pull in its last part, and ``parts``
-    are the pulls of all its parts over that one. ``limits()``, if it is there, tells what should hold in every pose.
+    One that gives has, besides, ``gives``: for each row a Give, or None where it holds. One that acts at several places
+    has ``contacts(at, parts)``: a Contact for each of them. It has one row, whose multiplier they are told for; or
+    none, if it holds nothing and only passes on what a pusher does (``Hauled``). If its pull changes along it,
+    ``drag()`` gives its Drag; the multiplier is the pull in its last part, and ``parts`` are the pulls of all its parts
+    over that one. ``limits()``, if it is there, tells what should hold in every pose.
     One with teeth has ``place(at)``, where its force is told, for that moves on its members: (x, y) [m]; ``grain``:
     its gap is known but for multiples of that [m]; ``astray(at)``: how far its centres have moved apart [m].
 
