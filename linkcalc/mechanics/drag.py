@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass, field
+from functools import cached_property
 from typing import Any
 
 import numpy as np
@@ -51,6 +52,10 @@ class Drive:
         """False for a chain that nothing drives."""
         return bool(self.closed.speed)
 
+    @cached_property
+    def _tops(self) -> list[float]:
+        return tops(self.closed.speed)
+
     def speed(self, push: Column) -> Value:
         """Of a push along itself."""
         return dot(self.closed.speed, push) if self.moves else 0.0
@@ -62,7 +67,7 @@ class Drive:
         speed = self.speed(push)
         turning = all(zero(q) for k, q in enumerate(push) if k % 3 != TURN)
         arm = chain.size if turning else 1.0
-        top = max((t * size for t, size in zip(tops(self.closed.speed), chain.sizes, strict=True)), default=0.0)
+        top = max((t * size for t, size in zip(self._tops, chain.sizes, strict=True)), default=0.0)
         # one bound for the whole batch settles nearly every batch, and costs no temporary arrays
         if float(np.min(np.abs(speed))) * arm > STANDS * top:
             return speed
