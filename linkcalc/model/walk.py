@@ -67,7 +67,6 @@ def everything(mechanism: Mechanism) -> Iterator[Part]:
     yield Part(("friction",), mechanism.friction)
     yield Part((), mechanism)
     yield Part(("gravity",), mechanism.gravity)
-    yield Part(("friction",), mechanism.friction)
     yield from loads(mechanism)
     if mechanism.stroke is not None:
         yield Part(("stroke",), mechanism.stroke)
