@@ -36,7 +36,7 @@ def test_it_goes_through_all_commands(name: str, tmp_path: Path) -> None:
     assert tree["holds"] is True
     assert [r["name"] for r in tree["requirements"]] == list(model.get("requirements", {}))
     cases = list(model.get("cases", {"": {}}))
-    if "friction" in model or "pins" in model:
+    if "friction" in model or any("friction" in pin for pin in model.get("pins", {}).values()):
         cases = [way for name in cases for way in ((name, f"{name} (back)") if name else ("forward", "back"))]
     assert tree["axes"]["case"] == cases
     assert all(status == 0 for case in tree["status"]["values"] for variant in case for status in variant)
@@ -47,6 +47,10 @@ def test_it_goes_through_all_commands(name: str, tmp_path: Path) -> None:
     assert picture.read_text(encoding="utf-8").startswith("<?xml")
     if "stroke" in model:
         assert linkcalc("stroke", path, "--plot", tmp_path / "curves.svg").status == 0
+
+    carried = linkcalc("pins", path, "--roses", tmp_path / "roses.svg")
+    assert carried.status == 0
+    assert "What each joint carries" in carried.out
 
 
 def test_every_example_has_a_caution_and_a_hand_calculation() -> None:
