@@ -31,6 +31,7 @@ if TYPE_CHECKING:
     from linkcalc.design.check import check_model
     from linkcalc.design.copies import copies
     from linkcalc.design.members import members
+    from linkcalc.design.pins import pins
     from linkcalc.design.stroke import stroke
     from linkcalc.faults import Fault, Faults
     from linkcalc.model.mechanism import Mechanism
@@ -46,6 +47,7 @@ __all__ = [
     "dumps",
     "members",
     "parse",
+    "pins",
     "read",
     "stroke",
     "write",
@@ -56,6 +58,7 @@ _HOMES = {
     "check_model": "linkcalc.design.check",
     "copies": "linkcalc.design.copies",
     "members": "linkcalc.design.members",
+    "pins": "linkcalc.design.pins",
     "stroke": "linkcalc.design.stroke",
     "Fault": "linkcalc.faults",
     "Faults": "linkcalc.faults",

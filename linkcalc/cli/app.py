@@ -12,6 +12,7 @@ from linkcalc.cli.check import check
 from linkcalc.cli.draw import draw
 from linkcalc.cli.files import BAD
 from linkcalc.cli.members import members
+from linkcalc.cli.pins import pins
 from linkcalc.cli.start import start
 from linkcalc.cli.stroke import stroke
 
@@ -40,7 +41,7 @@ def _main(
         raise typer.Exit
 
 
-for command in (start, check, stroke, members, draw):
+for command in (start, check, stroke, members, pins, draw):
     app.command()(command)
 
 

@@ -80,6 +80,21 @@ class Reading:
 
 
 @dataclass(frozen=True)
+class Felt:
+    """What one member feels at a joint in one exact pose.
+
+    force          [N] size of the force of the joint on it
+    direction      [rad] where that points, from the x axis; nan if there is no force
+    own_direction  [rad] the same from the member's own x axis (first point to last); nan for a pin itself
+    """
+
+    member: str
+    force: float
+    direction: float
+    own_direction: float
+
+
+@dataclass(frozen=True)
 class Event:
     """Something that happens at an exact pose.
 
@@ -90,6 +105,7 @@ class Event:
     drive     [rad or m] value of the stepped coordinate, found by root finding, not by sampling
     value     SI; nan if the event has none
     value_kind  kind of the value ("force", "moment", "number", ...)
+    felt      of a largest joint force what each member of the joint feels there; else empty
     """
 
     kind: str
@@ -98,6 +114,7 @@ class Event:
     drive: float
     value: float
     value_kind: str
+    felt: tuple[Felt, ...] = ()
 
 
 @dataclass(frozen=True)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from bisect import bisect_right
 from collections.abc import Collection, Sequence
 from dataclasses import dataclass
 from functools import cached_property
@@ -66,6 +67,8 @@ class Curves:
         sizes = np.abs(self._samples)
         self._sizes = sizes.max(axis=(1, 2), initial=0.0, where=np.isfinite(sizes)).tolist()
         self._column: dict[float, int] = {}
+        self._batches: list[Shown] = []  # what was solved, one after the other
+        self._first: list[int] = []  # column that each begins at
         self._values: Array = np.zeros((len(self._names), len(survey.ready.pushing.cases), 0))
         self._mesh = mesh_of(survey.ready, shown.solved) if self.drive.size > 1 else None
 
@@ -112,14 +115,26 @@ class Curves:
         """(names, case, values) at any values of the drive; what was asked before is not solved again."""
         new = np.array([d for d in dict.fromkeys(drive.tolist()) if d not in self._column])
         if new.size:
-            values = self.survey.values(self._names, self.survey.show(self.solve(new)))[:, :, 0]
+            shown = self.survey.show(self.solve(new))
+            values = self.survey.values(self._names, shown)[:, :, 0]
             start = len(self._column)
+            self._batches.append(shown)
+            self._first.append(start)
             self._column.update((d, start + k) for k, d in enumerate(new.tolist()))
             self._values = np.concatenate([self._values, values], axis=2)
         columns = [self._column[d] for d in drive.tolist()]
         rows = [self._row[n] for n in names]
         found: Array = self._values[rows][:, :, columns]
         return found
+
+    def seen(self, drive: float) -> tuple[Shown, int]:
+        """The batch that holds a value of the drive, and its number there; solved if it was not asked before."""
+        if self._mesh is None:
+            return self.shown, 0
+        self.at([], np.array([drive]))
+        column = self._column[drive]
+        batch = bisect_right(self._first, column) - 1
+        return self._batches[batch], column - self._first[batch]
 
     def extremes(self, wanted: Sequence[Wanted]) -> list[Found]:
         """All the extremes asked for, found together. Of a size, the value comes with the sign it has there."""
@@ -146,10 +161,24 @@ class Extremes:
         """Where the samples foretell them."""
         return self._peaks.place
 
-    def found(self, besides: Collection[Wanted] = ()) -> dict[Wanted, Found]:
-        """All of them, but for those that are known already."""
+    @property
+    def foretold(self) -> Array:
+        """(wanted) what the samples foretell each of them to be, of what is to be largest; -inf if it has no value."""
+        return self._peaks.foretold
+
+    def places_of(self, wanted: Collection[Wanted]) -> Array:
+        """Where the samples foretell some of them."""
+        chosen = np.array([w in wanted for w in self.wanted], bool)
+        return self._peaks.place[chosen[self._peaks.curve]]
+
+    def found(self, besides: Collection[Wanted] = (), only: Collection[Wanted] | None = None) -> dict[Wanted, Found]:
+        """All of them, or only some, but for those that are known already."""
         endless = self._endless(besides)
-        left = [k for k, w in enumerate(self.wanted) if w not in besides and w not in endless]
+        left = [
+            k
+            for k, w in enumerate(self.wanted)
+            if w not in besides and w not in endless and (only is None or w in only)
+        ]
         if not left:
             return endless
         signs = np.ones(len(self._case))

@@ -6,8 +6,9 @@ from collections.abc import Iterator
 
 import numpy as np
 
-from linkcalc.design.answer import Event
-from linkcalc.design.curves import Curves, Extremes, Wanted, Zeros
+from linkcalc.design.answer import Event, Felt
+from linkcalc.design.curves import Curves, Extremes, Found, Wanted, Zeros
+from linkcalc.design.felt import felt, felt_beside
 from linkcalc.design.passages import at_passages, beside
 from linkcalc.design.survey import EFFORT_SPEED, LOAD_SPEED
 from linkcalc.mechanics.path import Path
@@ -16,17 +17,22 @@ SLACK = "slack"
 """Kind of the event where the tension of a rope passes through nothing."""
 _BOTH_WAYS = ("effort", "load", "force ratio", "ideal ratio")
 
+_FORCE = "force at "
 _POLE = 1e-6  # of the stroke: a change of sign as near to a dead point is that of the dead point
 _NOTHING = 1e-9  # of the largest force: a joint that carries nothing has no extremes to tell
 
 
-def events(curves: Curves, path: Path) -> tuple[Event, ...]:
-    """All events, limits and dead points first, then reversals, then extremes in the order of the quantities."""
+def events(curves: Curves, path: Path, *, extremes: bool = True) -> tuple[Event, ...]:
+    """All events, limits and dead points first, then reversals, then extremes in the order of the quantities.
+
+    extremes  False: none of these, which take the longest where there are many cases
+    """
     out = [Event("limit", "stroke", "", limit, np.nan, "number") for limit in path.limits]
     out += [Event("change point", "stroke", "", (a + b) / 2, np.nan, "number") for a, b in path.passed]
     out += _snaps(curves, path)
     zeros = Zeros(curves, _turning(curves))
-    wanted = Extremes(curves, [w for w in _wanted(curves) if not _carries_nothing(curves, w.name)])
+    listed = [w for w in _wanted(curves) if not carries_nothing(curves, w.name)] if extremes else []
+    wanted = Extremes(curves, listed)
     _solve_ahead(curves, zeros, wanted)
     out += _passages(curves, zeros)
     curves.dead = sorted({e.drive for e in out if e.kind == "dead point"})
@@ -54,10 +60,10 @@ def _turning(curves: Curves) -> list[str]:
     axial = [f"axial force in {m}" for m in _members(curves)]
     return [
         *(name for name in _SPEEDS if name in curves.survey.quantities),
-        *(name for name in axial if not _carries_nothing(curves, name)),
+        *(name for name in axial if not carries_nothing(curves, name)),
         *(["effort"] if curves.survey.ready.pushing.effort_asked else []),
         *(f"room at {name}" for name in curves.survey.contacts),
-        *(name for name in _tensions(curves) if not _carries_nothing(curves, name)),
+        *(name for name in _tensions(curves) if not carries_nothing(curves, name)),
     ]
 
 
@@ -112,7 +118,16 @@ def _extremes(curves: Curves, wanted: Extremes) -> Iterator[Event]:
         if not np.isnan(found[w].value):
             kind = "opposite peak" if w in other else "largest" if w.sense > 0 else "smallest"
             value_kind = curves.survey.quantities[w.name].kind
-            yield Event(kind, w.name, _case(curves, w.case), found[w].drive, found[w].value, value_kind)
+            told = felt_at(curves, w, found[w])
+            yield Event(kind, w.name, _case(curves, w.case), found[w].drive, found[w].value, value_kind, told)
+
+
+def felt_at(curves: Curves, w: Wanted, found: Found) -> tuple[Felt, ...]:
+    """What each member feels there, if it is a joint's largest force."""
+    joint = w.name.removeprefix(_FORCE)
+    if w.sense < 0 or joint == w.name:
+        return ()
+    return (felt if np.isfinite(found.value) else felt_beside)(curves, joint, w.case, found.drive)
 
 
 def _wanted(curves: Curves) -> Iterator[Wanted]:
@@ -166,7 +181,7 @@ def _idle(curves: Curves, name: str) -> bool:
     return bool(np.all(np.abs(samples - samples[:, :1]) <= _NOTHING * curves.size(name)))
 
 
-def _carries_nothing(curves: Curves, name: str) -> bool:
+def carries_nothing(curves: Curves, name: str) -> bool:
     """True for a force that is zero but for rounding, all the way and in all cases."""
     if curves.survey.quantities[name].kind not in ("force", "moment"):
         return False

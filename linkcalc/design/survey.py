@@ -10,6 +10,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from linkcalc.design.inner import KINDS, inner
+from linkcalc.design.strengths import strength_quantities
 from linkcalc.design.told import Fitting, Spoken, spoken, watched
 from linkcalc.mechanics.axial import TwoForce, axial, two_force_members
 from linkcalc.mechanics.balance import Balance
@@ -18,7 +19,7 @@ from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.pushing import Pushing
 from linkcalc.mechanics.reactions import Side
 from linkcalc.mechanics.solved import Solved
-from linkcalc.model.requirements import INNER, requirements
+from linkcalc.model.requirements import requirements
 from linkcalc.parts.pose import Array, Value
 
 if TYPE_CHECKING:
@@ -76,6 +77,7 @@ class Survey:
         self.watched = watched(ready.pushing, ready.chain.joints)
         members = self.inside.members if inside else self._asked_about()
         self.quantities: dict[str, Quantity] = {q.name: q for q in [*self._all(), *self._inner(members)]}
+        self.quantities |= {q.name: q for q in strength_quantities(self)}
 
     def show(self, solved: Solved) -> Shown:
         return Shown(solved, sides(self.ready, solved))
@@ -161,7 +163,7 @@ class Survey:
     def _asked_about(self) -> list[str]:
         """Members whose inside a requirement asks about."""
         mechanism = self.ready.drawing.mechanism
-        return list(dict.fromkeys(r.of for r in requirements(mechanism) if r.quantity in INNER))
+        return list(dict.fromkeys(r.of for r in requirements(mechanism) if r.inside))
 
     def _inner(self, members: Sequence[str]) -> Iterator[Quantity]:
         for member in members:

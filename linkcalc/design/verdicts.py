@@ -3,7 +3,8 @@
 from __future__ import annotations
 
 import operator
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
+from typing import TYPE_CHECKING
 
 import numpy as np
 
@@ -11,12 +12,16 @@ from linkcalc.design.answer import Verdict
 from linkcalc.design.curves import Curves, Wanted
 from linkcalc.design.inner import MARGIN, inner
 from linkcalc.design.passages import worst
+from linkcalc.design.strengths import life
 from linkcalc.design.travel import travel
 from linkcalc.faults import fault
 from linkcalc.model.dimensions import evaluate
 from linkcalc.model.requirements import END, INNER, START, Requirement, requirements
 from linkcalc.model.units import show
 from linkcalc.words import nearest
+
+if TYPE_CHECKING:
+    from linkcalc.design.sizing.bearing_list import Bearing
 
 _HOLDS: dict[str, Callable[[float, float], bool]] = {
     "<=": operator.le,
@@ -29,23 +34,33 @@ _RATIOS = ("force ratio", "ideal ratio")
 _ROUNDING = 1e-9  # of the limit: a value that meets it but for rounding holds
 
 
-def verdicts(curves: Curves) -> tuple[Verdict, ...]:
-    """All requirements of the model, in its order. Raises Faults for one that asks for what is not there."""
+def verdicts(curves: Curves, bearings: Sequence[Bearing] | None = None) -> tuple[Verdict, ...]:
+    """All requirements of the model, in its order.
+
+    bearings  the list that bearings of the model are of; None: the sample
+
+    Raises Faults for one that asks for what is not there.
+    """
     mechanism = curves.survey.ready.drawing.mechanism
     if not mechanism.requirements:
         return ()
     names = evaluate(mechanism)
     return tuple(
-        _judge(curves, r, r.limit(mechanism, names), r.place(mechanism, names)) for r in requirements(mechanism)
+        _judge(curves, r, r.limit(mechanism, names), r.place(mechanism, names), bearings)
+        for r in requirements(mechanism)
     )
 
 
-def _judge(curves: Curves, requirement: Requirement, limit: float, place: float | None) -> Verdict:
+def _judge(
+    curves: Curves, requirement: Requirement, limit: float, place: float | None, bearings: Sequence[Bearing] | None
+) -> Verdict:
     mechanism = curves.survey.ready.drawing.mechanism
     text = mechanism.requirements[requirement.name]
     kind = requirement.kind(mechanism)
     if requirement.quantity == "travel":
         value, drive, case = travel(curves, requirement.of), float("nan"), ""
+    elif requirement.quantity == "life":
+        value, drive, case = life(curves, requirement.of, bearings), float("nan"), ""
     else:
         value, drive, case = _worst(curves, requirement, place)
     holds = _HOLDS[requirement.relation](value, limit) and value != float("-inf")
@@ -106,7 +121,7 @@ def _inside(curves: Curves, requirement: Requirement, drive: float) -> None:
 def _quantity(curves: Curves, requirement: Requirement) -> tuple[str, int]:
     """Name of the quantity in the survey, and the sign it is told with."""
     q = requirement
-    if q.quantity in INNER:
+    if q.inside:
         return inner(q.quantity, q.of), 1
     if q.quantity == "tension" and f"tension of {q.of}" in curves.survey.quantities:
         return f"tension of {q.of}", 1

@@ -11,13 +11,14 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.mechanics.refine import Curve, horner, peaks, roots, summit_of
-from linkcalc.parts.pose import Array, Numbers
+from linkcalc.parts.pose import Array, Mask, Numbers
 
 _WIDE = 7
 _EVEN = np.linspace(-1, 1, _WIDE)
 _TO_POWERS = np.linalg.inv(np.vander(_EVEN, increasing=True))
 _POWERS = np.arange(1.0, _WIDE)[:, None]
 _HALF = (_WIDE - 1) / 2
+_DIFFERENCE = np.array([1.0, -7, 21, -35, 35, -21, 7, -1])  # what a polynomial of degree 6 has none of
 _STILL = 1e-10  # of the step between samples: no correction worth making
 _ZERO = 1e-13  # of the curve's size: a sample that is nothing but rounding
 _RIVAL = 1e-3  # of the curve's size: humps foretold as close to the highest are looked at too
@@ -46,21 +47,29 @@ class Peaks:
     Of a curve with several humps each that could be the highest is looked at: the samples may show another.
 
     place  (places) where the polynomials have them, in the order of the curves
+    curve  (places) the curve of each
     """
 
     def __init__(self, samples: Samples):
         self._samples = samples
         # what is no number is no peak; what has no bound is the highest there is
         y = np.where(np.isnan(samples.values), -np.inf, samples.values)
-        self._curve = np.arange(len(y))
+        self.curve = np.arange(len(y))
         self._top = np.argmax(y, axis=1) if y.size else np.zeros(0, np.intp)
         self.place = samples.where[self._top]
-        self._foretold = samples.values[self._curve, self._top]
+        self._foretold = samples.values[self.curve, self._top]
         if samples.where.size >= _WIDE and len(y):
             self._look_at_humps(y)
 
+    @property
+    def foretold(self) -> Array:
+        """(curves) the largest value of each as its polynomials have it; -inf where it has no number at all."""
+        told = np.where(np.isnan(self._foretold), -np.inf, self._foretold)
+        count = len(self._samples.values)
+        return np.maximum.reduceat(told, np.searchsorted(self.curve, np.arange(count))) if count else told
+
     def _look_at_humps(self, y: Array) -> None:
-        every, highest = self._curve, self._top
+        every, highest = self.curve, self._top
         humps = y > -np.inf
         humps[:, 1:] &= y[:, 1:] > y[:, :-1]
         humps[:, :-1] &= y[:, :-1] >= y[:, 1:]
@@ -69,7 +78,7 @@ class Peaks:
         place, foretold = self._foretell(curve, top)
         best = np.maximum.reduceat(foretold, np.searchsorted(curve, every))
         could = (foretold >= (best - _RIVAL * _sizes(self._samples.values))[curve]) | (top == highest[curve])
-        self._curve, self._top, self.place, self._foretold = (v[could] for v in (curve, top, place, foretold))
+        self.curve, self._top, self.place, self._foretold = (v[could] for v in (curve, top, place, foretold))
 
     def _foretell(self, curve: Numbers, top: Numbers) -> tuple[Array, Array]:
         """Places and values of the summits beside some samples; where no number is near, of the samples."""
@@ -94,16 +103,16 @@ class Peaks:
         """Places and values, both (only), of some of the curves, in rising order; they can be had anywhere."""
         asked = np.zeros(len(self._samples.values), bool)
         asked[only] = True
-        k = np.nonzero(asked[self._curve])[0]
+        k = np.nonzero(asked[self.curve])[0]
         place, value = self._each(f, k)
-        rank = np.lexsort((np.where(np.isnan(value), -np.inf, value), self._curve[k]))
-        best = rank[np.searchsorted(self._curve[k], only, side="right") - 1]
+        rank = np.lexsort((np.where(np.isnan(value), -np.inf, value), self.curve[k]))
+        best = rank[np.searchsorted(self.curve[k], only, side="right") - 1]
         return place[best], value[best]
 
     def _each(self, f: Curve, k: Numbers) -> tuple[Array, Array]:
         """Places and values of some of the humps."""
         where, values, count = self._samples.where, self._samples.values, self._samples.where.size
-        curve, top, place = self._curve[k], self._top[k], self.place[k]
+        curve, top, place = self.curve[k], self._top[k], self.place[k]
         best = values[curve, top]
         if count == 1 or not k.size:
             return place, best
@@ -114,11 +123,12 @@ class Peaks:
         # compared with what is near: beside a dead point the rest of a curve may be larger without bound
         near = np.max(np.abs([values[curve, low], best, values[curve, high]]), axis=0)
         size = np.maximum(np.where(np.isfinite(near), near, 0.0), _FAINT * _sizes(values)[curve])
+        # a peak at the very end of the stroke needs no search, unless there is a kink before it
+        at_end = ((top == 0) | (top == count - 1)) & (place == where[top])
+        end = at_end & self._smooth_to_end(curve, top, size)
         with np.errstate(invalid="ignore"):
-            sure = (np.abs(found - self._foretold[k]) <= _AGREES * size) & (found >= best - 1e-14 * size)
+            sure = (np.abs(found - self._foretold[k]) <= _AGREES * size) & (found >= best - 1e-14 * size) & ~at_end
         sure |= ~np.isfinite(best)  # there is no such curve, or it has no bound
-        # a peak at the very end of the stroke needs no search
-        end = ((top == 0) | (top == count - 1)) & (place == where[top])
         value = np.where(end | ~np.isfinite(best), best, found)
         doubt = np.nonzero(~(sure | end))[0]
         if doubt.size:
@@ -126,6 +136,18 @@ class Peaks:
                 lambda x, which: f(x, curve[doubt[which]]), where[low[doubt]], where[high[doubt]]
             )
         return place, value
+
+    def _smooth_to_end(self, curve: Numbers, top: Numbers, size: Array) -> Mask:
+        """Whether the last sample is where the seven before it foretell it: a kink between would throw it off, by no
+        less than the peak stands above it."""
+        values = self._samples.values
+        if values.shape[1] <= _WIDE:
+            return np.zeros(top.shape, bool)
+        back = np.arange(_WIDE + 1)
+        at = np.where(top[:, None] > 0, values.shape[1] - 1 - back, back)
+        with np.errstate(invalid="ignore"):
+            smooth: Mask = np.abs(values[curve[:, None], at] @ _DIFFERENCE) <= _FAINT * size
+        return smooth
 
 
 class Roots:

@@ -9,7 +9,7 @@ from linkcalc.model import walk
 from linkcalc.model.check_names import Known
 from linkcalc.model.dimensions import reckon
 from linkcalc.model.gather import Gather
-from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.mechanism import Mechanism, Pin
 from linkcalc.model.requirements import (
     DRAWN,
     EXAMPLES,
@@ -18,6 +18,7 @@ from linkcalc.model.requirements import (
     MEMBER,
     MOVER,
     NEEDS,
+    PIN,
     ROPE,
     Requirement,
     requirement,
@@ -39,6 +40,8 @@ def check_requirements(mechanism: Mechanism, known: Known, drawing: Drawing | No
             _check_names(one, mechanism, known, drawing)
             if drawing:
                 _check_told(one, drawing)
+            if one.measure.of == PIN:
+                _check_pin(one, mechanism)
             one.limit(mechanism, sizes)
             one.place(mechanism, sizes)
 
@@ -60,6 +63,7 @@ def _check_names(one: Requirement, mechanism: Mechanism, known: Known, drawing: 
     joints = tuple(_sides(drawing)) if drawing else known.joints + known.points
     pools = {JOINT: joints, MEMBER: known.members[1:], MOVER: known.joints + known.points}
     pools[DRAWN] = known.members[1:] + known.ropes
+    pools[PIN] = tuple(drawing.pins) if drawing else known.points
     pools[LOADING] = tuple(item[-1] for item, _ in walk.loads(mechanism))
     pools[ROPE] = known.ropes
     what = one.measure.of
@@ -86,7 +90,7 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
             raise fault((), f"{one.of!r} does not join {one.on!r}", f"it joins {', '.join(sorted(sides))}")
     if of == MOVER and one.of not in drawing.points and not any(hasattr(joint, "travel") for joint in joints):
         raise fault((), f"{one.of!r} has no travel", "a point, slot, slide or track is wanted")
-    for key in NEEDS.get(one.quantity, ()):
+    for key in NEEDS.get(one.quantity, ()) if one.inside else ():
         if getattr(drawing.mechanism.members[one.of], key) is None:
             raise fault((), f"{one.of!r} has no {key}", f"give the member one: {EXAMPLES[key]}")
     if of == LOADING:
@@ -94,6 +98,24 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
         if one.quantity not in told:
             wanted = f"it tells {', '.join(dict.fromkeys(told))}" if told else "a spring, a cylinder or the like does"
             raise fault((), f"{one.of!r} tells no {one.quantity}", wanted)
+
+
+def _check_pin(one: Requirement, mechanism: Mechanism) -> None:
+    """What the pin must have, beside its force, for what is asked of it."""
+    pin = mechanism.pins.get(one.of, Pin())
+    if one.on:
+        raise fault((), f"the {one.quantity} is that of the whole pin", f"leave 'on {one.on}' out")
+    if one.quantity == "life":
+        if pin.bearing is None:
+            raise fault((), f"the pin {one.of} has no bearing", f'name one: [pins.{one.of}] bearing = "..."')
+        return
+    if pin.diameter is None and mechanism.friction.diameter is None:
+        raise fault((), f"the pin {one.of} has no diameter", f"give it one: [pins.{one.of}] diameter")
+    lined = one.quantity == "pressure" and pin.bush is not None and pin.length is not None
+    if not pin.stack and not lined:
+        besides = ", or a bush and its length" if one.quantity == "pressure" else ""
+        wanted = f"give it the plates across it in order: [pins.{one.of}] stack{besides}"
+        raise fault((), f"the pin {one.of} has no stack", wanted)
 
 
 def _sides(drawing: Drawing) -> dict[str, str]:

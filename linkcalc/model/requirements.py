@@ -38,6 +38,7 @@ class Measure:
 
 
 JOINT, MEMBER, DRAWN, MOVER, LOADING = "joint", "member", "member or rope", "point, slot, slide or track", "load"
+PIN = "pin"
 ROPE = "rope"
 _WHOLE = {
     "effort": "effort",
@@ -63,6 +64,9 @@ _MEASURES = (
     ("stress", Measure("stress", "in", MEMBER)),
     ("buckling margin", Measure("number", "of", MEMBER)),
     ("utilisation", Measure("number", "of", MEMBER)),
+    ("stress", Measure("stress", "in pin", PIN)),
+    ("pressure", Measure("stress", "at", PIN)),
+    ("life", Measure("number", "at", PIN)),
 )
 INNER = ("bending moment", "shear force", "axial force", "stress", "buckling margin", "utilisation")
 """What goes on within a member, at its worst place."""
@@ -108,6 +112,11 @@ class Requirement:
     @property
     def measure(self) -> Measure:
         return measures()[self.quantity, self.word]
+
+    @property
+    def inside(self) -> bool:
+        """True for what goes on within a member; "stress in pin C" is that of a pin."""
+        return self.quantity in INNER and self.measure.of == MEMBER
 
     def kind(self, mechanism: Mechanism) -> str:
         """Kind of the limit: "force", "moment", "length" or "number"."""
@@ -162,6 +171,8 @@ def _told_of(words: list[str], text: str) -> tuple[str, str, str, str]:
         if quantity not in names:
             continue
         word = rest[0] if rest else ""
+        if len(rest) == 3 and (quantity, f"{word} {PIN}") in known and rest[1] == PIN:
+            return quantity, f"{word} {PIN}", rest[2], ""  # "stress in pin C"; "stress in C" is that of a member
         if not rest and (quantity, word) in known:
             return quantity, "", "", ""
         if len(rest) >= 2 and (quantity, word) in known:

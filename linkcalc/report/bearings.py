@@ -5,11 +5,9 @@ from __future__ import annotations
 import numpy as np
 
 from linkcalc.design.answer import StrokeAnswer
+from linkcalc.design.felt import NOTHING, within_half_a_turn
 from linkcalc.model.sketch import drawn
 from linkcalc.parts.pose import Array
-
-# below this part of the largest force a direction is that of rounding, and there is none
-_NOTHING = 1e-9
 
 
 def resultant(answer: StrokeAnswer) -> Array:
@@ -22,7 +20,7 @@ def direction(answer: StrokeAnswer) -> Array:
     size = resultant(answer)
     most = np.max(size, initial=0.0, where=np.isfinite(size))
     angle = np.arctan2(answer.force[:, 1], answer.force[:, 0])
-    return _within_half_a_turn(np.where(size > most * _NOTHING, angle, np.nan))
+    return within_half_a_turn(np.where(size > most * NOTHING, angle, np.nan))
 
 
 def own_direction(answer: StrokeAnswer) -> Array:
@@ -35,10 +33,4 @@ def own_direction(answer: StrokeAnswer) -> Array:
             angle[i] -= answer.turn[sketch.member(bearing.member)] + sketch.own_axis(bearing.member)
         else:
             angle[i] = np.nan
-    return _within_half_a_turn(angle)
-
-
-def _within_half_a_turn(angle: Array) -> Array:
-    """Straight back is plus half a turn, whichever side of it rounding fell."""
-    wound = np.arctan2(np.sin(angle), np.cos(angle))
-    return np.where(wound < -np.pi + _NOTHING, np.pi, wound)
+    return within_half_a_turn(angle)

@@ -190,4 +190,63 @@ class Panels:
     panels: tuple[Drawing, ...]
 
 
-Block = Heading | Note | Lines | Table | Chart | Drawing
+@dataclass(frozen=True)
+class Rose:
+    """Where a force points and how large it is there, on its own scale.
+
+    title    what it is of: "D on arm"
+    sectors  the largest force into each of as many equal sectors, counter-clockwise, the first about the axis
+    curves   for each case the places (x, y) of the tip of the force
+    worst    place of the tip of the largest
+    free     [rad] from, to: the sector without force; None if there is none
+    lines    printed under it
+    """
+
+    title: str
+    sectors: tuple[float, ...]
+    curves: tuple[Places, ...]
+    worst: tuple[float, float]
+    free: tuple[float, float] | None
+    lines: tuple[str, ...]
+
+
+@dataclass(frozen=True)
+class Roses:
+    """Load roses side by side."""
+
+    title: str
+    caption: str
+    roses: tuple[Rose, ...]
+
+
+@dataclass(frozen=True)
+class PinDiagram:
+    """A pin across its plates, with what they do to it along it.
+
+    title   what it is of: "K, 10 mm"
+    plates  (name, start, stop) along the pin
+    places  along the pin, where the curves are told
+    shear, moment  name -> values at the places: components and resultant
+    peaks   (place, size, words) of the largest shear and of the largest moment
+    """
+
+    title: str
+    diameter: float
+    plates: tuple[tuple[str, float, float], ...]
+    places: tuple[float, ...]
+    shear: tuple[Curve, ...]
+    moment: tuple[Curve, ...]
+    peaks: tuple[tuple[float, float, str], tuple[float, float, str]]
+
+
+@dataclass(frozen=True)
+class PinDiagrams:
+    """Pins side by side, each in the pose that uses it most."""
+
+    title: str
+    caption: str
+    axes: tuple[Axis, Axis, Axis]  # along the pin, shear, moment
+    pins: tuple[PinDiagram, ...]
+
+
+Block = Heading | Note | Lines | Table | Chart | Drawing | Roses | PinDiagrams

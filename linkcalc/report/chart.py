@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Sequence
 from dataclasses import replace
 
 import numpy as np
@@ -18,7 +19,7 @@ from linkcalc.report.worst import largest
 # curves further apart than this in size would press one another flat on one axis
 _APART = 12.0
 # more curves than this in one panel cannot be told apart
-_CROWD = 8
+CROWD = 8
 _LINES = ("dead point", "limit", "change point")
 
 
@@ -27,10 +28,20 @@ def stroke_chart(answer: StrokeAnswer) -> Chart:
 
     Raises Faults if there is no stroke to draw over.
     """
+    must_step(answer)
+    edge = Edge(answer)
+    panels = [*_efforts(answer, edge), *_ratios(answer, edge), *_joints(answer, edge), *axial_panels(answer, edge)]
+    return chart_of(answer, edge, panels)
+
+
+def must_step(answer: StrokeAnswer) -> None:
+    """Raises Faults if there is only one pose."""
     if answer.drive.shape[-1] < 2 or not np.isfinite(answer.drive).any():
         raise fault(("stroke",), "there is only one pose, so no curve over a stroke", "give the model a [stroke]")
-    edge = Edge(answer)
-    panels = [*_efforts(answer, edge), *_ratios(answer, edge), *_joints(answer, edge), *_axial(answer, edge)]
+
+
+def chart_of(answer: StrokeAnswer, edge: Edge, panels: Sequence[Panel]) -> Chart:
+    """A chart over the stroke, with what happens to the whole mechanism across all its panels."""
     lines = {
         (e.kind, round(edge.one(e.drive, "drive"), 9)): Flag(e.kind, edge.one(e.drive, "drive"), math.nan, e.kind)
         for e in answer.events
@@ -39,28 +50,28 @@ def stroke_chart(answer: StrokeAnswer) -> Chart:
     return Chart(
         title=answer.mechanism.title or "Stroke",
         axis=Axis(answer.drive_name, plain(edge.unit("drive"))),
-        drive=_floats(edge.out(answer.drive[0, 0], "drive")),
-        cases=_case_labels(answer, edge),
+        drive=floats(edge.out(answer.drive[0, 0], "drive")),
+        cases=case_labels(answer, edge),
         panels=tuple(p for p in panels if p.curves),
         lines=tuple(lines.values()),
     )
 
 
-def _floats(values: Array) -> tuple[float, ...]:
+def floats(values: Array) -> tuple[float, ...]:
     return tuple(float(v) for v in values)
 
 
-def _curves(edge: Edge, name: str, values: Array, what: str, hue: int) -> list[Curve]:
+def curves_of(edge: Edge, name: str, values: Array, what: str, hue: int) -> list[Curve]:
     """A curve a case; one only where all cases agree, and none where there is nothing to see."""
     out = edge.out(values[:, 0], what)
     if not np.any(np.isfinite(out)):
         return []
     if len(out) > 1 and np.allclose(out, out[:1], rtol=1e-9, atol=edge.zero(what), equal_nan=True):
         out = out[:1]
-    return [Curve(name, _floats(row), hue, case) for case, row in enumerate(out)]
+    return [Curve(name, floats(row), hue, case) for case, row in enumerate(out)]
 
 
-def _largest(
+def flag_largest(
     answer: StrokeAnswer, edge: Edge, name: str, quantity: str, values: Array, what: str, hue: int
 ) -> list[Flag]:
     worst = largest(answer, quantity, values, by_size=True)
@@ -70,7 +81,7 @@ def _largest(
     return [Flag("largest", edge.one(worst.drive, "drive"), value, f"{name} {edge.text(worst.value, what)}", hue)]
 
 
-def _case_labels(answer: StrokeAnswer, edge: Edge) -> tuple[str, ...]:
+def case_labels(answer: StrokeAnswer, edge: Edge) -> tuple[str, ...]:
     """Names of the cases, each with its load if that is steady, so that it needs no curve."""
     labels = []
     for i, case in enumerate(answer.cases):
@@ -93,15 +104,15 @@ def _efforts(answer: StrokeAnswer, edge: Edge) -> list[Panel]:
     """Effort, with the effort that is there without load; a load that varies, on the same axis if of like size."""
     panels = []
     if "effort" in answer.kinds:
-        curves = _curves(edge, "effort", answer.effort, "effort", 0)
+        curves = curves_of(edge, "effort", answer.effort, "effort", 0)
         if np.nanmax(np.abs(answer.tare_effort), initial=0.0) > 1e-6 * np.nanmax(np.abs(answer.effort), initial=0.0):
-            curves += _curves(edge, "tare effort", answer.tare_effort, "effort", 2)
-        flags = _largest(answer, edge, "largest", "effort", answer.effort, "effort", 0)
+            curves += curves_of(edge, "tare effort", answer.tare_effort, "effort", 2)
+        flags = flag_largest(answer, edge, "largest", "effort", answer.effort, "effort", 0)
         panels.append(Panel(Axis("effort", plain(edge.unit("effort"))), tuple(curves), tuple(flags)))
     if "load" in answer.kinds and not _steady(answer):
-        flags = _largest(answer, edge, "largest", "load", answer.load, "load", 1)
+        flags = flag_largest(answer, edge, "largest", "load", answer.load, "load", 1)
         load = Panel(
-            Axis("load", plain(edge.unit("load"))), tuple(_curves(edge, "load", answer.load, "load", 1)), tuple(flags)
+            Axis("load", plain(edge.unit("load"))), tuple(curves_of(edge, "load", answer.load, "load", 1)), tuple(flags)
         )
         if panels and _alike(panels[0], load):
             first = panels.pop()
@@ -122,10 +133,10 @@ def _ratios(answer: StrokeAnswer, edge: Edge) -> list[Panel]:
     """Where everything counted gives the ratio of the geometry, one curve says it."""
     ideal = np.broadcast_to(answer.ideal_ratio, answer.force_ratio.shape)
     if np.allclose(answer.force_ratio, ideal, rtol=1e-6, equal_nan=True):
-        curves = _curves(edge, "force ratio = ideal ratio", answer.force_ratio, "number", 0)
+        curves = curves_of(edge, "force ratio = ideal ratio", answer.force_ratio, "number", 0)
     else:
-        curves = [replace(c, broad=True) for c in _curves(edge, "ideal ratio", answer.ideal_ratio, "number", 3)]
-        curves += _curves(edge, "force ratio", answer.force_ratio, "number", 0)
+        curves = [replace(c, broad=True) for c in curves_of(edge, "ideal ratio", answer.ideal_ratio, "number", 3)]
+        curves += curves_of(edge, "force ratio", answer.force_ratio, "number", 0)
     return [Panel(Axis("force ratio", plain(edge.unit("ratio"))), tuple(curves))]
 
 
@@ -133,18 +144,18 @@ def _joints(answer: StrokeAnswer, edge: Edge) -> list[Panel]:
     """A curve a joint and case; where that would be too many, the largest of all cases for each joint."""
     curves: list[Curve] = []
     flags: list[Flag] = []
-    groups = _like_forces(answer)
-    crowded = len(answer.cases) > 1 and len(groups) * len(answer.cases) > _CROWD
+    groups = like_forces(answer)
+    crowded = len(answer.cases) > 1 and len(groups) * len(answer.cases) > CROWD
     for hue, (joints, values) in enumerate(groups):
         name = ", ".join(joints)
         shown = np.max(values, axis=0, keepdims=True) if crowded else values
-        curves += _curves(edge, name, shown, "force", hue)
-        flags += _largest(answer, edge, name, f"force at {joints[0]}", values, "force", hue)
+        curves += curves_of(edge, name, shown, "force", hue)
+        flags += flag_largest(answer, edge, name, f"force at {joints[0]}", values, "force", hue)
     text = "joint force, worst case" if crowded else "joint force"
     return [Panel(Axis(text, plain(edge.unit("force"))), tuple(curves), tuple(flags))]
 
 
-def _like_forces(answer: StrokeAnswer) -> list[tuple[list[str], Array]]:
+def like_forces(answer: StrokeAnswer) -> list[tuple[list[str], Array]]:
     """Joints with their forces; those that carry the same at every pose (both ends of a link) share one curve."""
     found: list[tuple[list[str], Array]] = []
     for joint in answer.joints:
@@ -157,13 +168,13 @@ def _like_forces(answer: StrokeAnswer) -> list[tuple[list[str], Array]]:
     return found
 
 
-def _axial(answer: StrokeAnswer, edge: Edge) -> list[Panel]:
+def axial_panels(answer: StrokeAnswer, edge: Edge) -> list[Panel]:
     """Two-force members only where one of them changes from pull to push: else the joint forces say it all."""
     turning = {e.quantity: e for e in answer.events if e.kind == "reversal" and e.quantity in answer.two_force}
     curves: list[Curve] = []
     flags: list[Flag] = []
     for hue, member in enumerate(m for m in answer.two_force if m in turning):
-        curves += _curves(edge, member, answer.axial_in(member), "force", hue)
+        curves += curves_of(edge, member, answer.axial_in(member), "force", hue)
         flags += [
             Flag(e.kind, edge.one(e.drive, "drive"), 0.0, f"{member} reverses", hue)
             for e in answer.events

@@ -11,9 +11,11 @@ from linkcalc.model.mechanism import Units
 from linkcalc.model.units import from_si
 from linkcalc.parts.pose import Array
 from linkcalc.report.numbers import number, plain
+from linkcalc.report.quantities import unit_of
 
 # unit of load over effort, where one is a force and the other a torque: a ratio keeps SI whatever the file's units
 _RATIOS = {("force", "moment"): "1/m", ("moment", "force"): "m"}
+_SPEED = (1, 0, -1, 0)
 # what rounding leaves of an exact nothing, as a part of the largest of its kind
 _NOISE = 1e-8
 
@@ -56,6 +58,15 @@ class Edge:
     def one(self, value: float, what: str) -> float:
         """SI -> the file's unit, one number."""
         return float(from_si(value, self.kind(what), self._units))
+
+    @property
+    def speed_unit(self) -> str:
+        """Speeds of rubbing have the units of the trade: metres a second, or feet a minute beside inches."""
+        return unit_of(_SPEED, self._units)[0]
+
+    def speed(self, value: float) -> float:
+        """[m/s] -> that unit."""
+        return value / unit_of(_SPEED, self._units)[1]
 
     def zero(self, what: str) -> float:
         """[file's unit] what is smaller is written as 0."""

@@ -8,7 +8,7 @@ from typing import Any
 
 import numpy as np
 
-from linkcalc.design.answer import SCHEMA, StrokeAnswer, quantities
+from linkcalc.design.answer import SCHEMA, Felt, StrokeAnswer, quantities
 from linkcalc.mechanics.state import Status
 from linkcalc.model.sketch import drawn
 from linkcalc.parts.pose import Array
@@ -86,9 +86,17 @@ def stroke_tree(answer: StrokeAnswer) -> Tree:
             {
                 "kind": e.kind, "quantity": e.quantity, "case": e.case or None,
                 "drive": one_tree(edge, e.drive, "drive"), "value": one_tree(edge, e.value, e.value_kind),
+                **({"felt": [felt_tree(edge, f) for f in e.felt]} if e.felt else {}),
             }
             for e in answer.events
         ],
+        **told_tree(answer, edge),
+    }  # fmt: skip
+
+
+def told_tree(answer: StrokeAnswer, edge: Edge) -> Tree:
+    """What stands at the end of every answer: verdicts, warnings, checks, status."""
+    return {
         "requirements": [
             {
                 "name": v.name, "text": v.text, "holds": v.holds, "case": v.case or None,
@@ -155,6 +163,16 @@ def _bearings(answer: StrokeAnswer, edge: Edge) -> list[Tree]:
         }
         for i, b in enumerate(answer.bearings)
     ]
+
+
+def felt_tree(edge: Edge, felt: Felt) -> Tree:
+    """What one member feels at a joint in one pose."""
+    return {
+        "member": felt.member,
+        "force": one_tree(edge, felt.force, "force"),
+        "direction": one_tree(edge, felt.direction, "angle"),
+        "direction from own axis": one_tree(edge, felt.own_direction, "angle"),
+    }
 
 
 def array_tree(edge: Edge, values: Array, what: str, axes: list[str]) -> Tree:

@@ -6,7 +6,7 @@ import textwrap
 from collections.abc import Callable, Iterable
 from dataclasses import replace
 
-from linkcalc.report.blocks import Block, Cell, Chart, Column, Drawing, Heading, Lines, Note, Table
+from linkcalc.report.blocks import Block, Cell, Chart, Column, Drawing, Heading, Lines, Note, PinDiagrams, Roses, Table
 from linkcalc.report.numbers import GAP, number, plain
 
 WIDTH = 96
@@ -126,6 +126,14 @@ def _drawing(block: Drawing, width: int) -> str:
     )
 
 
+def _roses(block: Roses, _width: int) -> str:
+    return f"(load roses: {block.title})"
+
+
+def _pin_diagrams(block: PinDiagrams, _width: int) -> str:
+    return f"(pins across their plates: {block.title})"
+
+
 _WRITERS: dict[type, Callable[..., str]] = {
     Heading: _heading,
     Note: _note,
@@ -133,4 +141,6 @@ _WRITERS: dict[type, Callable[..., str]] = {
     Table: _table,
     Chart: _chart,
     Drawing: _drawing,
+    Roses: _roses,
+    PinDiagrams: _pin_diagrams,
 }

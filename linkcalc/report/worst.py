@@ -6,7 +6,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from linkcalc.design.answer import StrokeAnswer
+from linkcalc.design.answer import Felt, StrokeAnswer
 from linkcalc.parts.pose import Array
 
 
@@ -18,12 +18,14 @@ class Worst:
     case   name of its load case
     drive  [rad or m] where it is, nan without a stroke
     index  (case, variant, pose) of the computed pose nearest to it
+    felt   of a joint's force what each member feels there; empty where the worst is one of the computed poses
     """
 
     value: float
     case: str
     drive: float
     index: tuple[int, int, int]
+    felt: tuple[Felt, ...] = ()
 
 
 def largest(
@@ -38,17 +40,16 @@ def largest(
     if not np.isfinite(values).any():
         return None
     rank = np.abs(values) if by_size else sense * values
-    index = tuple(int(i) for i in np.unravel_index(np.nanargmax(rank), values.shape))
-    case, variant, pose = index
-    found = Worst(
-        float(values[index]), answer.cases[case], float(answer.drive[0, variant, pose]), (case, variant, pose)
-    )
+    case, variant, pose = (int(i) for i in np.unravel_index(np.nanargmax(rank), values.shape))
+    index = (case, variant, pose)
+    found = Worst(float(values[index]), answer.cases[case], float(answer.drive[0, variant, pose]), index)
     top, kind = float(rank[index]), "largest" if sense > 0 else "smallest"
     for e in answer.events:
         further = abs(e.value) if by_size else sense * e.value
         if (e.kind, e.quantity) == (kind, quantity) and further >= top:
             place = answer.cases.index(e.case) if e.case in answer.cases else case
-            found = Worst(e.value, answer.cases[place], e.drive, (place, variant, nearest_pose(answer, e.drive)))
+            index = (place, variant, nearest_pose(answer, e.drive))
+            found = Worst(e.value, answer.cases[place], e.drive, index, e.felt)
             top = further
     return found
 

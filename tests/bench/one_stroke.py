@@ -19,7 +19,7 @@ def report(*, quick: bool) -> bool:
     mechanism = sixbar(POSES)
     assert mechanism.stroke is not None
     # half a turn, a degree a pose, as the plain script is given it
-    mechanism = replace(mechanism, stroke=replace(mechanism.stroke, start="drawn", stop=_half_turn_on(), poses=POSES))
+    mechanism = replace(mechanism, stroke=replace(mechanism.stroke, start="drawn", stop=half_turn_on(), poses=POSES))
     mechanism = check(mechanism)  # as a mechanism that was read from a file has been
     ours, plain = [], []
     for _ in range(5 if quick else 20):
@@ -32,5 +32,6 @@ def report(*, quick: bool) -> bool:
     return target("times faster than the plain script", min(plain) / min(ours), 5, at_least=True)
 
 
-def _half_turn_on() -> str:
+def half_turn_on() -> str:
+    """The end of a stroke of half a turn from the drawing pose."""
     return f"{clock.CRANK_DRAWN} rad + 180 deg"

@@ -89,7 +89,11 @@ class Schema:
 
     def _told(self, kinds: dict[str, str]) -> None:
         for event in self.tree["events"]:
-            assert list(event) == ["kind", "quantity", "case", "drive", "value"]
+            assert list(event) == ["kind", "quantity", "case", "drive", "value", *(["felt"] if "felt" in event else [])]
+            for felt in event.get("felt", []):
+                assert list(felt) == ["member", "force", "direction", "direction from own axis"]
+                assert felt["force"]["unit"] == self.units["force"]
+                assert felt["direction"]["unit"] == felt["direction from own axis"]["unit"] == self.units["angle"]
             assert event["kind"] in EVENTS
             assert event["case"] is None or event["case"] in self.tree["axes"]["case"]
             assert event["drive"]["unit"] == self.units[kinds["drive"]]

@@ -56,6 +56,10 @@ def test_it_goes_through_all_commands(name: str, tmp_path: Path) -> None:
     if "stroke" in model:
         assert linkcalc("stroke", path, "--plot", tmp_path / "curves.svg").status == 0
 
+    carried = linkcalc("pins", path, "--roses", tmp_path / "roses.svg")
+    assert carried.status == 0
+    assert "What each joint carries" in carried.out
+
 
 def test_every_example_has_a_caution_and_a_hand_calculation() -> None:
     for path in EXAMPLES:

@@ -2,9 +2,11 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+
 import numpy as np
 
-from linkcalc.design.answer import StrokeAnswer, plate
+from linkcalc.design.answer import Felt, StrokeAnswer, plate
 from linkcalc.report.bearings import direction, own_direction, resultant
 from linkcalc.report.blocks import Block, Cell, Column, Note, Table
 from linkcalc.report.edge import Edge
@@ -12,7 +14,7 @@ from linkcalc.report.worst import Worst, largest
 
 _DIRECTIONS = (
     "Directions are those of the force on the member, counter-clockwise plus, from the x axis and from the member's"
-    " own axis (first point to last), at the nearest computed pose."
+    " own axis (first point to last), in that very pose."
 )
 
 
@@ -28,19 +30,21 @@ def joint_forces(answer: StrokeAnswer) -> list[Block]:
 
 def _forces(answer: StrokeAnswer) -> Table:
     edge = Edge(answer)
-    size, points, own = resultant(answer), direction(answer), own_direction(answer)
     rows: list[tuple[Cell, ...]] = []
     shared = False
     for joint in answer.joints:
         sides = [i for i, b in enumerate(answer.bearings) if b.joint == joint]
         worst = largest(answer, f"force at {joint}", answer.joint_force(joint))
         lead = (joint, answer.bearings[sides[0]].word, *_worst_cells(answer, edge, worst, "force"))
+        told = _felt(answer, worst, sides)
+        most = max((f.force for f in told), default=0.0)
         for n, i in enumerate(sides):
-            part = _part(size[sides][(slice(None), *worst.index)], n) if worst else float("nan")
+            part = told[n].force / most if worst and most > 0 else 1.0 if worst else float("nan")
             shared = shared or part < 0.999
             feels = edge.one(worst.value, "force") * part if worst else None
-            angles = [edge.one(a[(i, *worst.index)], "angle") if worst else None for a in (points, own)]
-            rows.append((*(lead if n == 0 else ("",) * len(lead)), answer.bearings[i].text, feels, *angles))
+            angles = (told[n].direction, told[n].own_direction) if worst else (float("nan"),) * 2
+            cells = (answer.bearings[i].text, feels, *(edge.one(a, "angle") for a in angles))
+            rows.append((*(lead if n == 0 else ("",) * len(lead)), *cells))
     columns = [
         Column("joint"), Column("kind"), Column("largest force", edge.unit("force"), zero=edge.zero("force")),
         *_where(answer, edge), Column("on member"), Column("feels", edge.unit("force"), zero=edge.zero("force")),
@@ -55,9 +59,13 @@ def _forces(answer: StrokeAnswer) -> Table:
     )
 
 
-def _part(sizes: np.ndarray, n: int) -> float:
-    most = sizes.max()
-    return float(sizes[n] / most) if most > 0 else 1.0
+def _felt(answer: StrokeAnswer, worst: Worst | None, sides: Sequence[int]) -> tuple[Felt, ...]:
+    """What each side feels in that very pose; of a worst among the computed poses, what was computed there."""
+    if worst is None or worst.felt:
+        return worst.felt if worst else ()
+    size, points, own = (of(answer)[sides][(slice(None), *worst.index)] for of in (resultant, direction, own_direction))
+    members = [answer.bearings[i].member for i in sides]
+    return tuple(Felt(*each) for each in zip(members, size.tolist(), points.tolist(), own.tolist(), strict=True))
 
 
 def _moments(answer: StrokeAnswer) -> list[Block]:

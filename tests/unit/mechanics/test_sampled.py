@@ -77,6 +77,8 @@ def test_ends_are_told_as_given(count: int) -> None:
 @given(at=st.floats(-0.999, 0.999))
 @example(at=0.0)
 @example(at=0.25)
+@example(at=0.9921875)
+@example(at=-0.998)
 def test_a_kink_is_found_as_exactly(count: int, at: float) -> None:
     place, value = Watched([lambda x: 1 - np.abs(x - at)], -1.0, 1.0, count).peak()
     assert place == pytest.approx(at, abs=3 * PLACE)

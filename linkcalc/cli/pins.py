@@ -1,0 +1,196 @@
+"""linkcalc pins"""
+
+from __future__ import annotations
+
+from pathlib import Path
+from typing import TYPE_CHECKING, Annotated
+
+import typer
+
+from linkcalc.cli.files import (
+    FAILED,
+    STDOUT,
+    CaseName,
+    CsvFile,
+    JsonFile,
+    ModelFile,
+    check_outputs,
+    check_picture,
+    in_file,
+    option_fault,
+    put,
+)
+from linkcalc.cli.poses import check_poses
+from linkcalc.cli.rates import rate_of, time_of
+from linkcalc.faults import Fault, Faults
+from linkcalc.model.mechanism import Mechanism
+
+if TYPE_CHECKING:
+    from linkcalc.design.pins_answer import PinsAnswer
+
+Poses = Annotated[
+    int | None,
+    typer.Option("--poses", help="Poses that the worst is looked for between, 61 at the least.", metavar="N"),
+]
+Rate = Annotated[
+    str | None,
+    typer.Option("--rate", help='Strokes there and back ("20/min"), for the speed of rubbing.', metavar="RATE"),
+]
+Time = Annotated[
+    str | None, typer.Option("--time", help='Time of one stroke, one way ("2 s"), instead of --rate.', metavar="TIME")
+]
+Diameter = Annotated[
+    str | None,
+    typer.Option("--diameter", help='Of the pins that the model gives none ("16 mm").', metavar="LENGTH"),
+]
+About = Annotated[
+    str | None,
+    typer.Option("--about", help="Point that moments on the foundation are taken about.", metavar="POINT"),
+]
+Bearings = Annotated[
+    Path | None,
+    typer.Option("--bearings", help="Your own list of rolling bearings (CSV) instead of the sample.", metavar="FILE"),
+]
+Bushes = Annotated[
+    Path | None,
+    typer.Option("--bushes", help="Your own list of bush materials (CSV or TOML).", metavar="FILE"),
+]
+Inch = Annotated[
+    bool | None,
+    typer.Option("--inch/--metric", help="Series that pins are chosen from; else by the model's unit of length."),
+]
+Sheet = Annotated[
+    str | None,
+    typer.Option("--working", help="Print the calculation of this joint's parts as a sheet.", metavar="JOINT"),
+]
+Plots = Annotated[
+    list[str] | None,
+    typer.Option("--plot", help="Write the joint forces over the stroke: .svg, .png or .pdf.", metavar="FILE"),
+]
+RoseFiles = Annotated[
+    list[str] | None,
+    typer.Option("--roses", help="Write the load roses of all joints: .svg, .png or .pdf.", metavar="FILE"),
+]
+StackFiles = Annotated[
+    list[str] | None,
+    typer.Option("--stacks", help="Write pins across their plates, with shear and bending.", metavar="FILE"),
+]
+
+
+def pins(
+    file: ModelFile,
+    case: CaseName = None,
+    poses: Poses = None,
+    rate: Rate = None,
+    time: Time = None,
+    diameter: Diameter = None,
+    about: About = None,
+    bearings: Bearings = None,
+    bushes: Bushes = None,
+    inch: Inch = None,
+    working: Sheet = None,
+    json: JsonFile = None,
+    csv: CsvFile = None,
+    plot: Plots = None,
+    roses: RoseFiles = None,
+    stacks: StackFiles = None,
+) -> None:
+    """What every joint must carry: worst force of all cases, direction on each member, swing, mean load, foundation."""
+    with in_file(file) as model:
+        from linkcalc.design.pins import pins as ask
+
+        check_poses(poses)
+        if json == STDOUT and csv == STDOUT:
+            raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
+        if rate and time:
+            raise option_fault("--rate and --time", "both say how fast the stroke goes", "give one of them")
+        for option, targets in (("--plot", plot), ("--roses", roses), ("--stacks", stacks)):
+            for target in targets or ():
+                check_picture(option, target)
+        outputs: dict[str, list[str | None]] = {
+            "--json": [json],
+            "--csv": [csv],
+            "--plot": [*(plot or ())],
+            "--roses": [*(roses or ())],
+            "--stacks": [*(stacks or ())],
+        }
+        check_outputs(file, outputs)
+        answer = ask(
+            model, case=case, poses=poses, about=_point(model, about), diameters=_diameter(model, diameter),
+            rate=rate_of(rate) if rate else None, time=time_of(time) if time else None,
+            bearings=bearings, bushes=bushes, inch=inch,
+        )  # fmt: skip
+        if working:
+            _must_be_sized(answer, working)
+        figures = []
+        for target in plot or ():
+            from linkcalc.report.chart_figure import chart_figure
+            from linkcalc.report.pins_chart import pins_chart
+
+            figures.append((chart_figure(pins_chart(answer)), target))
+        for target in roses or ():
+            from linkcalc.report.rose_figure import rose_figure
+            from linkcalc.report.roses import load_roses
+
+            figures.append((rose_figure(load_roses(answer)), target))
+        for target in stacks or ():
+            from linkcalc.report.pin_figure import pin_figure
+            from linkcalc.report.pin_stacks import pin_diagrams
+
+            figures.append((pin_figure(pin_diagrams(answer)), target))
+        if json:
+            from linkcalc.report.pins_json import pins_json
+
+            put(json, lambda: pins_json(answer))
+        if csv:
+            from linkcalc.report.csv import as_csv
+            from linkcalc.report.pins_table import pins_table
+
+            put(csv, lambda: as_csv(pins_table(answer)))
+        for figure, target in figures:
+            from linkcalc.report.figure import save
+
+            save(figure, target)
+            typer.echo(f"wrote {target}", err=True)
+        if STDOUT not in (json, csv):
+            from linkcalc.report.pins_blocks import pins_blocks, sheet_blocks
+            from linkcalc.report.text import as_text
+
+            typer.echo(as_text(sheet_blocks(answer, working) if working else pins_blocks(answer)))
+    if not answer.holds:
+        raise typer.Exit(FAILED)
+
+
+def _must_be_sized(answer: PinsAnswer, joint: str) -> None:
+    """Raises Faults: no such joint, or one that has no calculation."""
+    from linkcalc.words import nearest
+
+    known = {j.joint: j for j in answer.joints}
+    if joint not in known:
+        raise option_fault("--working", f"unknown joint {joint!r}", nearest(joint, known))
+    if not known[joint].sized:
+        sized = [name for name, j in known.items() if j.sized]
+        what = f"{joint} is a {known[joint].word} and has no calculation"
+        if known[joint].word == "pin":
+            what = f"the pin {joint} carries nothing, or its force has no bound"
+        raise option_fault("--working", what, f"there are those of {', '.join(sized)}" if sized else "")
+
+
+def _point(model: Mechanism, about: str | None) -> str | None:
+    from linkcalc.words import nearest
+
+    if about is not None and about not in model.points:
+        raise option_fault("--about", f"unknown point {about!r}", nearest(about, model.points))
+    return about
+
+
+def _diameter(model: Mechanism, text: str | None) -> float | None:
+    """[m] a size as a model file writes it. Raises Faults."""
+    from linkcalc.design.sizes import length_of
+
+    if text is None:
+        return None
+    try:
+        return length_of(model, text)
+    except Faults as found:
+        raise Faults([Fault((), f"--diameter: {f.what}", f.wanted) for f in found.faults]) from None
