@@ -375,3 +375,12 @@ def test_a_frame_with_friction_has_one_answer() -> None:
     answer = stroke(parse(text + "[friction]\nsheave_efficiency = 0.9\npins = 0.1\ndiameter = 5\n"))
     assert answer.cases == bare.cases and not answer.rubs
     np.testing.assert_allclose(answer.tension_of("sling"), bare.tension_of("sling"), rtol=EXACT)
+
+
+def test_a_link_twice_over_shares_and_changes_nothing_else() -> None:
+    """The pulley sits on a pin of members that share their forces: what its friction does there strains them too."""
+    twice = stroke(parse(SECTOR.replace('rocker = ["R", "P"]', 'rocker = ["R", "P"]\nsecond = ["A", "P"]')))
+    np.testing.assert_allclose(twice.effort, stroke(parse(SECTOR)).effort, rtol=EXACT)
+    assert max(unbalanced(twice).values()) < 1e-12
+    one, other = (np.hypot(*twice.force_on("P", name)) for name in ("link", "second"))
+    np.testing.assert_allclose(one, other, rtol=1e-3)  # alike but for the side of the pin that each is on
