@@ -20,7 +20,7 @@ from linkcalc.mechanics.pipeline import solve_standing
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.solved import Solved, joined
 from linkcalc.mechanics.state import Status
-from linkcalc.parts.pose import Array, Mask, Value
+from linkcalc.parts.pose import Array, Mask, Poses, Value
 
 _SAME = 1e-9  # of the way between two poses
 _TOOTH = 0.15  # [rad] half the least tooth; the steps of the walk keep below
@@ -55,7 +55,10 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
     for target, wanted in _targets(path, drawn, drive, toothed=ready.chain.toothed):
         step = target - last
         even = isinstance(step, float) and span
-        guess = between(before, here, 1 + step / span, span) if even else along(here, step)
+        if ready.chain.toothed:
+            guess = _rolled(here, step)
+        else:
+            guess = between(before, here, 1 + step / span, span) if even else along(here, step)
         all_live = bool(live.all())
         there = close(ready.chain, guess, coordinate.hold(target), sure=1, live=None if all_live else live)
         if not there.fine.all():
@@ -100,6 +103,20 @@ def _kept(path: Path, there: Closed, branch: Mask, live: Mask) -> Mask:
         return live
     same: Mask = there.factored.negative == branch
     return same
+
+
+def _rolled(here: Closed, step: Value) -> Poses:
+    """Poses a step on at even speeds, turned by just that: gears keep their ratio, so this is nearly where they are."""
+    at, speed = here.at, here.speed
+    x, y, c, s = [at.x[0]], [at.y[0]], [at.c[0]], [at.s[0]]
+    for k in range(1, len(at.x)):
+        vx, vy, turning = speed[3 * k - 3 : 3 * k]
+        ct, st = np.cos(step * turning), np.sin(step * turning)
+        x.append(at.x[k] + step * vx)
+        y.append(at.y[k] + step * vy)
+        c.append(at.c[k] * ct - at.s[k] * st)
+        s.append(at.s[k] * ct + at.c[k] * st)
+    return Poses(x, y, c, s, at.down, at.field)
 
 
 def _slipped(a: Closed, b: Closed, step: Value) -> Mask:

@@ -16,7 +16,8 @@ JOINT = {
     "moment": "moment",
 }  # fmt: skip
 TOLD = {
-    "force": "force", "length": "length", "torque": "moment", "angle": "angle", "pressure": "pressure",
+    "force": "force", "rod force": "force",
+    "length": "length", "torque": "moment", "angle": "angle", "pressure": "pressure",
     "raising torque": "moment", "lowering torque": "moment",
 }  # fmt: skip
 EVENTS = {"largest", "smallest", "reversal", "dead point", "limit", "change point", "slack", "self-locking edge",

@@ -25,7 +25,9 @@ def _rubs(model: dict[str, Any]) -> bool:
     """True if something in the model has friction."""
     steps = [step for rope in model.get("ropes", {}).values() for step in rope["path"] if isinstance(step, dict)]
     losses = {"efficiency", "friction", "friction_radius", "pin_friction"}
-    return "friction" in model or "pins" in model or any(losses & step.keys() for step in steps)
+    pins = any({"friction", "friction_radius"} & pin.keys() for pin in model.get("pins", {}).values())
+    seals = any("seal_friction" in load for load in model.get("loads", {}).values())
+    return "friction" in model or pins or seals or any(losses & step.keys() for step in steps)
 
 
 @pytest.mark.parametrize("name", [*(p.name for p in EXAMPLES), *kinds()])

@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 
 import numpy as np
-from hypothesis import given
+from hypothesis import example, given
 from hypothesis import strategies as st
 
 from linkcalc import parse, stroke
@@ -159,6 +159,7 @@ def test_a_geared_five_bar(crank: float, rocker: float, rod: float, link: float,
 
 
 @given(teeth, st.integers(12, 80), teeth, angles, angles, st.floats(200, 2500), st.integers(2, 12))
+@example(z1=18, z2=59, z3=12, lean=0.0, turn=0.0, way=342.0, poses=2)
 def test_copies_lose_no_tooth(z1: int, z2: int, z3: int, lean: float, turn: float, way: float, poses: int) -> None:
     """Copies of other modules go from pose to pose, however far apart these are."""
     text = TRAIN.format(r1=f'"m*{z1}/2"', r2=f'"m*{z2}/2"', r3=f'"m*{z3}/2"', lean=lean, turn=turn, slant=20, pull=30,
