@@ -399,7 +399,7 @@ ground = ["A", "face", "face2", "knee", "stop"]
 lever = { points = ["A", "B"], stiffness = "18 kN/mm" }
 link = { points = ["B", "C"], stiffness = "12 kN/mm" }
 jaw = { points = ["C", "pad"], mass = 0.8 }
-[pins.A]
+[pins.C]
 stiffness = "90 kN/mm"
 [slides.guide]
 member = "jaw"

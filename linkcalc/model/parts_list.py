@@ -120,6 +120,7 @@ def _linked(mechanism: Mechanism, groups: dict[str, PinGroup]) -> dict[str, PinG
     Raises Faults: none is left, or the link is not held by two pins.
     """
     taken: dict[tuple[str, str], str] = {}
+    firm = {p: group for p, group in groups.items() if mechanism.pins.get(p, Pin()).stiffness is None}
     for link, member in mechanism.members.items():
         if member.stiffness is None:
             continue
@@ -127,7 +128,10 @@ def _linked(mechanism: Mechanism, groups: dict[str, PinGroup]) -> dict[str, PinG
         if len(ends) != 2:
             what = f"it stretches along the line of two pins, and has {len(ends)}"
             raise fault(("members", link, "stiffness"), what, "a member that two pins hold is wanted")
-        if not _placed(link, groups, ends, taken, set()):
+        if not firm.keys() & set(ends):
+            wanted = "leave the stiffness of one of its pins out, or its own"
+            raise fault(("members", link, "stiffness"), "both its pins give already", wanted)
+        if not _placed(link, firm, [p for p in ends if p in firm], taken, set()):
             wanted = "name one of the members there that do not stretch before them, or leave one stiff"
             raise fault(("members", link, "stiffness"), "too many links that stretch meet at its pins", wanted)
     return {

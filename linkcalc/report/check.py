@@ -37,6 +37,11 @@ def _made_of(answer: CheckAnswer) -> str:
 
 
 def _freedoms(answer: CheckAnswer) -> str:
+    if answer.stroke.loose:
+        left = answer.freedoms - bool(answer.asked)
+        settles = f"{left} settle{'s' if left == 1 else ''} in balance"
+        taken = f"{'the stroke' if answer.motion else 'the effort'} takes one, {settles}" if answer.asked else settles
+        return f"{answer.freedoms}; {taken}" + (f", and the {answer.asked} is what is asked." if answer.asked else ".")
     if not answer.asked:
         return "none: the frame stands, and every force is determined."
     taken = "the stroke takes it" if answer.motion else "the effort and the load hold it"

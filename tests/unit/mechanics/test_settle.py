@@ -391,8 +391,11 @@ def test_cases_settle_each_for_itself() -> None:
          .replace("along = 0", 'along = ["O", "tip"]\non = "ground"'), "is a point of arm"),
         (STOP.format(room="gap = 0.01\npreload = 5"), "one of the two is wanted"),
         (STOP.format(room="").replace('side = "left"', ""), "where it is free"),
+        (TWO_BARS.format(h=0.3, k=5, to=3.1) + "[pins.A]\nstiffness = 9\n[pins.K]\nstiffness = 9\n",
+         "both its pins give already"),
     ],
-    ids=["not said free", "nothing acts", "minus stiffness", "one pin", "own line", "gap and preload", "no side"],
+    ids=["not said free", "nothing acts", "minus stiffness", "one pin", "own line", "gap and preload", "no side",
+         "pins give already"],
 )  # fmt: skip
 def test_what_is_wrong_is_told(text: str, said: str) -> None:
     with pytest.raises(Faults) as caught:
