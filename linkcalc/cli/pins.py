@@ -61,7 +61,7 @@ Inch = Annotated[
 ]
 Sheet = Annotated[
     str | None,
-    typer.Option("--working", help="Print the calculation of this joint's parts as a sheet.", metavar="JOINT"),
+    typer.Option("--working", help="Print the calculation of this joint's or rope's parts as a sheet.", metavar="NAME"),
 ]
 Plots = Annotated[
     list[str] | None,
@@ -165,15 +165,23 @@ def _must_be_sized(answer: PinsAnswer, joint: str) -> None:
     """Raises Faults: no such joint, or one that has no calculation."""
     from linkcalc.words import nearest
 
-    known = {j.joint: j for j in answer.joints}
+    known = {j.joint: j.word for j in answer.joints} | {r.rope: "rope" for r in answer.ropes}
     if joint not in known:
         raise option_fault("--working", f"unknown joint {joint!r}", nearest(joint, known))
-    if not known[joint].sized:
-        sized = [name for name, j in known.items() if j.sized]
-        what = f"{joint} is a {known[joint].word} and has no calculation"
-        if known[joint].word == "pin":
+    if joint not in answer.sized:
+        what = f"{joint} is a {known[joint]} and has no calculation"
+        if known[joint] == "pin":
             what = f"the pin {joint} carries nothing, or its force has no bound"
-        raise option_fault("--working", what, f"there are those of {', '.join(sized)}" if sized else "")
+        raise option_fault("--working", what, _can_have(answer, known[joint]))
+
+
+def _can_have(answer: PinsAnswer, word: str) -> str:
+    """Which sheets there are, or what a joint of this kind needs for one."""
+    needs = {"slide": "'length' and 'width'", "rope": "'breaking_load'"}
+    needs |= dict.fromkeys(("slot", "track"), needs["slide"])
+    own = f"give it {needs[word]}" if word in needs else ""
+    others = f"there are those of {', '.join(answer.sized)}" if answer.sized else ""
+    return "; ".join(text for text in (own, others) if text)
 
 
 def _point(model: Mechanism, about: str | None) -> str | None:

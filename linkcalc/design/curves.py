@@ -42,6 +42,7 @@ class Found:
 
 
 _ASKED = ("effort", "tare effort", "load")
+_SIZED = ("force at ", "pressure at ", "tension of ")
 _AT_LIMIT = 1e-3
 """Speed of what is asked over the fastest, at the pose just short of a limit of motion: a dead point"""
 
@@ -86,7 +87,9 @@ class Curves:
             at_limit = np.any([np.abs(self.drive - limit) <= 1e-8 * reach for limit in limits], axis=0)
             dead = dead | (at_limit & (part < _AT_LIMIT))
         known = self.survey.quantities
-        sized = np.array([n in _ASKED or (n.startswith("force at ") and known[n].kind == "force") for n in self._names])
+        sized = np.array(
+            [n in _ASKED or (n.startswith(_SIZED) and known[n].kind in ("force", "stress")) for n in self._names]
+        )
         return sized[:, None, None] & dead
 
     def samples(self, name: str) -> Array:

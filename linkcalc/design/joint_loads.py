@@ -18,6 +18,7 @@ from linkcalc.design.over_cases import Asked, worst_cases
 from linkcalc.design.pin_stacks import BENDING, SHEAR
 from linkcalc.design.pins_answer import Footing, JointLoad, Peak, Reversal, RopeLoad, SideLoad, Swing
 from linkcalc.design.roses import rose
+from linkcalc.design.shoes import NEEDED, PRESSURE, shoes
 
 NO_PEAK = Peak(0.0, "", float("nan"))
 
@@ -38,14 +39,16 @@ class JointLoads:
         asked += [Asked(n) for n in survey.quantities if n.startswith((BENDING, SHEAR))]
         asked += [] if carries_nothing(curves, RESULTANT) else ASKED
         asked += [Asked(f"tension of {rope}", sense) for rope in survey.ropes for sense in (1, -1)]
+        asked += [Asked(kind + name) for name in shoes(survey.ready) for kind in (PRESSURE, NEEDED)
+                  if kind + name in survey.quantities]  # fmt: skip
         self._found = dict(zip(asked, worst_cases(curves, asked), strict=True))
 
     def joints(self) -> tuple[JointLoad, ...]:
         return tuple(self._joint(name) for name in dict.fromkeys(s.joint for s in self._curves.survey.sides))
 
     def ropes(self) -> tuple[RopeLoad, ...]:
-        names = self._curves.survey.ropes
-        return tuple(RopeLoad(n, *(self.peak(Asked(f"tension of {n}", sense)) for sense in (1, -1))) for n in names)
+        names = [(rope, f"tension of {rope}") for rope in self._curves.survey.ropes]
+        return tuple(RopeLoad(n, self.peak(Asked(t)), self.peak(Asked(t, -1))) for n, t in names)
 
     def _joint(self, joint: str) -> JointLoad:
         survey = self._curves.survey

@@ -16,11 +16,13 @@ from linkcalc.design.curves import Curves
 from linkcalc.design.diameters import Diameters
 from linkcalc.design.events import events
 from linkcalc.design.footing import ground_quantities
+from linkcalc.design.guide_sizes import guide_sized, rope_sized
 from linkcalc.design.guides import normal_forces
 from linkcalc.design.joint_loads import NO_PEAK, JointLoads
 from linkcalc.design.pin_sizes import Mean, PinSizes, Shelf
 from linkcalc.design.pin_stacks import stack_quantities
 from linkcalc.design.pins_answer import JointLoad, PinsAnswer, Swing
+from linkcalc.design.shoes import told_shoes
 from linkcalc.design.sizing.bearing_list import bearings as bearing_list
 from linkcalc.design.sizing.bush_materials import bush_materials
 from linkcalc.design.sizing.model_pins import pin_spec
@@ -82,7 +84,7 @@ def pins(
     specs = {pin: pin_spec(pin, mechanism, ready.drawing) for pin in ready.drawing.pins}
     stacks = {pin: spec.stack for pin, spec in specs.items() if spec.stack}
     more = [*speeds(pairs), *normal_forces(ready.chain), *ground_quantities(ready, place)]
-    more += stack_quantities(survey, stacks)
+    more += [*stack_quantities(survey, stacks), *told_shoes(ready)]
     survey.quantities |= {q.name: q for q in more}
     curves = Curves(survey, survey.first, path.limits if path else ())
     found = events(curves, path, extremes=False) if path else ()
@@ -98,14 +100,16 @@ def pins(
     joints = tuple(
         replace(joint, sized=PinSizes(joint, loads.pin_poses(joint), specs[joint.joint], mechanism, shelf,
                                       rate=rate, mean=_mean(swings, pairs, joint)).all())
-        if joint.joint in specs and joint.word == "pin" else joint
+        if joint.joint in specs and joint.word == "pin"
+        else replace(joint, sized=guide_sized(curves, loads, joint.joint))
         for joint in joints
     )  # fmt: skip
+    ropes = tuple(replace(rope, sized=rope_sized(curves, rope)) for rope in loads.ropes())
     told = (*found, *_told(joints))
     stroke = assembled(ready, survey, survey.first, found=told, judged=verdicts(curves, shelf.bearings), warned=warned)
     variants = 0 if sizes is None else int(np.size(next(iter(sizes.values()))))
     return PinsAnswer(
-        stroke, joints, loads.ropes(), loads.footing(place), lasting, rounds, variants,
+        stroke, joints, ropes, loads.footing(place), lasting, rounds, variants,
     )  # fmt: skip
 
 

@@ -12,6 +12,9 @@ if TYPE_CHECKING:  # most questions take no sizes
     from linkcalc.design.sizing.stack import PinStack
     from linkcalc.design.sizing.working import Choice, Working
 
+GUIDE, ROPE = "guide", "rope"
+"""Parts that are no part of a pin."""
+
 
 @dataclass(frozen=True)
 class Peak:
@@ -121,12 +124,15 @@ class Reversal:
 class Sized:
     """A part of a joint under what it must carry.
 
-    item      "pin", "bush", "bearing", "eye of arm"
-    required  [m] the smallest size that would do; None where sizes come from a list only, or are not looked for
+    item      "pin", "bush", "bearing", "eye of arm", "guide", "rope"
+    required  [m] the smallest size that would do (of a guide its length); of a rope the breaking load [N]; None where
+              sizes come from a list only, or are not looked for
     chosen    what it is called where one was chosen: "16 mm", a designation; "" if its size is given, or none does
-    size      [m] diameter of a pin, length of a bush; nan otherwise
+    size      [m] diameter of a pin, length of a bush or guide; [N] breaking load of a rope; nan otherwise
     working   the calculation; choice  how it was chosen, None for a given size
     stack     of a pin with a stack: its plates and what they do to it in the pose that uses it most; else None
+    kind      of required and size: "length" or "force"
+    worst     of a guide its edge pressure [Pa], of a rope its tension [N], in the pose that the sheet is of; else None
     """
 
     item: str
@@ -136,6 +142,8 @@ class Sized:
     working: Working
     choice: Choice | None
     stack: PinStack | None = None
+    kind: str = "length"
+    worst: Peak | None = None
 
     @property
     def utilisation(self) -> float:
@@ -151,7 +159,7 @@ class JointLoad:
     largest, smallest  [N] of the force; of several members the largest that any feels
     moment    [N m] largest moment, with its sign; None where the joint takes none
     diameter  [m] of a pin, if it is known
-    sized     the parts of a pin; empty for other joints, and where the force has no bound
+    sized     the parts of a pin, or a guide whose face is told; empty otherwise, and where the force has no bound
     """
 
     joint: str
@@ -174,11 +182,15 @@ class JointLoad:
 
 @dataclass(frozen=True)
 class RopeLoad:
-    """Largest and smallest tension of a rope [N]."""
+    """Largest and smallest tension of a rope [N].
+
+    sized  the rope against its breaking load, if that is told
+    """
 
     rope: str
     largest: Peak
     smallest: Peak
+    sized: tuple[Sized, ...] = ()
 
 
 @dataclass(frozen=True)
@@ -219,6 +231,12 @@ class PinsAnswer:
     time: float
     rounds: bool
     variants: int
+
+    @property
+    def sized(self) -> dict[str, tuple[Sized, ...]]:
+        """Joint or rope -> its parts under what they must carry, of those that have any."""
+        every = {j.joint: j.sized for j in self.joints} | {r.rope: r.sized for r in self.ropes}
+        return {name: sized for name, sized in every.items() if sized}
 
     @property
     def holds(self) -> bool:

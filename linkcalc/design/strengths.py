@@ -1,4 +1,6 @@
-"""What requirements may ask of a pin besides its force: its stress, the pressure on it, the life of its bearing."""
+"""What requirements may ask of a joint besides its force: stress, pressure and life of a pin, pressure of a guide,
+safety of a rope.
+"""
 
 from __future__ import annotations
 
@@ -8,7 +10,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from linkcalc.faults import Faults
-from linkcalc.model.requirements import PIN, requirements
+from linkcalc.model.requirements import SAFETY, requirements
 from linkcalc.parts.pose import Array
 
 if TYPE_CHECKING:
@@ -28,15 +30,22 @@ Along = Callable[["PinStack"], Array]
 def strength_quantities(survey: Survey) -> Iterator[Quantity]:
     """Quantities of a survey for the requirements of its model that ask for them; none where no requirement does."""
     mechanism = survey.ready.drawing.mechanism
-    asked = {(r.quantity, r.of) for r in requirements(mechanism) if r.measure.of == PIN}
+    asked = {(r.quantity, r.of) for r in requirements(mechanism) if r.strength}
     if not asked:
         return
     # most models ask for none of this, and start without what it takes
+    from linkcalc.design.shoes import pressure, safety, shoes
     from linkcalc.design.sizing.model_pins import pin_spec
     from linkcalc.design.survey import Quantity
     from linkcalc.design.swings import speeds
 
     for quantity, pin in sorted(asked):
+        if quantity == SAFETY:
+            yield safety(survey.ready, pin, survey.quantities[f"tension of {pin}"].of)
+            continue
+        if pin in shoes(survey.ready):
+            yield pressure(survey.ready, pin)
+            continue
         spec = pin_spec(pin, mechanism, survey.ready.drawing)
         if quantity == "stress":
             yield Quantity(f"stress in pin {pin}", "stress", _stress(survey, pin, spec))

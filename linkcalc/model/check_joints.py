@@ -78,10 +78,15 @@ def check_members(mechanism: Mechanism, gather: Gather) -> None:
 
 
 def check_joints(mechanism: Mechanism, gather: Gather) -> None:
-    """Slots, slides and welds that join a member to itself or to a point it does not have."""
+    """Slots, slides and welds that join a member to itself or to a point it does not have; keys that lack another."""
     carried = Carried(mechanism)
     for item, joint in walk.joints(mechanism):
         _check(joint, item, carried, gather)
+        for key, others in getattr(joint, "goes_with", ()):
+            lacking = [other for other in others if getattr(joint, other) is None]
+            if getattr(joint, key) is not None and lacking and not gather.touches(*item):
+                names = " and ".join(map(repr, lacking))
+                gather.add((*item, key), f"it goes with {names} only", f"give {names} too, or leave it out")
 
 
 def _joined(joint: walk.Part, carried: Carried) -> Iterator[str]:

@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Mapping
+from typing import Any
 
 from linkcalc.faults import fault
 from linkcalc.model import walk
@@ -19,7 +20,9 @@ from linkcalc.model.requirements import (
     MOVER,
     NEEDS,
     PIN,
+    PRESSED,
     ROPE,
+    SAFETY,
     Requirement,
     requirement,
 )
@@ -40,8 +43,8 @@ def check_requirements(mechanism: Mechanism, known: Known, drawing: Drawing | No
             _check_names(one, mechanism, known, drawing)
             if drawing:
                 _check_told(one, drawing)
-            if one.measure.of == PIN:
-                _check_pin(one, mechanism)
+            if one.strength:
+                _check_strength(one, mechanism, drawing)
             one.limit(mechanism, sizes)
             one.place(mechanism, sizes)
 
@@ -64,6 +67,7 @@ def _check_names(one: Requirement, mechanism: Mechanism, known: Known, drawing: 
     pools = {JOINT: joints, MEMBER: known.members[1:], MOVER: known.joints + known.points}
     pools[DRAWN] = known.members[1:] + known.ropes
     pools[PIN] = tuple(drawing.pins) if drawing else known.points
+    pools[PRESSED] = pools[PIN] + (tuple(guides(mechanism)) if drawing else known.joints)
     pools[LOADING] = tuple(item[-1] for item, _ in walk.loads(mechanism))
     pools[ROPE] = known.ropes
     what = one.measure.of
@@ -98,6 +102,32 @@ def _check_told(one: Requirement, drawing: Drawing) -> None:
         if one.quantity not in told:
             wanted = f"it tells {', '.join(dict.fromkeys(told))}" if told else "a spring, a cylinder or the like does"
             raise fault((), f"{one.of!r} tells no {one.quantity}", wanted)
+
+
+def guides(mechanism: Mechanism) -> Mapping[str, Any]:
+    """The joints that tell of the face they bear on, if they care to."""
+    return {item[-1]: joint for item, joint in walk.joints(mechanism) if hasattr(joint, "allowed_pressure")}
+
+
+def _check_strength(one: Requirement, mechanism: Mechanism, drawing: Drawing | None) -> None:
+    """What the pin, guide or rope must have, beside its force, for what is asked of it."""
+    if drawing is None and one.of not in mechanism.points:
+        return  # its joint may be what is wrong
+    if one.quantity == SAFETY:
+        if mechanism.joints["rope"][one.of].breaking_load is None:
+            raise fault((), f"the rope {one.of} has no breaking load", f"give it one: [ropes.{one.of}] breaking_load")
+    elif one.of in guides(mechanism):
+        _check_guide(one, guides(mechanism)[one.of])
+    else:
+        _check_pin(one, mechanism)
+
+
+def _check_guide(one: Requirement, guide: Any) -> None:
+    if one.on:
+        raise fault((), f"the {one.quantity} is that of the whole guide", f"leave 'on {one.on}' out")
+    lacking = [key for key in ("length", "width") if getattr(guide, key) is None]
+    if lacking:
+        raise fault((), f"the guide {one.of} has no {' and no '.join(lacking)}", "the face that it bears on is wanted")
 
 
 def _check_pin(one: Requirement, mechanism: Mechanism) -> None:

@@ -40,6 +40,8 @@ class Measure:
 JOINT, MEMBER, DRAWN, MOVER, LOADING = "joint", "member", "member or rope", "point, slot, slide or track", "load"
 PIN = "pin"
 ROPE = "rope"
+PRESSED = "pin, slot, slide or track"
+SAFETY = "safety factor"
 _WHOLE = {
     "effort": "effort",
     "load": "load",
@@ -65,7 +67,8 @@ _MEASURES = (
     ("buckling margin", Measure("number", "of", MEMBER)),
     ("utilisation", Measure("number", "of", MEMBER)),
     ("stress", Measure("stress", "in pin", PIN)),
-    ("pressure", Measure("stress", "at", PIN)),
+    ("pressure", Measure("stress", "at", PRESSED)),
+    (SAFETY, Measure("number", "of", ROPE)),
     ("life", Measure("number", "at", PIN)),
 )
 INNER = ("bending moment", "shear force", "axial force", "stress", "buckling margin", "utilisation")
@@ -117,6 +120,11 @@ class Requirement:
     def inside(self) -> bool:
         """True for what goes on within a member; "stress in pin C" is that of a pin."""
         return self.quantity in INNER and self.measure.of == MEMBER
+
+    @property
+    def strength(self) -> bool:
+        """True for what a pin, guide or rope bears beside its force."""
+        return self.measure.of in (PIN, PRESSED) or self.quantity == SAFETY
 
     def kind(self, mechanism: Mechanism) -> str:
         """Kind of the limit: "force", "moment", "length" or "number"."""

@@ -42,7 +42,12 @@ def pins_tree(answer: PinsAnswer) -> Tree:
         "goes round": answer.rounds,
         "joints": [_joint(edge, j, mechanism.units) for j in answer.joints],
         "ropes": [
-            {"rope": r.rope, "largest": _peak(edge, r.largest, "force"), "smallest": _peak(edge, r.smallest, "force")}
+            {
+                "rope": r.rope,
+                "largest": _peak(edge, r.largest, "force"),
+                "smallest": _peak(edge, r.smallest, "force"),
+                "sizes": [_sized(edge, s, mechanism.units) for s in r.sized],
+            }
             for r in answer.ropes
         ],
         "foundation": _foundation(edge, answer),
@@ -78,11 +83,12 @@ def _sized(edge: Edge, sized: Sized, units: Units) -> Tree:
     tree = working_tree(sized.working, units)
     return {
         "part": sized.item,
-        "needed": one_tree(edge, math.nan if sized.required is None else sized.required, "length"),
+        "needed": one_tree(edge, math.nan if sized.required is None else sized.required, sized.kind),
         "chosen": sized.chosen or None,
-        "size": one_tree(edge, sized.size, "length"),
+        "size": one_tree(edge, sized.size, sized.kind),
         "utilisation": real(sized.utilisation),
         "why not smaller": sized.choice.why or None if sized.choice else None,
+        "worst": _peak(edge, sized.worst, "force" if sized.kind == "force" else "stress") if sized.worst else None,
         "working": tree,
     }
 

@@ -59,6 +59,10 @@ class Rope:
         (DEAD, HAULING), "its last end: made fast, or drawn in there by an effort or load with 'haul'", DEAD
     )
     stiffness: Size | None = stiffness_field()
+    breaking_load: Size | None = fields.size("force", "least breaking load, by its maker", None, sign="plus")
+    factor: Size | None = fields.size("number", "factor against breaking", None, sign="plus")
+
+    goes_with = (("factor", ("breaking_load",)),)
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[RopeJoint]:
         wheels, losses, contacts = [], list[Loss | None](), dict[tuple[Site, str], tuple[str, list[int]]]()
@@ -77,7 +81,11 @@ class Rope:
             places = tuple(Place(where, site, pin, tuple(which)) for (site, pin), (where, which) in contacts.items())
             whole, limits = path.length(sketch.drawn), _limits(self.path, path, sketch)
             hauled = self.end == HAULING
-            yield RopeJoint(name, path, whole, places, hauled, tuple(losses[1:-1]), limits, **stiff(self, sketch))
+            breaks = None if self.breaking_load is None else sketch.value(self.breaking_load, "force")
+            factor = None if self.factor is None else sketch.value(self.factor, "number")
+            yield RopeJoint(
+                name, path, whole, places, hauled, tuple(losses[1:-1]), limits, breaks, factor, **stiff(self, sketch)
+            )
 
 
 def _loss(step: Any, k: int, sketch: Sketch) -> Loss | None:
@@ -117,6 +125,7 @@ class RopeJoint:
     hauled  True if it has a hauling end: then its length may change, and there is no equation
     losses  for each pulley between its ends what it loses there, None: nothing
     edges   what should hold of it in every pose
+    breaks  [N] its breaking load, None if it is not told; factor [-] against that, None if none is told
     """
 
     name: str
@@ -126,6 +135,8 @@ class RopeJoint:
     hauled: bool
     losses: tuple[Loss | None, ...] = ()
     edges: tuple[Limit, ...] = ()
+    breaks: Value | None = None
+    factor: Value | None = None
     on_pin: str = ""
     share: Value | None = None
     word = "rope"

@@ -9,6 +9,7 @@ from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Mark, Poses, Row, Rub, Site, Size, Sketch, Value
 from linkcalc.parts.joints.slot import SlotJoint
 from linkcalc.parts.lines import Guide, Line, guide, rubless
+from linkcalc.parts.shoes import WHOLE, Shoe, allowed_field, shoe, width_field
 from linkcalc.parts.stiff import stiff, stiffness_field, turning_field
 from linkcalc.words import word
 
@@ -27,8 +28,12 @@ class Slide:
     length: Size | None = fields.size(
         "length", "length of the guide: its moment then presses at both ends, and rubs there", None, sign="plus"
     )
+    width: Size | None = width_field()
+    allowed_pressure: Size | None = allowed_field()
     stiffness: Size | None = stiffness_field()
     torsion_stiffness: Size | None = turning_field()
+
+    goes_with = WHOLE
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlideJoint]:
         site = sketch.site(self.at, self.member) if self.at else Site(sketch.member(self.member), 0.0, 0.0)
@@ -40,8 +45,9 @@ class Slide:
         mu = sketch.coefficient("slides", self.friction)
         length = None if self.length is None else sketch.value(self.length, "length")
         yield SlideJoint(
-            name, site, Guide(start, line.tx, line.ty), lead, friction=mu, length=length, **stiff(self, sketch)
-        )
+            name, site, Guide(start, line.tx, line.ty), lead, friction=mu, length=length, shoe=shoe(self, sketch),
+            **stiff(self, sketch),
+        )  # fmt: skip
 
 
 @dataclass(frozen=True, eq=False)
@@ -58,6 +64,7 @@ class SlideJoint:
     on_pin: str = ""
     friction: Value = 0.0
     length: Value | None = None
+    shoe: Shoe | None = None
     share: Value | None = None
     turning_stiffness: Value | None = None
     angular = (False, True)

@@ -11,6 +11,7 @@ from dataclasses import dataclass
 from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Mark, Poses, Push, Row, Rub, Site, Size, Sketch, Value, X, Y
 from linkcalc.parts.lines import Guide, Line, guide, rubless
+from linkcalc.parts.shoes import WHOLE, Shoe, allowed_field, length_field, shoe, width_field
 from linkcalc.parts.stiff import stiff, stiffness_field
 from linkcalc.words import word
 
@@ -26,14 +27,20 @@ class Slot:
     of: str | None = fields.name("member", "the member that the point belongs to, if several carry it", None)
 
     friction: Size | None = fields.friction("if not the one for all slots")
+    length: Size | None = length_field()
+    width: Size | None = width_field()
+    allowed_pressure: Size | None = allowed_field()
     stiffness: Size | None = stiffness_field()
+
+    goes_with = (("length", ("width",)), *WHOLE)
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[SlotJoint]:
         alone = self.of is not None or len(sketch.carriers(self.point)) < 2
         line = guide(sketch, self.along, self.on, self.point)
         mu = sketch.coefficient("slots", self.friction)
+        on_pin = "" if alone else self.point
         yield SlotJoint(
-            name, sketch.site(self.point, self.of), line, "" if alone else self.point, mu, **stiff(self, sketch)
+            name, sketch.site(self.point, self.of), line, on_pin, mu, shoe=shoe(self, sketch), **stiff(self, sketch)
         )
 
 
@@ -46,6 +53,7 @@ class SlotJoint:
     line: Guide
     on_pin: str = ""
     friction: Value = 0.0
+    shoe: Shoe | None = None
     share: Value | None = None
     angular = (False,)
     word = "slot"

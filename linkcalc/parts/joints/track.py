@@ -15,6 +15,7 @@ from linkcalc.parts import fields
 from linkcalc.parts.contract import TURN, Entry, Mark, Poses, Push, Row, Rub, Site, Size, Sketch, Value, X, Y
 from linkcalc.parts.lines import rubless
 from linkcalc.parts.paths.curves import Arc, Foot, Smooth, arc_through, smooth_through
+from linkcalc.parts.shoes import WHOLE, Shoe, allowed_field, length_field, shoe, width_field
 from linkcalc.parts.stiff import stiff, stiffness_field
 from linkcalc.words import word
 
@@ -36,9 +37,13 @@ class Track:
     on: str = fields.name("member", "the member that has the track", "ground")
     of: str | None = fields.name("member", "the member that the point belongs to, if several carry it", None)
     friction: Size | None = fields.friction("if not the one for all slots")
+    length: Size | None = length_field()
+    width: Size | None = width_field()
+    allowed_pressure: Size | None = allowed_field()
     stiffness: Size | None = stiffness_field()
 
     one_of = ("arc", "through")
+    goes_with = (("length", ("width",)), *WHOLE)
 
     def joints(self, name: str, sketch: Sketch) -> Iterator[TrackJoint]:
         alone = self.of is not None or len(sketch.carriers(self.point)) < 2
@@ -53,8 +58,9 @@ class Track:
         base = Site(sketch.member(self.on), 0.0, 0.0)
         mu = sketch.coefficient("slots", self.friction)
         yield TrackJoint(
-            name, sketch.site(self.point, self.of), base, curve, "" if alone else self.point, mu, **stiff(self, sketch)
-        )
+            name, sketch.site(self.point, self.of), base, curve, "" if alone else self.point, mu,
+            shoe=shoe(self, sketch), **stiff(self, sketch),
+        )  # fmt: skip
 
     def _check_bent(self, sketch: Sketch) -> None:
         (ax, ay), (bx, by), (cx, cy) = (sketch.point(p) for p in self.arc or ())
@@ -77,6 +83,7 @@ class TrackJoint:
     curve: Arc | Smooth
     on_pin: str = ""
     friction: Value = 0.0
+    shoe: Shoe | None = None
     share: Value | None = None
     angular = (False,)
     word = "track"
