@@ -105,6 +105,11 @@ def pins(
         for joint in joints
     )  # fmt: skip
     ropes = tuple(replace(rope, sized=rope_sized(curves, rope)) for rope in loads.ropes())
+    sized_parts = [part for one in joints for part in one.sized] + [part for one in ropes for part in one.sized]
+    if sizes is not None and any(part.worst for part in sized_parts):
+        warned += (
+            Caveat("copies", "guides and ropes are sized for the mechanism as drawn; copies may load them more"),
+        )
     told = (*found, *_told(joints))
     stroke = assembled(ready, survey, survey.first, found=told, judged=verdicts(curves, shelf.bearings), warned=warned)
     variants = 0 if sizes is None else int(np.size(next(iter(sizes.values()))))

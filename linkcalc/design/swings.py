@@ -185,7 +185,8 @@ class Swings:
         for case in range(len(self._cases)):
             nodes = self._ways[pair][case % self._apart].nodes
             both = np.stack([powers[case] * speed[case], speed[case]])
-            work[case], way[case] = np.abs(np.diff(Integral(curves.drive, both).to(nodes), axis=1)).sum(axis=1)
+            with np.errstate(invalid="ignore"):  # a force without bound at the end of the stroke
+                work[case], way[case] = np.abs(np.diff(Integral(curves.drive, both).to(nodes), axis=1)).sum(axis=1)
         work, way = work.reshape(-1, ways).sum(axis=1), way.reshape(-1, ways).sum(axis=1)
         means = np.where(np.isnan(work), -np.inf, top * (work / way) ** (1 / exponent))
         means = np.where(np.isposinf(powers).any(axis=1).reshape(-1, ways).any(axis=1), np.inf, means)

@@ -74,7 +74,8 @@ def _check_names(one: Requirement, mechanism: Mechanism, known: Known, drawing: 
     if what == DRAWN and not known.ropes:
         what = MEMBER
     if what:
-        _known(one.of, what, pools[what])
+        # the sides of a rope ("hoist at P") are known from a drawing only
+        _known(one.of if drawing else one.of.partition(" at ")[0], what, pools[what])
     if one.on:
         _known(one.on, "member", known.members)
 

@@ -15,7 +15,7 @@ SWING = [
     "member", "against", "kind", "low", "high", "swing", "path", "turns back", "mean load", "path of rubbing",
     "mean speed", "largest speed",
 ]  # fmt: skip
-SIZE = ["part", "needed", "chosen", "size", "utilisation", "why not smaller", "working"]
+SIZE = ["part", "needed", "chosen", "size", "utilisation", "why not smaller", "worst", "working"]
 FOUNDATION = ["about", "resultant", "right", "left", "up", "down", "counter-clockwise", "clockwise"]
 
 
@@ -38,8 +38,10 @@ class PinsSchema:
         for joint in tree["joints"]:
             self._joint(joint)
         for rope in tree["ropes"]:
-            assert list(rope) == ["rope", "largest", "smallest"]
+            assert list(rope) == ["rope", "largest", "smallest", "sizes"]
             self._peak(rope["largest"], "force")
+            for size in rope["sizes"]:
+                self._size(size, "force", "force")
         if tree["foundation"] is not None:
             assert list(tree["foundation"]) == FOUNDATION
             for key in FOUNDATION[1:]:
@@ -64,11 +66,17 @@ class PinsSchema:
                 assert swing[key]["unit"] == self.units[kind]
             assert swing["mean speed"]["unit"] == swing["largest speed"]["unit"] == speed
         for size in joint["sizes"]:
-            assert list(size) == SIZE
-            assert size["needed"]["unit"] == self.units["length"]
-            assert size["utilisation"] == size["working"]["utilisation"]
+            self._size(size, "length", "stress")
         for turn in joint["reversals"]:
             assert list(turn) == ["of", "case", "drive"]
+
+    def _size(self, size: dict[str, Any], kind: str, worst: str) -> None:
+        assert list(size) == SIZE
+        assert size["needed"]["unit"] == size["size"]["unit"] == self.units[kind]
+        assert size["utilisation"] == size["working"]["utilisation"]
+        assert (size["worst"] is not None) == (size["part"] in ("guide", "rope"))
+        if size["worst"] is not None:
+            self._peak(size["worst"], worst)
 
     def _peak(self, peak: dict[str, Any], kind: str) -> None:
         assert list(peak) == ["case", "copy", "drive", "value", *(["felt"] if "felt" in peak else [])]
