@@ -147,7 +147,8 @@ class Joint(Protocol):
     ``drag()`` gives its Drag; the multiplier is the pull in its last part, and ``parts`` are the pulls of all its parts
     over that one. ``limits()``, if it is there, tells what should hold in every pose.
     A guide has, besides, ``shoe``: the Shoe it bears on, or None. A rope has ``breaks``: its breaking load [N], and
-    ``factor`` [-], each None if it is not told.
+    ``factor`` [-], each None if it is not told. A kind with keys that say nothing alone has ``goes_with``: of each such
+    key the keys that must be there too.
     One with teeth has ``place(at)``, where its force is told, for that moves on its members: (x, y) [m]; ``grain``:
     its gap is known but for multiples of that [m]; ``astray(at)``: how far its centres have moved apart [m].
 

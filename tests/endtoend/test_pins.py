@@ -12,7 +12,7 @@ from pathlib import Path
 
 import pytest
 
-from tests.endtoend.models import CASES, CLAMP, EXAMPLES, FRAME, REQUIREMENTS, linkcalc
+from tests.endtoend.models import CASES, CLAMP, EXAMPLES, FRAME, REQUIREMENTS, ROOT, linkcalc
 from tests.endtoend.pins_schema import PinsSchema
 
 UNITS = {"length": "mm", "angle": "deg", "force": "N", "moment": "N*m", "stress": "MPa", "": ""}
@@ -152,11 +152,11 @@ def test_sizes_stand_in_table_and_json() -> None:
 
 
 def test_guides_and_ropes_stand_among_the_sizes() -> None:
-    said = linkcalc("pins", EXAMPLES / "goods_hoist.toml")
+    said = linkcalc("pins", ROOT / "examples" / "goods_hoist.toml")
     table = said.out[said.out.index("\nSizes\n") :]
     for text in ("5294 N", "8000 N given", "the codes for lifting"):
         assert text in table, text
-    tree = json.loads(linkcalc("pins", EXAMPLES / "twin_guides.toml", "--json", "-").out)
+    tree = json.loads(linkcalc("pins", ROOT / "examples" / "twin_guides.toml", "--json", "-").out)
     (size,) = next(j for j in tree["joints"] if j["joint"] == "upper")["sizes"]
     assert (size["part"], size["size"]) == ("guide", {"unit": "mm", "value": 60.0})
     assert size["worst"]["value"]["unit"] == "MPa"
@@ -164,7 +164,7 @@ def test_guides_and_ropes_stand_among_the_sizes() -> None:
 
 
 def test_a_guide_that_does_not_do_is_warned_of() -> None:
-    text = (EXAMPLES / "twin_guides.toml").read_text(encoding="utf-8")
+    text = (ROOT / "examples" / "twin_guides.toml").read_text(encoding="utf-8")
     Path("tight.toml").write_text(text.replace("allowed_pressure = 4", "allowed_pressure = 1.5"), encoding="utf-8")
     said = linkcalc("pins", "tight.toml")
     assert "Warning: upper: the guide does not do: pressure at the edge of the guide" in said.out
@@ -172,13 +172,13 @@ def test_a_guide_that_does_not_do_is_warned_of() -> None:
 
 
 def test_the_working_of_guide_and_rope() -> None:
-    guide = linkcalc("pins", EXAMPLES / "twin_guides.toml", "--working", "upper").out
+    guide = linkcalc("pins", ROOT / "examples" / "twin_guides.toml", "--working", "upper").out
     for text in ("Upper: guide", "Where: turn of handle", "p_edge = p_mean + p_moment", "used 47.5 %"):
         assert text in guide, text
-    rope = linkcalc("pins", EXAMPLES / "goods_hoist.toml", "--working", "fall").out
+    rope = linkcalc("pins", ROOT / "examples" / "goods_hoist.toml", "--working", "fall").out
     for text in ("Fall: rope", "Where: case forward", "T_allow = B/S", "used 66.2 %", "Caution: Parts of lifting"):
         assert text in rope, text
-    said = linkcalc("pins", EXAMPLES / "goods_hoist.toml", "--working", "rails")
+    said = linkcalc("pins", ROOT / "examples" / "goods_hoist.toml", "--working", "rails")
     assert said.status == 2
     wanted = "give it 'length' and 'width'; there are those of O, fall"
     assert f"--working: rails is a slide and has no calculation; {wanted}" in said.err
