@@ -33,6 +33,7 @@ if TYPE_CHECKING:
     from linkcalc.design.members import members
     from linkcalc.design.pins import pins
     from linkcalc.design.stroke import stroke
+    from linkcalc.design.weigh import weigh
     from linkcalc.faults import Fault, Faults
     from linkcalc.model.mechanism import Mechanism
     from linkcalc.model.read import parse, read
@@ -50,6 +51,7 @@ __all__ = [
     "pins",
     "read",
     "stroke",
+    "weigh",
     "write",
 ]
 
@@ -60,6 +62,7 @@ _HOMES = {
     "members": "linkcalc.design.members",
     "pins": "linkcalc.design.pins",
     "stroke": "linkcalc.design.stroke",
+    "weigh": "linkcalc.design.weigh",
     "Fault": "linkcalc.faults",
     "Faults": "linkcalc.faults",
     "Mechanism": "linkcalc.model.mechanism",

@@ -15,6 +15,7 @@ from linkcalc.cli.members import members
 from linkcalc.cli.pins import pins
 from linkcalc.cli.start import start
 from linkcalc.cli.stroke import stroke
+from linkcalc.cli.weigh import weigh
 
 app = typer.Typer(
     name="linkcalc",
@@ -41,7 +42,7 @@ def _main(
         raise typer.Exit
 
 
-for command in (start, check, stroke, members, pins, draw):
+for command in (start, check, stroke, members, pins, draw, weigh):
     app.command()(command)
 
 

@@ -14,6 +14,7 @@ from linkcalc.model.check_joints import check_joints, check_members
 from linkcalc.model.check_loads import check_cases, check_loads, check_stroke, check_unknown
 from linkcalc.model.check_names import Known, check_clashes, check_names
 from linkcalc.model.check_pins import check_pins
+from linkcalc.model.check_poises import check_poises
 from linkcalc.model.check_requirements import check_requirements
 from linkcalc.model.check_sizes import check_sizes
 from linkcalc.model.gather import Gather
@@ -23,6 +24,7 @@ from linkcalc.model.tree import from_tree, to_tree
 from linkcalc.words import kinds
 
 _SHAPE = ("points", "members", *(f"{word}s" for word in kinds("joint")), "dimensions", "units")
+_BALANCERS = ("poises", "counterpoises")
 _LOADS = ("effort", "load", "loads", "cases")
 
 
@@ -68,9 +70,11 @@ def checked(tree: Mapping[str, Any], gather: Gather) -> Mechanism:
         check_cases(mechanism, gather)
     if _clean(gather, *_SHAPE, *_LOADS):
         check_loads(mechanism, gather)
+    if _clean(gather, *_SHAPE, *_BALANCERS):
+        check_poises(mechanism, gather)
     if _clean(gather, *_SHAPE, "stroke"):
         check_stroke(mechanism, gather)
-    if _clean(gather, *_SHAPE, *_LOADS, "stroke", "gravity", "friction", "pins"):
+    if _clean(gather, *_SHAPE, *_LOADS, *_BALANCERS, "stroke", "gravity", "friction", "pins"):
         drawing = check_drawing(mechanism, gather)
     check_requirements(mechanism, known, drawing, gather)
     return mechanism

@@ -8,6 +8,7 @@ import numpy as np
 
 from linkcalc.faults import Faults, fault
 from linkcalc.model import walk
+from linkcalc.model.check_poises import check_bars
 from linkcalc.model.gather import Gather, Item
 from linkcalc.model.mechanism import DRAWN, GROUND, LOWER, UPPER, Mechanism, Stroke
 from linkcalc.model.sketch import Drawing, drawn
@@ -33,6 +34,7 @@ def check_drawing(mechanism: Mechanism, gather: Gather) -> Drawing | None:
     except Faults as found:  # what pushes through a joint, or is stepped along it, need not be told of it again
         gather.faults += found.faults
         return None
+    check_bars(drawing, gather)
     with gather.at():
         drawing.assembly()
     if mechanism.stroke is not None:
@@ -63,7 +65,7 @@ def _lines(mechanism: Mechanism) -> Iterator[tuple[Item, str, str]]:
     for name, member in mechanism.members.items():
         if name != GROUND and len(member.points) > 1:
             yield ("members", name, "points"), member.points[0], member.points[-1]
-    parts = [*walk.joints(mechanism), *walk.loads(mechanism)]
+    parts = [*walk.joints(mechanism), *walk.loads(mechanism), *walk.balancers(mechanism)]
     if mechanism.stroke is not None:
         parts.append(walk.Part(("stroke",), mechanism.stroke.along))
     for part in parts:

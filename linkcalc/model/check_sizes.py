@@ -50,6 +50,9 @@ def _sizes(entry: Field[Any], value: Any, stepped: str) -> Iterator[tuple[Size, 
     elif meta["kind"] == "named sizes":
         for one in value:
             yield one, meta["unit"], "plus"
+    elif meta["kind"] == "places":
+        for one in value if isinstance(value, tuple) else (value,):
+            yield one, meta["unit"], "not minus" if isinstance(value, tuple) else "plus"
     elif meta["kind"] == "line" and not isinstance(value, tuple):
         yield value, "angle", "any"
     elif meta["kind"] == "arcs":

@@ -10,6 +10,7 @@ from collections.abc import Mapping
 from dataclasses import MISSING, dataclass, field
 from typing import Any
 
+from linkcalc.model.poises import Counterpoise, Poise
 from linkcalc.parts import fields
 from linkcalc.parts.contract import Size
 
@@ -237,6 +238,8 @@ class Mechanism:
     effort    the effort (Force, Torque or Pair); None for a frame
     load      the load whose ratio to the effort is asked; None if there is none
     loads     the other loads, by name
+    poises    name -> Poise: masses that slide along a bar of a scale
+    counterpoises  name -> Counterpoise: hangers that weights are put on
     stroke    None: solved in the drawing pose only
     cases     name -> Case; empty: one case, the model as written
     requirements  name -> text, e.g. "effort <= 150 N"
@@ -260,6 +263,10 @@ class Mechanism:
     effort: Any = _entry("part", "what goes in", family="load", asks="size")
     load: Any = _entry("part", "what comes out or is held", family="load")
     loads: Mapping[str, Any] = _entry("named parts", "other loads", dict, family="load")
+    poises: Mapping[str, Poise] = _entry("named tables", "masses that slide along a bar", dict, of=Poise)
+    counterpoises: Mapping[str, Counterpoise] = _entry(
+        "named tables", "hangers that weights are put on", dict, of=Counterpoise
+    )
     stroke: Stroke | None = _entry("table", "what is stepped", of=Stroke)
     cases: Mapping[str, Case] = _entry("named tables", "load cases", dict, of=Case, blanks=True)
     requirements: Mapping[str, str] = _entry("named texts", "what must hold", dict, blanks=True)

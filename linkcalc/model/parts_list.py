@@ -10,6 +10,7 @@ import numpy as np
 
 from linkcalc.faults import Fault, Faults, fault
 from linkcalc.model.mechanism import GROUND, Case, Mechanism, Pin
+from linkcalc.model.poises import balancers
 from linkcalc.parts.contract import Joint, Pusher, Site, Value
 from linkcalc.parts.joints.pin import PinJoint, StretchJoint
 from linkcalc.parts.lines import exact
@@ -198,6 +199,7 @@ def assemble(drawing: Drawing) -> Assembly:
             mass = member.copies * drawing.value(member.mass, "mass")
             weight = WeightPush(full, drawing.mass_site(name), mass, lines=drawing.mass_lines(name))
             pushers["", full] = cast("Pusher", weight)
+    pushers |= balancers(drawing)
     for case_name, case in mechanism.cases.items():
         if case.effort is not None:
             add(case_name, EFFORT, case.effort, "cases", case_name, EFFORT)

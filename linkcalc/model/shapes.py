@@ -71,6 +71,14 @@ def _named_sizes(raw: Any, meta: Meta) -> tuple[Any, ...]:
     return tuple(size(one) for one in raw)
 
 
+def _places(raw: Any, meta: Meta) -> Any:
+    if not isinstance(raw, (list, tuple)):
+        return size(raw)
+    if not raw:
+        raise fault((), "an empty list", f"a {meta['unit']} is wanted, or a list of some: [20, 30]")
+    return tuple(size(one) for one in raw)
+
+
 def _line(raw: Any, meta: Meta) -> Any:  # noqa: ARG001
     if not isinstance(raw, (list, tuple)):
         return size(raw)
@@ -172,7 +180,7 @@ def _example(number: int) -> str:
 
 SHAPES: dict[str, Callable[[Any, Meta], Any]] = {
     "name": _name, "names": _names, "size": _size, "sizes": _sizes, "named sizes": _named_sizes,
-    "own size": _size, "line": _line, "choice": _choice,
+    "own size": _size, "line": _line, "places": _places, "choice": _choice,
     "count": _whole, "arcs": _arcs, "pairs": _pairs, "unit": _unit, "tol": _tol, "factor": _factor,
     "factors": _factors, "text": _text, "rows": _rows, "formula": _formula,
 }  # fmt: skip

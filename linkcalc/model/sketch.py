@@ -249,6 +249,10 @@ class Drawing:
             return ()
         return tuple((self.site(a, member), self.site(b, member)) for a, b in lines if a != b)
 
+    def carried(self, member: str, place: Place) -> Site:
+        """A drawn place [m] as a member carries it. Raises Faults."""
+        return self._local(self.member(member), place)
+
     def _entry(self, member: str) -> Member:
         self.first_point(member)
         return self.mechanism.members[member]

@@ -51,6 +51,14 @@ def loads(mechanism: Mechanism) -> Iterator[Part]:
             yield Part(("cases", case_name, "add", name), part)
 
 
+def balancers(mechanism: Mechanism) -> Iterator[Part]:
+    """Poises and counterpoises."""
+    for name, poise in mechanism.poises.items():
+        yield Part(("poises", name), poise)
+    for name, counterpoise in mechanism.counterpoises.items():
+        yield Part(("counterpoises", name), counterpoise)
+
+
 def everything(mechanism: Mechanism) -> Iterator[Part]:
     """All parts of a mechanism, down to the cases."""
     for name, part in mechanism.points.items():
@@ -68,6 +76,7 @@ def everything(mechanism: Mechanism) -> Iterator[Part]:
     yield Part((), mechanism)
     yield Part(("gravity",), mechanism.gravity)
     yield from loads(mechanism)
+    yield from balancers(mechanism)
     if mechanism.stroke is not None:
         yield Part(("stroke",), mechanism.stroke)
         yield Part(("stroke",), mechanism.stroke.along)

@@ -62,6 +62,11 @@ def named_sizes(unit: str, names: tuple[str, ...], text: str, default: Any = MIS
     return _made("named sizes", text, default, unit=unit, names=names)
 
 
+def places(unit: str, text: str, default: Any = MISSING) -> Any:
+    """A size (a spacing, a step), or a list of sizes of one kind, kept as a tuple; () for none."""
+    return _made("places", text, default, unit=unit)
+
+
 def line(text: str, default: Any = MISSING) -> Any:
     """A line: two points, or an angle from the x axis as drawn."""
     return _made("line", text, default)

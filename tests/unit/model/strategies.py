@@ -25,6 +25,7 @@ FIELDS = {
     "size": lambda m: st.one_of(SIZES, st.sampled_from(m["words"])) if m["words"] else SIZES,
     "sizes": lambda _: st.tuples(SIZES, SIZES),
     "named sizes": lambda m: st.tuples(*(SIZES for _ in m["names"])),
+    "places": lambda _: st.one_of(SIZES, st.lists(SIZES, min_size=1, max_size=3).map(tuple)),
     "own size": lambda _: SIZES,
     "tol": lambda _: st.one_of(SIZES, st.tuples(SIZES, SIZES)),
     "line": lambda _: st.one_of(SIZES, st.tuples(NAMES, NAMES)),

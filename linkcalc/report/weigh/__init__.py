@@ -1,0 +1,1 @@
+"""A scale shown: blocks, tables, JSON, a chart, and its bars at true size."""
