@@ -137,6 +137,8 @@ def _settled(
     loose = Loose(chain.moving, chain.joints, coordinate, chain.size)
     if like is not None and like.loose is not None:
         loose.share_plans(like.loose)
+    if drawing.variants > 1:  # copies settle each by itself, even those that are drawn alike
+        at = _each(at, drawing.variants)
     target = None if coordinate is None else coordinate.value(at)
     try:
         rest = come_to_rest(loose, at, target, loads, 0.0)
@@ -152,6 +154,14 @@ def _settled(
         drawing, loose.chain(places), found.closed, loads, drawing.mechanism.stroke is not None, _undrawn(drawing),
         loose, found.unknown,
     )  # fmt: skip
+
+
+def _each(at: Poses, variants: int) -> Poses:
+    """The same poses with an entry for each copy."""
+    x, y, c, s = (
+        [v[0], *(np.array(np.broadcast_to(p, (1, variants, 1))) for p in v[1:])] for v in (at.x, at.y, at.c, at.s)
+    )
+    return Poses(x, y, c, s, at.down, at.field)
 
 
 def _held(chain: Chain, at: Poses, loads: Pushing) -> Place:

@@ -200,6 +200,11 @@ class Drawing:
         return found
 
     @cached_property
+    def variants(self) -> int:
+        """How many copies it is laid out for, 1 if it is one mechanism."""
+        return max((int(np.size(q.value)) for q in self._dimensions.values()), default=1)
+
+    @cached_property
     def drawn(self) -> Poses:
         """All members in the drawing pose."""
         x, y = zip(*self.origins, strict=True)
