@@ -66,7 +66,7 @@ Plots = Annotated[
     list[str] | None,
     typer.Option("--plot", help="Write errors and sensitivity as a picture. May be repeated.", metavar="FILE"),
 ]
-_MOST_COPIES, _LONG = 10_000_000, 30_000
+_MOST_COPIES, _LONG, _LONG_FREE = 10_000_000, 30_000, 300
 
 
 def weigh(
@@ -122,7 +122,7 @@ def weigh(
             return otherwise if text is None else _told(option, lambda: how(text, model))
 
         judged = _class(class_, read("--interval", interval, asked.mass_of, None), in_use)
-        with _progress(copies) as progress:
+        with _progress(copies >= (_LONG_FREE if model.free else _LONG), copies) as progress:
             answer = ask(
                 model, loads=read("--loads", loads, asked.loads_of, None), case=case,
                 step=_plus("--step", read("--step", step, asked.mass_of, None)),
@@ -203,9 +203,9 @@ def _told(option: str, work: Callable[[], Any]) -> Any:
 
 
 @contextmanager
-def _progress(copies: int) -> Iterator[Callable[[int, int], None] | None]:
+def _progress(wanted: bool, copies: int) -> Iterator[Callable[[int, int], None] | None]:
     """A bar on the error stream while many copies are weighed, if somebody looks at it."""
-    if copies < _LONG or not sys.stderr.isatty():
+    if not wanted or not sys.stderr.isatty():
         yield None
         return
     with typer.progressbar(length=copies, label="copies", file=sys.stderr) as bar:

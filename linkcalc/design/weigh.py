@@ -2,20 +2,22 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping, Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import replace
 
 import numpy as np
 
 from linkcalc.design.answer import Caveat
 from linkcalc.design.weighing.accuracy import Accuracy
-from linkcalc.design.weighing.answer import Asked, Band, Tilt, WeighAnswer
+from linkcalc.design.weighing.answer import WeighAnswer
 from linkcalc.design.weighing.bars import bars
+from linkcalc.design.weighing.caveats import caveats
 from linkcalc.design.weighing.corners import corners
-from linkcalc.design.weighing.errors import Judge, Progress, causes, dead_band, drawn_sizes, scatter
+from linkcalc.design.weighing.errors import Judge, Progress, drawn_sizes, judged
 from linkcalc.design.weighing.scale import Scale, beam_of, check_effect, hung_load, one_case, probe
-from linkcalc.design.weighing.setting import Balancing, Setting
+from linkcalc.design.weighing.setting import Balancing
 from linkcalc.design.weighing.tilts import asked_of, tilt
+from linkcalc.design.weighing.verdicts import Wrong, bands_of, gravity
 from linkcalc.faults import fault
 from linkcalc.model.check import check
 from linkcalc.model.mechanism import Mechanism, Units
@@ -27,7 +29,6 @@ from linkcalc.words import nearest
 
 _ROWS = 10
 _MOST = 5000
-_GRAVITY = 1e-3
 _EXACT = 1e-9
 _CORNER = 1 / 3  # of the largest load: the test load of OIML R 76-1 3.6.2 and of NIST Handbook 44 N.1.3
 CAUTION = Caveat(
@@ -85,15 +86,12 @@ def weigh(
     balancing.check(setting)
     tilts = tilt(balancing, setting, pointer)
     zeroed = any(s.use == ZERO for s in balancing.slides)
-    judge = Judge(balancing, setting, zeroed=zeroed)
-    band = dead_band(mechanism, balancing, setting)
-    reasons = tuple(causes(judge, bare, turned=out_of_level, mark_error=mark_error, band=band))
-    limit = None if accuracy is None else accuracy.limit(asked)
     if sizes is None and copies:
         sizes = drawn_sizes(bare, copies, seed) or None
         if sizes is None:
             raise fault("dimensions", "no dimension has a tolerance, so all copies are alike", "give some a 'tol'")
-    spread = None if sizes is None else scatter(judge, bare, sizes, limit, progress)
+    wrong = Wrong(mechanism, bare, balancing, zeroed, sizes, accuracy, out_of_level, mark_error)
+    judge, band, reasons, spread = wrong.found(setting, progress)
     test = greatest * _CORNER if balancing.least < greatest * _CORNER < balancing.most else float(asked[-1])
     at_test = Judge(balancing, balancing.setting(np.array([test])), zeroed=zeroed)
     moved = corners(at_test, bare, tuple(points), test)
@@ -104,16 +102,21 @@ def weigh(
         hung=dict(zip(scale.counterpoises, setting.hung, strict=True)), left=setting.left,
         ratios={h.name: h.ratio for h in balancing.hangers}, zero=balancing.zero, tare_place=balancing.tare_place,
         asked_load=_load(balancing, places), bars=bars(balancing, _step(step, accuracy, asked, balancing)), tilt=tilts,
-        zeroed=zeroed, causes=reasons, dead_band=band, gravity=_gravity(judge, setting), scatter=spread,
+        zeroed=zeroed, causes=reasons, dead_band=band, gravity=gravity(judge, setting), scatter=spread,
         accuracy=accuracy, asked=(), bands=(), corners=moved, caveats=(), cautions=(CAUTION,),
     )  # fmt: skip
-    more: dict[str, object] = {}
     if accuracy is not None:
-        more["bands"] = tuple(_bands(answer, accuracy, greatest))
-        more["asked"] = tuple(asked_of(balancing, accuracy, tilts, greatest))
-    told = tuple(_caveats(answer, tilts, greatest, more.get("asked", ())))  # type: ignore[arg-type]
-
-    return replace(answer, **more, caveats=told)  # type: ignore[arg-type]
+        edges = np.array([b[1] for b in accuracy.bands(greatest) if balancing.least <= b[1] <= balancing.most])
+        known = [(asked, judged(reasons, spread, mechanism.dimensions, asked.size), spread)]
+        if edges.size:
+            _, _, reasons, spread = wrong.found(balancing.setting(edges), None)
+            known.append((edges, judged(reasons, spread, mechanism.dimensions, edges.size), spread))
+        answer = replace(
+            answer, asked=tuple(asked_of(balancing, accuracy, tilts, greatest)),
+            bands=tuple(bands_of(known, accuracy, greatest)),
+            corners=None if moved is None else replace(moved, limit=float(accuracy.limit(test))),
+        )  # fmt: skip
+    return replace(answer, caveats=tuple(caveats(answer, greatest)))
 
 
 def _asked(loads: Sequence[float] | Array | None, balancing: Balancing, greatest: float) -> Array:
@@ -178,54 +181,3 @@ def _load(balancing: Balancing, places: Mapping[str, float] | None) -> float:
             raise fault(("poises", slide.name), f"{show(place, 'length', units)} is off its bar", ends)
         at.append(place)
     return balancing.load(np.array(at), np.array([float(places.get(h.name, 0.0)) for h in balancing.hangers]))
-
-
-def _gravity(judge: Judge, setting: Setting) -> Array:
-    """(n) [kg] error for 0.1 % more gravity: nothing where masses balance masses, and no more than springs and forces
-    make of it where the empty scale is not set to zero again."""
-    if judge.zeroed:
-        return np.zeros(setting.loads.size)
-    scale = judge.balancing.scale
-    terms = scale.terms(setting.loads + judge.balancing.tare)
-    return np.asarray(np.broadcast_to(-_GRAVITY * terms.fixed[:, 0] / terms.load[:, 0], setting.loads.shape))
-
-
-def _bands(answer: WeighAnswer, accuracy: Accuracy, most: float) -> Iterator[Band]:
-    judged = answer.judged
-    for low, high, limit in accuracy.bands(most):
-        inside = (answer.loads > low) | (low == 0.0)
-        inside &= answer.loads <= high * (1 + _EXACT)
-        if not inside.any():
-            yield Band(low, high, limit, float("nan"), float("nan"))
-            continue
-        k = int(np.argmax(np.where(inside, judged, -1.0)))
-        yield Band(low, high, limit, float(judged[k]), float(answer.loads[k]))
-
-
-def _caveats(answer: WeighAnswer, tilts: Tilt, most: float, asked: Sequence[Asked]) -> Iterator[Caveat]:
-    units = answer.mechanism.units
-    if np.any(tilts.steady == 0):
-        text = "it is neutral: it stays where it is put, and does not show what is too much or too little"
-        yield Caveat(answer.beam, f"{text}; lower its centre of mass a little")
-    if np.any(tilts.steady < 0):
-        yield Caveat(answer.beam, f"it is unstable from {show(tilts.unstable, 'mass', units)} on: it falls to its stop")
-    if np.any(answer.left):
-        worst = float(answer.left[np.argmax(np.abs(answer.left))])
-        text = f"with notches and weights alone up to {show(abs(worst), 'mass', units)} stays unbalanced"
-        yield Caveat("poises", f"{text}; a poise that slides freely would take it")
-    if not answer.zeroed and answer.least > _EXACT * most:
-        yield Caveat("poises", f"the least load is {show(answer.least, 'mass', units)}, with everything at nothing")
-    if answer.accuracy is not None:
-        unfit = answer.accuracy.unfit(most)
-        if unfit is not None:
-            n = most / answer.accuracy.interval
-            yield Caveat(answer.accuracy.name, f"{n:.6g} intervals; {unfit[1]:.6g} to {unfit[2]:.6g} are allowed")
-        if answer.accuracy.visible:
-            over = answer.dead_band > answer.accuracy.visible * answer.accuracy.limit(answer.loads)
-            if over.any():
-                first, part = show(float(answer.loads[over].min()), "mass", units), f"{answer.accuracy.visible:g}"
-                yield Caveat(answer.accuracy.name, f"friction hides {part} of the largest error from {first} on")
-    for one in asked:
-        if np.isnan(one.gives):
-            more, at = show(one.extra, "mass", units), show(one.load, "mass", units)
-            yield Caveat(answer.beam, f"for {more} more at {at} it does not come to rest near level")

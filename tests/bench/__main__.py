@@ -14,7 +14,17 @@ for _variable in ("OMP_NUM_THREADS", "OPENBLAS_NUM_THREADS", "MKL_NUM_THREADS"):
 import argparse  # noqa: E402
 import sys  # noqa: E402
 
-from tests.bench import accuracy, chain, friction, many_copies, one_stroke, pin_loads, settling, start_up  # noqa: E402
+from tests.bench import (  # noqa: E402
+    accuracy,
+    chain,
+    friction,
+    many_copies,
+    one_stroke,
+    pin_loads,
+    settling,
+    start_up,
+    weighing,
+)
 
 PARTS = {
     "copies": many_copies.report,
@@ -25,6 +35,7 @@ PARTS = {
     "friction": friction.report,
     "settling": settling.report,
     "pins": pin_loads.report,
+    "weighing": weighing.report,
 }
 
 

@@ -68,7 +68,8 @@ def test_graduations_are_even_and_as_far_apart_as_load_arm_over_poise(mass: floa
 
 
 def test_a_poise_that_is_off_errs_by_its_mass_over_the_load_arm() -> None:
-    """Error = poise mass x shift / load arm. Source: moments about the fulcrum (derived): 1.2 kg, 0.2 mm, 48 mm: 5 g."""
+    """Error = poise mass x shift / load arm. Source: moments about the fulcrum (derived): 1.2 kg, 0.2 mm, 48 mm: 5
+    g."""
     found = weigh(steelyard(load_arm=-48, poise=1.2, most=10), mark_error=0.2e-3)
     (cause,) = found.causes
     assert cause.size[-1] == pytest.approx(0.005, rel=1e-9)
@@ -207,7 +208,8 @@ mass = 4
 
 
 def test_platform_of_matched_levers_passes_the_corner_test() -> None:
-    """Load arm : end arm of the bottom lever as p : q of the beam (50 : 250 = 60 : 300): the place does not matter, and the
+    """Load arm : end arm of the bottom lever as p : q of the beam (50 : 250 = 60 : 300): the place does not matter,
+    and the
     load acts as if all of it hung at p. Source: moments about the two fulcrums (derived); every lever under a platform
     has the same multiple to the beam, common practice."""
     found = weigh(parse(PLATFORM.format(load_arm=50)))
@@ -325,7 +327,8 @@ def test_tolerances_of_class_three_l() -> None:
 
 def test_worked_tolerances_of_a_scale_of_500_pounds() -> None:
     """500 lb x 0.05 lb, class III: 0.15 lb at 150 lb and 0.25 lb at 500 lb, acceptance 0.125 lb. Source: metrology
-    forum, https://elsmar.com/elsmarqualityforum/threads/nist-hdbk-44-table-t-3-class-iii-tolerance-in-divisions-clarification.65983/
+    forum,
+    https://elsmar.com/elsmarqualityforum/threads/nist-hdbk-44-table-t-3-class-iii-tolerance-in-divisions-clarification.65983/
     (maintenance); acceptance from memory."""
     maintenance, acceptance = Accuracy("NIST III", 0.05, in_use=True), Accuracy("NIST III", 0.05)
     assert maintenance.limit(np.array([150.0, 500.0])) == pytest.approx([0.15, 0.25], rel=1e-12)
@@ -336,7 +339,8 @@ def test_worked_tolerances_of_a_scale_of_500_pounds() -> None:
     ("arm", "travel"), [(0.3, 10), (0.31, 13), (0.5, 13), (1.0, 18), (1.2, 23)]
 )  # fmt: skip
 def test_travel_of_a_beam_between_its_stops(arm: float, travel: float) -> None:
-    """10, 13, 18, 23 mm by the distance from fulcrum to stop; 1 d at zero and 2 d at the most take it from the middle to a
+    """10, 13, 18, 23 mm by the distance from fulcrum to stop; 1 d at zero and 2 d at the most take it from the
+    middle to a
     stop. Source: NIST Handbook 44, 2.20 Scales, S.1.5.2 and T.N.6, from memory."""
     judged = accuracy("NIST III", 0.1)
     assert judged.extra(0.0, 100.0, arm) == pytest.approx((0.1, travel / 2e3))
@@ -355,7 +359,8 @@ def test_displacement_that_an_extra_load_must_give(name: str, most: float, way: 
 
 
 def test_intervals_that_a_class_allows() -> None:
-    """OIML III: e 0.1 to 2 g with 100 to 10 000, e from 5 g with 500 to 10 000; Min 20 e. Source: OIML R 76-1 Table 3."""
+    """OIML III: e 0.1 to 2 g with 100 to 10 000, e from 5 g with 500 to 10 000; Min 20 e. Source: OIML R 76-1 Table
+    3."""
     assert accuracy("OIML III", 0.005).unfit(0.005 * 400) == ("intervals", 500, 10_000)
     assert accuracy("OIML III", 0.005).unfit(0.005 * 500) is None
     assert accuracy("OIML III", 0.002).unfit(0.002 * 400) is None

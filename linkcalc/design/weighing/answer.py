@@ -10,7 +10,7 @@ import numpy as np
 from linkcalc.design.answer import Caveat
 from linkcalc.design.weighing.accuracy import Accuracy
 from linkcalc.design.weighing.corners import Corners
-from linkcalc.design.weighing.errors import Cause, Scatter
+from linkcalc.design.weighing.errors import Cause, Scatter, largest, likely
 from linkcalc.model.mechanism import Mechanism
 from linkcalc.parts.pose import Array, Codes
 
@@ -97,7 +97,8 @@ class Band:
     """A range of loads of one limit of error.
 
     low, high  [kg] loads; limit [kg]
-    error      [kg] the worst found there; at: [kg] the load it is found at; nan: no load was asked there
+    error      [kg] the worst found there; at: [kg] the load it is found at; nan: the scale does not weigh there
+    within     part of the copies within the limit; nan without copies
     """
 
     low: float
@@ -105,6 +106,7 @@ class Band:
     limit: float
     error: float
     at: float
+    within: float = float("nan")
 
     @property
     def holds(self) -> bool:
@@ -160,28 +162,14 @@ class WeighAnswer:
     @property
     def likely(self) -> Array:
         """(n) [kg] root of the sum of squares of all causes, friction added plainly"""
-        rubs = [c.size for c in self.causes if c.name == "friction"]
-        others = [c.size**2 for c in self.causes if c.name != "friction"]
-        none = np.zeros(self.loads.size)
-        return np.asarray(np.sqrt(sum(others, start=none)) + sum(rubs, start=none))
+        return likely(self.causes, self.loads.size)
 
     @property
     def largest(self) -> Array:
         """(n) [kg] all causes at their worst together"""
-        return np.asarray(sum((c.size for c in self.causes), start=np.zeros(self.loads.size)))
-
-    @property
-    def judged(self) -> Array:
-        """(n) [kg] the error that is held against the class: that of the copies and what they do not count; without
-        copies the likely one"""
-        if self.scatter is None:
-            return self.likely
-        counted = set(self.mechanism.dimensions)
-        return np.asarray(
-            self.scatter.size
-            + sum((c.size for c in self.causes if c.name not in counted), start=np.zeros(self.loads.size))
-        )
+        return largest(self.causes, self.loads.size)
 
     @property
     def holds(self) -> bool:
-        return all(b.holds for b in self.bands) and all(a.holds for a in self.asked)
+        moved = self.corners is None or self.corners.holds
+        return moved and all(b.holds for b in self.bands) and all(a.holds for a in self.asked)

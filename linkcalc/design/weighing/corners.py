@@ -12,7 +12,7 @@ import numpy as np
 
 from linkcalc.design.weighing.errors import Judge
 from linkcalc.design.weighing.scale import Scale
-from linkcalc.model.dimensions import evaluate
+from linkcalc.model.dimensions import evaluate, tolerances
 from linkcalc.model.functions import Quantity
 from linkcalc.model.mechanism import GROUND, Mechanism
 from linkcalc.model.units import KINDS
@@ -23,6 +23,7 @@ _STILL = 1e-9  # turn of the platform over that of the beam: it does not turn
 _ROUNDS = 40
 _WIDEST = 0.5  # of its size: how far a cure is looked for
 _CLOSE = 1e-12
+_MATTERS = 1e-6  # of the strongest: a dimension that the turn hangs on
 
 
 @dataclass(frozen=True)
@@ -47,8 +48,9 @@ class Support:
 class Cure:
     """A dimension by which the place of the load can be made to matter nothing.
 
-    size   [SI] as it is; slope [kg/SI] change of the worst corner's error with it
+    size   [SI] as it is; slope [kg/SI] change of the error at the farthest corner with it
     wanted [SI] size at which it does not matter; nan if none is near
+    by_tolerance [kg] error at that corner by its tolerance; nan without one
     """
 
     name: str
@@ -56,11 +58,13 @@ class Cure:
     size: float
     slope: float
     wanted: float
+    by_tolerance: float
 
 
 @dataclass(frozen=True)
 class Corners:
-    """load [kg]; member: what carries it; turn: [-] of it for each radian of the beam."""
+    """load [kg]; member: what carries it; turn: [-] of it for each radian of the beam; limit [kg] of the class, nan
+    without one."""
 
     load: float
     member: str
@@ -68,10 +72,16 @@ class Corners:
     corners: tuple[Corner, ...]
     supports: tuple[Support, ...]
     cures: tuple[Cure, ...]
+    limit: float = float("nan")
 
     @property
     def worst(self) -> Corner:
         return max(self.corners, key=lambda c: abs(c.error))
+
+    @property
+    def holds(self) -> bool:
+        """True unless the class does not allow the worst error."""
+        return not abs(self.worst.error) > self.limit * (1 + 1e-9)
 
     @property
     def free(self) -> bool:
@@ -102,8 +112,7 @@ def corners(judge: Judge, bare: Mechanism, points: tuple[str, ...], load: float)
         multiple = float(scale.terms(np.array([load])).load[0, 0]) / base
         found.append(Corner(point, multiple, float(judge.errors(scale)[0, 0])))
     turn = _turn(nominal, own, load)
-    worst = max(found, key=lambda c: abs(c.error))
-    cures = () if abs(turn[0]) <= _STILL or nominal.settles else _cures(judge, bare, own, worst, turn[0], load)
+    cures = () if nominal.settles else _cures(judge, bare, own, _lever(nominal, points, here.mass_at, load, base), load)
     return Corners(load, own, float(turn[0]), tuple(found), tuple(_supports(nominal, own, load, base)), cures)
 
 
@@ -136,7 +145,20 @@ def _supports(scale: Scale, member: str, load: float, base: float) -> list[Suppo
     return out
 
 
-def _cures(judge: Judge, bare: Mechanism, member: str, worst: Corner, turn: float, load: float) -> tuple[Cure, ...]:
+def _lever(scale: Scale, points: tuple[str, ...], own: str, load: float, base: float) -> float:
+    """[kg] error at the farthest of the points for a platform that turns as much as the beam."""
+    down = [float(np.ravel(d)[0]) for d in scale.ready.pushing.down]
+
+    def along(point: str) -> float:
+        # along the level, to the right of gravity: what a turn carries up
+        x, y = (float(np.ravel(v)[0]) for v in scale.drawing.point(point))
+        return x * down[1] - y * down[0]
+
+    far = max((along(p) - along(own) for p in points), key=abs)
+    return load * far * float(np.max(scale.ready.pushing.field)) / base
+
+
+def _cures(judge: Judge, bare: Mechanism, member: str, lever: float, load: float) -> tuple[Cure, ...]:
     """For each length the size at which the platform would not turn, by the secant rule on all of them at once."""
     nominal = judge.balancing.scale
     sizes = evaluate(bare)
@@ -150,7 +172,7 @@ def _cures(judge: Judge, bare: Mechanism, member: str, worst: Corner, turn: floa
         copies = Scale(bare, nominal.beam_name, {n: v.reshape(1, -1, 1) for n, v in varied.items()}, like=nominal)
         return np.broadcast_to(_turn(copies, member, load), own.shape)
 
-    before, last = np.full(own.shape, turn), own
+    before, last = turns(own), own
     here = own * (1 + 1e-4)
     slope: Array | None = None
     with np.errstate(all="ignore"):
@@ -165,12 +187,13 @@ def _cures(judge: Judge, bare: Mechanism, member: str, worst: Corner, turn: floa
                 break
         left = np.abs(turns(here))
     assert slope is not None
-    matters = np.abs(slope * own) > 1e-6 * max(abs(turn), 1e-12)
-    wanted = np.where(matters & (left <= 1e-6 * abs(turn)), here, np.nan)
-    # the error grows with the turn
-    each = worst.error / turn * slope
+    strength = np.abs(slope * own)
+    matters = strength > _MATTERS * max(float(strength.max()), _STILL)
+    wanted = np.where(left <= _STILL, here, np.nan)
+    tol = {n: max(abs(t.lower), abs(t.upper)) for n, t in tolerances(bare).items()}
     return tuple(
-        Cure(n, "length", float(own[k]), float(each[k]), float(wanted[k]))
+        Cure(n, "length", float(own[k]), float(lever * slope[k]), float(wanted[k]),
+             abs(float(lever * slope[k])) * tol.get(n, float("nan")))
         for k, n in enumerate(names) if matters[k]
     )  # fmt: skip
 

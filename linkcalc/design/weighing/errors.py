@@ -7,7 +7,7 @@ the marks: error = r (B/p of the drawing) / (B of the copy), B and p being momen
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator, Mapping, Sequence
+from collections.abc import Callable, Collection, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -21,6 +21,7 @@ from linkcalc.parts.pose import Array
 
 BLOCK = 8192
 """Copies that are laid out together."""
+FRICTION = "friction"
 _TAIL = 0.00135  # part of the copies beyond each bound: three standard deviations of a normal scatter
 Progress = Callable[[int, int], None]
 
@@ -59,6 +60,26 @@ class Scatter:
     @property
     def size(self) -> Array:
         return np.asarray(np.maximum(np.abs(self.low), np.abs(self.high)))
+
+
+def likely(causes: Sequence[Cause], n: int) -> Array:
+    """(n) [kg] root of the sum of squares of all causes, friction added plainly."""
+    squares = sum((c.size**2 for c in causes if c.name != FRICTION), start=np.zeros(n))
+    return np.asarray(np.sqrt(squares) + sum((c.size for c in causes if c.name == FRICTION), start=np.zeros(n)))
+
+
+def largest(causes: Sequence[Cause], n: int) -> Array:
+    """(n) [kg] all causes at their worst together."""
+    return np.asarray(sum((c.size for c in causes), start=np.zeros(n)))
+
+
+def judged(causes: Sequence[Cause], scatter: Scatter | None, dimensions: Collection[str], n: int) -> Array:
+    """(n) [kg] the error that is held against a class: the bounds of the copies and what these do not count; without
+    copies the likely one."""
+    if scatter is None:
+        return likely(causes, n)
+    others = sum((c.size for c in causes if c.name not in dimensions), start=np.zeros(n))
+    return np.asarray(scatter.size + others)
 
 
 class Judge:
@@ -154,7 +175,7 @@ def causes(judge: Judge, bare: Mechanism, *, turned: float, mark_error: float, b
             way = np.where(judge.setting.places[k] == slide.start, 0.0, slide.worth * mark_error)
             yield Cause(f"marks of {slide.name}", "length", -mark_error, mark_error, -way, way)
     if np.any(band > 0):
-        yield Cause("friction", "", np.nan, np.nan, -band, band)
+        yield Cause(FRICTION, "", np.nan, np.nan, -band, band)
 
 
 def dead_band(mechanism: Mechanism, balancing: Balancing, setting: Setting) -> Array:
@@ -195,8 +216,10 @@ def scatter(
     count, n = next(iter(sizes.values())).size, judge.setting.loads.size
     kept: list[tuple[Array, Array]] = []
     whole: list[Array] = []
-    for first in range(0, count, BLOCK):
-        part = {name: v[first : first + BLOCK].reshape(1, -1, 1) for name, v in sizes.items()}
+    # what settles does so under every load by itself
+    block = max(1, BLOCK // n) if nominal.settles else BLOCK
+    for first in range(0, count, block):
+        part = {name: v[first : first + block].reshape(1, -1, 1) for name, v in sizes.items()}
         copies = Scale(bare, beam, part, like=nominal)
         width = next(iter(part.values())).size
         if copies.settles:
@@ -205,7 +228,7 @@ def scatter(
             rows, worth = judge.coefficients(copies)
             kept.append((np.broadcast_to(rows, (rows.shape[0], width)), np.broadcast_to(worth, width)))
         if progress is not None:
-            progress(min(first + BLOCK, count), count)
+            progress(min(first + block, count), count)
     rows = np.concatenate([k[0] for k in kept], 1) if kept else np.zeros((0, 0))
     worth = np.concatenate([k[1] for k in kept]) if kept else np.zeros(0)
     step = max(1, 4_000_000 // count)

@@ -149,7 +149,7 @@ class Scale:
             raise fault(("members", self.beam_name), what, "let the poises slide on the member that tilts") from None
 
     def terms(self, loads: Array) -> Terms:
-        """What everything does to the beam with some loads [kg] on, a case each; one case where the pose is the same."""
+        """What everything does to the beam with some loads [kg] on, a case each; one case if the pose is the same."""
         if self._known is None or self.settles:
             self._known = self._terms(loads if self.settles else np.zeros(1))
         return self._known

@@ -93,6 +93,8 @@ def _cornered(answer: WeighAnswer) -> Iterator[Block]:
     assert found is not None
     if found.free:
         yield Note(f"{found.member} does not turn as the beam tilts: the place of the load does not matter.")
+        if found.cures:
+            yield cure_table(answer)
         return
     multiples = ", ".join(f"{s.joint} {s.multiple:.6g}" for s in found.supports)
     text = f"{found.member} turns {found.turn:.4g} times as much as the beam, so the place of the load matters. "

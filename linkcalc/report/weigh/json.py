@@ -86,6 +86,7 @@ def weigh_tree(answer: WeighAnswer) -> Tree:
             "bands": [
                 {"over": one(b.low, "mass"), "up to": one(b.high, "mass"), "limit": one(b.limit, "mass"),
                  "error": one(b.error, "mass"), "at": one(b.at, "mass"),
+                 "within": b.within if math.isfinite(b.within) else None,
                  "holds": None if math.isnan(b.error) else b.holds}
                 for b in answer.bands
             ],
@@ -97,13 +98,14 @@ def weigh_tree(answer: WeighAnswer) -> Tree:
         },
         "corners": corners and {
             "load": one(corners.load, "mass"), "member": corners.member, "turn": corners.turn, "free": corners.free,
+            "limit": one(corners.limit, "mass"), "holds": corners.holds,
             "points": [
                 {"point": c.point, "multiple": c.multiple, "error": one(c.error, "mass")} for c in corners.corners
             ],
             "supports": [{"joint": s.joint, "on": s.on, "multiple": s.multiple} for s in corners.supports],
             "dimensions": [
                 {"dimension": c.name, "size": one(c.size, c.kind), "slope": one(c.slope, "mass", c.kind),
-                 "wanted": one(c.wanted, c.kind)}
+                 "wanted": one(c.wanted, c.kind), "by tolerance": one(c.by_tolerance, "mass")}
                 for c in corners.cures
             ],
         },

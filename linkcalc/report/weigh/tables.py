@@ -176,8 +176,7 @@ def band_table(answer: WeighAnswer) -> Table:
         told = [edge.one(v, "mass") for v in (b.low, b.high, b.limit, b.error, b.at)]
         share: tuple[Cell, ...] = ()
         if answer.scatter is not None:
-            inside = (answer.loads <= b.high * (1 + 1e-9)) & ((answer.loads > b.low) | (b.low == 0))
-            share = (float(100 * answer.scatter.within[inside].min()) if inside.any() else None,)
+            share = (100 * b.within,)
         rows.append((*told, *share, "not asked" if np.isnan(b.error) else "pass" if b.holds else "FAIL"))
     accuracy = answer.accuracy
     assert accuracy is not None
@@ -206,14 +205,18 @@ def corner_table(answer: WeighAnswer) -> Table:
     """The test load at each point."""
     edge, found = MassEdge(answer), answer.corners
     assert found is not None
+    unit, limited = edge.unit("mass"), answer.accuracy is not None
     columns = (
-        Column("load at"),
-        Column("multiple"),
-        Column("error", edge.unit("mass"), zero=_NOISE * edge.one(found.load, "mass")),
-    )
-    rows = tuple((c.point, c.multiple, edge.one(c.error, "mass")) for c in found.corners)
-    title = f"Corner test with {edge.text(found.load, 'mass')}"
-    return Table((columns[0], Column("multiple", digits=6), columns[2]), rows, title)
+        Column("load at"), Column("multiple", digits=6),
+        Column("error", unit, zero=_NOISE * edge.one(found.load, "mass")),
+        *((Column("largest error allowed", unit), Column("verdict")) if limited else ()),
+    )  # fmt: skip
+    rows = []
+    for c in found.corners:
+        verdict = "pass" if abs(c.error) <= found.limit * (1 + 1e-9) else "FAIL"
+        judged: tuple[Cell, ...] = (edge.one(found.limit, "mass"), verdict) if limited else ()
+        rows.append((c.point, c.multiple, edge.one(c.error, "mass"), *judged))
+    return Table(columns, tuple(rows), f"Corner test with {edge.text(found.load, 'mass')}")
 
 
 def cure_table(answer: WeighAnswer) -> Table:
@@ -224,9 +227,16 @@ def cure_table(answer: WeighAnswer) -> Table:
     columns = (
         Column("dimension"), Column("size", length, 6), Column("error a unit of it", edge.unit("mass", "length")),
         Column("size at which the place does not matter", length, 6),
+        Column("error by its tolerance", edge.unit("mass")),
     )  # fmt: skip
     rows = tuple(
-        (c.name, edge.one(c.size, "length"), edge.one(c.slope, "mass", "length"), edge.one(c.wanted, "length"))
+        (
+            c.name,
+            edge.one(c.size, "length"),
+            edge.one(c.slope, "mass", "length"),
+            edge.one(c.wanted, "length"),
+            edge.one(c.by_tolerance, "mass"),
+        )
         for c in sorted(found.cures, key=lambda c: -abs(c.slope))
     )
-    return Table(columns, rows, "What the corner error hangs on")
+    return Table(columns, rows, "What the error at the farthest corner hangs on")

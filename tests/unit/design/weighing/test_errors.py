@@ -51,7 +51,8 @@ def test_errors_of_a_scale_with_a_free_pan_are_those_of_the_copy_weighed_by_itse
 
 
 def test_copies_scatter_as_their_tolerance_says() -> None:
-    """Normal, tolerance 3 deviations: error of 20 kg x 0.05/50 at three deviations. 20,000 copies: 2 % is 4 sigma of the
+    """Normal, tolerance 3 deviations: error of 20 kg x 0.05/50 at three deviations. 20,000 copies: 2 % is 4 sigma of
+    the
     deviation's own scatter."""
     found = weigh(beam(), loads=[20], copies=20_000, seed=3)
     assert found.scatter is not None
@@ -74,7 +75,8 @@ def test_sizes_are_drawn_within_their_tolerances(distribution: str) -> None:
 
 
 def test_out_of_level_moves_what_lies_off_the_line_of_the_edges() -> None:
-    """Turned by b every arm u at height v becomes u cos b + v sin b. Hook 0.5 mm and centre 4 mm below the edge, poise on
+    """Turned by b every arm u at height v becomes u cos b + v sin b. Hook 0.5 mm and centre 4 mm below the edge,
+    poise on
     the line: r/g = load (50 c - 0.5 s) ... solved for the poise's place."""
     tilt = 0.01
     (_, cause) = weigh(beam(), loads=[8, 20], out_of_level=tilt).causes
@@ -99,7 +101,8 @@ def test_friction_of_all_edges_counts() -> None:
     mechanism = platform()
     plain = weigh(mechanism, loads=[200]).dead_band
     rubbing = replace(mechanism, friction=replace(mechanism.friction, pins=0.1, diameter=0.2))
-    # mu r/sqrt(1 + mu^2) at every pin; against the beam the long lever turns by 60/1200, the short one by 600/500 of that;
+    # mu r/sqrt(1 + mu^2) at every pin; against the beam the long lever turns by 60/1200, the short one by 600/500 of
+    # that;
     # platform, rod and shackle do not turn, and the platform stands on the short lever by a slot
     radius = 0.1 * 0.1 / math.hypot(1, 0.1)
     found = weigh(rubbing, loads=[200])
@@ -115,7 +118,8 @@ def test_friction_of_all_edges_counts() -> None:
 
 
 def test_the_verdict_tells_the_range_that_fails() -> None:
-    """A thousandth of the load against 0.5 e up to 500 e, 1 e up to 2000 e: with e = 20 g, 0.5 e is met at 10 kg exactly,
+    """A thousandth of the load against 0.5 e up to 500 e, 1 e up to 2000 e: with e = 20 g, 0.5 e is met at 10 kg
+    exactly,
     and 15 kg is off by 15 g of 20 g; with e = 10 g, 0.5 e goes to 5 kg only, and 1 e to 20 kg."""
     wide = weigh(beam(), loads=[5, 10, 15, 20], accuracy=accuracy("OIML III", 0.02))
     assert [b.holds for b in wide.bands] == [True, True] and wide.holds

@@ -14,7 +14,8 @@ from tests.unit.design.weighing.models import PAN, beam, changed, hanging, platf
 
 
 def effort_with(mechanism: Mechanism, load: float, places: dict[str, float], hung: dict[str, float]) -> float:
-    """[N m] what must hold the beam as drawn with everything put where ``weigh`` says: by a stroke, not by ``weigh``."""
+    """[N m] what must hold the beam as drawn with everything put where ``weigh`` says: by a stroke, not by
+    ``weigh``."""
     poises: dict[str, Poise] = {
         n: replace(p, at=f"{places[n]!r} m") for n, p in mechanism.poises.items()
     }  # fmt: skip

@@ -29,7 +29,8 @@ ZERO = '[poises.ball]\nalong = ["F", "end"]\nmass = 0.1\nto = 80\nuse = "zero"\n
         ((('along = ["F", "end"]', 'along = ["end", "F"]'),), None,
          r"poises\.rider: it slides the wrong way: further on it balances less load, not more; swap 'from' and 'to'"),
         (((RIDER, ZERO + RIDER),), None,
-         r"poises\.ball: to balance the empty scale it would have to stand at -1000 mm, and it goes from 0 mm to 80 mm; "
+         r"poises\.ball: to balance the empty scale it would have to stand at -1000 mm, and it goes from 0 mm "
+          r"to 80 mm; "
          r"move it"),
         ((("from = 20", "from = 20\nnotches = 700"),), None,
          r"poises\.rider: 1 notch at 700 mm on a way of 580 mm; 2 to 5000 are wanted"),
@@ -86,17 +87,20 @@ def test_too_many_weights_and_weights_without_end() -> None:
     ("old", "new", "says"),
     [
         ('along = ["F", "end"]', 'along = ["F", "F"]', r"model:\d+: poises\.rider\.along: F to F is no line; two"),
-        ('along = ["F", "end"]', 'along = ["F", "edn"]', r"poises\.rider\.along: unknown point 'edn'; did you mean 'end'"),
+        ('along = ["F", "end"]', 'along = ["F", "edn"]', r"poises\.rider\.along: unknown point 'edn'; did you "
+         r"mean 'end'"),
         ("mass = 2\n", "mass = 0\n", r"poises\.rider\.mass: 0 kg cannot stand here; more than nothing is wanted"),
         ("mass = 2\n", "", r"poises\.rider: 'mass' is missing"),
-        ("from = 20", "from = 620", r"poises\.rider\.from: 620 mm is off its bar F to end; from 0 mm to 600 mm is wanted"),
+        ("from = 20", "from = 620", r"poises\.rider\.from: 620 mm is off its bar F to end; from 0 mm to 600 mm "
+         r"is wanted"),
         ("from = 20", "to = 601", r"poises\.rider\.to: 601 mm is off its bar F to end"),
         ("from = 20", "at = 700", r"poises\.rider\.at: 700 mm is off its bar F to end"),
         ("from = 20", "from = 600", r"poises\.rider\.to: it cannot slide: 'from' and 'to' are one place"),
         ("from = 20", "from = 20\nnotches = [10, 50]", r"poises\.rider\.notches: 10 mm is off the way of the poise"),
         ("from = 20", "notches = []", r"poises\.rider\.notches: an empty list; a length is wanted, or a list of some"),
         ("from = 20", "notches = 0", r"poises\.rider\.notches: 0 mm cannot stand here; more than nothing is wanted"),
-        ("from = 20", "notches = 20\nnotch_load = 1", r"poises\.rider\.notch_load: 'notches' is given too; one of the two"),
+        ("from = 20", "notches = 20\nnotch_load = 1", r"poises\.rider\.notch_load: 'notches' is given too; one "
+         r"of the two"),
         ("from = 20", 'use = "net"', r"poises\.rider\.use: 'net' is not known here; one of 'load', 'tare', 'zero'"),
         ("from = 20", 'use = "zero"\nnotches = 5', r"poises\.rider: what sets the empty scale to zero has no notches"),
         ("from = 20", 'on = "bean"', r"poises\.rider\.on: unknown member 'bean'; did you mean 'beam'"),
