@@ -12,7 +12,7 @@ import pytest
 from tests.docs.blocks import ROOT, Block, blocks, pages
 from tests.endtoend.shell import shell
 
-_WRITTEN = re.compile(r"(?:-o|--output|--plot|--roses|--stacks|--csv|--json)[ =](\S+)")
+_WRITTEN = re.compile(r"(?:-o|--output|--plot|--roses|--stacks|--bars|--marks|--csv|--json)[ =](\S+)")
 _LINK = re.compile(r"\]\(([^)\s]+)\)")
 
 PAGES = [pytest.param(page, id=page.name) for page in pages()]
