@@ -13,7 +13,6 @@ from linkcalc.cli.files import (
     FAILED,
     STDOUT,
     CaseName,
-    CsvFile,
     JsonFile,
     ModelFile,
     check_outputs,
@@ -54,6 +53,9 @@ Corner = Annotated[
     list[str] | None,
     typer.Option("--corner", help="Point where the load is put in the corner test. May be repeated.", metavar="POINT"),
 ]
+Table = Annotated[
+    str | None, typer.Option("--csv", help="Write the table, all figures, as CSV; - prints it.", metavar="FILE")
+]
 MarksFile = Annotated[
     str | None,
     typer.Option("--marks", help="Write lines and notches with coordinates as CSV; - prints.", metavar="FILE"),
@@ -86,7 +88,7 @@ def weigh(
     pointer: Pointer = None,
     corner: Corner = None,
     json: JsonFile = None,
-    csv: CsvFile = None,
+    csv: Table = None,
     marks: MarksFile = None,
     bars: Bars = None,
     plot: Plots = None,

@@ -182,12 +182,13 @@ def dead_band(mechanism: Mechanism, balancing: Balancing, setting: Setting) -> A
     """(n) [kg] load that may be added or taken away before the beam moves, by friction of the edges."""
     beam = balancing.scale.beam_name
     rubbing = Scale(probe(mechanism, beam, rubs=True), beam)
-    if not rubbing.ready.chain.rubbing:
+    if not rubbing.ready.pushing.rubbing:
         return np.zeros(setting.loads.size)
     loads = setting.loads + balancing.tare - setting.left
     pushing = rubbing.pushing(loads, setting.at(balancing.scale), both_ways=True)
     # the settled pose is that without friction
-    closed = rubbing.closed(balancing.scale.pushing(loads, {})) if rubbing.settles else rubbing.closed(pushing)
+    still = balancing.scale.pushing(np.concatenate([loads, loads]), {})
+    closed = balancing.scale.closed(still) if rubbing.settles else rubbing.closed(pushing)
     held = holding(rubbing.ready, closed, pushing)[:, 0, 0].reshape(2, -1)
     p = np.broadcast_to(balancing.scale.terms(loads).load[:, 0], loads.shape)
     return np.asarray(np.abs(held[0] - held[1]) / 2 / np.abs(p))

@@ -137,7 +137,7 @@ class Scale:
         hung = Acting(cast("Pusher", replace(own, size=1.0)), loads.reshape(-1, 1, 1))
         return replace(
             self.ready.pushing, cases=tuple(map(str, range(loads.size))), load=(hung,), rest=(*self._rest, *extra),
-            sense=sense, effort=(),
+            sense=sense, effort=(), rubbing=both_ways,
         )  # fmt: skip
 
     def closed(self, pushing: Pushing) -> Closed:

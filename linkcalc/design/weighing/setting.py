@@ -162,10 +162,11 @@ class Balancing:
         """The item that ends too soon, what is wrong, and how much more of it would do."""
         main = max((s for s in self.slides if s.use == LOAD), key=lambda s: s.span, default=None)
         more = top - self.most
-        if main is None:
-            hanger = self.hangers[0]
+        hanger = max(self.hangers, key=lambda h: h.ratio * h.most, default=None)
+        if hanger is not None and (main is None or hanger.ratio * hanger.most > main.span):
             cure = f"{self._mass(hanger.most + more / hanger.ratio)} on {hanger.name} would do"
             return ("counterpoises", hanger.name), what, cure
+        assert main is not None
         place = main.start + main.way * (main.length + more / main.worth)
         mass = float(np.ravel(self.scale.drawing.value(self.scale.poises[main.name].mass, "mass"))[0])
         heavier = self._mass(mass * (1 + more / main.span))

@@ -117,6 +117,35 @@ def test_friction_of_all_edges_counts() -> None:
     assert found.dead_band[0] == pytest.approx(radius * turns / 6, rel=1e-3)
 
 
+def test_friction_with_a_free_pan() -> None:
+    """Edge of the beam: load, pan, beam and poise on it, its whole turn; edge of the pan: the pan hangs straight, so
+    the beam turns against it as much. 0.02 mm, load arm 100 mm."""
+    rubbing = changed(PAN, ("[load]", "[pins]\nF.friction_radius = 0.02\nleft.friction_radius = 0.02\n[load]"))
+    found = weigh(parse(rubbing), loads=[0, 5])
+    wanted = [((load + 0.5 + 2 + 2) + (load + 0.5)) * 0.02 / 100 for load in (0, 5)]
+    assert found.dead_band == pytest.approx(wanted, rel=1e-6)
+    assert found.places["rider"] == pytest.approx(weigh(parse(PAN), loads=[0, 5]).places["rider"])
+
+
+def test_progress_is_told_to_the_end() -> None:
+    told: list[tuple[int, int]] = []
+    weigh(beam(), loads=[5], copies=20_000, progress=lambda now, whole: told.append((now, whole)))
+    assert [now for now, _ in told] == [8192, 16384, 20_000] and {whole for _, whole in told} == {20_000}
+
+
+def test_knife_edges_off_their_line_show_when_out_of_level() -> None:
+    """A hook 0.3 mm lower puts load x 0.3 mm x sin(tilt) on the beam, over 50 mm of load arm."""
+    text = ("short_arm = { size = 50, tol = 0.05 }", "short_arm = 50\nedge = { size = 0.5, tol = 0.3 }")
+    lower = ('"-short_arm", -0.5', '"-short_arm", "-edge"')
+    (level_cause,) = weigh(beam(text, lower), loads=[10]).causes
+    assert level_cause.size == pytest.approx(0, abs=1e-12)
+    askew = beam(text, lower, ("[load]", "[gravity]\ndirection = -89\n[load]"))
+    (cause,) = weigh(askew, loads=[10]).causes
+    assert cause.size[0] == pytest.approx(
+        10 * 0.3 * math.sin(math.radians(1)) / (50 * math.cos(math.radians(1))), rel=0.02
+    )
+
+
 def test_the_verdict_tells_the_range_that_fails() -> None:
     """A thousandth of the load against 0.5 e up to 500 e, 1 e up to 2000 e: with e = 20 g, 0.5 e is met at 10 kg
     exactly,

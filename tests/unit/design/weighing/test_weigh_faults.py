@@ -75,6 +75,8 @@ def test_too_many_weights_and_weights_without_end() -> None:
 
     scale = hanging()
     hanger = scale.counterpoises["hanger"]
+    with pytest.raises(Faults, match=r"70 kg is over the capacity of 60 kg .*; 6 kg on hanger would do"):
+        weigh(scale, loads=[70])
     with pytest.raises(Faults, match=r"counterpoises\.hanger: weights in steps of 1 kg without an end"):
         weigh(replace(scale, counterpoises={"hanger": replace(hanger, weights=1)}))
     with pytest.raises(Faults, match=r"counterpoises\.hanger\.weights: 15 weights; up to 14 are wanted"):
