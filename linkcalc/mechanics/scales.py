@@ -86,7 +86,8 @@ def tilting(ready: Ready, closed: Closed, pushing: Pushing, beam: int, loads: Se
     loads    pushers whose tilt is asked
     """
     loose = Loose(ready.chain.moving, ready.chain.joints, None, ready.chain.size)
-    places = loose.places(closed.at)
+    # joints that hold more than needed leave no coordinate that would tell the tilt
+    places = loose.places(closed.at) if loose.count > 0 else None
     if places is None:
         return None
     work = Work(loose, places, replace(pushing, effort=()), None)

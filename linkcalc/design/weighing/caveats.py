@@ -27,6 +27,8 @@ def caveats(answer: WeighAnswer, most: float) -> Iterator[Caveat]:
         yield Caveat("poises", f"{text}; a poise that slides freely would take it")
     if not answer.zeroed and answer.least > _EXACT * most:
         yield Caveat("poises", f"the least load is {show(answer.least, 'mass', units)}, with everything at nothing")
+    if answer.scatter is not None and answer.scatter.failed:
+        yield Caveat("copies", f"{answer.scatter.failed} of {answer.scatter.copies} cannot be drawn, and are left out")
     if answer.accuracy is not None:
         unfit = answer.accuracy.unfit(most)
         if unfit is not None:

@@ -14,6 +14,7 @@ import numpy as np
 
 from linkcalc.design.weighing.scale import Scale, Terms, probe
 from linkcalc.design.weighing.setting import Balancing, Setting
+from linkcalc.faults import fault
 from linkcalc.mechanics.scales import holding
 from linkcalc.model.dimensions import evaluate, tolerances
 from linkcalc.model.mechanism import Mechanism
@@ -47,10 +48,12 @@ class Cause:
 class Scatter:
     """Errors of many copies, (n) [kg]: mean, standard deviation, and the bounds between which 99.73 % lie.
 
+    failed  copies that cannot be drawn or do not weigh; they are counted in nothing else
     within  (n) part of the copies within the limits of the class; nan without one
     """
 
     copies: int
+    failed: int
     mean: Array
     deviation: Array
     low: Array
@@ -232,13 +235,16 @@ def scatter(
             progress(min(first + block, count), count)
     rows = np.concatenate([k[0] for k in kept], 1) if kept else np.zeros((0, 0))
     worth = np.concatenate([k[1] for k in kept]) if kept else np.zeros(0)
+    sound = np.isfinite(worth) & np.isfinite(rows).all(axis=0) if kept else np.isfinite(np.hstack(whole)).all(axis=0)
+    if not sound.any():
+        raise fault("dimensions", "none of the copies can be drawn and weighs", "give smaller tolerances")
     step = max(1, 4_000_000 // count)
     told: list[Sequence[Array]] = []
     for start in range(0, n, step):
         pick = slice(start, start + step)
         errors = judge.weighed(rows, worth, pick) if kept else np.concatenate([w[pick] for w in whole], 1)
-        told.append(_told(errors, None if limit is None else limit[pick]))
-    return Scatter(count, *(np.concatenate(column) for column in zip(*told, strict=True)))
+        told.append(_told(errors if sound.all() else errors[:, sound], None if limit is None else limit[pick]))
+    return Scatter(count, int(count - sound.sum()), *(np.concatenate(column) for column in zip(*told, strict=True)))
 
 
 def _told(errors: Array, limit: Array | None) -> Sequence[Array]:

@@ -25,7 +25,11 @@ def tilt(balancing: Balancing, setting: Setting, pointer: str | None) -> Tilt:
     found = tilting(scale.ready, closed, pushing, scale.beam, pushing.load)
     n = setting.loads.size
     if found is None:
-        raise fault(("members", scale.beam_name), "the drawn pose is a special one", "draw the scale a little off it")
+        raise fault(
+            ("members", scale.beam_name),
+            "its tilt cannot be told: joints hold more than needed, or the drawn pose is a special one",
+            "leave a joint out, or draw the scale a little off that pose",
+        )
     stiffness, steady = found.stiffness[:, 0, 0], found.steady[:, 0, 0]
     if np.all(steady < 0):
         units = scale.mechanism.units

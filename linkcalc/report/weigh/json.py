@@ -74,7 +74,7 @@ def weigh_tree(answer: WeighAnswer) -> Tree:
             "likely": many(answer.likely, "mass"), "largest": many(answer.largest, "mass"),
             "gravity": many(answer.gravity, "mass"),
             "copies": scatter and {
-                "count": scatter.copies, "mean": many(scatter.mean, "mass"),
+                "count": scatter.copies, "failed": scatter.failed, "mean": many(scatter.mean, "mass"),
                 "deviation": many(scatter.deviation, "mass"), "low": many(scatter.low, "mass"),
                 "high": many(scatter.high, "mass"),
                 "within": np.where(np.isfinite(scatter.within), scatter.within, None).tolist(),  # type: ignore[call-overload]

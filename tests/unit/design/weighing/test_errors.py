@@ -8,7 +8,7 @@ from dataclasses import replace
 import numpy as np
 import pytest
 
-from linkcalc import parse, weigh
+from linkcalc import Faults, parse, weigh
 from linkcalc.design.weighing.accuracy import accuracy
 from linkcalc.design.weighing.errors import drawn_sizes
 from linkcalc.model.mechanism import Mechanism
@@ -125,6 +125,18 @@ def test_friction_with_a_free_pan() -> None:
     wanted = [((load + 0.5 + 2 + 2) + (load + 0.5)) * 0.02 / 100 for load in (0, 5)]
     assert found.dead_band == pytest.approx(wanted, rel=1e-6)
     assert found.places["rider"] == pytest.approx(weigh(parse(PAN), loads=[0, 5]).places["rider"])
+
+
+def test_copies_that_cannot_be_drawn_are_told_and_left_out() -> None:
+    """The hook drawn by two arcs of which one is too short to reach the other in the second copy."""
+    arcs = 'hook = { meets = [["F", "short_arm"], ["low", 40]], side = "right" }\nlow = [0, -40]'
+    mechanism = beam(('hook = ["-short_arm", -0.5]', arcs))
+    found = weigh(mechanism, loads=[8], sizes={"short_arm": np.array([0.05, 0.09, 0.0501])})
+    assert found.scatter is not None and found.scatter.failed == 1
+    assert np.isfinite(found.scatter.mean).all()
+    assert any("1 of 3 cannot be drawn" in c.text for c in found.caveats)
+    with pytest.raises(Faults, match="it comes to no place"):
+        weigh(mechanism, loads=[8], sizes={"short_arm": np.array([0.09, 0.1])})
 
 
 def test_progress_is_told_to_the_end() -> None:
