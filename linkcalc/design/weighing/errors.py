@@ -12,6 +12,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from linkcalc.design.weighing.movers import EDGE
 from linkcalc.design.weighing.scale import Scale, Terms, probe
 from linkcalc.design.weighing.setting import Balancing, Setting
 from linkcalc.faults import fault
@@ -175,7 +176,9 @@ def causes(judge: Judge, bare: Mechanism, *, turned: float, mark_error: float, b
         yield Cause("out of level", "angle", -turned, turned, *ways)
     for k, slide in enumerate(judge.balancing.slides if mark_error else ()):
         if slide.use == "load":
-            way = np.where(judge.setting.places[k] == slide.start, 0.0, slide.worth * mark_error)
+            # at nothing it rests against its stop
+            off = np.abs(judge.setting.places[k] - slide.start) > EDGE * slide.length
+            way = np.where(off, slide.worth * mark_error, 0.0)
             yield Cause(f"marks of {slide.name}", "length", -mark_error, mark_error, -way, way)
     if np.any(band > 0):
         yield Cause(FRICTION, "", np.nan, np.nan, -band, band)
