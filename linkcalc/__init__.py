@@ -28,10 +28,12 @@ from importlib import import_module
 from typing import TYPE_CHECKING, Any
 
 if TYPE_CHECKING:
+    from linkcalc.design.balance import balance
     from linkcalc.design.check import check_model
     from linkcalc.design.copies import copies
     from linkcalc.design.members import members
     from linkcalc.design.pins import pins
+    from linkcalc.design.positions import balance_positions
     from linkcalc.design.stroke import stroke
     from linkcalc.design.weigh import weigh
     from linkcalc.faults import Fault, Faults
@@ -43,6 +45,8 @@ __all__ = [
     "Fault",
     "Faults",
     "Mechanism",
+    "balance",
+    "balance_positions",
     "check_model",
     "copies",
     "dumps",
@@ -57,6 +61,8 @@ __all__ = [
 
 # loaded when first asked for: a command starts with what it needs
 _HOMES = {
+    "balance": "linkcalc.design.balance",
+    "balance_positions": "linkcalc.design.positions",
     "check_model": "linkcalc.design.check",
     "copies": "linkcalc.design.copies",
     "members": "linkcalc.design.members",

@@ -8,6 +8,7 @@ from importlib.metadata import PackageNotFoundError
 
 import typer
 
+from linkcalc.cli.balance import balance
 from linkcalc.cli.check import check
 from linkcalc.cli.draw import draw
 from linkcalc.cli.files import BAD
@@ -42,7 +43,7 @@ def _main(
         raise typer.Exit
 
 
-for command in (start, check, stroke, members, pins, draw, weigh):
+for command in (start, check, stroke, members, pins, draw, balance, weigh):
     app.command()(command)
 
 

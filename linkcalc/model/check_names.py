@@ -28,6 +28,7 @@ class Known:
     ropes: tuple[str, ...] = ()
     materials: tuple[str, ...] = ()
     pushers: tuple[str, ...] = ()
+    cases: tuple[str, ...] = ()
 
     @classmethod
     def of(cls, tree: Mapping[str, Any]) -> Known:
@@ -40,14 +41,16 @@ class Known:
         pushers = (*((_EFFORT,) if _EFFORT in tree else ()), *loads)
         members = (GROUND, *(m for m in names("members") if m != GROUND))
         dimensions, ropes, own = names("dimensions"), names("ropes"), names("materials")
-        return cls(names("points"), members, joints, loads, dimensions, ropes, own, pushers)
+        cases = names("cases")
+        return cls(names("points"), members, joints, loads, dimensions, ropes, own, pushers, cases)
 
     def table(self, of: str) -> tuple[str, ...]:
-        """The names that a field may give: of = "point", "member", "guide", "load", "rope", "material", "pusher"."""
+        """The names that a field may give: of = "point", "member", "guide", "load", "rope", "material", "pusher",
+        "case"."""
         if of == "material":
             return material_names(self.materials)
         tables = {"point": self.points, "member": self.members, "guide": self.joints, "load": self.loads}
-        return {**tables, "rope": self.ropes, "pusher": self.pushers}[of]
+        return {**tables, "rope": self.ropes, "pusher": self.pushers, "case": self.cases}[of]
 
 
 def _one(value: Any, of: str) -> Iterator[tuple[str, str]]:

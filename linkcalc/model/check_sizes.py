@@ -15,7 +15,7 @@ from linkcalc.model.dimensions import reckon, reckon_tolerances
 from linkcalc.model.formulas import to_si
 from linkcalc.model.functions import Quantity
 from linkcalc.model.gather import Gather
-from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.mechanism import EFFORT_KIND, Mechanism, strength_kind
 from linkcalc.model.temperature import TEMPERATURE
 from linkcalc.model.tokens import names_in
 from linkcalc.model.units import show
@@ -31,12 +31,13 @@ def check_sizes(mechanism: Mechanism, known: Known, gather: Gather) -> None:
     reckon_tolerances(mechanism, dimensions, gather)
     if gather.touches("units"):
         return
+    effort = strength_kind(mechanism.effort) if mechanism.effort is not None else "force"
     for part in walk.everything(mechanism):
         along = getattr(part.part, "along", None)
         for item, entry, value in part.fields():
             for size, kind, sign in _sizes(entry, value, getattr(along, "kind", "")):
                 with gather.at(*item):
-                    _check(size, kind, sign, entry, mechanism, dimensions, known)
+                    _check(size, effort if kind == EFFORT_KIND else kind, sign, entry, mechanism, dimensions, known)
 
 
 def _sizes(entry: Field[Any], value: Any, stepped: str) -> Iterator[tuple[Size, str, str]]:
@@ -53,6 +54,9 @@ def _sizes(entry: Field[Any], value: Any, stepped: str) -> Iterator[tuple[Size, 
     elif meta["kind"] == "places":
         for one in value if isinstance(value, tuple) else (value,):
             yield one, meta["unit"], "not minus" if isinstance(value, tuple) else "plus"
+    elif meta["kind"] == "span":
+        for one in value if isinstance(value, tuple) else (value,):
+            yield one, meta["unit"], meta["sign"]
     elif meta["kind"] == "line" and not isinstance(value, tuple):
         yield value, "angle", "any"
     elif meta["kind"] == "arcs":

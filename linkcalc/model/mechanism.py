@@ -18,6 +18,9 @@ GROUND = "ground"
 STACKED = 'plates are wanted in order, e.g. [["fork", 8], ["rod", 16, 0.5], ["fork", 8, 0.5]]'
 ENDS = ("pinned", "fixed and pinned", "fixed", "fixed and free")
 DISTRIBUTIONS = ("normal", "uniform", "triangular")
+LEAST_PEAK, LEAST_SQUARE = "least peak", "least mean square"
+EFFORT_KIND = "effort"
+"""Kind of a size that is a force or a moment as the effort is."""
 DRAWN, LOWER, UPPER = "drawn", "lower limit", "upper limit"
 
 
@@ -225,6 +228,23 @@ class Case:
 
 
 @dataclass(frozen=True)
+class Balancing:
+    """What may be put in to take the effort out of the hand, and what is wanted of it.
+
+    goal   what is made small over the whole stroke and the cases: the largest effort, or its mean square
+    cases  over which cases; () for all
+    stays_at_start, stays_at_end  effort that it must take to leave the end of the stroke: it stays there by itself
+    find   name -> Counterweight, Coil, GasStrut
+    """
+
+    goal: str = fields.choice((LEAST_PEAK, LEAST_SQUARE), "what is made small", LEAST_PEAK)
+    cases: tuple[str, ...] = fields.names("case", "over which cases; all if left out", (), least=1, most=None)
+    stays_at_start: Size | None = fields.size(EFFORT_KIND, "effort that it takes to leave the start", None)
+    stays_at_end: Size | None = fields.size(EFFORT_KIND, "effort that it takes to leave the end", None)
+    find: Mapping[str, Any] = _entry("named parts", "what may be put in, by name", dict, family="balancer")
+
+
+@dataclass(frozen=True)
 class Mechanism:
     """A planar mechanism, as written.
 
@@ -243,6 +263,7 @@ class Mechanism:
     stroke    None: solved in the drawing pose only
     cases     name -> Case; empty: one case, the model as written
     requirements  name -> text, e.g. "effort <= 150 N"
+    balance   what the command "balance" may put in; nothing of it acts
     source    file it was read from, "" if built in Python; not compared
     checked   True once everything in it has been found in order (what is replaced starts anew); not compared
     """
@@ -269,6 +290,7 @@ class Mechanism:
     )
     stroke: Stroke | None = _entry("table", "what is stepped", of=Stroke)
     cases: Mapping[str, Case] = _entry("named tables", "load cases", dict, of=Case, blanks=True)
+    balance: Balancing | None = _entry("table", "what may be put in to balance it", of=Balancing)
     requirements: Mapping[str, str] = _entry("named texts", "what must hold", dict, blanks=True)
     source: str = field(default="", compare=False)
     checked: bool = field(default=False, init=False, compare=False, repr=False)

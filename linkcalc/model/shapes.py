@@ -79,6 +79,14 @@ def _places(raw: Any, meta: Meta) -> Any:
     return tuple(size(one) for one in raw)
 
 
+def _span(raw: Any, meta: Meta) -> Any:
+    if not isinstance(raw, (list, tuple)):
+        return size(raw)
+    if len(raw) != 2:
+        raise fault((), f"a list of {len(raw)}", f"a {meta['unit']}, or its least and its most are wanted: [20, 30]")
+    return size(raw[0]), size(raw[1])
+
+
 def _line(raw: Any, meta: Meta) -> Any:  # noqa: ARG001
     if not isinstance(raw, (list, tuple)):
         return size(raw)
@@ -179,7 +187,7 @@ def _example(number: int) -> str:
 
 
 SHAPES: dict[str, Callable[[Any, Meta], Any]] = {
-    "name": _name, "names": _names, "size": _size, "sizes": _sizes, "named sizes": _named_sizes,
+    "name": _name, "names": _names, "size": _size, "sizes": _sizes, "named sizes": _named_sizes, "span": _span,
     "own size": _size, "line": _line, "places": _places, "choice": _choice,
     "count": _whole, "arcs": _arcs, "pairs": _pairs, "unit": _unit, "tol": _tol, "factor": _factor,
     "factors": _factors, "text": _text, "rows": _rows, "formula": _formula,

@@ -141,6 +141,10 @@ def _part(raw: Any, meta: Meta, item: Item, gather: Gather) -> Any:
             gather.add(item, f"a list of {len(raw)}", f"[{wanted}{']' * (len(names) - least)}] is wanted")
             return BROKEN
         raw = dict(zip(names, raw, strict=False))
+    if isinstance(raw, str):
+        short = next((kind for kind in family.values() if hasattr(kind, "short")), None)
+        if short:
+            return read_table(short, raw, item, gather)
     words = ", ".join(repr(word) for word in family)
     if not isinstance(raw, Mapping):
         gather.add(item, f"{shown(raw)} is no table", f"a table with one of the keys {words} is wanted")

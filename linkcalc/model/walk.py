@@ -80,6 +80,12 @@ def everything(mechanism: Mechanism) -> Iterator[Part]:
     if mechanism.stroke is not None:
         yield Part(("stroke",), mechanism.stroke)
         yield Part(("stroke",), mechanism.stroke.along)
+    if mechanism.balance is not None:
+        yield Part(("balance",), mechanism.balance)
+        for name, one in mechanism.balance.find.items():
+            yield Part(("balance", "find", name), one)
+            if getattr(one, "place", None) is not None:
+                yield Part(("balance", "find", name, "place"), one.place)
     for name, case in mechanism.cases.items():
         yield Part(("cases", name), case)
         yield Part(("cases", name, "gravity"), case.gravity)

@@ -67,6 +67,16 @@ def places(unit: str, text: str, default: Any = MISSING) -> Any:
     return _made("places", text, default, unit=unit)
 
 
+def span(unit: str, text: str, default: Any = MISSING, *, sign: str = "not minus") -> Any:
+    """A size, or the least and the most that it may be, kept as a tuple of two."""
+    return _made("span", text, default, unit=unit, sign=sign)
+
+
+def part(family: str, text: str, default: Any = MISSING) -> Any:
+    """A part of a family within another; a bare name is the kind of the family that has a short form."""
+    return _made("part", text, default, family=family)
+
+
 def line(text: str, default: Any = MISSING) -> Any:
     """A line: two points, or an angle from the x axis as drawn."""
     return _made("line", text, default)

@@ -16,6 +16,7 @@ import sys  # noqa: E402
 
 from tests.bench import (  # noqa: E402
     accuracy,
+    balancing,
     chain,
     friction,
     many_copies,
@@ -36,6 +37,7 @@ PARTS = {
     "settling": settling.report,
     "pins": pin_loads.report,
     "weighing": weighing.report,
+    "balancing": balancing.report,
 }
 
 

@@ -13,7 +13,7 @@ from linkcalc.cli.start import kinds
 from tests.endtoend.models import linkcalc
 from tests.endtoend.shell import shell
 
-COMMANDS = ("start", "check", "stroke", "draw", "pins", "weigh")
+COMMANDS = ("start", "check", "stroke", "draw", "pins", "balance", "weigh")
 
 
 @pytest.mark.parametrize("command", COMMANDS)

@@ -26,6 +26,7 @@ FIELDS = {
     "sizes": lambda _: st.tuples(SIZES, SIZES),
     "named sizes": lambda m: st.tuples(*(SIZES for _ in m["names"])),
     "places": lambda _: st.one_of(SIZES, st.lists(SIZES, min_size=1, max_size=3).map(tuple)),
+    "span": lambda _: st.one_of(SIZES, st.tuples(SIZES, SIZES)),
     "own size": lambda _: SIZES,
     "tol": lambda _: st.one_of(SIZES, st.tuples(SIZES, SIZES)),
     "line": lambda _: st.one_of(SIZES, st.tuples(NAMES, NAMES)),
