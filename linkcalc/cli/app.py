@@ -2,21 +2,16 @@
 
 from __future__ import annotations
 
+import gc
 import os
 import sys
-from importlib.metadata import PackageNotFoundError
+from collections.abc import Sequence
+from importlib import import_module
 
 import typer
 
-from linkcalc.cli.balance import balance
-from linkcalc.cli.check import check
-from linkcalc.cli.draw import draw
-from linkcalc.cli.files import BAD
-from linkcalc.cli.members import members
-from linkcalc.cli.pins import pins
-from linkcalc.cli.start import start
-from linkcalc.cli.stroke import stroke
-from linkcalc.cli.weigh import weigh
+COMMANDS = ("start", "check", "stroke", "members", "pins", "draw", "balance", "weigh")
+"""In the order of the help; each is the function of that name in the file of that name."""
 
 app = typer.Typer(
     name="linkcalc",
@@ -34,6 +29,7 @@ def _main(
     version: bool = typer.Option(False, "--version", help="Print the version and stop.", is_eager=True),
 ) -> None:
     if version:
+        from importlib.metadata import PackageNotFoundError
         from importlib.metadata import version as installed
 
         try:
@@ -43,19 +39,27 @@ def _main(
         raise typer.Exit
 
 
-for command in (start, check, stroke, members, pins, draw, balance, weigh):
-    app.command()(command)
+def loaded(asked: Sequence[str] = ()) -> typer.Typer:
+    """The command line with all commands, or with the one that is asked for: it need not wait for the others."""
+    known = {command.name for command in app.registered_commands}
+    for name in asked if asked and asked[0] in COMMANDS else COMMANDS:
+        if name not in known:
+            app.command(name)(getattr(import_module(f"linkcalc.cli.{name}"), name))
+    return app
 
 
 def main() -> None:
     """Run the command line."""
+    gc.set_threshold(50_000)  # what is loaded stays: looking for garbage in it takes a tenth of the start
     try:
-        app()
+        loaded(sys.argv[1:2])()
     except OSError as error:
         # only printing can fail like this: files are read and written with faults of their own
         typer.echo(f"what is printed: cannot be written: {(error.strerror or str(error)).lower()}", err=True)
         # what is still in the buffer would raise once more when Python ends
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        from linkcalc.cli.files import BAD
+
         sys.exit(BAD)
 
 

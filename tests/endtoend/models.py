@@ -7,7 +7,7 @@ from pathlib import Path
 
 from typer.testing import CliRunner
 
-from linkcalc.cli.app import app
+from linkcalc.cli.app import loaded
 
 ROOT = Path(__file__).resolve().parents[2]
 EXAMPLES = sorted((ROOT / "examples").glob("*.toml"))
@@ -128,7 +128,7 @@ class Said:
 
 def linkcalc(*arguments: str | Path) -> Said:
     """Run a command here; anything but an orderly end is raised."""
-    done = CliRunner().invoke(app, [str(a) for a in arguments])
+    done = CliRunner().invoke(loaded(), [str(a) for a in arguments])
     if done.exception is not None and not isinstance(done.exception, SystemExit):
         raise done.exception
     return Said(done.exit_code, done.stdout, done.stderr)

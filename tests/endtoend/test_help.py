@@ -8,7 +8,7 @@ from pathlib import Path
 import pytest
 from typer.main import get_command
 
-from linkcalc.cli.app import app
+from linkcalc.cli.app import loaded
 from linkcalc.cli.start import kinds
 from tests.endtoend.models import linkcalc
 from tests.endtoend.shell import shell
@@ -20,7 +20,7 @@ COMMANDS = ("start", "check", "stroke", "draw", "pins", "balance", "weigh")
 def test_the_help_lists_every_option_with_a_word_on_it(command: str) -> None:
     said = linkcalc(command, "--help")
     assert (said.status, said.err) == (0, "")
-    parameters = get_command(app).commands[command].params  # type: ignore[attr-defined]
+    parameters = get_command(loaded()).commands[command].params  # type: ignore[attr-defined]
     assert {p.name for p in parameters} >= {"force"} if command == "start" else {"file", "case", "json"}
     for parameter in parameters:
         told = parameter.opts if parameter.param_type_name == "option" else [parameter.metavar]
