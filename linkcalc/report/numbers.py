@@ -56,3 +56,13 @@ def places_for(values: list[float], most: int = 4) -> int:
 def plain(unit: str) -> str:
     """A unit for reading: "N m" for "N*m"."""
     return unit.replace("*", " ")
+
+
+def round_the_clock(angle: float) -> float:
+    """[rad] an angle from 0 up to a whole turn; what is a whole turn but for rounding is 0.
+
+    >>> round_the_clock(-1e-12), round_the_clock(math.pi / -2) / math.pi
+    (0.0, 1.5)
+    """
+    turned = angle % (2 * math.pi)
+    return 0.0 if 2 * math.pi - turned < 1e-9 else turned

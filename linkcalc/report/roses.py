@@ -10,7 +10,7 @@ from linkcalc.design.pins_answer import JointLoad, PinsAnswer, SideLoad
 from linkcalc.faults import fault
 from linkcalc.report.blocks import Rose, Roses
 from linkcalc.report.edge import Edge
-from linkcalc.report.numbers import plain
+from linkcalc.report.numbers import plain, round_the_clock
 from linkcalc.report.sectors import free_text
 
 _CAPTION = (
@@ -47,7 +47,7 @@ def _rose(edge: Edge, joint: JointLoad, side: SideLoad) -> Rose:
     unit = plain(edge.unit("angle"))
     force = edge.out(rose.force, "force")
     x, y = force * np.cos(rose.direction), force * np.sin(rose.direction)
-    angle = "" if math.isnan(points) else f" at {edge.text(points % (2 * math.pi), 'angle')}"
+    angle = "" if math.isnan(points) else f" at {edge.text(round_the_clock(points), 'angle')}"
     free = free_text(rose, edge)
     return Rose(
         f"{joint.joint} on {side.member}",

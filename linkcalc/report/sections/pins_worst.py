@@ -9,6 +9,7 @@ from linkcalc.design.pins_answer import JointLoad, Peak, PinsAnswer
 from linkcalc.design.roses import FAINT
 from linkcalc.report.blocks import Block, Cell, Column, Note, Table
 from linkcalc.report.edge import Edge
+from linkcalc.report.numbers import round_the_clock
 from linkcalc.report.sectors import free_text
 
 _NOTE = (
@@ -89,7 +90,7 @@ def _sides(answer: PinsAnswer, joint: JointLoad, edge: Edge) -> list[tuple[Cell,
         felt = joint.largest.felt[k] if joint.largest.felt else None
         there: tuple[Cell, ...] = (None, None, None)
         if felt:
-            angles = (edge.one(a, "angle") for a in (felt.direction, felt.own_direction % (2 * math.pi)))
+            angles = (edge.one(a, "angle") for a in (felt.direction, round_the_clock(felt.own_direction)))
             there = (edge.one(felt.force, "force"), *angles)
         most = edge.one(side.largest.value, "force")
         own = answer.stroke.mechanism.members.get(side.member)
