@@ -13,7 +13,7 @@ HATCH = Path(__file__).parents[2] / "examples" / "roof_hatch.toml"
 
 
 def report(*, quick: bool) -> bool:
-    head("9  gas springs of a hatch: places, force, rounding and judgement, in plain strokes of the same hatch")
+    head("10  gas springs of a hatch: places, force, rounding and judgement, in plain strokes of the same hatch")
     model = read(HATCH)
     bare = replace(model, balance=None)
     stroke(bare)
