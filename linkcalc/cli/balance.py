@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
 from dataclasses import replace
 from typing import Annotated, Any
 
@@ -15,15 +14,14 @@ from linkcalc.cli.files import (
     CsvFile,
     JsonFile,
     ModelFile,
-    check_outputs,
-    check_picture,
+    check_moving,
     in_file,
+    of_option,
     option_fault,
-    put,
 )
+from linkcalc.cli.outputs import check_outputs, put, save_all
 from linkcalc.cli.stroke import Plots
-from linkcalc.faults import Fault, Faults
-from linkcalc.model.mechanism import GROUND, LEAST_PEAK, LEAST_SQUARE, Balancing, Mechanism
+from linkcalc.model.mechanism import LEAST_PEAK, LEAST_SQUARE, Balancing, Mechanism
 from linkcalc.words import nearest
 
 MassOn = Annotated[
@@ -85,19 +83,15 @@ def balance(
 ) -> None:
     """Take the effort out of the hand: find a counterweight or springs, and where it balances along the stroke."""
     with in_file(file) as model:
-        pictures = {"--output": output or [], "--plot": plot or []}
-        for option, targets in pictures.items():
-            for target in targets:
-                check_picture(option, target)
-        if json == STDOUT and csv == STDOUT:
-            raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
-        check_outputs(file, {"--json": [json], "--csv": [csv], "--output-model": [output_model], **pictures})
+        if output_model == STDOUT:
+            raise option_fault("--output-model", "it cannot be printed among the rest", "give it a file")
+        pictures = {"--output": output, "--plot": plot}
+        quiet = check_outputs(file, {"--json": json, "--csv": csv}, pictures, {"--output-model": output_model})
         if not 1 <= starts <= _MOST_STARTS:
             raise option_fault("--starts", f"{starts} starts", f"from 1 to {_MOST_STARTS} are wanted")
         if seed < 0:
             raise option_fault("--seed", f"{seed} is less than nothing", "a whole number from 0 on is wanted")
         model = _asked(_one_case(model, case), mass_on, at, mass, most_mass, goal)
-        quiet = STDOUT in (json, csv)
         if model.balance is None or not model.balance.find:
             needed = [o for o, given in (("--output-model", output_model), *pictures.items()) if given]
             if needed:
@@ -115,7 +109,6 @@ def _balance(
     json: str | None, csv: str | None, plot: list[str], *, quiet: bool,
 ) -> bool:  # fmt: skip
     from linkcalc.design.balance import balance as ask
-    from linkcalc.report.figure import save
 
     bar: Any = None
 
@@ -146,7 +139,7 @@ def _balance(
     if output_model:
         from linkcalc.model.write import dumps
 
-        _written(output_model, lambda: dumps(answer.after.mechanism))
+        put(output_model, lambda: dumps(answer.after.mechanism))
     if json:
         from linkcalc.report.balance_json import balance_json
 
@@ -156,21 +149,13 @@ def _balance(
         from linkcalc.report.csv import as_csv
 
         put(csv, lambda: as_csv(balance_table(answer)))
-    for figure, target in made:
-        save(figure, target)
-        typer.echo(f"wrote {target}", err=True)
+    save_all(made)
     if not quiet:
         from linkcalc.report.balance import balance_blocks
         from linkcalc.report.text import as_text
 
         typer.echo(as_text(balance_blocks(answer)))
     return answer.holds
-
-
-def _written(target: str, text: Callable[[], str]) -> None:
-    if target == STDOUT:
-        raise option_fault("--output-model", "it cannot be printed among the rest", "give it a file")
-    put(target, text)
 
 
 def _positions(model: Mechanism, effort: str, json: str | None, csv: str | None, *, quiet: bool) -> None:
@@ -220,10 +205,7 @@ def _asked(
     from linkcalc.parts.balancers.counterweight import Counterweight
     from linkcalc.parts.rooms.at import At as Place
 
-    moving = [m for m in model.members if m != GROUND]
-    if mass_on not in moving:
-        what = "the ground does not move" if mass_on == GROUND else f"unknown member {mass_on!r}"
-        raise option_fault("--mass-on", what, nearest(mass_on, moving))
+    check_moving(model, "--mass-on", mass_on, "the ground does not move")
     if at is not None and at not in model.members[mass_on].points:
         raise option_fault("--at", f"{mass_on} does not carry {at!r}", nearest(at, model.members[mass_on].points))
     if mass is not None and most is not None:
@@ -259,7 +241,5 @@ def _told(option: str, model: Mechanism, text: str, kind: str) -> float:
 
     from linkcalc.model.sketch import drawn
 
-    try:
+    with of_option(option):
         return float(np.ravel(drawn(model).value(_plain(text), kind))[0])
-    except Faults as found:
-        raise Faults([Fault((), f"{option}: {f.what}", f.wanted) for f in found.faults]) from None

@@ -4,7 +4,8 @@ from __future__ import annotations
 
 import typer
 
-from linkcalc.cli.files import FAILED, STDOUT, CaseName, JsonFile, ModelFile, check_outputs, in_file, put
+from linkcalc.cli.files import FAILED, CaseName, JsonFile, ModelFile, in_file
+from linkcalc.cli.outputs import check_outputs, put
 
 
 def check(file: ModelFile, case: CaseName = None, json: JsonFile = None) -> None:
@@ -14,11 +15,11 @@ def check(file: ModelFile, case: CaseName = None, json: JsonFile = None) -> None
         from linkcalc.report.check import check_blocks, check_json
         from linkcalc.report.text import as_text
 
-        check_outputs(file, {"--json": [json]})
+        quiet = check_outputs(file, {"--json": json})
         answer = check_model(model, case=case)
         if json:
             put(json, lambda: check_json(answer))
-        if json != STDOUT:
+        if not quiet:
             typer.echo(as_text(check_blocks(answer)))
     if not answer.stroke.holds:
         raise typer.Exit(FAILED)

@@ -1,9 +1,8 @@
-"""What all commands share: reading the model, telling faults, writing answers."""
+"""What all commands share: reading the model, telling faults."""
 
 from __future__ import annotations
 
-import os
-from collections.abc import Callable, Iterator, Mapping, Sequence
+from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
 from typing import Annotated
@@ -11,10 +10,10 @@ from typing import Annotated
 import typer
 
 from linkcalc.faults import Fault, Faults
-from linkcalc.files import write_whole
-from linkcalc.model.mechanism import Mechanism
+from linkcalc.model.mechanism import GROUND, Mechanism
 from linkcalc.model.read import read
 from linkcalc.model.source import open_source
+from linkcalc.words import nearest
 
 FAILED, BAD = 1, 2
 STDOUT = "-"
@@ -54,39 +53,31 @@ def in_file(path: Path) -> Iterator[Mechanism]:
             raise Faults([*(open_source(path).located(inside).faults if inside else ()), *others]) from None
 
 
-def put(target: str, text: Callable[[], str]) -> None:
-    """Write a text whole, or print it for "-". Raises Faults: the file cannot be written."""
-    if target == STDOUT:
-        typer.echo(text(), nl=False)
-    else:
-        write_whole(target, text())
-        typer.echo(f"wrote {target}", err=True)
-
-
-def check_outputs(model: Path, outputs: Mapping[str, Sequence[str | None]]) -> None:
-    """Raises Faults: an option would write over the model, or over what another option writes.
-
-    outputs  option -> the files it names
-    """
-    taken = {os.path.realpath(model): "the model itself"}
-    for option, targets in outputs.items():
-        for target in targets:
-            if not target or target == STDOUT:
-                continue
-            place = os.path.realpath(target)
-            if place in taken:
-                raise option_fault(option, f"{target} is {taken[place]}", "give it another file")
-            taken[place] = f"written by {option} already"
-
-
-def check_picture(option: str, target: str) -> None:
-    """Raises Faults: no picture can be written under that name."""
-    from linkcalc.report.figure import picture_format
-
+@contextmanager
+def of_option(option: str) -> Iterator[None]:
+    """Faults raised inside that have no item are told as those of an option."""
     try:
-        picture_format(target)
+        yield
     except Faults as found:
-        raise Faults([Fault((), f"{option}: {target}: {f.what}", f.wanted) for f in found.faults]) from None
+        raise Faults([f if f.item else Fault((), f"{option}: {f.what}", f.wanted) for f in found.faults]) from None
+
+
+def check_point(model: Mechanism, option: str, point: str) -> None:
+    """Raises Faults: the model has no such point."""
+    if point not in model.points:
+        raise option_fault(option, f"unknown point {point!r}", nearest(point, model.points))
+
+
+def check_moving(model: Mechanism, option: str, member: str, ground: str) -> None:
+    """Raises Faults: no such member, or the ground.
+
+    ground  what is said of the ground
+    """
+    moving = [m for m in model.members if m != GROUND]
+    if member not in moving:
+        raise option_fault(
+            option, ground if member == GROUND else f"unknown member {member!r}", nearest(member, moving)
+        )
 
 
 def option_fault(option: str, what: str, wanted: str = "") -> Faults:

@@ -9,20 +9,18 @@ import typer
 
 from linkcalc.cli.files import (
     FAILED,
-    STDOUT,
     CaseName,
     CsvFile,
     JsonFile,
     ModelFile,
-    check_outputs,
-    check_picture,
+    check_point,
     in_file,
+    of_option,
     option_fault,
-    put,
 )
+from linkcalc.cli.outputs import check_outputs, put, save_all
 from linkcalc.cli.poses import check_poses
 from linkcalc.cli.rates import rate_of, time_of
-from linkcalc.faults import Fault, Faults
 from linkcalc.model.mechanism import Mechanism
 
 if TYPE_CHECKING:
@@ -100,23 +98,14 @@ def pins(
         from linkcalc.design.pins import pins as ask
 
         check_poses(poses)
-        if json == STDOUT and csv == STDOUT:
-            raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
         if rate and time:
             raise option_fault("--rate and --time", "both say how fast the stroke goes", "give one of them")
-        for option, targets in (("--plot", plot), ("--roses", roses), ("--stacks", stacks)):
-            for target in targets or ():
-                check_picture(option, target)
-        outputs: dict[str, list[str | None]] = {
-            "--json": [json],
-            "--csv": [csv],
-            "--plot": [*(plot or ())],
-            "--roses": [*(roses or ())],
-            "--stacks": [*(stacks or ())],
-        }
-        check_outputs(file, outputs)
+        pictures = {"--plot": plot, "--roses": roses, "--stacks": stacks}
+        quiet = check_outputs(file, {"--json": json, "--csv": csv}, pictures)
+        if about is not None:
+            check_point(model, "--about", about)
         answer = ask(
-            model, case=case, poses=poses, about=_point(model, about), diameters=_diameter(model, diameter),
+            model, case=case, poses=poses, about=about, diameters=_diameter(model, diameter),
             rate=rate_of(rate) if rate else None, time=time_of(time) if time else None,
             bearings=bearings, bushes=bushes, inch=inch,
         )  # fmt: skip
@@ -147,12 +136,9 @@ def pins(
             from linkcalc.report.pins_table import pins_table
 
             put(csv, lambda: as_csv(pins_table(answer)))
-        for figure, target in figures:
-            from linkcalc.report.figure import save
-
-            save(figure, target)
-            typer.echo(f"wrote {target}", err=True)
-        if STDOUT not in (json, csv):
+        if figures:
+            save_all(figures)
+        if not quiet:
             from linkcalc.report.pins_blocks import pins_blocks, sheet_blocks
             from linkcalc.report.text import as_text
 
@@ -184,21 +170,11 @@ def _can_have(answer: PinsAnswer, word: str) -> str:
     return "; ".join(text for text in (own, others) if text)
 
 
-def _point(model: Mechanism, about: str | None) -> str | None:
-    from linkcalc.words import nearest
-
-    if about is not None and about not in model.points:
-        raise option_fault("--about", f"unknown point {about!r}", nearest(about, model.points))
-    return about
-
-
 def _diameter(model: Mechanism, text: str | None) -> float | None:
     """[m] a size as a model file writes it. Raises Faults."""
     from linkcalc.design.sizes import length_of
 
     if text is None:
         return None
-    try:
+    with of_option("--diameter"):
         return length_of(model, text)
-    except Faults as found:
-        raise Faults([Fault((), f"--diameter: {f.what}", f.wanted) for f in found.faults]) from None

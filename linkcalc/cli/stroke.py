@@ -6,19 +6,8 @@ from typing import Annotated
 
 import typer
 
-from linkcalc.cli.files import (
-    FAILED,
-    STDOUT,
-    CaseName,
-    CsvFile,
-    JsonFile,
-    ModelFile,
-    check_outputs,
-    check_picture,
-    in_file,
-    option_fault,
-    put,
-)
+from linkcalc.cli.files import FAILED, CaseName, CsvFile, JsonFile, ModelFile, in_file
+from linkcalc.cli.outputs import check_outputs, put, save_all
 from linkcalc.cli.poses import Poses, check_poses
 
 Plots = Annotated[
@@ -42,11 +31,7 @@ def stroke(
         from linkcalc.design.stroke import stroke as ask
 
         check_poses(poses)
-        if json == STDOUT and csv == STDOUT:
-            raise option_fault("--json and --csv", "both cannot be printed", "give one of them a file")
-        for target in plot or ():
-            check_picture("--plot", target)
-        check_outputs(file, {"--json": [json], "--csv": [csv], "--plot": plot or []})
+        quiet = check_outputs(file, {"--json": json, "--csv": csv}, {"--plot": plot})
         answer = ask(model, case=case, poses=poses)
         figures = []
         for target in plot or ():
@@ -64,12 +49,9 @@ def stroke(
             from linkcalc.report.stroke_table import stroke_table
 
             put(csv, lambda: as_csv(stroke_table(answer)))
-        for figure, target in figures:
-            from linkcalc.report.figure import save
-
-            save(figure, target)
-            typer.echo(f"wrote {target}", err=True)
-        if STDOUT not in (json, csv):
+        if figures:
+            save_all(figures)
+        if not quiet:
             from linkcalc.report.stroke_blocks import stroke_blocks
             from linkcalc.report.text import as_text
 

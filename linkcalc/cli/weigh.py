@@ -9,19 +9,8 @@ from typing import Annotated, Any
 
 import typer
 
-from linkcalc.cli.files import (
-    FAILED,
-    STDOUT,
-    CaseName,
-    JsonFile,
-    ModelFile,
-    check_outputs,
-    check_picture,
-    in_file,
-    option_fault,
-    put,
-)
-from linkcalc.faults import Fault, Faults
+from linkcalc.cli.files import FAILED, CaseName, JsonFile, ModelFile, check_point, in_file, of_option, option_fault
+from linkcalc.cli.outputs import check_outputs, put, save_all
 from linkcalc.model.mechanism import Mechanism
 
 Loads = Annotated[
@@ -98,27 +87,12 @@ def weigh(
         from linkcalc.design.weigh import weigh as ask
         from linkcalc.design.weighing import asked
 
-        printed = [o for o, t in (("--json", json), ("--csv", csv), ("--marks", marks)) if t == STDOUT]
-        if len(printed) > 1:
-            raise option_fault(" and ".join(printed), "not all can be printed", "give all but one a file")
-        for option, targets in (("--bars", bars), ("--plot", plot)):
-            for target in targets or ():
-                check_picture(option, target)
-        outputs: dict[str, list[str | None]] = {
-            "--json": [json],
-            "--csv": [csv],
-            "--marks": [marks],
-            "--bars": [*(bars or ())],
-            "--plot": [*(plot or ())],
-        }
-        check_outputs(file, outputs)
+        texts = {"--json": json, "--csv": csv, "--marks": marks}
+        quiet = check_outputs(file, texts, {"--bars": bars, "--plot": plot})
         if not 0 <= copies <= _MOST_COPIES:
             raise option_fault("--copies", f"{copies} copies", f"up to {_MOST_COPIES} are wanted")
         for point in corner or ():
-            if point not in model.points:
-                from linkcalc.words import nearest
-
-                raise option_fault("--corner", f"unknown point {point!r}", nearest(point, model.points))
+            check_point(model, "--corner", point)
 
         def read(option: str, text: str | None, how: Callable[[str, Mechanism], Any], otherwise: Any) -> Any:
             return otherwise if text is None else _told(option, lambda: how(text, model))
@@ -148,12 +122,9 @@ def weigh(
                 put(csv, lambda: as_csv(setting_table(answer, whole=True)))
             if marks:
                 put(marks, lambda: as_csv(marks_table(answer)))
-        for figure, target in figures:
-            from linkcalc.report.figure import save
-
-            save(figure, target)
-            typer.echo(f"wrote {target}", err=True)
-        if not printed:
+        if figures:
+            save_all(figures)
+        if not quiet:
             from linkcalc.report.text import as_text
             from linkcalc.report.weigh.blocks import weigh_blocks
 
@@ -197,11 +168,8 @@ def _plus(option: str, value: float | None) -> float | None:
 
 
 def _told(option: str, work: Callable[[], Any]) -> Any:
-    """Faults without an item are those of the option."""
-    try:
+    with of_option(option):
         return work()
-    except Faults as found:
-        raise Faults([f if f.item else Fault((), f"{option}: {f.what}", f.wanted) for f in found.faults]) from None
 
 
 @contextmanager
