@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from linkcalc.mechanics.sums import zero
-from linkcalc.parts.pose import Value
+from linkcalc.parts.pose import Value, zero
 
 
 def times(a: Value, b: Value) -> Value:

@@ -22,8 +22,8 @@ from linkcalc.mechanics.friction import Rubbed, rub
 from linkcalc.mechanics.motion import Closed, fastest
 from linkcalc.mechanics.pushing import Column, Pushing, acts, add_pushes, column, sized_pushers, strength, unknown
 from linkcalc.mechanics.state import Status
-from linkcalc.mechanics.sums import dot, zero
-from linkcalc.parts.pose import Array, Codes, Mask, Value
+from linkcalc.mechanics.sums import dot
+from linkcalc.parts.pose import Array, Codes, Mask, Value, zero
 
 DEAD = 1e-9  # speed of the effort, over the fastest in the mechanism, below which no answer is given
 

@@ -12,6 +12,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from linkcalc.mechanics.held import rates_of
+from linkcalc.mechanics.loose import Places
+from linkcalc.mechanics.motion import rolled, single
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.settle import Settled, come_to_rest, settle
@@ -63,27 +66,15 @@ def balance_places(ready: Ready) -> tuple[BalancePlace, ...]:
     return tuple(sorted(found, key=lambda p: (p.case, -p.steady, p.turns)))
 
 
-def _starts(ready: Ready, places: tuple[object, ...]) -> Poses:
+def _starts(ready: Ready, places: Places) -> Poses:
     """The settled pose, and others with the places shifted by up to half a turn or half the size: (1, 1, starts)."""
     rng = np.random.default_rng(12)
-    chain, at = ready.chain, ready.start.at
-    way = np.zeros((chain.columns, _STARTS))
-    for k, place in enumerate(places):
-        reach = np.pi if place.which == TURN else chain.size / 2  # type: ignore[attr-defined]
-        speed = ready.start.factored.solve([1.0 if i == chain.joint_rows + k else 0.0 for i in range(chain.rows)])
+    way = np.zeros((ready.chain.columns, _STARTS))
+    for place, rate in zip(places, rates_of(ready.chain, ready.start), strict=True):
+        reach = np.pi if place.which == TURN else ready.chain.size / 2
         shift = np.concatenate([[0.0], reach * rng.uniform(-1, 1, _STARTS - 1)])
-        for j, v in enumerate(speed):
-            value = float(np.ravel(v)[0])
-            way[j] += value * shift
-    start = _spread(at)
-    x = [start.x[0], *(start.x[m] + way[3 * m - 3] for m in range(1, len(start.x)))]
-    y = [start.y[0], *(start.y[m] + way[3 * m - 2] for m in range(1, len(start.y)))]
-    c, s = [start.c[0]], [start.s[0]]
-    for m in range(1, len(start.c)):
-        ct, st = np.cos(way[3 * m - 1]), np.sin(way[3 * m - 1])
-        c.append(start.c[m] * ct - start.s[m] * st)
-        s.append(start.s[m] * ct + start.c[m] * st)
-    return Poses(x, y, c, s, at.down, at.field)
+        way += np.outer(single(rate), shift)
+    return rolled(_spread(ready.start.at), list(way))
 
 
 def _spread(at: Poses) -> Poses:

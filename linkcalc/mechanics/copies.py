@@ -14,13 +14,13 @@ import numpy as np
 from linkcalc.mechanics.balance import balance, failed
 from linkcalc.mechanics.loose_copies import each_loose_pose
 from linkcalc.mechanics.loose_path import LoosePath
-from linkcalc.mechanics.motion import Closed, along, between, close
+from linkcalc.mechanics.motion import Closed, along, between, close, rolled, turn_from, wound
 from linkcalc.mechanics.path import Path
 from linkcalc.mechanics.pipeline import solve_standing
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.solved import Solved, joined
 from linkcalc.mechanics.state import Status
-from linkcalc.parts.pose import Array, Mask, Poses, Value
+from linkcalc.parts.pose import Array, Mask, Value
 
 _SAME = 1e-9  # of the way between two poses
 _TOOTH = 0.15  # [rad] half the least tooth; the steps of the walk keep below
@@ -47,7 +47,7 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
     here, before, span = ready.start, ready.start, 0.0
     drawn = np.asarray(coordinate.value(here.at), float)
     if coordinate.kind == "angle":
-        drawn = drawn + 2 * np.pi * np.round((path.drawn - drawn) / (2 * np.pi))
+        drawn = np.asarray(wound(drawn, path.drawn))
     branch = here.factored.negative
     live: Mask = here.fine
     lost: Mask = np.zeros_like(live)
@@ -56,7 +56,8 @@ def each_pose(ready: Ready, path: Path, drive: Array, *, checked: bool) -> Itera
         step = target - last
         even = isinstance(step, float) and span
         if ready.chain.toothed:
-            guess = _rolled(here, step)
+            # gears keep their ratio: even speeds are nearly where they are
+            guess = rolled(here.at, [step * v for v in here.speed])
         else:
             guess = between(before, here, 1 + step / span, span) if even else along(here, step)
         all_live = bool(live.all())
@@ -105,25 +106,10 @@ def _kept(path: Path, there: Closed, branch: Mask, live: Mask) -> Mask:
     return same
 
 
-def _rolled(here: Closed, step: Value) -> Poses:
-    """Poses a step on at even speeds, turned by just that: gears keep their ratio, so this is nearly where they are."""
-    at, speed = here.at, here.speed
-    x, y, c, s = [at.x[0]], [at.y[0]], [at.c[0]], [at.s[0]]
-    for k in range(1, len(at.x)):
-        vx, vy, turning = speed[3 * k - 3 : 3 * k]
-        ct, st = np.cos(step * turning), np.sin(step * turning)
-        x.append(at.x[k] + step * vx)
-        y.append(at.y[k] + step * vy)
-        c.append(at.c[k] * ct - at.s[k] * st)
-        s.append(at.s[k] * ct + at.c[k] * st)
-    return Poses(x, y, c, s, at.down, at.field)
-
-
 def _slipped(a: Closed, b: Closed, step: Value) -> Mask:
     """(1, variant, 1) copies in which some member has not turned as the mean of its speeds says: a tooth was lost."""
     slipped: Mask = np.zeros((1, 1, 1), bool)
     for k in range(1, len(a.at.x)):
-        turn = np.arctan2(b.at.s[k] * a.at.c[k] - b.at.c[k] * a.at.s[k], b.at.c[k] * a.at.c[k] + b.at.s[k] * a.at.s[k])
-        off = turn - step * (a.speed[3 * k - 1] + b.speed[3 * k - 1]) / 2
+        off = turn_from(a.at, b.at, k) - step * (a.speed[3 * k - 1] + b.speed[3 * k - 1]) / 2
         slipped = slipped | (np.abs((off + np.pi) % (2 * np.pi) - np.pi) > _TOOTH)
     return slipped

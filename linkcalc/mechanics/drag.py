@@ -18,9 +18,9 @@ from linkcalc.mechanics.batch import tops
 from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.motion import Closed, fastest
 from linkcalc.mechanics.pushing import Column, add_pushes
-from linkcalc.mechanics.sums import dot, zero
+from linkcalc.mechanics.sums import dot
 from linkcalc.parts.contract import Drag, Push
-from linkcalc.parts.pose import TURN, Array, Mask, Value
+from linkcalc.parts.pose import TURN, Array, Mask, Value, zero
 
 STANDS = 1e-12  # speed over the fastest in the mechanism: what is slower stands still but for rounding
 

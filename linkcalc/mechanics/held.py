@@ -8,14 +8,23 @@ from dataclasses import replace
 import numpy as np
 
 from linkcalc.mechanics.balance import balance
+from linkcalc.mechanics.chain import Chain
 from linkcalc.mechanics.loose import Loose, Places
 from linkcalc.mechanics.motion import Closed, close, fastest, moved
 from linkcalc.mechanics.pushing import Column, Pushing, add_pushes, column, strength
-from linkcalc.mechanics.sums import dot, plus, zero
+from linkcalc.mechanics.sums import dot, plus
 from linkcalc.parts.contract import Drive
-from linkcalc.parts.pose import Array, Mask, Poses, Value
+from linkcalc.parts.pose import Array, Mask, Poses, Value, zero
 
 STILL = 1e-13  # power of what is left over the largest force: in balance
+
+
+def rates_of(chain: Chain, closed: Closed) -> list[list[Value]]:
+    """Speeds of the coordinates per unit of each place that a chain holds."""
+    first, rows = chain.joint_rows, chain.rows
+    return [
+        closed.factored.solve([1.0 if i == first + k else 0.0 for i in range(rows)]) for k in range(len(chain.holds))
+    ]
 
 
 class Work:
@@ -43,11 +52,7 @@ class Work:
 
     def rates(self, closed: Closed) -> list[list[Value]]:
         """Speeds of the coordinates per unit of each place."""
-        first, rows = self.chain.joint_rows, self.chain.rows
-        return [
-            closed.factored.solve([1.0 if i == first + k else 0.0 for i in range(rows)])
-            for k in range(len(self.places))
-        ]
+        return rates_of(self.chain, closed)
 
     def forces(self, at: Poses) -> tuple[Column, Column]:
         """Generalised forces of all that is known, and of the unknown for 1."""

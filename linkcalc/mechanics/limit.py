@@ -11,7 +11,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.mechanics.chain import Chain
-from linkcalc.mechanics.motion import Closed, along, close, single
+from linkcalc.mechanics.motion import Closed, along, close, single, wound
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.parts.contract import TURN, Drive, Row
 from linkcalc.parts.pose import Poses, Value
@@ -133,5 +133,5 @@ def _turning_point(
             break
     value = float(np.asarray(chain.coordinate.value(pose.at)).flat[0])
     if chain.coordinate.kind == "angle":
-        value += 2 * np.pi * round((drive - value) / (2 * np.pi))
+        value = float(wound(value, drive))
     return value

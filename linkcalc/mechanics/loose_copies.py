@@ -9,14 +9,12 @@ import numpy as np
 
 from linkcalc.mechanics.balance import failed
 from linkcalc.mechanics.loose_path import LoosePath, settled_balance
-from linkcalc.mechanics.motion import Closed, along, cubic, turned_between
+from linkcalc.mechanics.motion import Closed, along, cubic, placed_between, turned_between, wound
 from linkcalc.mechanics.prepare import Ready
-from linkcalc.mechanics.settle import Settled, settle
+from linkcalc.mechanics.settle import Settled, settle, settle_well
 from linkcalc.mechanics.solved import Solved
 from linkcalc.mechanics.state import Status
 from linkcalc.parts.pose import Array, Poses, Value
-
-_BAD = 30.0  # times the speed of the places: others would tell the pose better
 
 
 def each_loose_pose(ready: Ready, path: LoosePath, drive: Array, *, checked: bool) -> Iterator[Solved]:
@@ -30,7 +28,7 @@ def each_loose_pose(ready: Ready, path: LoosePath, drive: Array, *, checked: boo
     assert places is not None
     drawn = np.asarray(coordinate.value(ready.start.at), float)[:1]
     if coordinate.kind == "angle":
-        drawn = drawn + 2 * np.pi * np.round((path.drawn - drawn) / (2 * np.pi))
+        drawn = np.asarray(wound(drawn, path.drawn))
     here: Settled = settle(loose, places, ready.start.at, drawn, ready.pushing, ready.unknown)
     last: Value = drawn
     before, span = here, 0.0
@@ -42,14 +40,9 @@ def each_loose_pose(ready: Ready, path: LoosePath, drive: Array, *, checked: boo
             if even
             else along(here.closed, step)
         )
-        settled = settle(
+        settled, places = settle_well(
             loose, places, guess, target, ready.pushing, here.unknown, along=here.closed.speed, matrix=here.matrix
         )
-        if not settled.reach <= _BAD:
-            better = loose.places(settled.closed.at)
-            if better is not None and better != places:
-                places = better
-                settled = settle(loose, places, guess, target, ready.pushing, here.unknown, along=here.closed.speed)
         span = float(step.flat[0]) if float(np.ptp(step)) == 0.0 else 0.0
         before, here, last = here, settled, target
         if wanted:
@@ -61,13 +54,13 @@ def each_loose_pose(ready: Ready, path: LoosePath, drive: Array, *, checked: boo
 
 def onward(a: Closed, b: Closed, t: float, span: float) -> Poses:
     """Poses on the cubic through two settled poses and their speeds, beyond the second: places as well as turns."""
-    h00, h10, h01, h11 = weights = cubic(t, span)
+    weights = cubic(t, span)
     pa, pb = a.at, b.at
     x, y, c, s = [pa.x[0]], [pa.y[0]], [pa.c[0]], [pa.s[0]]
     for k in range(1, len(pa.x)):
         (ua, va, wa), (ub, vb, wb) = a.speed[3 * k - 3 : 3 * k], b.speed[3 * k - 3 : 3 * k]
-        x.append(h00 * pa.x[k] + h10 * ua + h01 * pb.x[k] + h11 * ub)
-        y.append(h00 * pa.y[k] + h10 * va + h01 * pb.y[k] + h11 * vb)
+        x.append(placed_between(weights, (pa.x[k], ua), (pb.x[k], ub)))
+        y.append(placed_between(weights, (pa.y[k], va), (pb.y[k], vb)))
         turned = turned_between(weights, (pa.c[k], pa.s[k], wa), (pb.c[k], pb.s[k], wb))
         c.append(turned[0])
         s.append(turned[1])

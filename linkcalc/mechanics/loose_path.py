@@ -11,11 +11,11 @@ from linkcalc.mechanics.balance import Balance, balance, failed
 from linkcalc.mechanics.loose import Places
 from linkcalc.mechanics.loose_walk import Jump, LooseNode, LooseWalk, walk_loose
 from linkcalc.mechanics.mesh import Mesh
-from linkcalc.mechanics.motion import Closed, cubic, turned_between
+from linkcalc.mechanics.motion import Closed, cubic, placed_between, turned_between, wound
 from linkcalc.mechanics.path import OutOfReach, Path
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.prepare import Ready
-from linkcalc.mechanics.settle import Settled, settle
+from linkcalc.mechanics.settle import TELLS_BADLY, Settled, settle
 from linkcalc.mechanics.solved import Solved, joined
 from linkcalc.mechanics.state import Status
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
@@ -23,7 +23,6 @@ from linkcalc.parts.contract import Size
 from linkcalc.parts.pose import Array, Numbers, Poses
 
 _FAR = 10.0  # sizes of the mechanism that a length may run before it counts as without limit
-_BAD = 30.0  # times the speed of the places: others would tell the pose better
 _TRIES = 4  # choices of places for one batch
 
 
@@ -49,12 +48,12 @@ class LooseMesh(Mesh):
         b = np.minimum(a + 1, last)
         span = self.drive[b] - self.drive[a]
         t = (drive - self.drive[a]) / np.where(span == 0.0, 1.0, span)
-        h00, h10, h01, h11 = weights = cubic(t, span)
+        weights = cubic(t, span)
         (xa, ya, ca, sa, ua, va, wa), (xb, yb, cb, sb, ub, vb, wb) = self._tables[..., a], self._tables[..., b]
         turned = turned_between(weights, (ca, sa, wa), (cb, sb, wb))
         # the places that are held may be x or y of a member, so these are foretold as well
-        x, y = h00 * xa + h10 * ua + h01 * xb + h11 * ub, h00 * ya + h10 * va + h01 * yb + h11 * vb
-        x, y, c, s = (list(np.asarray(v)[:, :, None]) for v in (x, y, *turned))
+        placed = placed_between(weights, (xa, ua), (xb, ub)), placed_between(weights, (ya, va), (yb, vb))
+        x, y, c, s = (list(np.asarray(v)[:, :, None]) for v in (*placed, *turned))
         unknown = (1 - t) * self._unknown[:, a] + t * self._unknown[:, b]
         return Poses([0.0, *x], [0.0, *y], [1.0, *c], [0.0, *s], self._down, self._field), unknown[:, None]
 
@@ -95,7 +94,7 @@ def lay_loose_path(ready: Ready) -> LoosePath:
         for size in (stroke.start, stroke.stop):
             if size not in (DRAWN, LOWER, UPPER):
                 near = float(np.ravel(ready.drawing.value(size, coordinate.kind))[0])
-                drawn += 2 * np.pi * round((near - drawn) / (2 * np.pi))
+                drawn = float(wound(drawn, near))
                 break
     here = _drawn_node(ready, drawn)
     far = 2 * np.pi if angle else _FAR * ready.chain.size
@@ -167,12 +166,12 @@ def solve_loose(ready: Ready, mesh: LooseMesh, drive: Array, *, checked: bool = 
             found = None
         if found is None:
             break
-        good = found.closed.fine.all(axis=(0, 1)) & (_reach(found, left.size) <= _BAD)
+        good = found.closed.fine.all(axis=(0, 1)) & (_reach(found, left.size) <= TELLS_BADLY)
         if tried == _TRIES - 1 or good.all():
             good = np.ones(left.size, bool)
         if good.any():
             whole = Solved(target, found.closed, settled_balance(ready, places, found.closed, checked=checked))
-            parts.append(whole if good.all() else _kept(whole, np.flatnonzero(good)))
+            parts.append(whole if good.all() else joined([whole], np.flatnonzero(good)))
             order.append(left[good])
         left = left[~good]
         if not left.size:
@@ -197,7 +196,3 @@ def _reach(found: Settled, poses: int) -> Array:
             value = np.abs(np.asarray(v))
             top = np.maximum(top, value.max(axis=(0, 1)) if value.ndim == 3 else value)
     return np.where(np.isfinite(top), top, np.inf)
-
-
-def _kept(solved: Solved, only: Numbers) -> Solved:
-    return joined([solved], only)

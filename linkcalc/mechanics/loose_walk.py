@@ -13,10 +13,10 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.mechanics.loose import Loose, Places
-from linkcalc.mechanics.motion import along, moved
+from linkcalc.mechanics.motion import along, moved, turn_from
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.pushing import Pushing
-from linkcalc.mechanics.settle import Settled, come_to_rest, settle
+from linkcalc.mechanics.settle import Settled, come_to_rest, settle_well
 from linkcalc.parts.pose import Array
 
 _SMOOTH = 0.03  # how far a step may depart from the trapezoid rule, over its length
@@ -26,7 +26,6 @@ _SMALLEST = 1e-12  # of the whole way
 _FIRST = 1 / 12
 _GROWTH = 1.6
 _LARGEST = 1 / 12
-_BAD = 30.0  # times the speed of the places: others would tell the pose better
 _PUSH = 0.02  # of the size or a radian: how far a case is put beyond the end of its balance, to see where it falls
 _BACK = 6  # nodes back: where the way it came is taken from
 _STEPS = 2000
@@ -105,16 +104,13 @@ def _walked(loose: Loose, pushing: Pushing, start: LooseNode, stop: float) -> Lo
 def _step(loose: Loose, pushing: Pushing, here: LooseNode, drive: float, whole: float) -> LooseNode | None:
     """The next node; None if the step was too large."""
     step = drive - here.drive
-    a, places = here.settled, here.places
+    a = here.settled
     target = np.full((1, 1, 1), drive)
     try:
-        b = settle(loose, places, along(a.closed, step), target, pushing, a.unknown, along=a.closed.speed, steps=12)
-        if b.reach > _BAD or not np.isfinite(b.reach):
-            better = loose.places(a.closed.at)
-            if better is not None and better != places:
-                places = better
-                guess = along(a.closed, step)
-                b = settle(loose, places, guess, target, pushing, a.unknown, along=a.closed.speed, steps=12)
+        b, places = settle_well(
+            loose, here.places, along(a.closed, step), target, pushing, a.unknown,
+            near=a.closed.at, along=a.closed.speed, steps=12,
+        )  # fmt: skip
     except NoPlan:
         return None
     if not (b.closed.fine & (b.steady >= np.minimum(a.steady, 0))).all():
@@ -141,7 +137,7 @@ def _way(a: Settled, b: Settled, shape: tuple[int, ...]) -> Array:
     pa, pb = a.closed.at, b.closed.at
     rows: list[Array] = []
     for m in range(1, len(pa.x)):
-        turn = np.arctan2(pb.s[m] * pa.c[m] - pb.c[m] * pa.s[m], pb.c[m] * pa.c[m] + pb.s[m] * pa.s[m])
+        turn = turn_from(pa, pb, m)
         rows += [np.broadcast_to(v, shape) for v in (pb.x[m] - pa.x[m], pb.y[m] - pa.y[m], turn)]
     return np.stack(rows)
 

@@ -172,6 +172,37 @@ def turned_between(weights: Weights, a: Turning, b: Turning) -> tuple[Value, Val
     return _normed(h00 * ca + h01 * cb - ga * sa - gb * sb, h00 * sa + h01 * sb + ga * ca + gb * cb)
 
 
+def placed_between(weights: Weights, a: tuple[Value, Value], b: tuple[Value, Value]) -> Value:
+    """A place between two on the cubic, from place and speed of both."""
+    h00, h10, h01, h11 = weights
+    return h00 * a[0] + h10 * a[1] + h01 * b[0] + h11 * b[1]
+
+
+def rolled(at: Poses, way: Sequence[Value]) -> Poses:
+    """Poses moved by a way, (columns), however far: turned by just that."""
+    x, y, c, s = [at.x[0]], [at.y[0]], [at.c[0]], [at.s[0]]
+    for k in range(1, len(at.x)):
+        dx, dy, turn = way[3 * k - 3 : 3 * k]
+        ct, st = np.cos(turn), np.sin(turn)
+        x.append(at.x[k] + dx)
+        y.append(at.y[k] + dy)
+        c.append(at.c[k] * ct - at.s[k] * st)
+        s.append(at.s[k] * ct + at.c[k] * st)
+    return Poses(x, y, c, s, at.down, at.field)
+
+
+def turn_from(a: Poses, b: Poses, member: int) -> Value:
+    """[rad] how far a member has turned from one batch to another, within half a turn."""
+    ca, sa, cb, sb = a.c[member], a.s[member], b.c[member], b.s[member]
+    turn: Value = np.arctan2(sb * ca - cb * sa, cb * ca + sb * sa)
+    return turn
+
+
+def wound(value: Value, near: float) -> Value:
+    """[rad] an angle, whole turns added so that it is within half a turn of another."""
+    return value + 2 * np.pi * np.round((near - value) / (2 * np.pi))
+
+
 def along(a: Known, step: Value) -> Poses:
     """Poses a step of the drive on, straight along the speed."""
     return moved(a.at, [-step * v if not (isinstance(v, float) and v == 0.0) else 0.0 for v in a.speed])

@@ -13,8 +13,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from linkcalc.mechanics.batch import tops
-from linkcalc.mechanics.sums import zero
-from linkcalc.parts.pose import Array, Mask, Numbers, Value
+from linkcalc.parts.pose import Array, Mask, Numbers, Value, zero
 
 _ROUNDS = 40
 _CLOSE = 1e-13  # of the largest normal force: no use in going on

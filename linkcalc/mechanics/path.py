@@ -10,7 +10,7 @@ from linkcalc.faults import Fault, Faults
 from linkcalc.mechanics.eliminate import SMALL
 from linkcalc.mechanics.excess import no_fit
 from linkcalc.mechanics.mesh import Mesh
-from linkcalc.mechanics.motion import Closed, alone, along, close
+from linkcalc.mechanics.motion import Closed, alone, along, close, wound
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.walk import Node, Walk, walk
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
@@ -81,7 +81,7 @@ def lay_path(ready: Ready) -> Path:
     angle = coordinate.kind == "angle"
     fixed = [ready.drawing.value(s, coordinate.kind) for s in (stroke.start, stroke.stop) if s not in _WORDS]
     if angle and stroke.start not in _WORDS:
-        drawn += 2 * np.pi * round((float(np.asarray(fixed[0]).flat[0]) - drawn) / (2 * np.pi))
+        drawn = float(wound(drawn, float(np.asarray(fixed[0]).flat[0])))
     here = Node(drawn, _lone(ready, drawn))
     far = 2 * np.pi if angle else _FAR * ready.chain.size
     first = _to(ready, here, stroke.start, drawn, far, "from")

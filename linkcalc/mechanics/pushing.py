@@ -9,7 +9,7 @@ import numpy as np
 
 from linkcalc.model.parts_list import EFFORT, LOAD, Assembly
 from linkcalc.parts.contract import Push, Pusher
-from linkcalc.parts.pose import Mask, Poses, Value
+from linkcalc.parts.pose import Mask, Poses, Value, zero
 
 Column = list[Value]
 
@@ -187,17 +187,13 @@ def add_pushes(out: Column, size: Value, pushes: Sequence[Push]) -> None:
     """Add what some pushes of a size do to the coordinates."""
     for member, *parts in pushes:
         for which, part in enumerate(parts):
-            if member and not _zero(part) and not _zero(size):
+            if member and not zero(part) and not zero(size):
                 k = 3 * (member - 1) + which
                 out[k] = out[k] + _product(size, part)
 
 
 def _product(a: Value, b: Value) -> Value:
     return b if isinstance(a, float) and a == 1.0 else a * b
-
-
-def _zero(value: Value) -> bool:
-    return isinstance(value, float) and value == 0.0
 
 
 def _by_case(values: Sequence[float]) -> Value:

@@ -20,10 +20,10 @@ from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.prepare import Ready
 from linkcalc.mechanics.pushing import Acting, Pushing, add_pushes, column
 from linkcalc.mechanics.settle import settle
-from linkcalc.mechanics.sums import dot, small, zero
+from linkcalc.mechanics.sums import dot, small
 from linkcalc.mechanics.tangent import tangent_of
 from linkcalc.parts.contract import TURN
-from linkcalc.parts.pose import Array, Codes, Value
+from linkcalc.parts.pose import Array, Codes, Value, zero
 
 _IDLE = 1e-9  # turn of the beam over the fastest motion: it does not move
 

@@ -21,10 +21,11 @@ from linkcalc.mechanics.held import STILL, Work
 from linkcalc.mechanics.loose import Loose, Places
 from linkcalc.mechanics.motion import Closed, fastest
 from linkcalc.mechanics.pushing import Column, Pushing, add_pushes, column
-from linkcalc.mechanics.sums import small, zero
+from linkcalc.mechanics.sums import small
 from linkcalc.mechanics.tangent import settled_speed, tangent_of
-from linkcalc.parts.pose import Array, Codes, Mask, Poses, Value
+from linkcalc.parts.pose import Array, Codes, Mask, Poses, Value, zero
 
+TELLS_BADLY = 30.0  # times the speed of the places that a coordinate goes: others would tell the pose better
 _LAST = 1e-6  # no longer step is taken in a pose that is in balance already
 _SMALLEST = 1e-15  # a step as small changes nothing
 _ANEW = (2, 5, 8)  # steps without gain after which the tangent is taken anew
@@ -111,6 +112,24 @@ def settle(
         state.closed, speed=speed, fine=state.closed.fine & done & np.isfinite(state.size), steady=tangent.steady()
     )
     return Settled(closed, state.unknown, -tangent.free, tangent.reduced, state.rates)
+
+
+def settle_well(
+    loose: Loose, places: Places, guess: Poses, target: Value | None, pushing: Pushing, unknown: Value,
+    *, near: Poses | None = None, along: Sequence[Value] | None = None, steps: int = _STEPS,
+    matrix: Array | None = None,
+) -> tuple[Settled, Places]:  # fmt: skip
+    """Settle a batch, with other places where those given tell it badly; and the places that it was done with.
+
+    near  the batch that others are chosen from; None: what was settled with those given
+    """
+    found = settle(loose, places, guess, target, pushing, unknown, steps=steps, along=along, matrix=matrix)
+    if found.reach <= TELLS_BADLY:
+        return found, places
+    better = loose.places(found.closed.at if near is None else near)
+    if better is None or better == places:
+        return found, places
+    return settle(loose, better, guess, target, pushing, unknown, steps=steps, along=along), better
 
 
 def _broyden(matrix: Array, step: Array, change: Array) -> Array:

@@ -8,7 +8,7 @@ import numpy as np
 
 from linkcalc.mechanics.eliminate import solve_each
 from linkcalc.mechanics.pushing import Column
-from linkcalc.parts.pose import Array, Value
+from linkcalc.parts.pose import Array, Value, zero
 
 
 def dot(way: Sequence[Value], push: Column) -> Value:
@@ -35,7 +35,3 @@ def small(a: Array, b: Array) -> Array:
             y = (a[..., 0, 0] * b[..., 1] - b[..., 0] * a[..., 1, 0]) / d
             return np.stack([x, y], -1)
     return solve_each(a.reshape(-1, n, n), b.reshape(-1, n, 1)).reshape(b.shape)
-
-
-def zero(value: Value) -> bool:
-    return isinstance(value, float) and value == 0.0

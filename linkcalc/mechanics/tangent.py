@@ -9,8 +9,8 @@ import numpy as np
 from linkcalc.mechanics.held import State, Work
 from linkcalc.mechanics.motion import fastest, moved
 from linkcalc.mechanics.pushing import Column
-from linkcalc.mechanics.sums import dot, plus, small, zero
-from linkcalc.parts.pose import Array, Codes, Poses, Value
+from linkcalc.mechanics.sums import dot, plus, small
+from linkcalc.parts.pose import Array, Codes, Poses, Value, zero
 
 _HAIR = 1e-5  # how far to either side the forces are looked at, in sizes of the mechanism or radians
 _NEUTRAL = 1e-7  # stiffness over the largest force and the size of the mechanism: neither stable nor unstable

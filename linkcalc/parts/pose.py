@@ -43,7 +43,7 @@ class Site:
     @cached_property
     def along(self) -> tuple[bool, bool]:
         """Whether u and v are more than an exact zero, which folds away."""
-        return not _zero(self.u), not _zero(self.v)
+        return not zero(self.u), not zero(self.v)
 
 
 class Poses:
@@ -106,5 +106,6 @@ class Poses:
         return c * u - s * v, s * u + c * v
 
 
-def _zero(value: Any) -> bool:
+def zero(value: Any) -> bool:
+    """True for an exact nothing that never changes: it folds away."""
     return isinstance(value, float) and value == 0.0
