@@ -1,4 +1,7 @@
-"""The whole order of the computation, one screen: drawing -> ready -> path -> poses -> statics."""
+"""The whole order of the computation, one screen: drawing -> ready -> path -> poses -> statics.
+
+What only free members need is loaded where they are: most mechanisms have none, and start without it.
+"""
 
 from __future__ import annotations
 
@@ -8,7 +11,6 @@ import numpy as np
 
 from linkcalc.mechanics.balance import balance, failed
 from linkcalc.mechanics.excess import no_fit
-from linkcalc.mechanics.loose_path import LooseMesh, lay_loose_path, loose_range, solve_loose
 from linkcalc.mechanics.mesh import Mesh
 from linkcalc.mechanics.motion import close
 from linkcalc.mechanics.path import Path, lay_path, motion_range
@@ -26,7 +28,10 @@ def solve_at(ready: Ready, mesh: Mesh | None, drive: Array, *, checked: bool = T
     """
     if ready.standing is not None:
         return solve_standing(ready, drive, checked=checked)
-    if isinstance(mesh, LooseMesh):
+    if ready.loose is not None:
+        from linkcalc.mechanics.loose_path import LooseMesh, solve_loose
+
+        assert isinstance(mesh, LooseMesh)
         return solve_loose(ready, mesh, drive, checked=checked)
     coordinate = ready.chain.coordinate
     assert coordinate is not None and mesh is not None
@@ -37,7 +42,11 @@ def solve_at(ready: Ready, mesh: Mesh | None, drive: Array, *, checked: bool = T
 
 def path_of(ready: Ready) -> Path:
     """The way of one mechanism through its stroke. Raises Faults where it is out of reach."""
-    return lay_path(ready) if ready.loose is None else lay_loose_path(ready)
+    if ready.loose is None:
+        return lay_path(ready)
+    from linkcalc.mechanics.loose_path import lay_loose_path
+
+    return lay_loose_path(ready)
 
 
 def mesh_of(ready: Ready, solved: Solved) -> Mesh:
@@ -45,6 +54,8 @@ def mesh_of(ready: Ready, solved: Solved) -> Mesh:
     drive = solved.drive[0, 0]
     if ready.loose is None:
         return Mesh(drive, [solved.closed])
+    from linkcalc.mechanics.loose_path import LooseMesh
+
     unknown = solved.balance.load if ready.pushing.load_asked else solved.balance.effort
     return LooseMesh(drive, [solved.closed], np.broadcast_to(unknown, solved.balance.status.shape)[:, 0])
 
@@ -78,7 +89,11 @@ def solve_stroke(ready: Ready, poses: int) -> tuple[Solved, Path]:
 
 def reach(ready: Ready) -> tuple[float, float, float]:
     """Lower limit, drawn value and upper limit of the drive [rad or m]; nan for a limit that is not there."""
-    return motion_range(ready) if ready.loose is None else loose_range(ready)
+    if ready.loose is None:
+        return motion_range(ready)
+    from linkcalc.mechanics.loose_path import loose_range
+
+    return loose_range(ready)
 
 
 def solve_drawn(ready: Ready) -> Solved:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from typing import TYPE_CHECKING
 
 import numpy as np
 
@@ -12,17 +13,18 @@ from linkcalc.mechanics.eliminate import SMALL
 from linkcalc.mechanics.excess import CURE, idle, sharing
 from linkcalc.mechanics.freedom import Freedom, freedom, motion_of
 from linkcalc.mechanics.limit import Place
-from linkcalc.mechanics.loose import Loose
 from linkcalc.mechanics.motion import Closed, alone, close, single
 from linkcalc.mechanics.plan import NoPlan
 from linkcalc.mechanics.pushing import Pushing, column, pushing
-from linkcalc.mechanics.settle import acted_on, come_to_rest
 from linkcalc.model.mechanism import DRAWN, LOWER, UPPER
 from linkcalc.model.sketch import Drawing, drawn
 from linkcalc.parts.along import Standing
 from linkcalc.parts.contract import Joint
 from linkcalc.parts.lines import rubless
 from linkcalc.parts.pose import Mask, Poses, Value
+
+if TYPE_CHECKING:
+    from linkcalc.mechanics.loose import Loose
 
 
 @dataclass(frozen=True, eq=False)
@@ -131,6 +133,9 @@ def _settled(
     drawing: Drawing, chain: Chain, at: Poses, loads: Pushing, wanted: int, like: Ready | None
 ) -> Ready | None:  # fmt: skip
     """A mechanism with more freedoms than the drive takes, where they settle; None where nothing makes them."""
+    from linkcalc.mechanics.loose import Loose
+    from linkcalc.mechanics.settle import acted_on, come_to_rest
+
     coordinate = chain.coordinate
     if coordinate is None and wanted:
         coordinate = _held(chain, at, loads)
