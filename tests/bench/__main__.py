@@ -13,6 +13,7 @@ for _variable in ("OMP_NUM_THREADS", "OPENBLAS_NUM_THREADS", "MKL_NUM_THREADS"):
 
 import argparse  # noqa: E402
 import sys  # noqa: E402
+from collections.abc import Sequence  # noqa: E402
 
 from tests.bench import (  # noqa: E402
     accuracy,
@@ -41,12 +42,18 @@ PARTS = {
 }
 
 
-def main() -> int:
+def asked(arguments: Sequence[str] | None = None) -> tuple[list[str], bool]:
+    """The parts that a command line asks for, and whether a quick look is enough."""
     parser = argparse.ArgumentParser(description=__doc__, formatter_class=argparse.RawDescriptionHelpFormatter)
-    parser.add_argument("parts", nargs="*", choices=list(PARTS), help="which parts; all if left out")
+    parser.add_argument("parts", nargs="*", choices=[*PARTS, "all"], default="all", help="which parts; else all")
     parser.add_argument("--quick", action="store_true", help="fewer copies and rounds: a look, not a measurement")
-    given = parser.parse_args()
-    met = [PARTS[name](quick=given.quick) for name in (given.parts or PARTS)]
+    given = parser.parse_args(arguments)
+    return list(PARTS) if "all" in given.parts else given.parts, given.quick
+
+
+def main() -> int:
+    names, quick = asked()
+    met = [PARTS[name](quick=quick) for name in names]
     print(f"\n{sum(met)} of {len(met)} parts meet their targets")
     return 0 if all(met) else 1
 
